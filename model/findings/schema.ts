@@ -1,0 +1,176 @@
+import { z } from 'zod'
+
+/**
+ * The findings: the one thing that templates, charts and tables may read. Declared here once; the type and the
+ * shipped JSON Schema are both made from it. Figures are in points (score x 100) unless said otherwise.
+ */
+
+/** A posterior summary: mean, bounds of the central interval (the account's `interval`), standard deviation. */
+export const estimate = z.strictObject({ mean: z.number(), low: z.number(), high: z.number(), sd: z.number().min(0) })
+export type Estimate = z.infer<typeof estimate>
+
+const share = z.number().min(0).max(1)
+const count = z.number().int().min(0)
+const isoDate = z.string().regex(/^\d{4}-\d{2}-\d{2}$/)
+
+/** Whether an interval supports saying that something moved: it lies wholly above or below zero, or it does not. */
+export const movement = z.enum(['up', 'down', 'not-established'])
+export type Movement = z.infer<typeof movement>
+
+const period = z.strictObject({ name: z.string(), start: isoDate, end: isoDate })
+
+const accounting = z.strictObject({
+  received: count, rejected: count, duplicates: count, out_of_scope: count, modelled: count,
+  reasons: z.record(z.string(), count),
+  unmapped: z.array(z.strictObject({ factor: z.string(), value: z.string(), mentions: count })),
+  given_not_used: z.array(z.string()),
+  /** Mentions in the period under review. */
+  in_period: count,
+  first_step: isoDate, last_step: isoDate,
+})
+
+const opinion = z.strictObject({
+  series: z.array(z.strictObject({
+    step: isoDate, adjusted: estimate, since_base: estimate,
+    /** null where the step holds no mention. */
+    raw: z.number().nullable(), mentions: count, authors: count,
+    /** True where the step belongs to the period under review. */
+    in_period: z.boolean(),
+  })),
+  /** Every period of the grid, oldest first. */
+  periods: z.array(z.strictObject({ period: z.string(), adjusted: estimate, since_base: estimate, raw: z.number().nullable(), mentions: count, authors: count })),
+  period: estimate,
+  /** null where there is no period before. */
+  previous: estimate.nullable(), change: estimate.nullable(), probability_up: share.nullable(),
+  movement: movement.nullable(),
+  since_base: estimate, movement_since_base: movement,
+  /** Pooled raw average of all mentions; null where there is none. */
+  raw: z.number().nullable(), raw_previous: z.number().nullable(), raw_change: z.number().nullable(),
+  mentions: count, mentions_previous: count, authors: count,
+})
+
+const part = z.strictObject({
+  /** opinion, timing, venue_mix, venue_drift, topic_mix, poster_mix, NAME_mix, unexplained. */
+  part: z.string(),
+  estimate,
+  movement,
+})
+
+const decomposition = z.strictObject({
+  from: z.string(), to: z.string(), raw_change: z.number(), parts: z.array(part),
+  /** The part other than opinion with the largest absolute mean among those whose interval leaves zero; null if none. */
+  largest: z.string().nullable(),
+})
+
+const venue = z.strictObject({
+  venue: z.string(), label: z.string(), anchor: z.boolean(),
+  mentions: count, mentions_previous: count, authors: count,
+  share, share_previous: share.nullable(), share_base: share,
+  /** Share of the venue's mentions, over the whole history, whose author is known. */
+  authors_known: share,
+  raw: z.number().nullable(), raw_previous: z.number().nullable(),
+  /** Mean over the period's steps, at the target mix of the other factors. */
+  level: estimate, level_previous: estimate.nullable(), level_base: estimate,
+  /** Mean of d over the period less its mean over the base. */
+  drift: estimate, movement: movement,
+  /** Least-squares slope of the level over the last 13 weeks, points per 4 weeks. */
+  slope: estimate, slope_movement: movement,
+  probability_drift_down: share,
+  /** Standard deviation of scores inside the venue; null with fewer than two mentions. */
+  spread: z.number().nullable(), spread_change: z.number().nullable(),
+  /** alpha[v] less its mean at the target mix. */
+  offset: estimate,
+  first_step: isoDate, last_step: isoDate,
+  /** `drift` is d itself. */
+  series: z.array(z.strictObject({ step: isoDate, level: estimate, drift: estimate, raw: z.number().nullable(), mentions: count })),
+})
+
+const levelFinding = {
+  label: z.string(), offset: estimate, mentions: count, mentions_previous: count,
+  share, share_previous: share.nullable(), share_base: share, authors: count, raw: z.number().nullable(), raw_previous: z.number().nullable(),
+}
+
+const concentration = z.strictObject({
+  /** Known authors and their mentions. */
+  authors: count, mentions: count,
+  /** Share of mentions by the most prolific 1 % of authors (at least one author). */
+  top_share: share,
+  gini: share,
+  /** Inverse Simpson: how many equally active authors would be as concentrated. */
+  effective_authors: z.number().min(0),
+})
+
+const speaking = z.strictObject({
+  concentration: z.strictObject({ period: concentration.nullable(), previous: concentration.nullable() }),
+  venues: z.array(z.strictObject({ venue: z.string(), concentration: concentration.nullable() })),
+  /** Share of each level among the mentions of each period, for every factor. */
+  mix: z.array(z.strictObject({ factor: z.string(), level: z.string(), label: z.string(), period: z.string(), mentions: count, share })),
+})
+
+const check = z.strictObject({ name: z.string(), venue: z.string().nullable(), observed: z.number(), predicted: estimate, p: share, passed: z.boolean() })
+
+const diagnostics = z.strictObject({
+  method: z.string(),
+  pareto_k: z.number(), rhat: z.number().nullable(),
+  /** Effective independent draws of the standard deviations. */
+  ess: z.number(),
+  draws: count, proposals: count,
+  /** Whether the diagnostics allow the figures to be published without reservation. */
+  passed: z.boolean(),
+  /** Posterior predictive checks: can the model reproduce what it was fitted to? */
+  checks: z.array(check),
+})
+
+export const severities = ['note', 'caution', 'serious'] as const
+const caveat = z.strictObject({
+  /** Names the message of the catalogue that words it. */
+  code: z.string(), severity: z.enum(severities), evidence: z.string(), meaning: z.string(), remedy: z.string(),
+  /** The figures in the wording. */
+  figures: z.record(z.string(), z.union([z.number(), z.string()])),
+})
+export type Caveat = z.infer<typeof caveat>
+
+const advice = z.strictObject({
+  code: z.string(), action: z.string(), where: z.string(), how_many: count, gain: estimate, evidence: z.string(), success: z.string(),
+})
+
+const method = z.strictObject({
+  base: z.strictObject({ from: isoDate, to: isoDate }),
+  target_mix: z.array(z.strictObject({ factor: z.string(), level: z.string(), label: z.string(), share })),
+  /** `base`: shares of mentions pooled over the base; `account`: margins the account gives. Per factor. */
+  target_source: z.record(z.string(), z.enum(['base', 'account'])),
+  priors: z.record(z.string(), z.number()),
+  cells: count, steps: count,
+  /** Pooled within-cell standard deviation and intraclass correlation by author, per venue. */
+  venues: z.array(z.strictObject({ venue: z.string(), label: z.string(), standard_deviation: z.number(), intraclass: z.number().nullable(), mean_design_effect: z.number() })),
+  smallest_group: count,
+  prepared_by: z.string().nullable(), reviewed_by: z.string().nullable(),
+  time_zone: z.string(), reporting: z.enum(['month', 'quarter', 'week']),
+})
+
+export const findingsSchema = z.strictObject({
+  schema: z.literal('tareline-findings/1'),
+  account: z.string(), brand: z.string(), locale: z.string(),
+  period, previous_period: period.nullable(),
+  grid: z.enum(['day', 'week', 'month']), interval: z.number().min(0.5).max(0.99),
+  accounting, opinion,
+  /** null where there is no period before, or one of the two holds no mention. */
+  decomposition: decomposition.nullable(),
+  venues: z.array(venue),
+  topics: z.array(z.strictObject({ topic: z.string(), ...levelFinding })),
+  posters: z.array(z.strictObject({ poster: z.string(), ...levelFinding })),
+  factors: z.array(z.strictObject({ factor: z.string(), levels: z.array(z.strictObject({ level: z.string(), ...levelFinding })) })),
+  /** Posterior of the standard deviations of the model, in points; null for one that the model does not have. */
+  scales: z.strictObject({
+    mu: estimate, tau: estimate, venue_drift: z.record(z.string(), estimate),
+    venue: estimate.nullable(), topic: estimate.nullable(), poster: estimate.nullable(),
+    factors: z.record(z.string(), estimate),
+  }),
+  survey: z.null(), speaking, benchmark: z.null(),
+  caveats: z.array(caveat), advice: z.array(advice),
+  diagnostics, method,
+  inputs: z.array(z.strictObject({ path: z.string(), sha256: z.string(), rows: count })),
+  program: z.strictObject({ version: z.string(), seed: z.number().int() }),
+})
+
+export type Findings = z.infer<typeof findingsSchema>

@@ -1,0 +1,136 @@
+/**
+ * What intake hands to the model: everything the figures rest on, and no person in it.
+ *
+ * There is no author, text or id below this line of the program. All of `model/` can be redone from these
+ * tables alone, so they are what an archive keeps and what a warehouse can supply.
+ */
+
+/** The time axis. Calendar arithmetic is done by the caller: the model sees only indices and lengths. */
+export interface Timeline {
+  readonly grid: 'day' | 'week' | 'month'
+  /** Length of one step in days: 1, 7 or 30.4375. */
+  readonly stepDays: number
+  /** ISO date on which each step begins, every step from the first to the last that holds a mention. */
+  readonly steps: readonly string[]
+  /** Every period that holds the midpoint of a step, in order of time. */
+  readonly periods: readonly Period[]
+  /** Shape (steps): index into `periods` of the period that holds the step's midpoint. */
+  readonly periodOf: Int32Array
+  /** Shape (steps): 1 where the step's midpoint lies in the base. */
+  readonly inBase: Uint8Array
+  readonly base: { readonly from: string; readonly to: string }
+  /** Index into `periods` of the period under review; -1 if no step belongs to it. */
+  readonly current: number
+  /** The period under review, also when no step belongs to it. */
+  readonly review: Period
+}
+
+/** First and last day, inclusive, as ISO dates; named 2026-10, 2026-Q4 or 2026-W44. */
+export interface Period {
+  readonly name: string
+  readonly start: string
+  readonly end: string
+}
+
+/** A thing that mentions differ in: venue, topic, poster, or one the account adds. */
+export interface Factor {
+  readonly name: string
+  /** Sorted by name: the order of every array over levels. */
+  readonly levels: readonly Level[]
+}
+
+export interface Level {
+  readonly name: string
+  readonly label: string
+  /** Venues only: declared to stand still (`drift: none`). */
+  readonly anchor?: boolean
+  /** Venues only: cost of hearing one more author, any unit. */
+  readonly costPerAuthor?: number
+}
+
+/** Cells as columns, shape (cells) each, sorted by step and then by the levels of each factor. */
+export interface CellColumns {
+  readonly count: number
+  /** Index into `timeline.steps`. */
+  readonly step: Int32Array
+  /** One column per factor, in the order of `factors`; index into its levels. */
+  readonly levels: readonly Int32Array[]
+  /** n_c, at least 1. */
+  readonly mentions: Float64Array
+  /** a_c, at least 1; a mention without an author counts as one author. */
+  readonly authors: Float64Array
+  /** y_c, in [-1, 1]. */
+  readonly mean: Float64Array
+  /** Sum of squared deviations from y_c inside the cell; 0 where `freedom` is 0. */
+  readonly squares: Float64Array
+  /** Degrees of freedom of `squares`: n_c - 1, or 0 where the variance is not known. */
+  readonly freedom: Float64Array
+  /** b_c = sum m_a^2 / sum m_a over the authors of the cell; 1 where authors are unknown. */
+  readonly clustering: Float64Array
+  /** A design effect given ready-made; NaN where it is to be computed from `clustering`. */
+  readonly deff: Float64Array
+}
+
+/** Sums for the one-way analysis of variance by author inside a venue, of scores less their venue-and-step mean. */
+export interface AuthorVariation {
+  /** Known authors. */
+  readonly authors: number
+  /** Their mentions. */
+  readonly mentions: number
+  /** Sum over authors of the squared number of mentions. */
+  readonly squaredSizes: number
+  readonly betweenSquares: number
+  readonly withinSquares: number
+}
+
+/** How many authors wrote how often: a count of counts, in which nobody can be found. */
+export interface ConcentrationRow {
+  /** Index into `timeline.periods`. */
+  readonly period: number
+  /** Index into the levels of `venue`; -1 for all venues together. */
+  readonly venue: number
+  readonly mentionsPerAuthor: number
+  readonly authors: number
+}
+
+/** Distinct authors; a mention without one counts as one. */
+export interface AuthorCounts {
+  /** False where ready-made cells were summed, so that an author in two cells counts twice. */
+  readonly exact: boolean
+  /** Shape (steps). */
+  readonly byStep: Float64Array
+  /** Shape (periods). */
+  readonly byPeriod: Float64Array
+  /** One entry per factor, each row-major of shape (periods x levels). */
+  readonly byPeriodLevel: readonly Float64Array[]
+}
+
+/** received = rejected + duplicates + outOfScope + modelled, of all data rows of all sources. */
+export interface Accounting {
+  readonly received: number
+  readonly rejected: number
+  readonly duplicates: number
+  readonly outOfScope: number
+  readonly modelled: number
+  /** Rows by reason: of rejection, of duplication, of being out of scope; and times read by a rule. */
+  readonly reasons: Readonly<Record<string, number>>
+  /** Values that the account maps to no level of its own, kept under their own name. */
+  readonly unmapped: readonly { readonly factor: string; readonly value: string; readonly mentions: number }[]
+  readonly inputs: readonly { readonly path: string; readonly sha256: string; readonly rows: number }[]
+  /** Shape (venues): mentions with a known author. */
+  readonly withAuthor: Float64Array
+  /** True where cells came ready-made, so that rows stand for more than one mention. */
+  readonly readyMade: boolean
+}
+
+export interface IntakeTables {
+  readonly timeline: Timeline
+  /** `venue` first, then the account's other factors in its order. */
+  readonly factors: readonly Factor[]
+  readonly cells: CellColumns
+  /** Shape (venues); null where no author of the venue is known or cells came ready-made. */
+  readonly variation: readonly (AuthorVariation | null)[]
+  readonly concentration: readonly ConcentrationRow[]
+  readonly authors: AuthorCounts
+  readonly accounting: Accounting
+}
