@@ -1,0 +1,45 @@
+import type { Caveat, Findings } from '../../model/findings/schema.ts'
+import { around } from './sample-series.ts'
+
+/** Caveats of each severity, as the model raises them; the wording is the catalogue's and is filled in by the build. */
+export function sampleCaveats(): Caveat[] {
+  const raise = (code: string, severity: Caveat['severity'], figures: Caveat['figures'] = {}): Caveat =>
+    ({ code, severity, figures, evidence: `evidence of ${code}`, meaning: `meaning of ${code}`, remedy: `remedy of ${code}` })
+  return [
+    raise('pooled-average-misleads', 'serious', { raw_change: -1.6, change: 2.7 }),
+    raise('mix-moved', 'serious', { factor: 'venue', level: 'Discussion boards', from: 0.24, to: 0.41 }),
+    raise('coder-unaudited', 'caution'),
+    raise('authors-partly-unknown', 'caution', { venue: 'Video comments', share: 0.29 }),
+    raise('empty-steps', 'caution', { steps: 1 }),
+    raise('values-unmapped', 'note', { factor: 'topic', values: 'harbour works', mentions: 118 }),
+    raise('given-not-used', 'note', { keys: 'events, competitors' }),
+    raise('no-sampling-error', 'note'),
+    raise('survey-absent', 'note'),
+    raise('benchmark-absent', 'note'),
+  ]
+}
+
+/** A fit whose diagnostics allow publishing. */
+export function sampleDiagnostics(venues: readonly string[]): Findings['diagnostics'] {
+  return {
+    method: 'importance-sampling', pareto_k: 0.31, rhat: null, ess: 2840, draws: 4000, proposals: 8000, passed: true,
+    checks: venues.flatMap((venue, at) => [
+      { name: 'dispersion', venue, observed: 1 + 0.02 * at, predicted: around(1, 0.12), p: 0.3 + 0.05 * at, passed: true },
+      { name: 'extremes', venue, observed: 3.1, predicted: around(3, 0.6), p: 0.44, passed: true },
+    ]),
+  }
+}
+
+/** What was assumed and on what it rests. */
+export function sampleMethod(
+  targetMix: Findings['method']['target_mix'], venues: readonly { readonly venue: string, readonly label: string }[],
+): Findings['method'] {
+  return {
+    base: { from: '2024-05-06', to: '2025-05-05' },
+    target_mix: targetMix, target_source: { venue: 'base', topic: 'base', poster: 'base' },
+    priors: { mu: 3, venue_drift: 2, venue: 30, topic: 30, poster: 30, tau: 20 },
+    cells: 9104, steps: 130,
+    venues: venues.map(({ venue, label }, at) => ({ venue, label, standard_deviation: 58 + 3 * at, intraclass: at === 4 ? null : 0.14 + 0.03 * at, mean_design_effect: 1.1 + 0.05 * at })),
+    smallest_group: 10, prepared_by: 'Ines Carrow', reviewed_by: null, time_zone: 'Europe/Lisbon', reporting: 'month',
+  }
+}
