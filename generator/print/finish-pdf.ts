@@ -1,0 +1,64 @@
+import { createHash } from 'node:crypto'
+import { PDFArray, PDFDict, PDFDocument, PDFHexString, PDFName, PDFString } from '@cantoo/pdf-lib'
+import { markArtifacts } from './mark-artifacts.ts'
+
+/** What the file says of itself. */
+export interface PdfFacts {
+  readonly title: string
+  readonly author: string
+  /** ISO date of the review, e.g. the last day of its period: both dates of the file. */
+  readonly date: string
+  /** BCP 47, e.g. `en-GB`. */
+  readonly language: string
+}
+
+/**
+ * Finish a print: dates and file identifier from the review instead of the clock, title, author and language, the running head marked as
+ * no part of the text, a description on every link.
+ *
+ * @param pdf - a tagged print by Chromium
+ * @returns the same bytes for the same input
+ */
+export async function finishPdf(pdf: Uint8Array, facts: PdfFacts): Promise<Uint8Array> {
+  const document = await PDFDocument.load(pdf, { updateMetadata: false })
+  const date = new Date(`${facts.date}T00:00:00Z`)
+  document.setTitle(facts.title, { showInWindowTitleBar: true })
+  document.setAuthor(facts.author)
+  document.setLanguage(facts.language)
+  document.setCreator('Tareline')
+  document.setCreationDate(date)
+  document.setModificationDate(date)
+  for (const page of document.getPages()) markArtifacts(document.context, page.node)
+  describeLinks(document)
+  const identifier = PDFHexString.of(createHash('md5').update(fingerprint(pdf)).update(JSON.stringify(facts)).digest('hex'))
+  const identifiers = PDFArray.withContext(document.context)
+  identifiers.push(identifier)
+  identifiers.push(identifier)
+  document.context.trailerInfo.ID = identifiers
+  return document.save({ addDefaultPage: false, updateFieldAppearances: false })
+}
+
+/** The print without its own two dates, which are the clock's. */
+function fingerprint(pdf: Uint8Array): string {
+  return Buffer.from(pdf).toString('latin1').replace(/\/(CreationDate|ModDate) \(D:[^)]*\)/g, '')
+}
+
+/** PDF/UA-1, 7.18.5: a link says where it leads; Chromium leaves it out. */
+function describeLinks(document: PDFDocument): void {
+  for (const page of document.getPages()) {
+    const annotations = page.node.Annots()
+    for (let index = 0; index < (annotations?.size() ?? 0); index += 1) {
+      const annotation = annotations?.lookup(index, PDFDict)
+      if (annotation === undefined || annotation.get(PDFName.of('Subtype')) !== PDFName.of('Link')) continue
+      annotation.set(PDFName.of('Contents'), PDFHexString.fromText(destination(annotation)))
+    }
+  }
+}
+
+function destination(annotation: PDFDict): string {
+  const action = annotation.lookupMaybe(PDFName.of('A'), PDFDict)
+  const address = action?.lookup(PDFName.of('URI'))
+  if (address instanceof PDFString || address instanceof PDFHexString) return address.decodeText()
+  const target = annotation.lookup(PDFName.of('Dest'))
+  return target instanceof PDFName ? target.decodeText() : ''
+}
