@@ -1,0 +1,35 @@
+import type { Node } from 'unist'
+import { checkForm, checkSelection } from './check-paths.ts'
+import type { CheckContext } from './directives/directive.ts'
+import { nearest } from './faults.ts'
+import type { Reporter } from './faults.ts'
+import type { TypeScope } from './path-types.ts'
+import { kindOf } from './path-types.ts'
+import type { Argument } from './sentences.ts'
+import { forms } from '../words/forms.ts'
+
+/** Check a message where it is used: the catalogue has it, and its sentence's figures exist in that scope. */
+export function checkMessage(message: string, scope: TypeScope, context: Pick<CheckContext, 'words' | 'sentences'>, at: Pick<Node, 'position'>, reporter: Reporter): void {
+  if (!context.words.has(message)) {
+    reporter.report(at, 'message-unknown', `message "${message}"`, `a message of the catalogue ${context.words.language}`, nearest(message, context.words.keys))
+    return
+  }
+  const sentence = context.sentences.get(message)
+  if (!sentence && context.words.argumentsOf(message).length > 0) {
+    reporter.report(at, 'sentence-missing', `message "${message}" without a sentence`, `its arguments ${context.words.argumentsOf(message).join(', ')}`, 'Declare them in sentences.yaml.')
+  }
+  for (const argument of Object.values(sentence?.arguments ?? {})) checkArgument(argument, scope, at, reporter)
+}
+
+function checkArgument(argument: Argument, scope: TypeScope, at: Pick<Node, 'position'>, reporter: Reporter): void {
+  if (!argument.selection) {
+    checkForm(argument.of, argument.as, scope, at, reporter)
+    return
+  }
+  const item = checkSelection(argument.selection, scope, at, reporter)
+  if (!item) return
+  if (argument.pick) checkForm(argument.pick, 'code', { ...scope, item }, at, reporter)
+  if (forms[argument.as].from !== 'list') {
+    reporter.report(at, 'form-unfit', `form "${argument.as}" of a selection`, 'list or length', `Write as: list, or name one ${kindOf(item)} by its path.`)
+  }
+}

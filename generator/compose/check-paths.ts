@@ -1,0 +1,73 @@
+import type { Node } from 'unist'
+import type { FormName } from '../words/forms.ts'
+import { forms } from '../words/forms.ts'
+import type { Clause, Condition } from './condition.ts'
+import type { Reporter } from './faults.ts'
+import type { Path } from './path.ts'
+import { kindOf, typeAt, withoutNull } from './path-types.ts'
+import type { TypeNode, TypeScope } from './path-types.ts'
+import type { Selection } from './selection.ts'
+
+type At = Pick<Node, 'position'>
+
+/** Check that the findings have a path; its type, or undefined after a report. */
+export function checkPath(path: Path, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {
+  const found = typeAt(path, scope)
+  if (found.known) return found.type
+  const mend = found.nearest === undefined ? 'See the schema of the findings for what there is.' : `Write "${found.nearest}", if that is meant.`
+  reporter.report(at, 'path-unknown', `name "${found.unknown}" in path "${written(path)}"`, 'a path of the findings', mend)
+  return undefined
+}
+
+/** Check a condition's paths, and that what a choice is compared with is one of its values. */
+export function checkCondition(condition: Condition, scope: TypeScope, at: At, reporter: Reporter): void {
+  for (const clause of condition.clauses) {
+    const item = clause.over && checkList(clause.over.list, scope, at, reporter)
+    if (clause.over && !item) continue
+    checkClause(clause, item ? { ...scope, item } : scope, at, reporter)
+  }
+}
+
+function checkClause(clause: Clause, scope: TypeScope, at: At, reporter: Reporter): void {
+  const type = checkPath(clause.path, scope, at, reporter)
+  if ('path' in clause.operand) {
+    checkPath(clause.operand.path, scope, at, reporter)
+    return
+  }
+  const choices = type && withoutNull(type).enum
+  const { literal } = clause.operand
+  if (!choices || literal === null || choices.includes(literal)) return
+  reporter.report(at, 'condition-value-unknown', `value "${literal}" for "${written(clause.path)}"`, choices.join(', '), 'Compare with one of these.')
+}
+
+/** Check the paths of a selection; the type of one item, or undefined after a report. */
+export function checkSelection(selection: Selection, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {
+  const item = checkList(selection.of, scope, at, reporter)
+  if (!item) return undefined
+  if (selection.where) checkCondition(selection.where, { ...scope, item }, at, reporter)
+  if (selection.by) checkKind(selection.by, 'number', { ...scope, item }, at, reporter)
+  return item
+}
+
+function checkList(path: Path, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {
+  const type = checkPath(path, scope, at, reporter)
+  if (!type) return undefined
+  const { items } = withoutNull(type)
+  if (!items) reporter.report(at, 'path-not-a-list', `path "${written(path)}"`, 'a list of the findings', 'Name a list, such as venues or topics.')
+  return items && withoutNull(items)
+}
+
+/** Check that a value can be written in a form. */
+export function checkForm(path: Path, form: FormName, scope: TypeScope, at: At, reporter: Reporter): void {
+  checkKind(path, forms[form].from, scope, at, reporter)
+}
+
+function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter: Reporter): void {
+  const type = checkPath(path, scope, at, reporter)
+  if (!type || kind === 'any' || kindOf(type) === kind) return
+  reporter.report(at, 'form-unfit', `${kindOf(type)} "${written(path)}"`, `a ${kind} for this form`, 'Name another path, or another form.')
+}
+
+function written(path: Path): string {
+  return path.map((step) => step.pick ? `${step.key}[${step.pick.field}=...]` : step.key).join('.')
+}

@@ -1,0 +1,24 @@
+import { blocks } from './blocks.ts'
+import { caveat } from './caveat.ts'
+import { chart } from './chart.ts'
+import { contents } from './contents.ts'
+import type { Directive, DirectiveNode } from './directive.ts'
+import { each } from './each.ts'
+import { figure } from './figure.ts'
+import { glossary } from './glossary.ts'
+import { say } from './say.ts'
+import { section } from './section.ts'
+import { table } from './table.ts'
+import { when } from './when.ts'
+
+/** The template language: every word it has. */
+export const directives: readonly Directive[] = [section, figure, say, caveat, chart, table, contents, glossary, when, each, ...blocks]
+
+export function directiveOf(node: DirectiveNode): Directive | undefined {
+  return directives.find(({ type, name }) => type === node.type && name === node.name)
+}
+
+/** Names that a directive of the type may have. */
+export function namesOf(type: Directive['type']): readonly string[] {
+  return directives.filter((directive) => directive.type === type).map(({ name }) => name)
+}

@@ -1,0 +1,57 @@
+import type {} from 'remark-directive'
+import type {} from 'remark-rehype'
+import type { RootContent } from 'mdast'
+import type { Table } from '../../tables/table.ts'
+import type { Words } from '../../words/words.ts'
+import type { Reporter } from '../faults.ts'
+import type { Scope } from '../path.ts'
+import type { TypeScope } from '../path-types.ts'
+import type { Sentences } from '../sentences.ts'
+
+export type TextDirective = Extract<RootContent, { type: 'textDirective' }>
+export type LeafDirective = Extract<RootContent, { type: 'leafDirective' }>
+export type ContainerDirective = Extract<RootContent, { type: 'containerDirective' }>
+export type DirectiveNode = TextDirective | LeafDirective | ContainerDirective
+export type DirectiveType = DirectiveNode['type']
+
+/** What a directive is checked against, whatever the findings of the month. */
+export interface CheckContext {
+  readonly words: Words
+  readonly sentences: Sentences
+  readonly charts: readonly string[]
+  readonly tables: readonly Table[]
+  readonly sections: readonly string[]
+  /** Ids that a link inside the document may lead to. */
+  readonly anchors: ReadonlySet<string>
+}
+
+/** What a directive is filled from. */
+export interface FillContext {
+  readonly words: Words
+  readonly sentences: Sentences
+  readonly tables: readonly Table[]
+  /** Tree of a section, filled in the scope of the whole findings. */
+  readonly section: (name: string) => readonly RootContent[]
+}
+
+/** One use of a directive in a template. */
+export interface Use {
+  readonly node: DirectiveNode
+  readonly attributes: Readonly<Record<string, string>>
+}
+
+/**
+ * A word of the template language. Checking knows types and no values, filling knows values and finds nothing wrong:
+ * so a template's faults don't depend on the month.
+ */
+export interface Directive {
+  readonly type: DirectiveType
+  readonly name: string
+  /** Attributes that must, and that may, be given. */
+  readonly needs: readonly string[]
+  readonly may: readonly string[]
+  /** Report what is wrong; returns the scope that the children are checked in. */
+  readonly check: (use: Use, scope: TypeScope, context: CheckContext, reporter: Reporter) => TypeScope
+  /** What stands in its place; `children` fills the directive's own children in a scope. */
+  readonly fill: (use: Use, scope: Scope, context: FillContext, children: (scope: Scope) => readonly RootContent[]) => readonly RootContent[]
+}

@@ -1,0 +1,21 @@
+import { nearest } from '../faults.ts'
+import type { Directive } from './directive.ts'
+import { wrapped } from './elements.ts'
+
+/** `::section{name="opinion"}`: a file of the folder `sections`. Only the review itself lists sections. */
+export const section: Directive = {
+  type: 'leafDirective', name: 'section', needs: ['name'], may: [],
+  check: ({ node, attributes }, scope, context, reporter) => {
+    const name = attributes['name'] ?? ''
+    if (reporter.place.includes('sections/')) {
+      reporter.report(node, 'section-nested', `section "${name}" inside a section`, 'it in the list of the review', 'Move it there.')
+    } else if (!context.sections.includes(name)) {
+      reporter.report(node, 'section-unknown', `section "${name}"`, 'a file of the folder sections', nearest(name, context.sections))
+    }
+    return scope
+  },
+  fill: ({ attributes }, _scope, context) => {
+    const name = attributes['name'] ?? ''
+    return [wrapped('section', { id: name, className: ['section', `section-${name}`] }, context.section(name))]
+  },
+}

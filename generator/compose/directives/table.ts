@@ -1,0 +1,65 @@
+import { checkCondition } from '../check-paths.ts'
+import { argumentsFor } from '../sentences.ts'
+import { checkMessage } from '../check-message.ts'
+import { nearest } from '../faults.ts'
+import type { TypeScope } from '../path-types.ts'
+import { readSelection, selectionKeys } from '../read-selection.ts'
+import { createReporter } from '../faults.ts'
+import { selected } from '../selection.ts'
+import type { Row } from '../../tables/table.ts'
+import { columnHeader, parseColumns } from '../table-columns.ts'
+import { tableTree } from '../table-tree.ts'
+import type { CheckContext, Directive, Use } from './directive.ts'
+import { standing } from './elements.ts'
+import { checkMade, madeLink } from './made-link.ts'
+import type { Reporter } from '../faults.ts'
+
+const choosing = selectionKeys.filter((key) => key !== 'of')
+
+/**
+ * `::table{name="venues" columns="label, mentions, level, level_low..level_high"}`: a table behind the charts, as a table.
+ * `a..b` is one column with an interval. `where`, `by`, `order` and `most` choose rows, by the names of its columns.
+ */
+export const table: Directive = {
+  type: 'leafDirective', name: 'table', needs: ['name', 'columns'], may: [...choosing, 'made'],
+  check: (use, scope, context, reporter) => {
+    const { node, attributes } = use
+    const name = attributes['name'] ?? ''
+    const found = context.tables.find((known) => known.name === name)
+    if (!found) reporter.report(node, 'table-unknown', `table "${name}"`, 'a known table', nearest(name, context.tables.map((known) => known.name)))
+    else {
+      checkMessage(`table-${name}`, scope, context, node, reporter)
+      checkColumns(use, found.columns.map((column) => column.key), context, reporter)
+      checkRows(use, { ...scope, item: { properties: Object.fromEntries(found.columns.map(({ key }) => [key, {}])) } }, reporter)
+    }
+    checkMade(attributes['made'], node, context, reporter)
+    return scope
+  },
+  fill: ({ node, attributes }, scope, { words, sentences, tables }) => {
+    const name = attributes['name'] ?? ''
+    const found = tables.find((known) => known.name === name)
+    const selection = readSelection({ ...attributes, of: 'rows' }, node, createReporter('', []))
+    if (!found || !selection) return []
+    const rows = selected(selection, { ...scope, names: { ...scope.names, rows: found.rows } }) as readonly Row[]
+    const caption = words.say(`table-${name}`, argumentsFor(sentences.get(`table-${name}`), scope, words))
+    return [standing(tableTree({ ...found, rows }, parseColumns(attributes['columns'] ?? ''), { caption, after: madeLink(attributes['made'], words) }, words))]
+  },
+}
+
+function checkColumns({ node, attributes }: Use, known: readonly string[], context: CheckContext, reporter: Reporter): void {
+  for (const column of parseColumns(attributes['columns'] ?? '')) {
+    for (const key of column.keys.filter((key) => !known.includes(key))) {
+      reporter.report(node, 'column-unknown', `column "${key}"`, `a column of table "${attributes['name']}"`, nearest(key, known))
+    }
+    const header = columnHeader(column)
+    if (!context.words.has(header)) reporter.report(node, 'message-unknown', `message "${header}"`, 'the header of a column', 'Add it to the catalogue.')
+  }
+}
+
+function checkRows({ node, attributes }: Use, scope: TypeScope, reporter: Reporter): void {
+  const selection = readSelection({ ...attributes, of: 'rows' }, node, reporter)
+  if (selection?.where) checkCondition(selection.where, scope, node, reporter)
+  const by = selection?.by?.[0]?.key
+  const known = Object.keys(scope.item?.properties ?? {})
+  if (by !== undefined && !known.includes(by)) reporter.report(node, 'column-unknown', `column "${by}"`, 'a column to sort by', nearest(by, known))
+}

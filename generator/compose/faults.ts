@@ -1,0 +1,27 @@
+import { closest } from 'fastest-levenshtein'
+import type { Node } from 'unist'
+import type { Fault } from '../faults/fault.ts'
+
+/** Collects what is wrong in one file; all faults of a template are told at once. */
+export interface Reporter {
+  readonly place: string
+  readonly report: (at: Pick<Node, 'position'> | undefined, code: string, unexpected: string, expected: string, mend: string) => void
+}
+
+/** A reporter that adds to `faults`, naming file, line and column. */
+export function createReporter(place: string, faults: Fault[]): Reporter {
+  return {
+    place,
+    report: (at, code, unexpected, expected, mend) => {
+      const start = at?.position?.start
+      const where = start ? `${place}:${start.line}:${start.column}` : place
+      faults.push({ code, place: where, message: `Unexpected ${unexpected}, expected ${expected}`, mend })
+    },
+  }
+}
+
+/** The mend for a misspelt name: the nearest of those known. */
+export function nearest(name: string, known: readonly string[]): string {
+  if (known.length === 0) return `Remove "${name}": none is known.`
+  return `Write "${closest(name, known)}", if that is meant; known are ${known.join(', ')}.`
+}

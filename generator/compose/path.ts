@@ -1,0 +1,63 @@
+/**
+ * Paths into the findings: `opinion.change.mean`, `venue.label` inside a block repeated as `venue`, and
+ * `decomposition.parts[part=venue_mix].estimate`, the item of a list that a field picks out; with `@` the wanted value
+ * is itself looked up: `decomposition.parts[part=@decomposition.largest].estimate`.
+ */
+export type Path = readonly Step[]
+
+export interface Step {
+  readonly key: string
+  readonly pick?: { readonly field: string, readonly value: string | Path }
+}
+
+/** Where paths start: the item at hand (inside `where`, `by`), the names given by `each`, the findings. First found wins. */
+export interface Scope {
+  readonly findings: unknown
+  readonly names: Readonly<Record<string, unknown>>
+  readonly item?: unknown
+}
+
+const stepForm = /^([\p{L}\p{N}_-]+)(?:\[([\w-]+)=(@?)([^\]]+)\])?$/u
+
+/** Read a path; undefined where the text is none. */
+export function parsePath(text: string): Path | undefined {
+  const steps = split(text).map(parseStep)
+  return steps.every((step) => step !== undefined) ? steps : undefined
+}
+
+/** Split at dots outside brackets. */
+function split(text: string): readonly string[] {
+  return text.split(/\.(?![^[]*\])/)
+}
+
+function parseStep(text: string): Step | undefined {
+  const [, key, field, reference, value] = stepForm.exec(text) ?? []
+  if (key === undefined) return undefined
+  if (field === undefined || value === undefined) return { key }
+  const wanted = reference === '@' ? parsePath(value) : value
+  return wanted === undefined ? undefined : { key, pick: { field, value: wanted } }
+}
+
+/** The value at a path; undefined where there is none. Total: it never throws. */
+export function lookUp(path: Path, scope: Scope): unknown {
+  const [first] = path
+  if (!first) return undefined
+  return path.reduce<unknown>((value, step) => follow(value, step, scope), startOf(first.key, scope))
+}
+
+function startOf(key: string, scope: Scope): unknown {
+  if (hasOwn(scope.item, key)) return scope.item
+  return hasOwn(scope.names, key) ? scope.names : scope.findings
+}
+
+function follow(value: unknown, step: Step, scope: Scope): unknown {
+  const next = hasOwn(value, step.key) ? value[step.key] : undefined
+  if (!step.pick) return next
+  const { field, value: wanted } = step.pick
+  const sought = typeof wanted === 'string' ? wanted : lookUp(wanted, scope)
+  return Array.isArray(next) ? next.find((item: unknown) => hasOwn(item, field) && String(item[field]) === String(sought)) : undefined
+}
+
+function hasOwn(value: unknown, key: string): value is Record<string, unknown> {
+  return typeof value === 'object' && value !== null && Object.hasOwn(value, key)
+}

@@ -1,0 +1,100 @@
+import { LineCounter, isMap, isScalar, parseDocument } from 'yaml'
+import type { ParsedNode } from 'yaml'
+import type { FormName } from '../words/forms.ts'
+import { formNames, isFormName, write } from '../words/forms.ts'
+import type { WordArguments, Words } from '../words/words.ts'
+import { nearest } from './faults.ts'
+import type { Reporter } from './faults.ts'
+import { lookUp, parsePath } from './path.ts'
+import type { Path, Scope } from './path.ts'
+import { readSelection, selectionKeys } from './read-selection.ts'
+import { selected } from './selection.ts'
+import type { Selection } from './selection.ts'
+
+/**
+ * Which figures a worded sentence is given: declared once, free of language, in `sentences.yaml`.
+ *
+ *     opinion-headline:
+ *       size: { of: opinion.change.mean, as: size }
+ *       venues: { of: venues, where: movement is down, by: drift.mean, order: size, most: 2, pick: label, as: list }
+ */
+export type Sentences = ReadonlyMap<string, Sentence>
+
+export interface Sentence {
+  readonly arguments: Readonly<Record<string, Argument>>
+  readonly position: Position
+}
+
+export interface Argument {
+  readonly of: Path
+  readonly as: FormName
+  /** Only with lists: which items, and what of each. */
+  readonly selection?: Selection
+  readonly pick?: Path
+  readonly position: Position
+}
+
+interface Position { readonly start: Point, readonly end: Point }
+interface Point { readonly line: number, readonly column: number }
+
+/** Read `sentences.yaml`; what can't be read is reported and left out. */
+export function parseSentences(text: string, reporter: Reporter): Sentences {
+  const lines = new LineCounter()
+  const document = parseDocument(text, { lineCounter: lines })
+  const place = placeIn(lines)
+  for (const error of document.errors) {
+    const { line, col: column } = lines.linePos(error.pos[0])
+    const point = { line, column }
+    reporter.report({ position: { start: point, end: point } }, 'sentences-invalid', `YAML (${error.message.split('\n')[0]})`, 'a map from messages to arguments', 'Mend the syntax.')
+  }
+  return new Map(entries(document.contents).map(([message, node]) => {
+    const position = place(node)
+    const found = entries(node).map(([name, spec]) => [name, readArgument(name, asStrings(spec), place(spec), reporter)] as const)
+    return [message, { position, arguments: Object.fromEntries(found.filter((entry): entry is [string, Argument] => entry[1] !== undefined)) }]
+  }))
+}
+
+function readArgument(name: string, spec: Readonly<Record<string, string>>, position: Position, reporter: Reporter): Argument | undefined {
+  const known = [...selectionKeys, 'as', 'pick']
+  const wrong = Object.keys(spec).filter((key) => !known.includes(key))
+  for (const key of wrong) reporter.report({ position }, 'argument-key-unknown', `key "${key}" of argument "${name}"`, 'a known key', nearest(key, known))
+  const form = spec['as'] ?? ''
+  if (!isFormName(form)) reporter.report({ position }, 'form-unknown', `form "${form}" of argument "${name}"`, 'a known form', nearest(form, formNames))
+  const selection = readSelection(spec, { position }, reporter)
+  const pick = spec['pick'] === undefined ? undefined : parsePath(spec['pick'])
+  if (!selection || !isFormName(form) || wrong.length > 0) return undefined
+  const chooses = ['where', 'by', 'order', 'most', 'pick'].some((key) => key in spec)
+  return { of: selection.of, as: form, position, ...(chooses && { selection }), ...(pick && { pick }) }
+}
+
+/** The arguments of a sentence, written from the findings. */
+export function argumentsFor(sentence: Sentence | undefined, scope: Scope, words: Words): WordArguments {
+  return Object.fromEntries(Object.entries(sentence?.arguments ?? {}).map(([name, argument]) => [name, write(valueOf(argument, scope, words), argument.as, words)]))
+}
+
+function valueOf(argument: Argument, scope: Scope, words: Words): unknown {
+  if (!argument.selection) return lookUp(argument.of, scope)
+  const { pick } = argument
+  return selected(argument.selection, scope).map((item) => {
+    if (!pick) return item
+    const isLabel = pick.length === 1 && pick[0]?.key === 'label'
+    return isLabel ? write(item, 'label', words) : lookUp(pick, { ...scope, item })
+  })
+}
+
+function entries(node: unknown): readonly (readonly [string, ParsedNode | null])[] {
+  if (!isMap<ParsedNode, ParsedNode | null>(node)) return []
+  return node.items.map((pair) => [isScalar(pair.key) ? String(pair.key.value) : '', pair.value])
+}
+
+function asStrings(node: ParsedNode | null): Record<string, string> {
+  return Object.fromEntries(entries(node).map(([key, value]) => [key, isScalar(value) ? String(value.value) : '']))
+}
+
+function placeIn(lines: LineCounter): (node: ParsedNode | null) => Position {
+  return (node) => {
+    const { line, col } = lines.linePos(node?.range[0] ?? 0)
+    const point = { line, column: col }
+    return { start: point, end: point }
+  }
+}

@@ -1,0 +1,17 @@
+/** A column of a printed table: one column of the figures, or the two bounds of an interval. */
+export interface PrintedColumn {
+  readonly keys: readonly [string] | readonly [low: string, high: string]
+}
+
+/** Read `label, mentions, level_low..level_high`. */
+export function parseColumns(text: string): readonly PrintedColumn[] {
+  return text.split(',').map((column) => column.trim()).filter((column) => column !== '').map((column) => {
+    const [first = '', second] = column.split('..')
+    return { keys: second === undefined ? [first] : [first, second] }
+  })
+}
+
+/** The message that words a column's header: `column-mentions`; every interval has the same. */
+export function columnHeader({ keys }: PrintedColumn): string {
+  return keys.length === 2 ? 'column-interval' : `column-${keys[0]}`
+}

@@ -1,0 +1,42 @@
+import type { FormName } from './forms.ts'
+import { write } from './forms.ts'
+import type { WordArgument, Words } from './words.ts'
+
+/** How each figure of a caveat is written, by its name. */
+const formOf: Readonly<Record<string, FormName>> = {
+  share: 'share', from: 'share', to: 'share', correlation: 'number', pareto_k: 'number', ess: 'count',
+  raw_change: 'size', change: 'change', first: 'date', last: 'date', factor: 'factor',
+  mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain',
+}
+
+export const caveatParts = ['title', 'evidence', 'meaning', 'remedy'] as const
+export type CaveatPart = (typeof caveatParts)[number]
+
+/** A caveat's figures as arguments of its messages; `raw_change_sign` and `change_sign` choose cases. */
+export function caveatArguments(figures: Readonly<Record<string, string | number>>, words: Words): Record<string, WordArgument> {
+  return Object.fromEntries(Object.entries(figures).flatMap(([name, value]) => {
+    const written = [name, writeFigure(name, value, words)] as const
+    return name.endsWith('change') && typeof value === 'number' ? [written, [`${name}_sign`, write(value, 'sign', words)] as const] : [written]
+  }))
+}
+
+/** Dates are written by the form of dates, numbers by the form of their name, all else as it stands. */
+function writeFigure(name: string, value: string | number, words: Words): WordArgument {
+  const form = formOf[name]
+  if (typeof value === 'number') return write(value, form === undefined || form === 'factor' || form === 'date' ? 'number' : form, words)
+  if (form === 'date' && /^\d{4}-\d{2}-\d{2}$/.test(value)) return write(value, 'date', words)
+  return form === 'factor' ? write(value, 'factor', words) : value
+}
+
+/**
+ * Word a caveat from its code and its figures: what was seen, what it means, what mends it.
+ *
+ * @throws {Error} for a code or a figure that the catalogue doesn't know, which is a fault of the program
+ */
+export function wordCaveat(
+  words: Words, code: string, figures: Readonly<Record<string, string | number>>,
+): { readonly evidence: string, readonly meaning: string, readonly remedy: string } {
+  const args = caveatArguments(figures, words)
+  const say = (part: CaveatPart) => words.say(`caveat-${code}-${part}`, args)
+  return { evidence: say('evidence'), meaning: say('meaning'), remedy: say('remedy') }
+}

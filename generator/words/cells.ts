@@ -1,0 +1,49 @@
+import type { Cell, Column, ColumnKind, Row } from '../tables/table.ts'
+import type { FormName } from './forms.ts'
+import { write } from './forms.ts'
+import { levelLabel } from './labels.ts'
+import { interval } from './numbers.ts'
+import * as numbers from './numbers.ts'
+import type { Words } from './words.ts'
+
+const formOf: Readonly<Record<ColumnKind, FormName>> = {
+  text: 'text', date: 'short-date', count: 'count', points: 'points', change: 'change', share: 'column-share', probability: 'probability-figure', number: 'number',
+}
+
+/** Whether a column of the kind can head a row. */
+export function isRowLabel(kind: string): boolean {
+  return kind === 'text' || kind === 'date'
+}
+
+/**
+ * A value that the findings name by a code, in words: `value-part-venue_mix`. A value that the catalogue doesn't know is
+ * the account's own and stays as it is; the mix of a factor that the account adds is worded by the factor's name.
+ */
+export function valueWord(words: Words, column: string, value: string): string {
+  const key = `value-${column}-${value}`
+  if (words.has(key)) return words.say(key)
+  return column === 'part' && value.endsWith('_mix') ? words.say('value-part-factor_mix', { factor: value.slice(0, -'_mix'.length) }) : value
+}
+
+/** A cell of a table as people read it. */
+export function writeCell(column: Column, row: Row, words: Words): string {
+  const value = row[column.key] ?? null
+  if (value === null) return words.say('cell-empty')
+  if (typeof value === 'boolean') return words.say(value ? 'cell-yes' : 'cell-no')
+  if (typeof value === 'number') return String(write(value, formOf[column.kind], words))
+  if (column.kind === 'date') return String(write(value, 'short-date', words))
+  return writeText(column.key, value, row, words)
+}
+
+function writeText(key: string, value: string, row: Row, words: Words): string {
+  const level = row['venue'] ?? row['level']
+  if (key === 'label' && typeof level === 'string') return levelLabel({ label: value, level }, words)
+  if (key === 'period') return String(write(value, 'period', words))
+  return key === 'factor' ? String(write(value, 'factor', words)) : valueWord(words, key, value)
+}
+
+/** Two bounds in one cell: `1.2 to 5.0`. */
+export function writeBounds(low: Cell, high: Cell, kind: ColumnKind, words: Words): string {
+  if (typeof low !== 'number' || typeof high !== 'number') return words.say('cell-empty')
+  return interval({ low, high }, kind === 'change' ? numbers.change : kind === 'number' ? numbers.number : numbers.points, words)
+}

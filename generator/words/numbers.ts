@@ -1,0 +1,82 @@
+import type { Words } from './words.ts'
+
+/**
+ * Figures in the reader's locale. Rounding is Intl's: half away from zero. A figure that rounds to zero has no sign,
+ * and the minus is the true minus sign (U+2212), as wide as a figure and never a line break.
+ */
+type Style = Pick<Intl.NumberFormatOptions, 'style' | 'signDisplay' | 'minimumFractionDigits' | 'maximumFractionDigits' | 'maximumSignificantDigits' | 'roundingPriority'>
+
+function figure(value: number, locale: string, style: Style): string {
+  const parts = new Intl.NumberFormat(locale, { signDisplay: 'negative', ...style }).formatToParts(value)
+  return parts.map((part) => part.type === 'minusSign' ? '\u2212' : part.value).join('')
+}
+
+const oneDecimal = { minimumFractionDigits: 1, maximumFractionDigits: 1 } as const
+
+/** Points, one decimal: `18.4`, `−0.3`. */
+export function points(value: number, locale: string): string {
+  return figure(value, locale, oneDecimal)
+}
+
+/** A change in points, with its sign: `+2.7`, `−0.3`, `0.0`. */
+export function change(value: number, locale: string): string {
+  return figure(value, locale, { ...oneDecimal, signDisplay: 'exceptZero' })
+}
+
+/** How far something moved, without its sign: `2.7`. */
+export function size(value: number, locale: string): string {
+  return figure(Math.abs(value), locale, oneDecimal)
+}
+
+/** A whole number, grouped: `12,480`. */
+export function count(value: number, locale: string): string {
+  return figure(value, locale, { maximumFractionDigits: 0 })
+}
+
+/** A plain figure of a diagnostic, a ratio or a scale: two decimals. */
+export function number(value: number, locale: string): string {
+  return figure(value, locale, { minimumFractionDigits: 2, maximumFractionDigits: 2 })
+}
+
+/** A share as a percentage for running text: whole from 10 % on, else one decimal. */
+export function share(value: number, locale: string): string {
+  return figure(value, locale, { style: 'percent', maximumFractionDigits: Math.abs(value) < 0.0995 ? 1 : 0 })
+}
+
+/** A share as a percentage for a column: always one decimal, so that decimals stand below each other. */
+export function shareInColumn(value: number, locale: string): string {
+  return figure(value, locale, { style: 'percent', ...oneDecimal })
+}
+
+/** A probability as a percentage, never rounded to certainty: `87%`, `over 99%`, `under 1%`. */
+export function probabilityFigure(value: number, words: Words): string {
+  const percent = (p: number) => figure(p, words.locale, { style: 'percent', maximumFractionDigits: 0 })
+  if (value > 0.99) return words.say('probability-over', { figure: percent(0.99) })
+  if (value < 0.01) return words.say('probability-under', { figure: percent(0.01) })
+  return percent(value)
+}
+
+/**
+ * A probability in words: which of seven bands it falls in.
+ *
+ * @see Mastrandrea et al. (2010), Guidance Note for Lead Authors of the IPCC Fifth Assessment Report on Consistent Treatment
+ * of Uncertainties, table 1: over 99, 90, 66 per cent; 33 to 66; under 33, 10, 1 per cent
+ */
+export function probabilityBand(value: number): string {
+  if (value > 0.99) return 'virtually-certain'
+  if (value > 0.9) return 'very-likely'
+  if (value > 0.66) return 'likely'
+  if (value >= 0.33) return 'open'
+  if (value >= 0.1) return 'unlikely'
+  return value >= 0.01 ? 'very-unlikely' : 'exceptionally-unlikely'
+}
+
+/** In words and figure: `very likely (94%)`. */
+export function probability(value: number, words: Words): string {
+  return words.say('probability', { band: probabilityBand(value), figure: probabilityFigure(value, words) })
+}
+
+/** Two bounds as `1.2 to 5.0`, both formatted alike. */
+export function interval(bounds: { readonly low: number, readonly high: number }, format: (value: number, locale: string) => string, words: Words): string {
+  return words.say('range', { low: format(bounds.low, words.locale), high: format(bounds.high, words.locale) })
+}
