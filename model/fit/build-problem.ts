@@ -1,0 +1,65 @@
+import type { IntakeTables } from '../intake/intake-tables.ts'
+import { priors, walkFactor } from './priors.ts'
+import type { FitCells, FitProblem, FixedGroup, Scale, ScalePositions } from './problem.ts'
+
+/**
+ * Lay out the model of section 2 for these tables: which venue walks, which effects stand still, where each
+ * standard deviation sits. A factor with one level has no effect term; one venue alone has no drift.
+ *
+ * @param variance - shape (cells), V_c of every cell
+ */
+export function buildProblem(tables: IntakeTables, variance: Float64Array): FitProblem {
+  const steps = tables.timeline.steps.length
+  const venueLevels = tables.factors[0].levels
+  const several = venueLevels.length > 1
+  const walking = several ? venueLevels.flatMap((level, v) => (level.anchor ? [] : [v])) : []
+  const factor = walkFactor(tables.timeline.stepDays)
+
+  const scales: Scale[] = [{ name: 'mu', prior: priors.mu * factor }]
+  const drift = Int32Array.from(walking, (v) => scales.push({ name: `venue_drift.${venueLevels[v].name}`, prior: priors.venueDrift * factor }) - 1)
+  const venueScale = several ? scales.push({ name: 'venue', prior: priors.fixedFactor }) - 1 : -1
+
+  const groups: FixedGroup[] = []
+  let border = 0
+  const addGroup = (name: string, count: number, scale: number): number => {
+    const from = border
+    groups.push({ name, from, count, scale })
+    border += count
+    return from
+  }
+  const venueWalk = new Int32Array(venueLevels.length)
+  walking.forEach((v, w) => { venueWalk[v] = w + 1 })
+  const venueFixed = new Int32Array(venueLevels.length).fill(-1)
+  const anchored = several ? venueLevels.flatMap((level, v) => (level.anchor ? [v] : [])) : []
+  if (anchored.length > 0) {
+    const from = addGroup('venue', anchored.length, venueScale)
+    anchored.forEach((v, i) => { venueFixed[v] = from + i })
+  }
+  const columns: { readonly factor: number; readonly from: number }[] = []
+  tables.factors.forEach(({ name, levels }, f) => {
+    if (f === 0 || levels.length < 2) return
+    columns.push({ factor: f, from: addGroup(name, levels.length, scales.push({ name, prior: priors.fixedFactor }) - 1) })
+  })
+  const tau = scales.push({ name: 'tau', prior: priors.tau }) - 1
+  const position: ScalePositions = { mu: 0, drift, venue: venueScale, tau }
+  return {
+    steps, walks: walking.length, venueWalk, venueFixed, groups, border,
+    cells: layCells(tables, columns, variance),
+    movementMultiplier: new Float64Array(steps).fill(1),
+    scales, position, initialSd: priors.initial,
+  }
+}
+
+function layCells(tables: IntakeTables, columns: readonly { readonly factor: number; readonly from: number }[], variance: Float64Array): FitCells {
+  const { cells, timeline } = tables
+  const start = new Int32Array(timeline.steps.length + 1)
+  for (let c = 0; c < cells.count; c++) start[cells.step[c] + 1]++
+  for (let t = 0; t < timeline.steps.length; t++) start[t + 1] += start[t]
+  const q = columns.length
+  const fixed = new Int32Array(cells.count * q)
+  columns.forEach(({ factor, from }, i) => {
+    const level = cells.levels[factor]
+    for (let c = 0; c < cells.count; c++) fixed[c * q + i] = from + level[c]
+  })
+  return { count: cells.count, start, venue: cells.levels[0], fixed, fixedPerCell: q, mean: cells.mean, variance }
+}
