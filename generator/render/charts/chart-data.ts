@@ -1,0 +1,57 @@
+import type { Column, Row, Table } from '../../tables/table.ts'
+import { levelLabel } from '../../words/labels.ts'
+import { change, count, points, shareInColumn } from '../../words/numbers.ts'
+import type { Words } from '../../words/words.ts'
+import type { DrawingSize, Theme } from '../theme.ts'
+import { wrapLabel } from './text-metrics.ts'
+
+/** One mark's worth of data: dates as milliseconds (UTC), labels broken into lines, figures beside their wording. */
+export type Datum = Readonly<Record<string, string | number | boolean | null>>
+
+export interface DataOptions {
+  readonly words: Words
+  readonly theme: Theme
+  readonly size: DrawingSize
+  /** Whether the chart uses a column of this name: only what is used is worded. */
+  readonly uses: (column: string) => boolean
+}
+
+/**
+ * A table as a chart reads it. Beside its own columns a row has, where the chart uses them:
+ * - `KEY_shown`: a figure as the document prints it;
+ * - `KEY_said`: the wording of a code, message `KEY-CODE` (`part-opinion`, `stage-received`);
+ * - `rank`: the row's place in the table, from 0.
+ */
+export function chartData(table: Table, options: DataOptions): readonly Datum[] {
+  return table.rows.map((row, rank) => ({ rank, ...Object.fromEntries(table.columns.flatMap((column) => cells(table, row, column, options))) }))
+}
+
+function cells(table: Table, row: Row, { key, kind }: Column, options: DataOptions): [string, Datum[string]][] {
+  const { words, uses } = options
+  const cell = row[key] ?? null
+  if (kind === 'date') return [[key, typeof cell === 'string' ? Date.parse(`${cell}T00:00:00Z`) : null]]
+  if (key === 'label') return [[key, wrapped(levelLabel({ label: String(cell), ...levelName(row) }, words), options)]]
+  if (typeof cell === 'string') return uses(`${key}_said`) ? [[key, cell], [`${key}_said`, wrapped(said(key, cell, words), options)]] : [[key, cell]]
+  if (typeof cell === 'number' && uses(`${key}_shown`)) return [[key, cell], [`${key}_shown`, shown(cell, kind, words.locale)]]
+  return [[key, cell]]
+}
+
+function levelName(row: Row): { readonly level?: string } {
+  const name = row.level ?? row.venue
+  return typeof name === 'string' ? { level: name } : {}
+}
+
+/** A code that has no message of its own (the mix of a factor that the account adds) is shown by its name. */
+function said(key: string, code: string, words: Words): string {
+  return words.has(`${key}-${code}`) ? words.say(`${key}-${code}`) : code.replaceAll('_', ' ')
+}
+
+function shown(value: number, kind: Column['kind'], locale: string): string {
+  if (kind === 'change') return change(value, locale)
+  if (kind === 'count') return count(value, locale)
+  return kind === 'share' || kind === 'probability' ? shareInColumn(value, locale) : points(value, locale)
+}
+
+function wrapped(label: string, { theme, size }: DataOptions): string {
+  return wrapLabel(label, theme.chart.label_widths[size], { fontSize: theme.chart.font_size }, theme.advances)
+}

@@ -1,0 +1,27 @@
+/** Figures and dates on axes in the reader's locale, as vega wants them, taken from Intl. */
+export function vegaLocale(locale: string) {
+  const parts = new Intl.NumberFormat(locale, { useGrouping: true, minimumFractionDigits: 1 }).formatToParts(-1234567.5)
+  const part = (type: Intl.NumberFormatPartTypes, otherwise: string): string => parts.find((candidate) => candidate.type === type)?.value ?? otherwise
+  return {
+    number: { decimal: part('decimal', '.'), thousands: part('group', ','), grouping: [3], currency: ['', ''] as [string, string], minus: '\u2212' },
+    time: {
+      dateTime: '%Y-%m-%d %H:%M', date: '%Y-%m-%d', time: '%H:%M', periods: ['AM', 'PM'] as [string, string],
+      days: days(locale, 'long'), shortDays: days(locale, 'short'),
+      months: months(locale, 'long'), shortMonths: months(locale, 'short'),
+    },
+  }
+}
+
+type Seven = [string, string, string, string, string, string, string]
+type Twelve = [...Seven, string, string, string, string, string]
+
+/** From Sunday on: 4 January 1970 was one. */
+function days(locale: string, width: 'long' | 'short'): Seven {
+  const format = new Intl.DateTimeFormat(locale, { weekday: width, timeZone: 'UTC' })
+  return Array.from({ length: 7 }, (_, index) => format.format(Date.UTC(1970, 0, 4 + index))) as Seven
+}
+
+function months(locale: string, width: 'long' | 'short'): Twelve {
+  const format = new Intl.DateTimeFormat(locale, { month: width, timeZone: 'UTC' })
+  return Array.from({ length: 12 }, (_, index) => format.format(Date.UTC(2000, index, 15))) as Twelve
+}
