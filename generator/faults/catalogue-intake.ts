@@ -1,0 +1,45 @@
+import type { Wording } from './catalogue.ts'
+
+/** Faults of the data files. */
+export const intakeWordings = {
+  'columns-absent': (details: { readonly columns: readonly string[]; readonly header: readonly string[]; readonly nearest: string }): Wording => ({
+    unexpected: `header ${details.header.map((name) => `\`${name}\``).join(', ')}`, expected: `the columns ${details.columns.map((name) => `\`${name}\``).join(', ')}`,
+    mend: `Mend \`columns\` of the account (nearest: \`${details.nearest}\`), or state \`delimiter\` if the header was cut wrongly.`,
+  }),
+  'header-twice': (details: { readonly column: string }): Wording => ({
+    unexpected: `second column \`${details.column}\``, expected: 'every column of the header once',
+    mend: 'Rename one of the two columns.',
+  }),
+  'file-unreadable': (details: { readonly reason: string }): Wording => ({
+    unexpected: `content (${details.reason})`, expected: 'a file of the kind that its name says',
+    mend: 'Export the file again, or leave it out of the account.',
+  }),
+  'no-mentions': (details: { readonly accounting: string }): Wording => ({
+    unexpected: `absence of mentions to model (${details.accounting})`, expected: 'at least one',
+    mend: 'Look at the reasons: the mapping of time, score, venue or brand, or the period asked for.',
+  }),
+  'no-whole-period': (details: { readonly first: string; readonly last: string; readonly kind: string }): Wording => ({
+    unexpected: `mentions from ${details.first} to ${details.last} only`, expected: `a whole ${details.kind}`,
+    mend: 'Name the period to review with --period, or wait until the first one is over.',
+  }),
+  'period-unknown': (details: { readonly name: string; readonly pattern: string }): Wording => ({
+    unexpected: `period \`${details.name}\``, expected: `a name such as ${details.pattern}`,
+    mend: 'Name a period of the kind that `reporting` of the account says.',
+  }),
+  'target-mix-level': (details: { readonly level: string; readonly known: readonly string[] }): Wording => ({
+    unexpected: `level \`${details.level}\``, expected: `a level that mentions are in: ${details.known.join(', ')}`,
+    mend: 'Mend the name, or take a level that nobody has posted in out of the target mix.',
+  }),
+  'cell-value': (details: { readonly actual: string; readonly expected: string }): Wording => ({
+    unexpected: details.actual === '' ? 'empty value' : `\`${details.actual}\``, expected: details.expected,
+    mend: `Give ${details.expected}, or leave the row out.`,
+  }),
+  'cell-twice': (details: { readonly cell: string; readonly first: string }): Wording => ({
+    unexpected: `second row of the cell ${details.cell}`, expected: 'one row a cell inside one source',
+    mend: `Join it with the one at ${details.first}.`,
+  }),
+  'cell-row': (details: { readonly reason: string }): Wording => ({
+    unexpected: `row (${details.reason})`, expected: 'as many fields as the header has',
+    mend: 'Mend the row: look for a stray delimiter or quote.',
+  }),
+} as const

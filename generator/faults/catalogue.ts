@@ -1,0 +1,28 @@
+import { accountWordings } from './catalogue-account.ts'
+import { intakeWordings } from './catalogue-intake.ts'
+import type { Fault } from './fault.ts'
+
+/** What a wording says: the two halves of "Unexpected X at PLACE, expected Y", and the mend. */
+export interface Wording {
+  readonly unexpected: string
+  readonly expected: string
+  readonly mend: string
+}
+
+const wordings = { ...accountWordings, ...intakeWordings }
+
+type Wordings = typeof wordings
+export type FaultCode = keyof Wordings
+type Details<C extends FaultCode> = Parameters<Wordings[C]>[0]
+
+/**
+ * The fault of a code at a place, worded.
+ *
+ * @param place - `account.yaml:12:3 venues.boards`, `mentions/2026.csv:17`, `mentions/2026.csv:17 score`
+ * @param details - what the wording of that code speaks of
+ */
+export function faultOf<C extends FaultCode>(code: C, place: string, details: Details<C>): Fault {
+  const say = wordings[code] as (details: Details<C>) => Wording
+  const { unexpected, expected, mend } = say(details)
+  return { code, place, message: `Unexpected ${unexpected} at ${place}, expected ${expected}.`, mend }
+}

@@ -1,0 +1,42 @@
+import type { CellColumns, Factor } from '../../model/intake/intake-tables.ts'
+import { joinParts, type CellPart } from './cell-part.ts'
+
+/**
+ * Cells as columns, sorted by step and then by the levels of each factor; parts of the same cell are joined.
+ *
+ * @param steps - day number on which each step begins
+ */
+export function cellColumns(parts: readonly CellPart[], steps: readonly number[], factors: readonly Factor[]): CellColumns {
+  const stepIndex = indexOf(steps)
+  const levelIndex = factors.map((factor) => indexOf(factor.levels.map((level) => level.name)))
+  const keyed = parts.map((part) => ({ part, key: [stepIndex.get(part.step)!, ...part.levels.map((level, factor) => levelIndex[factor]!.get(level)!)] }))
+  keyed.sort((a, b) => compare(a.key, b.key))
+  const cells: { part: CellPart; readonly key: readonly number[] }[] = []
+  for (const { part, key } of keyed) {
+    const last = cells.at(-1)
+    if (last !== undefined && compare(last.key, key) === 0) last.part = joinParts(last.part, part)
+    else cells.push({ part, key })
+  }
+  const column = (value: (part: CellPart) => number): Float64Array => Float64Array.from(cells, (cell) => value(cell.part))
+  return {
+    count: cells.length,
+    step: Int32Array.from(cells, (cell) => cell.key[0]!),
+    levels: factors.map((_, factor) => Int32Array.from(cells, (cell) => cell.key[factor + 1]!)),
+    mentions: column((part) => part.mentions),
+    authors: column((part) => part.authors),
+    mean: column((part) => part.mean),
+    squares: column((part) => part.squares),
+    freedom: column((part) => part.freedom),
+    clustering: column((part) => part.clustering),
+    deff: column((part) => part.deff),
+  }
+}
+
+function indexOf<T>(values: readonly T[]): ReadonlyMap<T, number> {
+  return new Map(values.map((value, index) => [value, index]))
+}
+
+function compare(a: readonly number[], b: readonly number[]): number {
+  for (const [index, value] of a.entries()) if (value !== b[index]) return value - b[index]!
+  return 0
+}

@@ -1,0 +1,111 @@
+import { createHash } from 'node:crypto'
+import { createReadStream, createWriteStream } from 'node:fs'
+import { isUtf8 } from 'node:buffer'
+import path from 'node:path'
+import { pipeline } from 'node:stream/promises'
+import { createGunzip } from 'node:zlib'
+import { faultOf } from '../faults/catalogue.ts'
+import { InputFault } from '../faults/fault.ts'
+
+/** A file of the account, looked over once: its hash, and where to read it as UTF-8. */
+export interface InputFile {
+  /** Relative to the account folder. */
+  readonly path: string
+  readonly sha256: string
+  readonly kind: FileKind
+  /** Absolute: the file itself, or its transcoded copy in the scratch folder. */
+  readonly readable: string
+  /** The beginning of its text, for the header; empty for Parquet. */
+  readonly start: string
+}
+
+export type FileKind = 'csv' | 'parquet' | 'ndjson'
+
+type Encoding = 'utf-8' | 'utf-16le' | 'windows-1252'
+
+const startLength = 1 << 16
+
+/** The kind of a file by its name. */
+export function fileKind(name: string): FileKind {
+  return name.endsWith('.parquet') ? 'parquet' : name.endsWith('.ndjson') ? 'ndjson' : 'csv'
+}
+
+/**
+ * Hash a file, see how its text is encoded, and put a UTF-8 copy into the scratch folder if it is not UTF-8.
+ * Bytes that are neither UTF-8 nor marked as UTF-16 are taken for windows-1252, in which every byte means something.
+ *
+ * @throws {InputFault} `file-unreadable`
+ */
+export async function lookOver(folder: string, file: string, scratch: string): Promise<InputFile> {
+  const absolute = path.join(folder, file)
+  const kind = fileKind(file)
+  try {
+    const { sha256, encoding, start } = kind === 'parquet' ? await hashOnly(absolute) : await hashText(absolute)
+    if (encoding === 'utf-8') return { path: file, sha256, kind, readable: absolute, start: decode(start, encoding) }
+    const copy = path.join(scratch, `${createHash('sha256').update(file).digest('hex').slice(0, 24)}.txt`)
+    await transcode(absolute, copy, encoding)
+    return { path: file, sha256, kind, readable: copy, start: decode(start, encoding) }
+  } catch (error) {
+    throw new InputFault([faultOf('file-unreadable', file, { reason: error instanceof Error ? error.message.split('\n')[0]! : 'no reason given' })])
+  }
+}
+
+interface Looked {
+  readonly sha256: string
+  readonly encoding: Encoding
+  readonly start: Buffer
+}
+
+async function hashOnly(absolute: string): Promise<Looked> {
+  const hash = createHash('sha256')
+  for await (const chunk of createReadStream(absolute, { highWaterMark: 1 << 20 }) as AsyncIterable<Buffer>) hash.update(chunk)
+  return { sha256: hash.digest('hex'), encoding: 'utf-8', start: Buffer.alloc(0) }
+}
+
+async function hashText(absolute: string): Promise<Looked> {
+  const hash = createHash('sha256')
+  const raw = createReadStream(absolute, { highWaterMark: 1 << 20 })
+  raw.on('data', (chunk) => { hash.update(chunk) })
+  let valid = true
+  let start = Buffer.alloc(0)
+  let rest = Buffer.alloc(0)
+  for await (const chunk of textOf(raw, absolute)) {
+    if (start.length < startLength) start = Buffer.concat([start, chunk.subarray(0, startLength - start.length)])
+    if (!valid) continue
+    const whole = rest.length === 0 ? chunk : Buffer.concat([rest, chunk])
+    const cut = lastBoundary(whole)
+    valid = isUtf8(whole.subarray(0, cut))
+    rest = Buffer.from(whole.subarray(cut))
+  }
+  const marked = start[0] === 0xff && start[1] === 0xfe
+  return { sha256: hash.digest('hex'), encoding: marked ? 'utf-16le' : valid && isUtf8(rest) ? 'utf-8' : 'windows-1252', start }
+}
+
+function textOf(raw: ReturnType<typeof createReadStream>, absolute: string): AsyncIterable<Buffer> {
+  if (!absolute.endsWith('.gz')) return raw as AsyncIterable<Buffer>
+  const unzipped = createGunzip()
+  raw.on('error', (error) => { unzipped.destroy(error) })
+  return raw.pipe(unzipped) as AsyncIterable<Buffer>
+}
+
+/** Where the last character that may go on in the next chunk begins: UTF-8 takes four bytes at most. */
+function lastBoundary(bytes: Buffer): number {
+  for (let back = 1; back <= Math.min(3, bytes.length); back++) {
+    const byte = bytes[bytes.length - back]!
+    if (byte >= 0xc0) return bytes.length - back
+    if (byte < 0x80) break
+  }
+  return bytes.length
+}
+
+function decode(start: Buffer, encoding: Encoding): string {
+  return new TextDecoder(encoding).decode(start)
+}
+
+async function transcode(absolute: string, copy: string, encoding: Encoding): Promise<void> {
+  const decoder = new TextDecoder(encoding)
+  await pipeline(textOf(createReadStream(absolute), absolute), async function* (chunks: AsyncIterable<Buffer>) {
+    for await (const chunk of chunks) yield decoder.decode(chunk, { stream: true })
+    yield decoder.decode()
+  }, createWriteStream(copy))
+}

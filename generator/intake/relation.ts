@@ -1,0 +1,72 @@
+import { closest } from 'fastest-levenshtein'
+import { faultOf } from '../faults/catalogue.ts'
+import { InputFault } from '../faults/fault.ts'
+import { csvForm, type StatedForm } from './csv-header.ts'
+import { identifier, literal, type Database } from './database.ts'
+import type { InputFile } from './input-file.ts'
+
+/** A file as SQL can select from it, every field as text. */
+export interface Relation {
+  readonly sql: string
+  /** SQL that gives a column of the file as VARCHAR. */
+  readonly column: (name: string) => string
+  readonly header: readonly string[]
+  /** For CSV: how its records are cut. */
+  readonly cut: { readonly delimiter: string; readonly quote: string } | null
+}
+
+/**
+ * The relation of a file. Of CSV, rows that cannot be cut into the header's fields go to `reject_errors`.
+ *
+ * @param wanted - columns that the file must have; lines of NDJSON may each lack any
+ * @throws {InputFault} `columns-absent`, `header-twice`, `file-unreadable`
+ */
+export async function relationOf(database: Database, file: InputFile, wanted: readonly string[], stated: StatedForm): Promise<Relation> {
+  if (file.kind === 'ndjson') return ndjsonRelation(file)
+  if (file.kind === 'parquet') return parquetRelation(database, file, wanted)
+  const { delimiter, quote, header } = csvForm(file.start, wanted, stated)
+  const twice = header.find((name, index) => header.indexOf(name) !== index)
+  requireColumns(file, wanted, header)
+  if (twice !== undefined && wanted.includes(twice)) throw new InputFault([faultOf('header-twice', `${file.path}:1`, { column: twice })])
+  // Columns that nobody asked for are named by their position: they may be nameless or alike.
+  const names = header.map((name, index) => (wanted.includes(name) ? `c:${name}` : `n:${index}`))
+  const types = names.map((name) => `${literal(name)}: 'VARCHAR'`).join(', ')
+  const options = `auto_detect = false, header = true, delim = ${literal(delimiter)}, quote = ${literal(quote)}, escape = ${literal(quote)}`
+  const sql = `read_csv(${literal(plainPath(file.readable))}, ${options}, columns = {${types}}, ignore_errors = true, store_rejects = true${zipped(file)})`
+  return { sql, column: (name) => identifier(`c:${name}`), header, cut: { delimiter, quote } }
+}
+
+function zipped(file: InputFile): string {
+  return file.readable.endsWith('.gz') ? ", compression = 'gzip'" : ''
+}
+
+/** A line is read as one field and picked apart, since rows that are no JSON would otherwise come as empty ones. */
+function ndjsonRelation(file: InputFile): Relation {
+  const sql = `(SELECT line, json_valid(line) AS sound FROM read_csv(${literal(plainPath(file.readable))}, auto_detect = false, header = false, delim = '', quote = '', escape = '', `
+    + `columns = {'line': 'VARCHAR'}, max_line_size = 33554432, ignore_errors = true, store_rejects = true${zipped(file)}))`
+  return { sql, column: (name) => `json_extract_string(line, ${literal(`$."${name.replace(/["\\]/g, '\\$&')}"`)})`, header: [], cut: null }
+}
+
+async function parquetRelation(database: Database, file: InputFile, wanted: readonly string[]): Promise<Relation> {
+  const sql = `read_parquet(${literal(plainPath(file.readable))})`
+  try {
+    const described = await database.rows<{ column_name: string }>(`SELECT column_name FROM (DESCRIBE SELECT * FROM ${sql})`)
+    const header = described.map((row) => row.column_name)
+    requireColumns(file, wanted, header)
+    return { sql, column: (name) => `CAST(${identifier(name)} AS VARCHAR)`, header, cut: null }
+  } catch (error) {
+    if (error instanceof InputFault) throw error
+    throw new InputFault([faultOf('file-unreadable', file.path, { reason: 'no Parquet' })])
+  }
+}
+
+function requireColumns(file: InputFile, wanted: readonly string[], header: readonly string[]): void {
+  const absent = wanted.filter((column) => !header.includes(column))
+  if (absent.length === 0) return
+  throw new InputFault([faultOf('columns-absent', `${file.path}:1`, { columns: absent, header, nearest: header.length === 0 ? 'none' : closest(absent[0]!, [...header]) })])
+}
+
+/** A path in which nothing is a pattern. */
+function plainPath(file: string): string {
+  return file.replace(/[[*?]/g, '[$&]')
+}

@@ -1,0 +1,28 @@
+import type { Period } from '../../model/intake/intake-tables.ts'
+import type { Account } from '../account/account.ts'
+import { dayNumber, isoDate } from '../calendar/days.ts'
+import { lastWholePeriod, periodNamed, periodPattern } from '../calendar/periods.ts'
+import { faultOf } from '../faults/catalogue.ts'
+import { InputFault } from '../faults/fault.ts'
+
+/** The period of a name. @throws {InputFault} `period-unknown` */
+export function namedPeriod(account: Account, name: string): Period {
+  const period = periodNamed(account.reporting, name)
+  if (period === undefined) throw new InputFault([faultOf('period-unknown', '--period', { name, pattern: periodPattern[account.reporting] })])
+  return period
+}
+
+/**
+ * The last whole period that the mentions cover: the last whose last day is not after the last mention's.
+ * The clock has no say.
+ *
+ * @param first, last - day numbers of the first and the last mention in scope
+ * @throws {InputFault} `no-whole-period`
+ */
+export function coveredPeriod(account: Account, first: number, last: number): Period {
+  const period = lastWholePeriod(account.reporting, last)
+  if (dayNumber(period.end) < first) {
+    throw new InputFault([faultOf('no-whole-period', 'mentions', { first: isoDate(first), last: isoDate(last), kind: account.reporting })])
+  }
+  return period
+}
