@@ -14,9 +14,9 @@ export function kishEffectiveSize(weights: ArrayLike<number>): number {
   let sum = 0
   let squares = 0
   for (let i = 0; i < weights.length; i += 1) {
-    const share = weights[i] / largest
-    sum += share
-    squares += share * share
+    const weight = weights[i] / largest
+    sum += weight
+    squares += weight * weight
   }
   return (sum * sum) / squares
 }
