@@ -20,7 +20,7 @@ export interface SmoothedWeights {
  * @param relativeEfficiency - of the draws, in (0, ...): 1 for independent ones
  * @throws {ModelError} `ratio-invalid` (names the index), `ratios-empty`, `efficiency-range`
  * @see Vehtari, Simpson, Gelman, Yao and Gabry (2024), Pareto smoothed importance sampling, JMLR 25(72)
- * @example [...paretoSmooth(Float64Array.of(0, Math.log(3))).weights] // => [0.25, 0.75]
+ * @example [...paretoSmooth(Float64Array.of(-7, -7, -Infinity)).weights] // => [0.5, 0.5, 0]
  */
 export function paretoSmooth(logRatios: Float64Array, relativeEfficiency = 1): SmoothedWeights {
   const largest = requireRatios(logRatios)
