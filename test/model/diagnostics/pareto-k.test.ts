@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest'
 import { paretoKLimit, paretoSmooth } from '../../../model/diagnostics/pareto-k.ts'
 import { createGenerator } from '../../../model/random/generator.ts'
+import { mean } from '../../../model/statistics/moments.ts'
 
 /** Log ratios of a standard normal target to draws from a normal of another width: heavy where that is narrower. */
 function normalRatios(width: number, draws: number) {
@@ -8,16 +9,31 @@ function normalRatios(width: number, draws: number) {
   const points = Float64Array.from({ length: draws }, () => width * generator.normal())
   return { points, logRatios: points.map((x) => -0.5 * x * x + 0.5 * (x / width) ** 2) }
 }
-const k = (width: number, draws = 4000) => paretoSmooth(normalRatios(width, draws).logRatios).paretoK.value ?? Number.NaN
 
-describe('a normal proposal', () => {
-  test('wider than the target is safe; the narrower, the heavier the tail: 1 - width^2 in the limit', () => {
-    expect(k(1.5)).toBeLessThan(0.3)
-    expect(k(0.3)).toBeGreaterThan(0.7)
-    expect(k(0.3)).toBeLessThan(1)
-    expect(k(0.7)).toBeLessThan(k(0.5))
+describe('an exponential proposal of rate b for one of rate 1: ratios have a Pareto tail of k = 1 - 1 / b exactly', () => {
+  const [draws, streams] = [10_000, 20]
+  const k = (rate: number) => {
+    const found = Array.from({ length: streams }, (_, stream) => {
+      const generator = createGenerator(72, stream)
+      return paretoSmooth(Float64Array.from({ length: draws }, () => -(1 - 1 / rate) * Math.log(generator.uniform()))).paretoK.value ?? Number.NaN
+    })
+    return mean(found)
+  }
+  /** Standard error of the mean of the streams: (1 + k) / root of the tail in each (Smith 1987, Annals of Statistics 15:1174-1207). */
+  const error = (expected: number) => (1 + expected) / Math.sqrt(3 * Math.sqrt(draws) * streams)
+
+  test.each([1.25, 2, 5])('rate %d: within 3.5 standard errors', (rate) => {
+    const expected = 1 - 1 / rate
+    expect(Math.abs(k(rate) - expected)).toBeLessThan(3.5 * error(expected))
   })
 
+  test('a wider proposal is safe; it can fail: rate 5 is not taken for rate 2', () => {
+    expect(k(0.8)).toBeLessThan(0)
+    expect(Math.abs(k(5) - 0.5)).toBeGreaterThan(3.5 * error(0.5))
+  })
+})
+
+describe('a normal proposal', () => {
   test('the weighted draws have the variance of the target', () => {
     const { points, logRatios } = normalRatios(1.3, 20_000)
     const { weights } = paretoSmooth(logRatios)
