@@ -73,8 +73,8 @@ const venue = z.strictObject({
   level: estimate, level_previous: estimate.nullable(), level_base: estimate,
   /** Mean of d over the period less its mean over the base. */
   drift: estimate, movement: movement,
-  /** Least-squares slope of the level over the last 13 weeks, points per 4 weeks. */
-  slope: estimate, slope_movement: movement,
+  /** Least-squares slope of the level over the last 13 weeks, points per 4 weeks; null with fewer than three steps. */
+  slope: estimate.nullable(), slope_movement: movement.nullable(),
   probability_drift_down: share,
   /** Standard deviation of scores inside the venue; null with fewer than two mentions. */
   spread: z.number().nullable(), spread_change: z.number().nullable(),

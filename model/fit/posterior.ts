@@ -27,6 +27,7 @@ export interface Posterior {
   readonly sigmas: WeightedSigmas
   /** Equally weighted joint draws: what is said about states comes from these. */
   readonly draws: StateDraws
+  /** Of the largest weights; 0 where they all agree and there is no tail to fit. */
   readonly paretoK: number
   /** Kish's effective number of the weighted proposals. */
   readonly effective: number
@@ -103,6 +104,7 @@ interface Round {
   readonly logWeights: Float64Array
   /** Smoothed, summing to 1. */
   readonly weights: Float64Array
+  /** Of the largest weights; 0 where they all agree and there is no tail to fit. */
   readonly paretoK: number
   readonly effective: number
   readonly logEvidence: number
@@ -128,8 +130,8 @@ async function weigh(problem: FitProblem, executor: FitExecutor, proposal: Propo
   const target = await logTarget(problem, executor, points)
   const density = proposalLogDensity(proposal, points)
   const logWeights = target.map((x, i) => x - density[i])
-  const { weights, k } = paretoSmooth(logWeights)
-  return { points, logWeights, weights, paretoK: k, effective: kishEffectiveSize(weights), logEvidence: logMeanExp(logWeights) }
+  const { weights, paretoK, effectiveSize } = paretoSmooth(logWeights)
+  return { points, logWeights, weights, paretoK: paretoK.value ?? 0, effective: effectiveSize, logEvidence: logMeanExp(logWeights) }
 }
 
 /** Log of evidence times prior, as a density over z: shape (n, d) in, (n) out. */

@@ -95,7 +95,7 @@ function invertCholesky(matrix: Float64Array, at: number, n: number): number {
  * @returns log determinant of Q, or NaN where Q is not positive definite to working precision
  */
 export function factorise(q: BorderedPrecision): number {
-  const { steps, block: b, border: s, diagonal, coupling, rows, corner } = q
+  const { steps, block: b, border: s, diagonal, rows, corner } = q
   let logDeterminant = 0
   for (let t = 0; t < steps; t++) {
     const d = t * b * b

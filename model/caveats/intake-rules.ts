@@ -1,0 +1,62 @@
+import { caveat, type CaveatRule } from './rule.ts'
+
+/** Share of mentions without an author above which it is told. */
+const manyUnknown = 0.2
+/** Distinct authors in the period under which a venue's own figures rest on too few. */
+const fewAuthors = 30
+/** Mentions in the period under which the whole review rests on little. */
+const fewMentions = 300
+/** A venue that starts or ends this many days inside the history has an uneven one. */
+const unevenDays = 28
+/** A venue not seen in this last stretch has vanished; first seen in it, appeared. In days. */
+const recentDays = 91
+
+/** Caveats that rest on what came in: authors, venues' histories, values and times. */
+export const intakeRules: readonly CaveatRule[] = [
+  ({ findings, reading }) => {
+    const known = reading.tables.accounting.withAuthor.reduce((a, b) => a + b, 0)
+    const all = reading.tables.cells.mentions.reduce((a, b) => a + b, 0)
+    if (known === 0) return [caveat('caution', 'authors-unknown', { share: 1 })]
+    if (known < all * (1 - manyUnknown)) {
+      return findings.venues.filter((venue) => venue.authors_known < 1 - manyUnknown)
+        .map((venue) => caveat('note', 'authors-partly-unknown', { venue: venue.label, share: 1 - venue.authors_known }))
+    }
+    return []
+  },
+  ({ reading }) => (reading.tables.accounting.readyMade ? [caveat('note', 'ready-made-authors')] : []),
+  ({ findings }) => (findings.venues.length === 1 ? [caveat('serious', 'one-venue')] : []),
+  ({ findings, reading }) => {
+    const { steps, stepDays } = reading.tables.timeline
+    const at = (step: string) => steps.indexOf(step)
+    const days = (from: number, to: number) => (to - from) * stepDays
+    return findings.venues.flatMap((venue) => {
+      const late = days(0, at(venue.first_step))
+      const early = days(at(venue.last_step), steps.length - 1)
+      if (early > recentDays) return [caveat('caution', 'venue-vanished', { venue: venue.label, last: venue.last_step })]
+      if (days(at(venue.first_step), steps.length - 1) < recentDays && late > unevenDays) return [caveat('caution', 'venue-appeared', { venue: venue.label, first: venue.first_step })]
+      return late > unevenDays || early > unevenDays ? [caveat('note', 'uneven-history', { venue: venue.label, first: venue.first_step, last: venue.last_step })] : []
+    })
+  },
+  ({ findings }) => findings.venues.filter((venue) => venue.authors < fewAuthors).map((venue) => caveat('note', 'venue-thin', { venue: venue.label, authors: venue.authors })),
+  ({ findings }) => (findings.opinion.mentions < fewMentions ? [caveat('caution', 'thin-data', { mentions: findings.opinion.mentions })] : []),
+  ({ findings }) => {
+    const empty = findings.opinion.series.filter((step) => step.mentions === 0).length
+    return empty === 0 ? [] : [caveat('note', 'empty-steps', { steps: empty })]
+  },
+  ({ reading }) => reading.tables.factors.flatMap(({ name, levels }, f) =>
+    levels.flatMap((level, l) => (reading.mix.source[f] === 'base' && levels.length > 1 && reading.mix.shares[f][l] === 0
+      ? [caveat('note', 'level-unseen-in-base', { factor: name, level: level.label })] : []))),
+  ({ reading }) => {
+    const { unmapped } = reading.tables.accounting
+    const factors = [...new Set(unmapped.map((row) => row.factor))]
+    return factors.map((factor) => {
+      const rows = unmapped.filter((row) => row.factor === factor)
+      return caveat('note', 'values-unmapped', { factor, values: rows.length, mentions: rows.reduce((total, row) => total + row.mentions, 0) })
+    })
+  },
+  ({ reading }) => {
+    const { reasons } = reading.tables.accounting
+    const count = (reasons['time-nonexistent'] ?? 0) + (reasons['time-doubled'] ?? 0)
+    return count === 0 ? [] : [caveat('note', 'clock-times', { count })]
+  },
+]
