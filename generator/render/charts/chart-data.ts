@@ -1,4 +1,5 @@
 import type { Column, Row, Table } from '../../tables/table.ts'
+import { valueWord } from '../../words/cells.ts'
 import { levelLabel } from '../../words/labels.ts'
 import { change, count, points, shareInColumn } from '../../words/numbers.ts'
 import type { Words } from '../../words/words.ts'
@@ -19,7 +20,7 @@ export interface DataOptions {
 /**
  * A table as a chart reads it. Beside its own columns a row has, where the chart uses them:
  * - `KEY_shown`: a figure as the document prints it;
- * - `KEY_said`: the wording of a code, message `KEY-CODE` (`part-opinion`, `stage-received`);
+ * - `KEY_said`: the wording of a code, as tables word it;
  * - `rank`: the row's place in the table, from 0.
  */
 export function chartData(table: Table, options: DataOptions): readonly Datum[] {
@@ -31,7 +32,7 @@ function cells(table: Table, row: Row, { key, kind }: Column, options: DataOptio
   const cell = row[key] ?? null
   if (kind === 'date') return [[key, typeof cell === 'string' ? Date.parse(`${cell}T00:00:00Z`) : null]]
   if (key === 'label') return [[key, wrapped(levelLabel({ label: String(cell), ...levelName(row) }, words), options)]]
-  if (typeof cell === 'string') return uses(`${key}_said`) ? [[key, cell], [`${key}_said`, wrapped(said(key, cell, words), options)]] : [[key, cell]]
+  if (typeof cell === 'string') return uses(`${key}_said`) ? [[key, cell], [`${key}_said`, wrapped(valueWord(words, key, cell), options)]] : [[key, cell]]
   if (typeof cell === 'number' && uses(`${key}_shown`)) return [[key, cell], [`${key}_shown`, shown(cell, kind, words.locale)]]
   return [[key, cell]]
 }
@@ -39,11 +40,6 @@ function cells(table: Table, row: Row, { key, kind }: Column, options: DataOptio
 function levelName(row: Row): { readonly level?: string } {
   const name = row.level ?? row.venue
   return typeof name === 'string' ? { level: name } : {}
-}
-
-/** A code that has no message of its own (the mix of a factor that the account adds) is shown by its name. */
-function said(key: string, code: string, words: Words): string {
-  return words.has(`${key}-${code}`) ? words.say(`${key}-${code}`) : code.replaceAll('_', ' ')
 }
 
 function shown(value: number, kind: Column['kind'], locale: string): string {

@@ -45,12 +45,10 @@ export function atSize(spec: ChartSpec, size: DrawingSize): ChartSpec {
 /** RFC 7396: objects are merged key by key, null removes a key, anything else replaces. */
 export function mergePatch(target: Json, patch: Json): Json {
   if (!isObject(patch)) return patch
-  const merged: Record<string, Json> = isObject(target) ? { ...target } : {}
-  for (const [key, value] of Object.entries(patch)) {
-    if (value === null) delete merged[key]
-    else merged[key] = mergePatch(merged[key] ?? null, value)
-  }
-  return merged
+  const base = isObject(target) ? target : {}
+  const kept = Object.entries(base).filter(([key]) => patch[key] !== null)
+  const changed = Object.entries(patch).filter(([, value]) => value !== null).map(([key, value]) => [key, mergePatch(base[key] ?? null, value)] as const)
+  return Object.fromEntries([...kept, ...changed])
 }
 
 /** Every string that begins with `@` becomes the message of that name. @throws {Error} for a message that the catalogue lacks */

@@ -1,0 +1,19 @@
+import type { Face, Theme } from './theme.ts'
+
+/** `@font-face` rules with the faces inside, only those that the text needs. */
+export function fontFaces(text: string, theme: Theme): string {
+  const characters = new Set([...text].map((character) => character.codePointAt(0) ?? 0))
+  return theme.faces.filter((face) => needed(face, characters)).map((face) => (
+    `@font-face{font-family:"${theme.chart.font}";font-style:normal;font-weight:${face.weight};font-display:block;` +
+    `src:url(data:font/woff2;base64,${Buffer.from(face.woff2).toString('base64')}) format("woff2");unicode-range:${face.range}}`
+  )).join('\n')
+}
+
+function needed(face: Face, characters: ReadonlySet<number>): boolean {
+  const ranges = face.range.split(',').map((range) => {
+    const [first, last] = range.replace('U+', '').split('-').map((hexadecimal) => Number.parseInt(hexadecimal, 16))
+    return { first, last: last ?? first }
+  })
+  // Combining marks stand in both subsets: they alone call for no second face.
+  return [...characters].some((character) => character > 0x1f && ranges.some(({ first, last }) => last - first > 1 && character >= first && character <= last))
+}

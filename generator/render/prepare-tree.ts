@@ -1,0 +1,60 @@
+import type { Element, Properties, Root } from 'hast'
+import { h } from 'hastscript'
+import { visit } from 'unist-util-visit'
+
+/** From how many columns on a table gets a landscape page of its own on paper. */
+const wideFrom = 9
+
+/** Where a chart goes: the element that holds it, and which. */
+export interface DrawingPlace {
+  readonly chart: string
+  /** Unique in the page, also where a chart is shown twice. */
+  readonly id: string
+}
+
+/**
+ * Make compose's tree ready for the page: each chart's frame gets the place of its drawing, with the text alternative on it; wide tables are
+ * marked; each line of the contents says whose page number it waits for.
+ *
+ * @returns a new tree, and the places to be drawn in, in order
+ */
+export function prepareTree(tree: Root): { readonly tree: Root, readonly places: readonly DrawingPlace[] } {
+  const prepared = structuredClone(tree)
+  const places: DrawingPlace[] = []
+  visit(prepared, 'element', (element) => {
+    if (typeof element.properties.dataChart === 'string') places.push(frameDrawing(element, element.properties.dataChart, places))
+    if (element.tagName === 'div' && hasClass(element, 'table')) markWide(element)
+    if (element.tagName === 'a') awaitPageNumber(element)
+  })
+  return { tree: prepared, places }
+}
+
+function frameDrawing(figure: Element, chart: string, before: readonly DrawingPlace[]): DrawingPlace {
+  const times = before.filter((place) => place.chart === chart).length
+  const id = times === 0 ? chart : `${chart}-${times + 1}`
+  const { dataAlt } = figure.properties
+  figure.properties = without(figure.properties, ['dataChart', 'dataAlt'])
+  figure.children.push(h('div.drawing', { role: 'img', ariaLabel: typeof dataAlt === 'string' ? dataAlt : '', dataDrawing: id }))
+  return { chart, id }
+}
+
+function markWide(region: Element): void {
+  let columns = 0
+  visit(region, 'element', (element) => { if (element.tagName === 'th' && element.properties.scope === 'col') columns += 1 })
+  region.properties = { ...without(region.properties, ['dataTable']), className: columns >= wideFrom ? ['table', 'wide'] : ['table'] }
+}
+
+function awaitPageNumber(link: Element): void {
+  const { href } = link.properties
+  const place = link.children.find((child): child is Element => child.type === 'element' && hasClass(child, 'page'))
+  if (place !== undefined && typeof href === 'string') place.properties = { ...place.properties, dataPageOf: href.replace(/^#/, '') }
+}
+
+function without(properties: Properties, names: readonly string[]): Properties {
+  return Object.fromEntries(Object.entries(properties).filter(([name]) => !names.includes(name)))
+}
+
+function hasClass(element: Element, name: string): boolean {
+  const { className } = element.properties
+  return Array.isArray(className) && className.includes(name)
+}

@@ -1,0 +1,74 @@
+import { createHash } from 'node:crypto'
+import type { Root } from 'hast'
+import { h } from 'hastscript'
+import rehypeStringify from 'rehype-stringify'
+import { unified } from 'unified'
+import type { Document } from '../compose/document.ts'
+import type { Table } from '../tables/table.ts'
+import type { Words } from '../words/words.ts'
+import { drawChart } from './charts/draw-chart.ts'
+import type { ChartSpec } from './charts/chart-spec.ts'
+import { fontFaces } from './embedded-fonts.ts'
+import { type DrawingPlace, prepareTree } from './prepare-tree.ts'
+import { runningHead } from './running-head.ts'
+import type { Theme } from './theme.ts'
+
+export interface Rendering {
+  readonly tables: readonly Table[]
+  /** As `loadCharts` reads them. */
+  readonly charts: ReadonlyMap<string, ChartSpec>
+  readonly words: Words
+  readonly theme: Theme
+}
+
+/**
+ * Render a document as one self-contained HTML file:
+ *
+ *     tree ─prepared─▶ HTML ─charts drawn in─▶ page with its style, its fonts and a policy that forbids everything else
+ *
+ * No script and no request to anywhere; the same document gives the same bytes. Charts are drawn in after compose's sanitising, because they
+ * are this program's own markup.
+ *
+ * @throws {Error} a chart that is not among `charts`, or that cannot be drawn as specified
+ */
+export async function render(document: Document, rendering: Rendering): Promise<string> {
+  const { tree, places } = prepareTree(document.tree)
+  const drawings = new Map(await inTurn(places, async (place) => [place.id, await bothSizes(place, rendering)] as const))
+  const body = toHtml(tree).replace(/ data-drawing="([^"]+)">/g, (_whole, id: string) => `>${drawings.get(id) ?? ''}`)
+  return page(document, body, rendering)
+}
+
+/** Both sizes; the style sheet shows one of them, and neither has a text alternative of its own. */
+async function bothSizes({ chart, id }: DrawingPlace, { tables, charts, words, theme }: Rendering): Promise<string> {
+  const spec = charts.get(chart)
+  if (spec === undefined) throw new Error(`Unexpected chart "${chart}", expected one of ${[...charts.keys()].join(', ')}`)
+  const wide = await drawChart({ ...spec, name: id }, tables, words, theme, 'wide')
+  const narrow = await drawChart({ ...spec, name: id }, tables, words, theme, 'narrow')
+  return wide.replace('<svg ', '<svg class="for-wide" ') + narrow.replace('<svg ', '<svg class="for-narrow" ')
+}
+
+/** One after the other: vega's counters and text metrics are shared by all drawings of a process. */
+async function inTurn<T, R>(items: readonly T[], work: (item: T) => Promise<R>): Promise<readonly R[]> {
+  const results: R[] = []
+  for (const item of items) results.push(await work(item))
+  return results
+}
+
+function page({ title, lang }: Document, body: string, { words, theme }: Rendering): string {
+  const style = [fontFaces(title + body, theme), theme.css, runningHead(title, words)].join('\n')
+  const policy = `default-src 'none'; style-src 'sha256-${createHash('sha256').update(style).digest('base64')}'; font-src data:; base-uri 'none'; form-action 'none'`
+  const head = toHtml({ type: 'root', children: [
+    h('meta', { charSet: 'utf-8' }),
+    h('meta', { httpEquiv: 'Content-Security-Policy', content: policy }),
+    h('meta', { name: 'viewport', content: 'width=device-width, initial-scale=1' }),
+    h('meta', { name: 'referrer', content: 'no-referrer' }),
+    h('title', title),
+  ] })
+  const skip = toHtml({ type: 'root', children: [h('a.skip', { href: '#review' }, words.say('skip-to-review'))] })
+  const [opening] = toHtml({ type: 'root', children: [h('html', { lang })] }).split('</html>')
+  return `<!doctype html>\n${opening}<head>${head}<style>${style}</style></head>\n<body>${skip}\n<main id="review" tabindex="-1">\n${body}\n</main></body></html>\n`
+}
+
+function toHtml(tree: Root): string {
+  return unified().use(rehypeStringify, { quoteSmart: false }).stringify(tree)
+}

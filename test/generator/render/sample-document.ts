@@ -1,0 +1,73 @@
+import { readFileSync } from 'node:fs'
+import { fileURLToPath } from 'node:url'
+import type { Root } from 'hast'
+import { h } from 'hastscript'
+import type { Document } from '../../../generator/compose/document.ts'
+import { tableTree } from '../../../generator/compose/table-tree.ts'
+import { loadCharts } from '../../../generator/render/load-charts.ts'
+import type { Rendering } from '../../../generator/render/render.ts'
+import { loadTheme } from '../../../generator/render/theme.ts'
+import type { Table } from '../../../generator/tables/table.ts'
+import { tablesOf } from '../../../generator/tables/tables-of.ts'
+import { createWords, type Words } from '../../../generator/words/words.ts'
+import type { Findings } from '../../../model/findings/schema.ts'
+import { sampleFindings } from '../../support/sample-findings.ts'
+
+/** The house folder of templates. */
+export const templates = fileURLToPath(new URL('../../../templates/', import.meta.url))
+
+/** A catalogue of this test's own, so that a change of the house's wording breaks no test of the page. */
+const columns = ['step', 'period', 'start', 'venue', 'label', 'mentions', 'authors', 'share', 'raw', 'level', 'drift', 'slope', 'spread', 'adjusted', 'since_base', 'probability_drift_down']
+export const sampleWords: Words = createWords({
+  'axis-points': 'Points', 'axis-points-change': 'Points of change', 'axis-points-offset': 'Points off', 'label-raw': 'Raw average', 'label-adjusted': 'Mix-adjusted',
+  'span-base': 'Base', 'span-review': 'Period under review', 'when-base': 'Base', 'when-now': 'This period', 'part-factor_mix': 'Mix of {factor}',
+  'page-of': 'Page {page} of {pages}', 'skip-to-review': 'Skip to the review', 'cell-empty': '–', range: '{low} to {high}', 'column-interval': 'Interval',
+  'probability-over': 'over {figure}', 'probability-under': 'under {figure}', 'not-known': 'not known',
+  ...Object.fromEntries(columns.map((column) => [`column-${column}`, column.replaceAll('_', ' ')])),
+}, 'en', 'en-GB')
+
+export const chartNames = ['opinion', 'decomposition', 'venues', 'venues-before', 'mix-venue', 'mix-poster', 'topics', 'posters', 'accounting'] as const
+
+export async function sampleRendering(findings: Findings = sampleFindings()): Promise<Rendering> {
+  return { tables: tablesOf(findings), charts: await loadCharts(`${templates}charts`), words: sampleWords, theme: await loadTheme(`${templates}theme`) }
+}
+
+/** A document with everything a page must hold well: contents, charts, a long table, a wide table, blocks, links. */
+export function sampleDocument(tables: readonly Table[] = tablesOf(sampleFindings())): Document {
+  const chapters = chartNames.map((name) => ({ id: `about-${name}`, text: `What chart ${name} shows` }))
+  const tree: Root = { type: 'root', children: [
+    h('section.section.section-first-page', { id: 'first-page' }, [
+      h('h1', 'Skerrow Ferries, October 2026'),
+      h('div.lead', [h('p', 'Opinion of Skerrow Ferries rose by 3.1 points (90 % interval 1.2 to 5.0).')]),
+      h('div.keyfigures', ['Opinion', 'Change', 'Probability'].map((name) => h('div.keyfigure', [h('p', [`${name} `, h('strong', '+3.1'), ' 90 % interval 1.2 to 5.0'])]))),
+      chart('opinion', 'first'),
+      h('div.caveat.is-serious', [h('p', [h('strong', 'Serious: '), 'the pooled average misleads.'])]),
+    ]),
+    h('nav.contents', { ariaLabel: 'Contents' }, [h('ol', chapters.map(({ id, text }) => (
+      h('li', [h('a', { href: `#${id}` }, [h('span.entry', text), h('span.page')])])
+    )))]),
+    ...chapters.flatMap(({ id, text }, index) => [
+      h('h2', { id }, text),
+      h('p', ['As the ', h('a', { href: 'https://example.org/method' }, 'method'), ` says. ${'A sentence that fills the page and says nothing else. '.repeat(6)}`]),
+      chart(chartNames[index], 'again'),
+    ]),
+    h('h2', { id: 'tables' }, 'Tables'),
+    tableOf(tables, 'opinion', [['step'], ['adjusted'], ['low', 'high'], ['raw'], ['mentions']]),
+    tableOf(tables, 'venues', [['label'], ['mentions'], ['authors'], ['share'], ['raw'], ['level'], ['level_low', 'level_high'], ['drift'], ['drift_low', 'drift_high'], ['spread']]),
+  ] }
+  return { tree, title: 'Skerrow Ferries: brand health review, October 2026', lang: 'en-GB', headings: [{ depth: 2, id: 'tables', text: 'Tables' }] }
+}
+
+function chart(name: string, part: string) {
+  return h('figure.chart', { role: 'group', dataChart: name, dataAlt: `Text alternative of "${name}", ${part}` }, [
+    h('figcaption', [h('strong.finding', `What ${name} found`), ' ', h('span.reading', 'Bands are 90 % intervals.')]),
+  ])
+}
+
+function tableOf(tables: readonly Table[], name: string, keys: readonly (readonly [string] | readonly [string, string])[]) {
+  const table = tables.find((candidate) => candidate.name === name)
+  if (table === undefined) throw new Error(`no table ${name}`)
+  return tableTree(table, keys.map((of) => ({ keys: of })), { caption: `Figures of ${name}`, after: [], labels: new Map() }, sampleWords)
+}
+
+export const axeSource = (): string => readFileSync(fileURLToPath(import.meta.resolve('axe-core')), 'utf8')
