@@ -2,7 +2,7 @@
  * One coordinate of the proposal: a split normal with sinh-arcsinh tails.
  *
  * Two half-normals of different width joined at the mode carry the skewness (Geweke 1989, Econometrica 57:1317, split
- * densities for importance sampling; Wallis 2014 on the split normal's moments); the map g(x) = delta sinh(asinh(x) / delta)
+ * densities for importance sampling); the map g(x) = delta sinh(asinh(x) / delta)
  * with delta < 1 stretches the tails (Jones and Pewsey 2009, Biometrika 96:761), so that they outlast every normal tail and
  * importance weights stay bounded.
  */
@@ -15,8 +15,6 @@ export interface SplitMarginal {
 const tail = 0.8
 /** Variance of g(x) for standard normal x at this `tail`, by quadrature below: the scales are shrunk by its root. */
 const tailVariance = varianceOfTail()
-/** A split normal's skewness stays below 0.995; nearer to that one side vanishes. */
-const mostSkewness = 0.9
 
 function varianceOfTail(): number {
   let sum = 0
@@ -29,22 +27,52 @@ function stretch(x: number): number {
   return tail * Math.sinh(Math.asinh(x) / tail)
 }
 
-/** The split normal with mean 0, variance 1 and, as far as it can, this skewness. */
-export function matchSkewness(skewness: number): SplitMarginal {
-  const target = Math.max(-mostSkewness, Math.min(mostSkewness, skewness))
-  // skewness = sqrt(2/pi) r (1 + (6/pi - 2) r^2), r = right - left, increasing over the range in question: bisection
-  let low = -1.65
-  let high = 1.65
-  for (let i = 0; i < 60; i++) {
-    const r = 0.5 * (low + high)
-    if (Math.sqrt(2 / Math.PI) * r * (1 + (6 / Math.PI - 2) * r * r) < target) low = r
-    else high = r
+/** The symmetric one with mean 0 and variance 1. */
+export function standardMarginal(): SplitMarginal {
+  const width = 1 / Math.sqrt(tailVariance)
+  return { mode: 0, left: width, right: width }
+}
+
+const firstStride = 0.2
+const lastStride = 0.01
+
+/**
+ * The marginal of greatest weighted likelihood, by pattern search (Hooke and Jeeves 1961, J. ACM 8:212) over the mode and
+ * the logarithms of the two widths. Likelihood rather than moments, because it punishes a density that is too thin
+ * where the sample is: what importance weights suffer from.
+ *
+ * @param values - shape (n), of mean about 0 and variance about 1
+ * @param weights - shape (n), >= 0, summing to 1
+ */
+export function fitMarginal(values: Float64Array, weights: Float64Array): SplitMarginal {
+  const start = standardMarginal()
+  const at = [start.mode, Math.log(start.left), Math.log(start.right)]
+  const score = () => weightedLogLikelihood({ mode: at[0], left: Math.exp(at[1]), right: Math.exp(at[2]) }, values, weights)
+  let best = score()
+  for (let stride = firstStride; stride > lastStride;) {
+    let rose = false
+    for (let k = 0; k < at.length; k++) {
+      for (const move of [stride, -stride]) {
+        const before = at[k]
+        at[k] = before + move
+        const found = score()
+        if (found > best) {
+          best = found
+          rose = true
+          break
+        }
+        at[k] = before
+      }
+    }
+    if (!rose) stride /= 2
   }
-  const r = 0.5 * (low + high)
-  const product = 1 - (1 - 2 / Math.PI) * r * r
-  const sum = Math.sqrt(r * r + 4 * product)
-  const shrink = 1 / Math.sqrt(tailVariance)
-  return { mode: -Math.sqrt(2 / Math.PI) * r, left: 0.5 * (sum - r) * shrink, right: 0.5 * (sum + r) * shrink }
+  return { mode: at[0], left: Math.exp(at[1]), right: Math.exp(at[2]) }
+}
+
+function weightedLogLikelihood(m: SplitMarginal, values: Float64Array, weights: Float64Array): number {
+  let total = 0
+  for (let i = 0; i < values.length; i++) if (weights[i] > 0) total += weights[i] * marginalLogDensity(m, values[i])
+  return total
 }
 
 /**

@@ -14,7 +14,7 @@ export interface Mode {
 const step = 1e-2
 const mostIterations = 100
 /** A rise smaller than this no longer moves a proposal. */
-const enough = 1e-4
+const enough = 0.02
 
 /**
  * The highest point of a smooth log density and its curvature there, by BFGS with numerical gradients (Nocedal and

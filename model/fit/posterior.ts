@@ -6,7 +6,7 @@ import { findMode } from './mode.ts'
 import { sigmaOf } from './prior-scale.ts'
 import type { FitProblem } from './problem.ts'
 import { kishEffectiveSize } from '../statistics/kish.ts'
-import { matchMoments, normalProposal, placePoints, proposalLogDensity, type Proposal } from './proposal.ts'
+import { fitProposal, normalProposal, placePoints, proposalLogDensity, type Proposal } from './proposal.ts'
 import { resample } from './resample.ts'
 
 /*
@@ -121,7 +121,7 @@ async function firstProposal(problem: FitProblem, executor: FitExecutor): Promis
 
 /** The proposal matched to a weighted round; the one before where the round is too poor to match. */
 function matchProposal(round: Round, before: Proposal): Proposal {
-  return matchMoments(round.points, temper(round.logWeights), before.dimension) ?? before
+  return fitProposal(round.points, temper(round.logWeights), before.dimension) ?? before
 }
 
 async function weigh(problem: FitProblem, executor: FitExecutor, proposal: Proposal, n: number, generator: Generator): Promise<Round> {

@@ -1,5 +1,5 @@
 import { normalQuantile } from '../statistics/normal.ts'
-import { marginalLogDensity, marginalQuantile, matchSkewness, type SplitMarginal } from './marginal.ts'
+import { fitMarginal, marginalLogDensity, marginalQuantile, standardMarginal, type SplitMarginal } from './marginal.ts'
 
 /** A density over R^d to draw from: z = centre + C s, the coordinates of s independent split marginals. */
 export interface Proposal {
@@ -15,17 +15,17 @@ export function normalProposal(centre: Float64Array, covariance: Float64Array): 
   const d = centre.length
   const factor = cholesky(covariance, d)
   if (factor === null) return null
-  return { dimension: d, centre, factor, marginals: Array.from({ length: d }, () => matchSkewness(0)) }
+  return { dimension: d, centre, factor, marginals: Array.from({ length: d }, standardMarginal) }
 }
 
 /**
- * The proposal that matches a weighted sample's mean, covariance and, along each axis of its factor, skewness.
+ * The proposal that matches a weighted sample's mean and covariance and, along each axis of its factor, its shape.
  *
  * @param points - shape (n, d)
  * @param weights - shape (n), >= 0, summing to 1
  * @returns null where the weighted covariance is not positive definite
  */
-export function matchMoments(points: Float64Array, weights: Float64Array, d: number): Proposal | null {
+export function fitProposal(points: Float64Array, weights: Float64Array, d: number): Proposal | null {
   const n = weights.length
   const centre = new Float64Array(d)
   for (let i = 0; i < n; i++) for (let j = 0; j < d; j++) centre[j] += weights[i] * points[i * d + j]
@@ -38,13 +38,13 @@ export function matchMoments(points: Float64Array, weights: Float64Array, d: num
   }
   const factor = cholesky(covariance, d)
   if (factor === null) return null
-  const third = new Float64Array(d)
+  const axes = Array.from({ length: d }, () => new Float64Array(n))
   const s = new Float64Array(d)
   for (let i = 0; i < n; i++) {
     standardise(points, i * d, centre, factor, s)
-    for (let j = 0; j < d; j++) third[j] += weights[i] * s[j] * s[j] * s[j]
+    for (let j = 0; j < d; j++) axes[j][i] = s[j]
   }
-  return { dimension: d, centre, factor, marginals: Array.from(third, matchSkewness) }
+  return { dimension: d, centre, factor, marginals: axes.map((axis) => fitMarginal(axis, weights)) }
 }
 
 /** Turn uniforms, shape (n, d), into points of the proposal, in place. */
