@@ -28,7 +28,7 @@ function checkArgument(argument: Argument, scope: TypeScope, at: Pick<Node, 'pos
   }
   const item = checkSelection(argument.selection, scope, at, reporter)
   if (!item) return
-  if (argument.pick) checkForm(argument.pick, 'code', { ...scope, item }, at, reporter)
+  if (argument.pick) checkForm(argument.pick, argument.write ?? 'code', { ...scope, item }, at, reporter)
   if (forms[argument.as].from !== 'list') {
     reporter.report(at, 'form-unfit', `form "${argument.as}" of a selection`, 'list or length', `Write as: list, or name one ${kindOf(item)} by its path.`)
   }

@@ -8,7 +8,7 @@ import type { Path, Step } from './path.ts'
  * month, and a misspelt path is found even inside a block that does not appear this time.
  */
 export interface TypeNode {
-  readonly type?: string
+  readonly type?: string | readonly string[]
   readonly enum?: readonly unknown[]
   readonly const?: unknown
   readonly properties?: Readonly<Record<string, TypeNode>>
@@ -70,9 +70,9 @@ export function withoutNull(node: TypeNode): TypeNode {
 /** What a value of the type can be written as: see the forms of generator/words. */
 export function kindOf(node: TypeNode): string {
   const { type, properties, items } = withoutNull(node)
-  if (type === 'integer') return 'number'
   if (items) return 'list'
   if (properties && 'low' in properties) return 'estimate'
   if (properties && 'label' in properties) return 'level'
-  return type ?? 'nothing'
+  const [named = 'nothing'] = [type ?? []].flat().filter((name) => name !== 'null')
+  return named === 'integer' ? 'number' : named
 }

@@ -8,7 +8,7 @@ import type { Path } from './path.ts'
 import { orders } from './selection.ts'
 import type { Order, Selection } from './selection.ts'
 
-export const selectionKeys = ['of', 'where', 'by', 'order', 'most'] as const
+export const selectionKeys = ['of', 'where', 'by', 'order', 'most', 'last'] as const
 
 type Given = Readonly<Record<string, string | null | undefined>>
 
@@ -29,18 +29,19 @@ export function readCondition(text: string, at: Pick<Node, 'position'>, reporter
   return condition
 }
 
-/** Read `of`, `where`, `by`, `order`, `most`; undefined, and reported, where one of them is wrong. */
+/** Read `of`, `where`, `by`, `order`, `most`, `last`; undefined, and reported, where one of them is wrong. */
 export function readSelection(given: Given, at: Pick<Node, 'position'>, reporter: Reporter): Selection | undefined {
   const of = readPath(given['of'] ?? '', at, reporter)
   const by = optional(given['by'], (text) => readPath(text, at, reporter))
   const where = optional(given['where'], (text) => readCondition(text, at, reporter))
   const order = optional(given['order'], (text) => readOrder(text, at, reporter))
-  const most = optional(given['most'], (text) => readMost(text, at, reporter))
-  if (!of || [by, where, order, most].some((part) => part.wrong)) return undefined
+  const most = optional(given['most'], (text) => readMost('most', text, at, reporter))
+  const last = optional(given['last'], (text) => readMost('last', text, at, reporter))
+  if (!of || [by, where, order, most, last].some((part) => part.wrong)) return undefined
   return {
     of,
     ...(by.value && { by: by.value }), ...(where.value && { where: where.value }),
-    ...(order.value && { order: order.value }), ...(most.value && { most: most.value }),
+    ...(order.value && { order: order.value }), ...(most.value && { most: most.value }), ...(last.value && { last: last.value }),
   }
 }
 
@@ -56,8 +57,8 @@ function readOrder(text: string, at: Pick<Node, 'position'>, reporter: Reporter)
   return order
 }
 
-function readMost(text: string, at: Pick<Node, 'position'>, reporter: Reporter): number | undefined {
+function readMost(name: string, text: string, at: Pick<Node, 'position'>, reporter: Reporter): number | undefined {
   if (/^[1-9]\d{0,3}$/.test(text)) return Number(text)
-  reporter.report(at, 'attribute-invalid', `most "${text}"`, 'a whole number from 1', 'Write it like most=3.')
+  reporter.report(at, 'attribute-invalid', `${name} "${text}"`, 'a whole number from 1', `Write it like ${name}=3.`)
   return undefined
 }

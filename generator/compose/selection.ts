@@ -13,6 +13,8 @@ export interface Selection {
   readonly order?: Order
   /** At most so many. */
   readonly most?: number
+  /** At most so many, from the end. */
+  readonly last?: number
 }
 
 export const orders = ['most', 'least', 'size'] as const
@@ -22,10 +24,10 @@ export type Order = (typeof orders)[number]
 export function selected(selection: Selection, scope: Scope): readonly unknown[] {
   const list = lookUp(selection.of, scope)
   if (!Array.isArray(list)) return []
-  const { where, by, order = 'most', most = list.length } = selection
+  const { where, by, order = 'most', most = list.length, last = list.length } = selection
   const kept = where ? list.filter((item: unknown) => holds(where, { ...scope, item })) : list
   const rank = (item: unknown) => by ? rankOf(lookUp(by, { ...scope, item }), order) : 0
-  return [...kept].sort((a, b) => rank(b) - rank(a) || 0).slice(0, most)
+  return [...kept].sort((a, b) => rank(b) - rank(a) || 0).slice(0, most).slice(-last)
 }
 
 function rankOf(value: unknown, order: Order): number {

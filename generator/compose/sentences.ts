@@ -1,5 +1,5 @@
-import { LineCounter, isMap, isScalar, parseDocument } from 'yaml'
-import type { ParsedNode } from 'yaml'
+import { LineCounter, isAlias, isMap, isScalar, parseDocument } from 'yaml'
+import type { Document, ParsedNode } from 'yaml'
 import type { FormName } from '../words/forms.ts'
 import { formNames, isFormName, write } from '../words/forms.ts'
 import type { WordArguments, Words } from '../words/words.ts'
@@ -31,6 +31,8 @@ export interface Argument {
   /** Only with lists: which items, and what of each. */
   readonly selection?: Selection
   readonly pick?: Path
+  /** The form of each item picked; without one it is taken as it stands, a label by its catalogue. */
+  readonly write?: FormName
   readonly position: Position
 }
 
@@ -47,24 +49,26 @@ export function parseSentences(text: string, reporter: Reporter): Sentences {
     const point = { line, column }
     reporter.report({ position: { start: point, end: point } }, 'sentences-invalid', `YAML (${error.message.split('\n')[0]})`, 'a map from messages to arguments', 'Mend the syntax.')
   }
-  return new Map(entries(document.contents).map(([message, node]) => {
+  return new Map(entries(document.contents, document).map(([message, node]) => {
     const position = place(node)
-    const found = entries(node).map(([name, spec]) => [name, readArgument(name, asStrings(spec), place(spec), reporter)] as const)
+    const found = entries(node, document).map(([name, spec]) => [name, readArgument(name, asStrings(spec, document), place(spec), reporter)] as const)
     return [message, { position, arguments: Object.fromEntries(found.filter((entry): entry is [string, Argument] => entry[1] !== undefined)) }]
   }))
 }
 
 function readArgument(name: string, spec: Readonly<Record<string, string>>, position: Position, reporter: Reporter): Argument | undefined {
-  const known = [...selectionKeys, 'as', 'pick']
+  const known = [...selectionKeys, 'as', 'pick', 'write']
   const wrong = Object.keys(spec).filter((key) => !known.includes(key))
   for (const key of wrong) reporter.report({ position }, 'argument-key-unknown', `key "${key}" of argument "${name}"`, 'a known key', nearest(key, known))
-  const form = spec['as'] ?? ''
-  if (!isFormName(form)) reporter.report({ position }, 'form-unknown', `form "${form}" of argument "${name}"`, 'a known form', nearest(form, formNames))
+  const [form = '', itemForm = 'text'] = [spec['as'], spec['write']]
+  for (const given of [form, itemForm].filter((given) => !isFormName(given))) {
+    reporter.report({ position }, 'form-unknown', `form "${given}" of argument "${name}"`, 'a known form', nearest(given, formNames))
+  }
   const selection = readSelection(spec, { position }, reporter)
   const pick = spec['pick'] === undefined ? undefined : parsePath(spec['pick'])
-  if (!selection || !isFormName(form) || wrong.length > 0) return undefined
-  const chooses = ['where', 'by', 'order', 'most', 'pick'].some((key) => key in spec)
-  return { of: selection.of, as: form, position, ...(chooses && { selection }), ...(pick && { pick }) }
+  if (!selection || !isFormName(form) || !isFormName(itemForm) || wrong.length > 0) return undefined
+  const chooses = ['where', 'by', 'order', 'most', 'last', 'pick'].some((key) => key in spec)
+  return { of: selection.of, as: form, position, ...(chooses && { selection }), ...(pick && { pick }), ...(spec['write'] !== undefined && { write: itemForm }) }
 }
 
 /** The arguments of a sentence, written from the findings. */
@@ -74,21 +78,24 @@ export function argumentsFor(sentence: Sentence | undefined, scope: Scope, words
 
 function valueOf(argument: Argument, scope: Scope, words: Words): unknown {
   if (!argument.selection) return lookUp(argument.of, scope)
-  const { pick } = argument
+  const { pick, write: form } = argument
   return selected(argument.selection, scope).map((item) => {
     if (!pick) return item
-    const isLabel = pick.length === 1 && pick[0]?.key === 'label'
-    return isLabel ? write(item, 'label', words) : lookUp(pick, { ...scope, item })
+    if (pick.length === 1 && pick[0]?.key === 'label') return write(item, 'label', words)
+    const value = lookUp(pick, { ...scope, item })
+    return form ? write(value, form, words) : value
   })
 }
 
-function entries(node: unknown): readonly (readonly [string, ParsedNode | null])[] {
-  if (!isMap<ParsedNode, ParsedNode | null>(node)) return []
-  return node.items.map((pair) => [isScalar(pair.key) ? String(pair.key.value) : '', pair.value])
+/** Keys and values of a map, or of the map that an alias (`*name`) stands for. */
+function entries(node: unknown, document: Document): readonly (readonly [string, ParsedNode | null])[] {
+  const found: unknown = isAlias(node) ? node.resolve(document) : node
+  if (!isMap<ParsedNode, ParsedNode | null>(found)) return []
+  return found.items.map((pair) => [isScalar(pair.key) ? String(pair.key.value) : '', pair.value])
 }
 
-function asStrings(node: ParsedNode | null): Record<string, string> {
-  return Object.fromEntries(entries(node).map(([key, value]) => [key, isScalar(value) ? String(value.value) : '']))
+function asStrings(node: ParsedNode | null, document: Document): Record<string, string> {
+  return Object.fromEntries(entries(node, document).map(([key, value]) => [key, isScalar(value) ? String(value.value) : '']))
 }
 
 function placeIn(lines: LineCounter): (node: ParsedNode | null) => Position {

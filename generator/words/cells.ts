@@ -15,31 +15,42 @@ export function isRowLabel(kind: string): boolean {
   return kind === 'text' || kind === 'date'
 }
 
+/** Labels of venues by name, for the tables that hold only the name. */
+export type Labels = ReadonlyMap<string, string>
+
 /**
- * A value that the findings name by a code, in words: `value-part-venue_mix`. A value that the catalogue doesn't know is
+ * A value that the findings name by a code, in words: `part-venue_mix`. A value that the catalogue doesn't know is
  * the account's own and stays as it is; the mix of a factor that the account adds is worded by the factor's name.
  */
 export function valueWord(words: Words, column: string, value: string): string {
-  const key = `value-${column}-${value}`
+  const key = `${column}-${value}`
   if (words.has(key)) return words.say(key)
-  return column === 'part' && value.endsWith('_mix') ? words.say('value-part-factor_mix', { factor: value.slice(0, -'_mix'.length) }) : value
+  return column === 'part' && value.endsWith('_mix') ? words.say('part-factor_mix', { factor: value.slice(0, -'_mix'.length) }) : value
 }
 
 /** A cell of a table as people read it. */
-export function writeCell(column: Column, row: Row, words: Words): string {
+export function writeCell(column: Column, row: Row, words: Words, labels: Labels): string {
   const value = row[column.key] ?? null
   if (value === null) return words.say('cell-empty')
   if (typeof value === 'boolean') return words.say(value ? 'cell-yes' : 'cell-no')
   if (typeof value === 'number') return String(write(value, formOf[column.kind], words))
   if (column.kind === 'date') return String(write(value, 'short-date', words))
-  return writeText(column.key, value, row, words)
+  return writeText(column.key, value, row, words, labels)
 }
 
-function writeText(key: string, value: string, row: Row, words: Words): string {
+const driftScale = 'venue_drift.'
+
+function writeText(key: string, value: string, row: Row, words: Words, labels: Labels): string {
   const level = row['venue'] ?? row['level']
   if (key === 'label' && typeof level === 'string') return levelLabel({ label: value, level }, words)
   if (key === 'period') return String(write(value, 'period', words))
-  return key === 'factor' ? String(write(value, 'factor', words)) : valueWord(words, key, value)
+  if (key === 'factor') return String(write(value, 'factor', words))
+  if (key === 'venue') return labels.get(value) ?? value
+  if (key === 'scale' && value.startsWith(driftScale)) {
+    const venue = value.slice(driftScale.length)
+    return words.say('scale-venue_drift', { venue: labels.get(venue) ?? venue })
+  }
+  return key === 'scope' ? labels.get(value) ?? valueWord(words, key, value) : valueWord(words, key, value)
 }
 
 /** Two bounds in one cell: `1.2 to 5.0`. */

@@ -1,6 +1,6 @@
 import { date, period, shortDate } from './dates.ts'
 import { levelLabel } from './labels.ts'
-import { change, count, interval, number, points, probability, probabilityFigure, share, shareInColumn, size } from './numbers.ts'
+import { change, count, interval, number, points, probability, probabilityBand, probabilityFigure, share, shareInColumn, size, sizeInterval } from './numbers.ts'
 import type { WordArgument, Words } from './words.ts'
 
 /** What a form is made from. */
@@ -29,6 +29,7 @@ export const forms = {
   share: ofNumber((value, words) => share(value, words.locale)),
   'column-share': ofNumber((value, words) => shareInColumn(value, words.locale)),
   probability: ofNumber(probability),
+  'probability-words': ofNumber((value, words) => words.say('probability-words', { band: probabilityBand(value) })),
   'probability-figure': ofNumber(probabilityFigure),
   /** For choosing a case: `up`, `down`, or `flat` where one decimal shows nothing. */
   sign: ofNumber(signOf),
@@ -36,14 +37,17 @@ export const forms = {
   plain: ofNumber((value) => value),
   interval: ofBounds((value, words) => interval(value, points, words)),
   'change-interval': ofBounds((value, words) => interval(value, change, words)),
+  'size-interval': ofBounds(sizeInterval),
   date: ofString((value, words) => date(value, words.locale)),
   'short-date': ofString((value, words) => shortDate(value, words.locale)),
   period: ofString(period),
+  /** A number that names something, ungrouped: a seed. */
+  digits: ofNumber((value) => String(value)),
   text: ofString((value) => value),
   /** A factor's name: `venue` is worded, one that the account adds stays as it is. */
   factor: ofString((value, words) => words.has(`factor-${value}`) ? words.say(`factor-${value}`) : value),
-  /** A value of the findings that chooses a case of a message: text, truth or nothing (`none`). */
-  code: { from: 'any', write: (value: unknown) => value === null || value === undefined ? 'none' : String(value) } satisfies Form,
+  /** A value of the findings that chooses a case of a message: text, truth or nothing (`none`); ICU allows no hyphen there. */
+  code: { from: 'any', write: (value: unknown) => value === null || value === undefined ? 'none' : String(value).replaceAll('-', '_') } satisfies Form,
   /** The label of a venue, topic, poster class or other level. */
   label: { from: 'level', write: (value: Parameters<typeof levelLabel>[0], words: Words) => levelLabel(value, words) } satisfies Form,
   list: ofList((value, words) => new Intl.ListFormat(words.locale, { style: 'long', type: 'conjunction' }).format(value.map(String))),

@@ -63,20 +63,26 @@ export function probabilityFigure(value: number, words: Words): string {
  * of Uncertainties, table 1: over 99, 90, 66 per cent; 33 to 66; under 33, 10, 1 per cent
  */
 export function probabilityBand(value: number): string {
-  if (value > 0.99) return 'virtually-certain'
-  if (value > 0.9) return 'very-likely'
+  if (value > 0.99) return 'virtually_certain'
+  if (value > 0.9) return 'very_likely'
   if (value > 0.66) return 'likely'
   if (value >= 0.33) return 'open'
   if (value >= 0.1) return 'unlikely'
-  return value >= 0.01 ? 'very-unlikely' : 'exceptionally-unlikely'
+  return value >= 0.01 ? 'very_unlikely' : 'exceptionally_unlikely'
 }
 
 /** In words and figure: `very likely (94%)`. */
 export function probability(value: number, words: Words): string {
-  return words.say('probability', { band: probabilityBand(value), figure: probabilityFigure(value, words) })
+  return words.say('probability', { words: words.say('probability-words', { band: probabilityBand(value) }), figure: probabilityFigure(value, words) })
 }
 
 /** Two bounds as `1.2 to 5.0`, both formatted alike. */
 export function interval(bounds: { readonly low: number, readonly high: number }, format: (value: number, locale: string) => string, words: Words): string {
   return words.say('range', { low: format(bounds.low, words.locale), high: format(bounds.high, words.locale) })
+}
+
+/** How far something moved, as bounds without sign, the smaller first: `1.2 to 5.0`; bounds on both sides of zero keep their signs. */
+export function sizeInterval({ low, high }: { readonly low: number, readonly high: number }, words: Words): string {
+  if (low < 0 && high > 0) return interval({ low, high }, change, words)
+  return interval({ low: Math.min(Math.abs(low), Math.abs(high)), high: Math.max(Math.abs(low), Math.abs(high)) }, size, words)
 }

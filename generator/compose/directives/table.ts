@@ -1,18 +1,20 @@
 import { checkCondition } from '../check-paths.ts'
 import { argumentsFor } from '../sentences.ts'
 import { checkMessage } from '../check-message.ts'
-import { nearest } from '../faults.ts'
+import { createReporter, nearest } from '../faults.ts'
+import type { Reporter } from '../faults.ts'
+import { lookUp } from '../path.ts'
+import type { Scope } from '../path.ts'
 import type { TypeScope } from '../path-types.ts'
 import { readSelection, selectionKeys } from '../read-selection.ts'
-import { createReporter } from '../faults.ts'
 import { selected } from '../selection.ts'
 import type { Row } from '../../tables/table.ts'
+import type { Labels } from '../../words/cells.ts'
 import { columnHeader, parseColumns } from '../table-columns.ts'
 import { tableTree } from '../table-tree.ts'
 import type { CheckContext, Directive, Use } from './directive.ts'
 import { standing } from './elements.ts'
 import { checkMade, madeLink } from './made-link.ts'
-import type { Reporter } from '../faults.ts'
 
 const choosing = selectionKeys.filter((key) => key !== 'of')
 
@@ -42,8 +44,13 @@ export const table: Directive = {
     if (!found || !selection) return []
     const rows = selected(selection, { ...scope, names: { ...scope.names, rows: found.rows } }) as readonly Row[]
     const caption = words.say(`table-${name}`, argumentsFor(sentences.get(`table-${name}`), scope, words))
-    return [standing(tableTree({ ...found, rows }, parseColumns(attributes['columns'] ?? ''), { caption, after: madeLink(attributes['made'], words) }, words))]
+    return [standing(tableTree({ ...found, rows }, parseColumns(attributes['columns'] ?? ''), { caption, after: madeLink(attributes['made'], words), labels: labelsIn(scope) }, words))]
   },
+}
+
+function labelsIn(scope: Scope): Labels {
+  const venues = lookUp([{ key: 'venues' }], { ...scope, names: {} })
+  return new Map(Array.isArray(venues) ? venues.map(({ venue, label }: { readonly venue: string, readonly label: string }) => [venue, label]) : [])
 }
 
 function checkColumns({ node, attributes }: Use, known: readonly string[], context: CheckContext, reporter: Reporter): void {
