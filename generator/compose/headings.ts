@@ -1,4 +1,4 @@
-import type { Element, Root as HtmlRoot } from 'hast'
+import type { Element, ElementContent, Root as HtmlRoot } from 'hast'
 import { h } from 'hastscript'
 import { toString } from 'hast-util-to-string'
 import type { Heading as MarkdownHeading, Root } from 'mdast'
@@ -50,14 +50,16 @@ export function rehypeUniqueIds() {
   }
 }
 
-/** Fill `::contents` with the headings of the second level, those of sections; each line has a place for a page number. */
+/** Fill `::contents` with the headings of sections (second level) that follow it; each line has a place for a page number. */
 export function rehypeContents() {
   return (tree: HtmlRoot): undefined => {
-    const entries = headingsOf(tree).filter(({ depth }) => depth === 2)
+    let contents: Element | undefined
+    const entries: ElementContent[] = []
     visit(tree, 'element', (element) => {
-      if (element.tagName !== 'nav') return
-      element.children = [h('ol', entries.map(({ id, text }) => h('li', [h('a', { href: `#${id}` }, [h('span.entry', text), h('span.page')])])))]
+      if (element.tagName === 'nav') contents = element
+      else if (contents && element.tagName === 'h2') entries.push(h('li', [h('a', { href: `#${String(element.properties['id'])}` }, [h('span.entry', toString(element)), h('span.page')])]))
     })
+    if (contents) contents.children = [h('ol', entries)]
   }
 }
 

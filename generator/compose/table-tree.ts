@@ -10,6 +10,8 @@ import type { PrintedColumn } from './table-columns.ts'
 interface Surroundings {
   readonly caption: string
   readonly after: readonly ElementContent[]
+  /** The wording of a column's header, by its message. */
+  readonly header: (message: string) => string
   readonly labels: Labels
 }
 
@@ -18,7 +20,7 @@ interface Surroundings {
  * their column's kind (`kind-points`, `kind-interval`, ...), by which they are aligned.
  */
 export function tableTree(
-  table: Table, columns: readonly PrintedColumn[], { caption, after, labels }: Surroundings, words: Words,
+  table: Table, columns: readonly PrintedColumn[], { caption, after, header, labels }: Surroundings, words: Words,
 ): Element {
   const rowHeader = columns.findIndex((column) => column.keys.length === 1 && isRowLabel(kindOf(table, column)))
   const cells = (row: Row) => columns.map((column, at) => {
@@ -29,7 +31,7 @@ export function tableTree(
   return h('div.table', { role: 'region', ariaLabel: caption, tabIndex: 0, dataTable: table.name }, [
     h('table', { className: [`table-${table.name}`] }, [
       h('caption', [caption, ...after]),
-      h('thead', [h('tr', columns.map((column) => h('th', { scope: 'col', className: [`kind-${kindOf(table, column)}`] }, words.say(columnHeader(column)))))]),
+      h('thead', [h('tr', columns.map((column) => h('th', { scope: 'col', className: [`kind-${kindOf(table, column)}`] }, header(columnHeader(column)))))]),
       h('tbody', table.rows.map((row) => h('tr', cells(row)))),
     ]),
   ])

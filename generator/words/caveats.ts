@@ -12,7 +12,7 @@ const formOf: Readonly<Record<string, FormName>> = {
 export const caveatParts = ['title', 'evidence', 'meaning', 'remedy'] as const
 export type CaveatPart = (typeof caveatParts)[number]
 
-/** A caveat's figures as arguments of its messages; `raw_change_sign` and `change_sign` choose cases. */
+/** A caveat's figures as arguments of its messages; the sign of a change (`raw_change_sign`) chooses cases. */
 export function caveatArguments(figures: Readonly<Record<string, string | number>>, words: Words): Record<string, WordArgument> {
   return Object.fromEntries(Object.entries(figures).flatMap(([name, value]) => {
     const written = [name, writeFigure(name, value, words)] as const

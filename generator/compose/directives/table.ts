@@ -43,8 +43,9 @@ export const table: Directive = {
     const selection = readSelection({ ...attributes, of: 'rows' }, node, createReporter('', []))
     if (!found || !selection) return []
     const rows = selected(selection, { ...scope, names: { ...scope.names, rows: found.rows } }) as readonly Row[]
-    const caption = words.say(`table-${name}`, argumentsFor(sentences.get(`table-${name}`), scope, words))
-    return [standing(tableTree({ ...found, rows }, parseColumns(attributes['columns'] ?? ''), { caption, after: madeLink(attributes['made'], words), labels: labelsIn(scope) }, words))]
+    const say = (message: string) => words.say(message, argumentsFor(sentences.get(message), scope, words))
+    const surroundings = { caption: say(`table-${name}`), after: madeLink(attributes['made'], words), header: say, labels: labelsIn(scope) }
+    return [standing(tableTree({ ...found, rows }, parseColumns(attributes['columns'] ?? ''), surroundings, words))]
   },
 }
 
