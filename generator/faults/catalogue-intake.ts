@@ -30,6 +30,10 @@ export const intakeWordings = {
     unexpected: `level \`${details.level}\``, expected: `a level that mentions are in: ${details.known.join(', ')}`,
     mend: 'Mend the name, or take a level that nobody has posted in out of the target mix.',
   }),
+  'too-many-levels': (details: { readonly factor: string; readonly most: number }): Wording => ({
+    unexpected: `more than ${details.most} values of \`${details.factor}\``, expected: 'a column with a few values that repeat',
+    mend: 'Map another column to it under `columns`, or leave it out of `factors`.',
+  }),
   'cell-value': (details: { readonly actual: string; readonly expected: string }): Wording => ({
     unexpected: details.actual === '' ? 'empty value' : `\`${details.actual}\``, expected: details.expected,
     mend: `Give ${details.expected}, or leave the row out.`,

@@ -1,4 +1,5 @@
 import { accountWordings } from './catalogue-account.ts'
+import { buildWordings } from './catalogue-build.ts'
 import { intakeWordings } from './catalogue-intake.ts'
 import type { Fault } from './fault.ts'
 
@@ -9,7 +10,7 @@ export interface Wording {
   readonly mend: string
 }
 
-const wordings = { ...accountWordings, ...intakeWordings }
+const wordings = { ...accountWordings, ...intakeWordings, ...buildWordings }
 
 type Wordings = typeof wordings
 export type FaultCode = keyof Wordings

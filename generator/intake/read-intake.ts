@@ -3,15 +3,17 @@ import { tmpdir } from 'node:os'
 import path from 'node:path'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
-import { timeline } from '../calendar/timeline.ts'
 import { dayNumber } from '../calendar/days.ts'
-import { summedAuthors } from './author-counts.ts'
-import { cellColumns } from './cell-columns.ts'
-import { openDatabase } from './database.ts'
+import { tablesOf, type Material } from './tables.ts'
+import { openDatabase, type Database } from './database.ts'
+import { dateMentions } from './dated-mentions.ts'
 import { lookOver, type InputFile } from './input-file.ts'
-import { factorOf, levelNames } from './level-names.ts'
+import { levelNames } from './level-names.ts'
+import { settleMentions } from './read-mentions.ts'
 import { cellsWithin, daysOf, readReadyMade } from './ready-made.ts'
+import { countRejects, writeRejects } from './rejects.ts'
 import { coveredPeriod, namedPeriod } from './review-period.ts'
+import { createScanned, scanFile, type ScannedFile } from './scan-mentions.ts'
 
 export interface IntakeOptions {
   /** Name of the period under review; default: the last whole one that the mentions cover. */
@@ -22,38 +24,77 @@ export interface IntakeOptions {
   readonly threads?: number
 }
 
+/**
+ * From the account's files to the intake tables:
+ *
+ *   files ──look over──▶ hashes, UTF-8 ──scan──▶ `scanned`, one narrow row a mention ──date──▶ the period under review
+ *     ──settle──▶ out of scope, duplicates, `classified` ──group──▶ cells and counts ──▶ tables, with ready-made cells
+ *
+ * Mentions stay inside the database, which can reach the account's files and nothing else. The tables do not depend on
+ * the number of threads: whole numbers are summed, everything is ordered.
+ *
+ * @throws {InputFault} see the catalogues of faults
+ */
 export async function readIntake(account: Account, options: IntakeOptions = {}): Promise<IntakeTables> {
   const scratch = await mkdtemp(path.join(tmpdir(), 'tareline-intake-'))
   try {
-    const files = new Map<string, InputFile>()
-    for (const file of account.mentions.flatMap((source) => source.files)) {
-      options.progress?.(`Looking over ${file}`)
-      if (!files.has(file)) files.set(file, await lookOver(account.folder, file, scratch))
-    }
+    const files = await lookOverAll(account, scratch, options)
     const database = await openDatabase({ readable: [...files.values()].map((file) => file.readable), scratch, threads: options.threads })
     try {
-      const names = levelNames(account)
-      const ready = await readReadyMade(database, account, files, names.levelOf)
-      const span = daysOf(ready.parts, account.grid)!
-      const review = options.period === undefined ? coveredPeriod(account, span.first, span.last) : namedPeriod(account, options.period)
-      const parts = cellsWithin(ready.parts, account.grid, review)
-      const factors = account.factors.map((name, index) => factorOf(account, name, parts.map((part) => part.levels[index]!)))
-      const days = daysOf(parts, account.grid)!
-      const axis = timeline({ ...account, firstDay: days.first, lastDay: days.last, review })
-      const cells = cellColumns(parts, axis.steps.map(dayNumber), factors)
-      return {
-        timeline: axis, factors, cells, variation: factors[0]!.levels.map(() => null), concentration: [],
-        authors: summedAuthors(cells, axis, factors),
-        accounting: {
-          received: ready.parts.length, rejected: 0, duplicates: 0, outOfScope: ready.parts.length - parts.length, modelled: parts.length,
-          reasons: ready.parts.length > parts.length ? { 'after-period': ready.parts.length - parts.length } : {}, unmapped: names.unmapped(), inputs: [...files.values()].map(({ path: name, sha256 }) => ({ path: name, sha256, rows: ready.rows.get(name) ?? 0 })),
-          withAuthor: new Float64Array(factors[0]!.levels.length), readyMade: true,
-        },
-      }
+      return tablesOf(account, await gather(database, account, files, options))
     } finally {
       database.close()
     }
   } finally {
     await rm(scratch, { recursive: true, force: true })
   }
+}
+
+async function lookOverAll(account: Account, scratch: string, options: IntakeOptions): Promise<ReadonlyMap<string, InputFile>> {
+  const files = new Map<string, InputFile>()
+  for (const file of account.mentions.flatMap((source) => source.files)) {
+    if (files.has(file)) continue
+    options.progress?.(`Looking over ${file}`)
+    files.set(file, await lookOver(account.folder, file, scratch))
+  }
+  return files
+}
+
+async function gather(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Material> {
+  const progress = options.progress ?? ((): void => undefined)
+  const asked = options.period === undefined ? null : namedPeriod(account, options.period)
+  const names = levelNames(account)
+  const ready = await readReadyMade(database, account, files, names.levelOf)
+  const scanned = await scanAll(database, account, files, progress)
+  const rejected = await countRejects(database, scanned)
+  if (options.rejects !== undefined) await writeRejects(database, scanned, options.rejects)
+  const dated = await dateMentions(database, account)
+  const spans = [dated.span, daysOf(ready.parts, account.grid)].filter((span) => span !== null)
+  const review = asked ?? (spans.length === 0 ? null
+    : coveredPeriod(account, Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))))
+  const settled = review === null ? null : await settleMentions(database, account, dated, dayNumber(review.end), names.levelOf, progress)
+  return {
+    review, scanned, rejected, dated, settled, unmapped: names.unmapped(),
+    ready: review === null ? [] : cellsWithin(ready.parts, account.grid, review),
+    readyAfter: review === null ? 0 : ready.parts.length - cellsWithin(ready.parts, account.grid, review).length,
+    inputs: [...files.values()].map(({ path: name, sha256 }) => ({ path: name, sha256, rows: ready.rows.get(name) ?? rowsOf(scanned, name) })),
+  }
+}
+
+async function scanAll(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, progress: (message: string) => void): Promise<readonly ScannedFile[]> {
+  const scanned: ScannedFile[] = []
+  await createScanned(database, account.factors)
+  for (const [index, source] of account.mentions.entries()) {
+    if (source.kind === 'cells') continue
+    for (const file of source.files) {
+      progress(`Reading ${file}`)
+      const last = scanned.at(-1)
+      scanned.push(await scanFile(database, account, index, files.get(file)!, last === undefined ? 0 : last.first + last.sound))
+    }
+  }
+  return scanned
+}
+
+function rowsOf(scanned: readonly ScannedFile[], name: string): number {
+  return scanned.filter(({ file }) => file.path === name).reduce((total, { sound, malformed }) => total + sound + malformed.length, 0)
 }

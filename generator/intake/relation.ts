@@ -44,7 +44,7 @@ function zipped(file: InputFile): string {
 function ndjsonRelation(file: InputFile): Relation {
   const sql = `(SELECT line, json_valid(line) AS sound FROM read_csv(${literal(plainPath(file.readable))}, auto_detect = false, header = false, delim = '', quote = '', escape = '', `
     + `columns = {'line': 'VARCHAR'}, max_line_size = 33554432, ignore_errors = true, store_rejects = true${zipped(file)}))`
-  return { sql, column: (name) => `json_extract_string(line, ${literal(`$."${name.replace(/["\\]/g, '\\$&')}"`)})`, header: [], cut: null }
+  return { sql, column: (name) => `CASE WHEN sound THEN json_extract_string(line, ${literal(`$."${name.replace(/["\\]/g, '\\$&')}"`)}) END`, header: [], cut: null }
 }
 
 async function parquetRelation(database: Database, file: InputFile, wanted: readonly string[]): Promise<Relation> {

@@ -1,0 +1,61 @@
+import type { Database } from './database.ts'
+import type { MentionNames } from './mention-table.ts'
+
+/** Counts of authors by number of step, period, factor and level, as in `MentionNames`. */
+export interface AuthorGroups {
+  /** A mention without an author counts as one author, here and in `byPeriodLevel`. */
+  readonly byStep: readonly { readonly step: number; readonly authors: number }[]
+  readonly byPeriodLevel: readonly { readonly period: number; readonly factor: number; readonly level: number; readonly authors: number }[]
+  /** Known authors only. */
+  readonly concentration: readonly { readonly period: number; readonly venue: number; readonly mentionsPerAuthor: number; readonly authors: number }[]
+  /** Mentions with a known author, by venue. */
+  readonly withAuthor: readonly { readonly venue: number; readonly mentions: number }[]
+}
+
+/** Levels that one mask holds. */
+const bits = 63
+
+/**
+ * Who posted how often, counted. One pass makes `active`: one row an author and period, with the levels they were in as
+ * bits, so that distinct authors by level need no pass of their own.
+ */
+export async function groupAuthors(database: Database, names: MentionNames): Promise<AuthorGroups> {
+  const masks = names.levels.flatMap((levels, factor) => (factor === 0 ? [] : chunks(levels.length).map((chunk) => ({ factor, chunk, column: `mask_${factor}_${chunk}` }))))
+  const columns = masks.map(({ factor, chunk, column }) =>
+    `bit_or(CASE WHEN factor_${factor} // ${bits} = ${chunk} THEN 1::BIGINT << (factor_${factor} % ${bits})::BIGINT ELSE 0 END) AS ${column}`)
+  await database.run(`CREATE TEMP TABLE active AS SELECT period, min(factor_0) AS venue, count(*) AS posts${columns.map((column) => `, ${column}`).join('')}
+    FROM classified WHERE author IS NOT NULL GROUP BY author, period`)
+  const concentration = await counted(database, 'SELECT period AS a, venue AS b, posts AS c, count(*) AS n FROM active GROUP BY ALL ORDER BY ALL')
+  const venueAuthors = await counted(database, `SELECT period AS a, 0 AS b, factor_0 AS c, count(*) AS n FROM (
+    SELECT period, venue AS factor_0 FROM active UNION ALL SELECT period, factor_0 FROM classified WHERE author IS NULL) GROUP BY ALL ORDER BY ALL`)
+  const levelAuthors = []
+  for (const { factor, chunk, column } of masks) {
+    levelAuthors.push(...await counted(database, `SELECT a, ${factor} AS b, c, sum(n)::BIGINT AS n FROM (
+      SELECT period AS a, ${chunk * bits} + bit AS c, n FROM (SELECT period, ${column} AS mask, count(*) AS n FROM active GROUP BY ALL), range(${bits}) AS bit(bit) WHERE (mask >> bit) & 1 = 1
+      UNION ALL SELECT period, factor_${factor}, count(*) FROM classified WHERE author IS NULL AND factor_${factor} // ${bits} = ${chunk} GROUP BY ALL) GROUP BY ALL ORDER BY ALL`))
+  }
+  const byStep = await counted(database, 'SELECT step AS a, 0 AS b, 0 AS c, count(DISTINCT author) + count(*) FILTER (author IS NULL) AS n FROM classified GROUP BY ALL ORDER BY ALL')
+  const withAuthor = await counted(database, 'SELECT 0 AS a, venue AS b, 0 AS c, sum(posts)::BIGINT AS n FROM active GROUP BY ALL ORDER BY ALL')
+  return {
+    byStep: byStep.map(({ a, n }) => ({ step: a, authors: n })),
+    byPeriodLevel: [...venueAuthors, ...levelAuthors].map(({ a, b, c, n }) => ({ period: a, factor: b, level: c, authors: n })),
+    concentration: concentration.map(({ a, b, c, n }) => ({ period: a, venue: b, mentionsPerAuthor: c, authors: n })),
+    withAuthor: withAuthor.map(({ b, n }) => ({ venue: b, mentions: n })),
+  }
+}
+
+interface Counted {
+  readonly a: number
+  readonly b: number
+  readonly c: number
+  readonly n: number
+}
+
+async function counted(database: Database, sql: string): Promise<readonly Counted[]> {
+  const rows = await database.rows<Record<keyof Counted, number | bigint>>(sql)
+  return rows.map(({ a, b, c, n }) => ({ a: Number(a), b: Number(b), c: Number(c), n: Number(n) }))
+}
+
+function chunks(levels: number): readonly number[] {
+  return Array.from({ length: Math.ceil(levels / bits) }, (_, chunk) => chunk)
+}

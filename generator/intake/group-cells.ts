@@ -1,0 +1,44 @@
+import type { CellPart } from './cell-part.ts'
+import type { Database } from './database.ts'
+import type { MentionNames } from './mention-table.ts'
+import { scorePart } from './score-sql.ts'
+
+interface CellSums {
+  readonly mentions: bigint
+  readonly score: bigint
+  readonly squares: bigint
+  /** Known authors, their mentions, and the sum of squares of those by author. */
+  readonly authors: bigint
+  readonly known: bigint
+  readonly clusters: bigint
+  readonly step: number
+  readonly [level: `factor_${number}`]: number
+}
+
+/** The cells of `classified`, ordered by step and levels. */
+export async function groupCells(database: Database, factors: readonly string[], names: MentionNames): Promise<readonly CellPart[]> {
+  const keys = ['step', ...factors.map((_, index) => `factor_${index}`)].join(', ')
+  const rows = await database.rows<CellSums>(`
+    SELECT ${keys}, mentions, score, squares, coalesce(authors, 0) AS authors, coalesce(known, 0) AS known, coalesce(clusters, 0) AS clusters
+    FROM (SELECT ${keys}, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares FROM classified GROUP BY ${keys})
+    LEFT JOIN (SELECT ${keys}, count(*) AS authors, sum(posts)::BIGINT AS known, sum(posts * posts)::BIGINT AS clusters FROM (
+      SELECT author, ${keys}, count(*) AS posts FROM classified WHERE author IS NOT NULL GROUP BY author, ${keys}) GROUP BY ${keys}) USING (${keys})
+    ORDER BY ${keys}`)
+  return rows.map((row) => cellOf(row, factors, names))
+}
+
+function cellOf(row: CellSums, factors: readonly string[], names: MentionNames): CellPart {
+  const mentions = Number(row.mentions)
+  const unknown = row.mentions - row.known
+  return {
+    step: names.steps[row.step]!,
+    levels: factors.map((_, index) => names.levels[index]![row[`factor_${index}`]!]!),
+    mentions,
+    authors: Number(row.authors + unknown),
+    mean: (Number(row.score) / mentions) * scorePart,
+    squares: (Number(row.squares * row.mentions - row.score * row.score) / mentions) * scorePart ** 2,
+    freedom: mentions - 1,
+    clustering: Number(row.clusters + unknown) / mentions,
+    deff: Number.NaN,
+  }
+}

@@ -1,0 +1,47 @@
+import type { AuthorVariation } from '../../model/intake/intake-tables.ts'
+import type { Database } from './database.ts'
+import { scorePart } from './score-sql.ts'
+
+interface VariationSums {
+  readonly venue: number
+  readonly posts: bigint
+  readonly authors: bigint
+  readonly sum: bigint
+  readonly sum_squares: bigint
+  readonly squares: bigint
+}
+
+/**
+ * Sums for the one-way analysis of variance by author inside each venue, of the scores of known authors less the mean of
+ * those in the venue and step. Authors with equally many mentions are summed together, so that what comes out of the
+ * database is whole numbers and the one division is done here.
+ *
+ * @returns by number of the venue
+ */
+export async function groupVariation(database: Database): Promise<ReadonlyMap<number, AuthorVariation>> {
+  const rows = await database.rows<VariationSums>(`
+    SELECT venue, posts, count(*) AS authors, sum(total)::HUGEINT AS sum, sum(total * total)::HUGEINT AS sum_squares, sum(squares)::HUGEINT AS squares FROM (
+      SELECT author, min(factor_0) AS venue, count(*) AS posts, sum(score - centre)::HUGEINT AS total, sum((score - centre) * (score - centre))::HUGEINT AS squares
+      FROM classified JOIN (SELECT factor_0, step, CAST(round(sum(score)::DOUBLE / count(*)) AS BIGINT) AS centre FROM classified WHERE author IS NOT NULL GROUP BY ALL) USING (factor_0, step)
+      WHERE author IS NOT NULL GROUP BY author)
+    GROUP BY venue, posts ORDER BY venue, posts`)
+  const venues = new Map<number, VariationSums[]>()
+  for (const row of rows) venues.set(row.venue, [...(venues.get(row.venue) ?? []), row])
+  return new Map([...venues].map(([venue, sums]) => [venue, variationOf(sums)]))
+}
+
+function variationOf(sums: readonly VariationSums[]): AuthorVariation {
+  const total = (value: (row: VariationSums) => bigint): bigint => sums.reduce((all, row) => all + value(row), 0n)
+  const mentions = total((row) => row.authors * row.posts)
+  const sum = total((row) => row.sum)
+  const explained = sums.reduce((all, row) => all + Number(row.sum_squares) / Number(row.posts), 0)
+  const between = explained - Number(sum * sum) / Number(mentions)
+  const within = Number(total((row) => row.squares)) - explained
+  return {
+    authors: Number(total((row) => row.authors)),
+    mentions: Number(mentions),
+    squaredSizes: Number(total((row) => row.authors * row.posts * row.posts)),
+    betweenSquares: Math.max(0, between) * scorePart ** 2,
+    withinSquares: Math.max(0, within) * scorePart ** 2,
+  }
+}

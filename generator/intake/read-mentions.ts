@@ -1,0 +1,57 @@
+import type { AuthorVariation } from '../../model/intake/intake-tables.ts'
+import type { Account } from '../account/account.ts'
+import type { CellPart } from './cell-part.ts'
+import type { Database } from './database.ts'
+import type { Dated } from './dated-mentions.ts'
+import { findDuplicates, type Duplicates } from './duplicates.ts'
+import { groupAuthors, type AuthorGroups } from './group-authors.ts'
+import { groupCells } from './group-cells.ts'
+import { groupVariation } from './group-variation.ts'
+import type { LevelReader } from './level-names.ts'
+import { createMentions, type MentionNames } from './mention-table.ts'
+import { classifyPosters } from './poster-classes.ts'
+import { aboutOthers } from './scan-mentions.ts'
+
+/** Everything that is grouped from mentions: no row of it stands for a person. */
+export interface GroupedMentions {
+  readonly names: MentionNames
+  readonly parts: readonly CellPart[]
+  readonly variation: ReadonlyMap<number, AuthorVariation>
+  readonly authors: AuthorGroups
+}
+
+export interface SettledMentions {
+  readonly duplicates: Duplicates
+  /** Rows by reason. */
+  readonly outOfScope: Readonly<Record<string, number>>
+  /** null where no mention is left. */
+  readonly grouped: GroupedMentions | null
+}
+
+/**
+ * Decide about every row of `scanned` and group what is left.
+ *
+ * @param end - day number of the last day of the period under review
+ */
+export async function settleMentions(
+  database: Database, account: Account, { zone, span }: Dated, end: number, levelOf: LevelReader, progress: (message: string) => void,
+): Promise<SettledMentions> {
+  const eligible = `reason = 0 AND about = 0 AND ${zone.day} <= ${end}`
+  progress('Looking for duplicates')
+  const duplicates = await findDuplicates(database, zone, eligible)
+  const outOfScope = await countOutOfScope(database, `${zone.day} > ${end}`)
+  if (span === null || span.first > end) return { duplicates, outOfScope, grouped: null }
+  progress('Naming and classing mentions')
+  const names = await createMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, levelOf)
+  await classifyPosters(database, account)
+  progress('Grouping cells')
+  const parts = await groupCells(database, account.factors, names)
+  progress('Counting authors')
+  return { duplicates, outOfScope, grouped: { names, parts, variation: await groupVariation(database), authors: await groupAuthors(database, names) } }
+}
+
+async function countOutOfScope(database: Database, after: string): Promise<Readonly<Record<string, number>>> {
+  const rows = await database.rows<{ about: number; rows: bigint }>(
+    `SELECT about, count(*) AS rows FROM scanned WHERE reason = 0 AND (about > 0 OR ${after}) GROUP BY about ORDER BY about`)
+  return Object.fromEntries(rows.map(({ about, rows: count }) => [about === 0 ? 'after-period' : aboutOthers[about - 1]!, Number(count)]))
+}

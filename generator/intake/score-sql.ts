@@ -1,0 +1,33 @@
+import type { ScoreReading } from '../account/account.ts'
+import { literal } from './database.ts'
+import { foldValue } from './level-names.ts'
+
+/** Scores are summed as whole numbers of this many parts, so that no sum depends on its order. */
+export const scorePart = 1e-9
+const parts = 1e9
+
+export interface ScoreSql {
+  /** BIGINT of score parts, in [-1e9, 1e9], or NULL. */
+  readonly score: string
+  /** BOOLEAN: a number was read and lies outside the range. */
+  readonly outside: string
+}
+
+/** How the text of a score is read: as one of the labels, or as a number of the range. */
+export function scoreSql(text: string, reading: ScoreReading): ScoreSql {
+  if (reading.kind === 'range') {
+    const number = `TRY_CAST(${text} AS DOUBLE)`
+    const inside = `${number} BETWEEN ${Math.min(reading.low, reading.high)} AND ${Math.max(reading.low, reading.high)}`
+    const placed = `(${number} - ${signed(reading.low)}) / ${signed(reading.high - reading.low)}`
+    return { score: `CASE WHEN ${inside} THEN CAST(round((2 * ${placed} - 1) * ${parts}) AS BIGINT) END`, outside: `(isfinite(${number}) AND NOT ${inside})` }
+  }
+  const branches = (spelling: (label: string) => string): string =>
+    reading.labels.map(({ label, score }) => `WHEN ${literal(spelling(label))} THEN ${Math.round(score * parts)}`).join(' ')
+  const folded = `lower(trim(regexp_replace(${text}, '\\s+', ' ', 'g')))`
+  // Spelled as in the account nearly always: only the others are folded.
+  return { score: `CASE ${text} ${branches((label) => label)} ELSE CASE ${folded} ${branches(foldValue)} END END::BIGINT`, outside: 'false' }
+}
+
+function signed(value: number): string {
+  return `CAST(${value} AS DOUBLE)`
+}

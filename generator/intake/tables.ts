@@ -1,0 +1,94 @@
+import type { Accounting, Factor, IntakeTables, Period } from '../../model/intake/intake-tables.ts'
+import type { Account } from '../account/account.ts'
+import { dayNumber } from '../calendar/days.ts'
+import { nextStep } from '../calendar/grid.ts'
+import { timeline } from '../calendar/timeline.ts'
+import { faultOf } from '../faults/catalogue.ts'
+import { InputFault } from '../faults/fault.ts'
+import { placeOf } from '../account/yaml-places.ts'
+import { addAuthors, authoredMentions, concentrationRows, indicesOf, variationRows } from './assemble.ts'
+import { summedAuthors } from './author-counts.ts'
+import { cellColumns } from './cell-columns.ts'
+import type { CellPart } from './cell-part.ts'
+import type { Dated } from './dated-mentions.ts'
+import { factorOf } from './level-names.ts'
+import type { SettledMentions } from './read-mentions.ts'
+import type { ScannedFile } from './scan-mentions.ts'
+
+/** What was gathered from all sources, for the tables to be put together from. */
+export interface Material {
+  /** null where no mention is in scope and no period was asked for. */
+  readonly review: Period | null
+  readonly scanned: readonly ScannedFile[]
+  /** Rows of mentions by reason. */
+  readonly rejected: Readonly<Record<string, number>>
+  readonly dated: Dated
+  readonly settled: SettledMentions | null
+  readonly unmapped: Accounting['unmapped']
+  /** Ready-made cells of the review, and the number of those after it. */
+  readonly ready: readonly CellPart[]
+  readonly readyAfter: number
+  readonly inputs: Accounting['inputs']
+}
+
+/**
+ * The intake tables from what was gathered.
+ *
+ * @throws {InputFault} `no-mentions`, `target-mix-level`
+ */
+export function tablesOf(account: Account, material: Material): IntakeTables {
+  const { review, settled, ready } = material
+  const grouped = settled?.grouped ?? null
+  const parts = [...ready, ...(grouped?.parts ?? [])]
+  const accounting = accountingOf(material)
+  if (review === null || parts.length === 0) {
+    const reasons = Object.entries(accounting.reasons).map(([reason, rows]) => `${reason} ${rows}`)
+    throw new InputFault([faultOf('no-mentions', 'mentions', { accounting: [`rows ${accounting.received}`, ...reasons].join(', ') })])
+  }
+  const factors = account.factors.map((name, index) => factorOf(account, name, parts.map((part) => part.levels[index]!)))
+  checkTarget(account, factors)
+  const starts = parts.map((part) => part.step)
+  const [first, last] = starts.reduce(([low, high], step) => [Math.min(low, step), Math.max(high, step)], [Infinity, -Infinity])
+  const axis = timeline({ ...account, firstDay: first!, lastDay: nextStep(account.grid, last!) - 1, review })
+  const steps = axis.steps.map(dayNumber)
+  const readyCells = cellColumns(ready, steps, factors)
+  const indices = grouped === null ? null : indicesOf(grouped, axis, factors)
+  const summed = summedAuthors(readyCells, axis, factors)
+  return {
+    timeline: axis,
+    factors,
+    cells: cellColumns(parts, steps, factors),
+    variation: grouped === null ? factors[0]!.levels.map(() => null) : variationRows(grouped, indices!, factors[0]!.levels.length),
+    concentration: grouped === null ? [] : concentrationRows(grouped, indices!),
+    authors: grouped === null ? summed : addAuthors(summed, grouped, indices!, factors, ready.length === 0),
+    accounting: { ...accounting, withAuthor: authoredMentions(grouped, indices, readyCells, factors), readyMade: ready.length > 0 },
+  }
+}
+
+/** Every row of every source, in one of four places. @throws if one is lost: a fault of the program */
+function accountingOf({ scanned, rejected, dated, settled, unmapped, ready, readyAfter, inputs }: Material): Omit<Accounting, 'withAuthor' | 'readyMade'> {
+  const total = (counts: Readonly<Record<string, number>>): number => Object.values(counts).reduce((sum, rows) => sum + rows, 0)
+  const received = scanned.reduce((sum, file) => sum + file.sound + file.malformed.length, 0) + ready.length + readyAfter
+  const duplicates = settled?.duplicates ?? { sameId: 0, repost: 0 }
+  const outOfScope = { ...settled?.outOfScope, 'after-period': (settled?.outOfScope['after-period'] ?? 0) + readyAfter }
+  const modelled = (settled?.grouped?.parts ?? []).reduce((sum, part) => sum + part.mentions, 0) + ready.length
+  const counts = { rejected: total(rejected), duplicates: duplicates.sameId + duplicates.repost, outOfScope: total(outOfScope), modelled }
+  if (settled !== null && received !== counts.rejected + counts.duplicates + counts.outOfScope + counts.modelled) {
+    throw new Error(`The accounting of mentions does not add up: ${received} received, ${JSON.stringify(counts)}`)
+  }
+  const reasons = {
+    ...rejected, ...outOfScope, 'same-id': duplicates.sameId, 'repost': duplicates.repost,
+    'time-nonexistent': dated.nonexistent, 'time-doubled': dated.doubled,
+  }
+  return { received, ...counts, reasons: Object.fromEntries(Object.entries(reasons).filter(([, rows]) => rows > 0)), unmapped, inputs }
+}
+
+/** A target can only be set for levels that mentions are in: nothing is known of the others. */
+function checkTarget(account: Account, factors: readonly Factor[]): void {
+  const faults = account.targetMix.flatMap(({ factor, shares }) => {
+    const known = factors.find((candidate) => candidate.name === factor)!.levels.map((level) => level.name)
+    return shares.filter(({ level, share }) => share > 0 && !known.includes(level))
+      .map(({ level }) => faultOf('target-mix-level', placeOf(account.places, ['target_mix', factor, level]), { level, known }))
+  })
+  if (faults.length > 0) throw new InputFault(faults)
+}
