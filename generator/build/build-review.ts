@@ -1,0 +1,66 @@
+import { dirname, join } from 'node:path'
+import type { Browser } from 'puppeteer'
+import type { Findings } from '../../model/findings/schema.ts'
+import type { Account } from '../account/account.ts'
+import { compose } from '../compose/compose.ts'
+import { readIntake } from '../intake/read-intake.ts'
+import { print } from '../print/print.ts'
+import type { Program } from '../program/program.ts'
+import { render } from '../render/render.ts'
+import { tablesOf } from '../tables/tables-of.ts'
+import { loadHouse } from './house.ts'
+import { makeFindings } from './make-findings.ts'
+import type { Progress } from './stages.ts'
+import { openDraft, requireDraft } from './write-draft.ts'
+
+/*
+ *   account ──▶ intake tables ──▶ findings ──▶ document ──▶ review.html ──▶ review.pdf
+ *               (readIntake)    (makeFindings)  (compose)     (render)        (print)
+ */
+
+export interface BuildOptions {
+  readonly period?: string | undefined
+  /** Folder of the draft; default ACCOUNT/drafts/PERIOD. */
+  readonly out?: string | undefined
+  readonly seed: number
+  readonly threads?: number | undefined
+  /** Opened once per run, when a PDF is first printed; null: no PDF. */
+  readonly browser: (() => Promise<Browser>) | null
+  readonly progress: Progress
+}
+
+export interface Draft {
+  readonly folder: string
+  readonly findings: Findings
+}
+
+/** Make the draft review of one account and period. What was there before stays until the new draft is whole. */
+export async function buildReview(program: Program, account: Account, options: BuildOptions): Promise<Draft> {
+  const { progress } = options
+  const house = await loadHouse(program, account)
+  const browser = options.browser === null ? null : options.browser()
+  // a machine without a browser is told at once, not after the fit; the answer is awaited where it is needed
+  browser?.catch(() => undefined)
+  if (options.out !== undefined) await requireDraft(options.out)
+  const draft = await openDraft(options.out === undefined ? join(account.folder, 'drafts') : dirname(options.out))
+  try {
+    progress.stage('intake')
+    const tables = await readIntake(account, { period: options.period, threads: options.threads, rejects: draft.rejects, progress: progress.detail })
+    progress.stage('fit')
+    const findings = await makeFindings(account, tables, house.words, { seed: options.seed, version: program.version, threads: options.threads, draws: progress.draws })
+    progress.stage('document')
+    const figures = tablesOf(findings)
+    const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })
+    const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme })
+    progress.stage('print')
+    const pdf = browser === null ? null : await print(html, await browser, {
+      title: document.title, author: account.preparedBy ?? account.brand, date: findings.period.end, language: document.lang,
+    })
+    const folder = options.out ?? join(account.folder, 'drafts', findings.period.name)
+    await draft.finish(folder, { findings, tables: figures, html, pdf })
+    return { folder, findings }
+  } catch (error) {
+    await draft.abandon()
+    throw error
+  }
+}

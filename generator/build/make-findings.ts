@@ -1,0 +1,65 @@
+import { availableParallelism } from 'node:os'
+import { analyse, type Analysis } from '../../model/analyse.ts'
+import { findingsSchema, type Findings } from '../../model/findings/schema.ts'
+import type { IntakeTables } from '../../model/intake/intake-tables.ts'
+import { ModelError } from '../../model/model-error.ts'
+import type { Account } from '../account/account.ts'
+import { faultOf } from '../faults/catalogue.ts'
+import { InputFault } from '../faults/fault.ts'
+import { wordCaveat } from '../words/caveats.ts'
+import type { Words } from '../words/words.ts'
+import { startFitThreads, type FitThreads } from './threads.ts'
+
+export interface FitOptions {
+  readonly seed: number
+  readonly version: string
+  /** Threads of the fit; the findings do not depend on it. Default: the machine's. */
+  readonly threads?: number | undefined
+  readonly draws?: (share: number) => void
+}
+
+/**
+ * Intake tables ──model──▶ analysis ──worded──▶ findings, checked against their schema.
+ *
+ * @throws {InputFault} `base-empty`, `period-empty`: the account's base or the period asked for holds no step
+ */
+export async function makeFindings(account: Account, tables: IntakeTables, words: Words, options: FitOptions): Promise<Findings> {
+  const analysis = await fit(account, tables, options)
+  const { caveats, ...computed } = analysis
+  return findingsSchema.parse({
+    ...computed,
+    account: account.account, brand: account.brand, locale: account.locale,
+    caveats: caveats.map((caveat) => ({ ...caveat, ...wordCaveat(words, caveat.code, caveat.figures) })),
+    inputs: tables.accounting.inputs.map((input) => ({ ...input })),
+    program: { version: options.version, seed: options.seed },
+  })
+}
+
+async function fit(account: Account, tables: IntakeTables, options: FitOptions): Promise<Analysis> {
+  const open: FitThreads[] = []
+  try {
+    return await analyse(tables, {
+      interval: account.interval, seed: options.seed,
+      targetMix: Object.fromEntries(account.targetMix.map(({ factor, shares }) => [factor, Object.fromEntries(shares.map(({ level, share }) => [level, share]))])),
+      facts: {
+        givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
+        timeZone: account.timeZone, reporting: account.reporting,
+      },
+    }, (problem) => {
+      const threads = startFitThreads(problem, options.threads ?? Math.min(8, availableParallelism()))
+      open.push(threads)
+      return threads.executor
+    }, options.draws)
+  } catch (error) {
+    throw error instanceof ModelError ? asInputFault(error, account) : error
+  } finally {
+    await Promise.all(open.map((threads) => threads.close()))
+  }
+}
+
+/** What the model could not compute with because of what the account asks for; anything else is the program's own fault. */
+function asInputFault(error: ModelError, account: Account): Error {
+  if (error.code === 'base-empty') return new InputFault([faultOf('base-empty', account.places['base'] ?? 'account.yaml', { reason: error.message })])
+  if (error.code === 'period-empty') return new InputFault([faultOf('period-empty', 'account.yaml', { reason: error.message })])
+  return error
+}

@@ -1,0 +1,77 @@
+import { chmod, mkdir, mkdtemp, readdir, rename, rm, rmdir, writeFile } from 'node:fs/promises'
+import { join } from 'node:path'
+import type { Findings } from '../../model/findings/schema.ts'
+import { faultOf } from '../faults/catalogue.ts'
+import { InputFault } from '../faults/fault.ts'
+import { toCsv } from '../tables/csv.ts'
+import type { Table } from '../tables/table.ts'
+
+/** Everything a draft folder may hold: a folder with anything else in it is somebody's, and is left alone. */
+const ours = new Set(['review.html', 'review.pdf', 'findings.json', 'tables', 'rejects'])
+
+export interface DraftContents {
+  readonly findings: Findings
+  readonly tables: readonly Table[]
+  readonly html: string
+  /** null with `--no-pdf`. */
+  readonly pdf: Uint8Array | null
+}
+
+/** A folder beside the draft's, to be filled and then put in its place: a failure leaves what was there untouched. */
+export interface UnfinishedDraft {
+  /** Where readers of input may write on the way. */
+  readonly rejects: string
+  /** Put the draft in its place. */
+  finish(folder: string, contents: DraftContents): Promise<void>
+  /** Leave no trace. */
+  abandon(): Promise<void>
+}
+
+/** @param parent - the folder in which the draft's own will stand; made where it is absent */
+export async function openDraft(parent: string): Promise<UnfinishedDraft> {
+  const made = await mkdir(parent, { recursive: true })
+  const unfinished = await mkdtemp(join(parent, '.unfinished-'))
+  return {
+    rejects: join(unfinished, 'rejects'),
+    finish: async (folder, contents) => {
+      await requireDraft(folder)
+      await fill(unfinished, contents)
+      await chmod(unfinished, 0o755)
+      await replace(folder, unfinished)
+    },
+    abandon: async () => {
+      await rm(unfinished, { recursive: true, force: true })
+      if (made !== undefined) await rmdir(made).catch(() => undefined)
+    },
+  }
+}
+
+/**
+ * A folder that may be replaced by a draft: absent, empty, or a draft itself.
+ *
+ * @throws {InputFault} `out-not-a-draft` where it holds anything that no draft does
+ */
+export async function requireDraft(folder: string): Promise<void> {
+  const found = await readdir(folder).catch((error: NodeJS.ErrnoException) => {
+    if (error.code === 'ENOENT') return []
+    throw new InputFault([faultOf('out-not-a-draft', folder, { entry: error.code ?? error.message })])
+  })
+  const foreign = found.find((entry) => !ours.has(entry))
+  if (foreign !== undefined) throw new InputFault([faultOf('out-not-a-draft', folder, { entry: foreign })])
+}
+
+async function fill(folder: string, { findings, tables, html, pdf }: DraftContents): Promise<void> {
+  await mkdir(join(folder, 'tables'))
+  await writeFile(join(folder, 'findings.json'), `${JSON.stringify(findings, null, 2)}\n`)
+  await writeFile(join(folder, 'review.html'), html)
+  if (pdf !== null) await writeFile(join(folder, 'review.pdf'), pdf)
+  for (const table of tables) await writeFile(join(folder, 'tables', `${table.name}.csv`), toCsv(table))
+}
+
+/** The old folder steps aside before the new one takes its name, so that at every moment one of the two is whole. */
+async function replace(folder: string, unfinished: string): Promise<void> {
+  const aside = `${unfinished}-before`
+  const before = await rename(folder, aside).then(() => true, () => false)
+  await rename(unfinished, folder)
+  if (before) await rm(aside, { recursive: true, force: true })
+}

@@ -1,0 +1,83 @@
+import { basename, relative, resolve } from 'node:path'
+import type { Browser } from 'puppeteer'
+import { readAccount } from '../account/read-account.ts'
+import { buildReview, type Draft } from '../build/build-review.ts'
+import type { Fault } from '../faults/fault.ts'
+import { openBrowser } from '../print/open-browser.ts'
+import type { Program } from '../program/program.ts'
+import { failureOf, type ExitCode } from './outcome.ts'
+import { showProgress } from './show-progress.ts'
+import type { Speaker, SpeakerOptions } from './speaker.ts'
+
+export interface BuildFlags extends SpeakerOptions {
+  readonly period?: string
+  readonly out?: string
+  readonly pdf: boolean
+  readonly seed: number
+  readonly threads?: number
+  readonly browser?: string
+}
+
+/** `tareline build`: account by account; a faulty one does not stop the others. */
+export async function runBuild(program: Program, folders: readonly string[], flags: BuildFlags, speaker: Speaker): Promise<ExitCode> {
+  if (flags.out !== undefined && folders.length > 1) {
+    speaker.faults([{ code: 'usage', place: '--out', message: 'Unexpected --out with several accounts, expected one.', mend: 'Build one account at a time, or leave --out out.' }])
+    return 2
+  }
+  const browsers = sharedBrowser(flags)
+  try {
+    const outcomes: Outcome[] = []
+    for (const folder of folders) outcomes.push(await buildOne(program, folder, flags, browsers.open, speaker))
+    const exitCode = outcomes.reduce<ExitCode>((worst, outcome) => (outcome.exitCode > worst ? outcome.exitCode : worst), 0)
+    speaker.give({ ok: exitCode === 0, drafts: outcomes.flatMap(({ draft }) => (draft === null ? [] : [draftResult(draft)])), faults: outcomes.flatMap(({ faults }) => faults) })
+    return exitCode
+  } finally {
+    await browsers.close()
+  }
+}
+
+interface Outcome {
+  readonly exitCode: ExitCode
+  readonly draft: Draft | null
+  readonly faults: readonly Fault[]
+}
+
+async function buildOne(program: Program, folder: string, flags: BuildFlags, browser: () => Promise<Browser>, speaker: Speaker): Promise<Outcome> {
+  const shown = showProgress(speaker, process.stderr.isTTY && flags.json !== true, basename(resolve(folder)))
+  try {
+    const account = await readAccount(folder)
+    const draft = await buildReview(program, account, {
+      period: flags.period, out: flags.out === undefined ? undefined : resolve(flags.out), seed: flags.seed, threads: flags.threads,
+      browser: flags.pdf ? browser : null, progress: shown.progress,
+    })
+    await shown.end()
+    speaker.say(describeDraft(draft))
+    return { exitCode: 0, draft, faults: [] }
+  } catch (error) {
+    await shown.end(error)
+    const { exitCode, faults } = failureOf(error)
+    speaker.faults(faults)
+    return { exitCode, draft: null, faults }
+  }
+}
+
+/** One browser for all accounts, started when it is first asked for. */
+function sharedBrowser(flags: BuildFlags): { open: () => Promise<Browser>; close: () => Promise<void> } {
+  let opened: Promise<Browser> | undefined
+  return {
+    open: () => (opened ??= openBrowser({ browser: flags.browser })),
+    close: async () => { await opened?.then((browser) => browser.close(), () => undefined) },
+  }
+}
+
+function draftResult({ folder, findings }: Draft) {
+  return {
+    account: findings.account, period: findings.period.name, folder,
+    movement: findings.opinion.movement, change: findings.opinion.change, serious: findings.caveats.filter(({ severity }) => severity === 'serious').map(({ code }) => code),
+  }
+}
+
+function describeDraft({ folder, findings }: Draft): string {
+  const place = relative(process.cwd(), folder)
+  return `${findings.brand}, ${findings.period.name}: draft in ${place.startsWith('..') ? folder : place === '' ? '.' : place}`
+}

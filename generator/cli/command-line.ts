@@ -1,0 +1,62 @@
+import { Command, InvalidArgumentError } from 'commander'
+import { thisProgram } from '../program/program.ts'
+import { runBuild, type BuildFlags } from './build-command.ts'
+import { runCheck, type CheckFlags } from './check-command.ts'
+import { failureOf, type ExitCode } from './outcome.ts'
+import { createSpeaker, type Streams } from './speaker.ts'
+
+/**
+ * Parse the arguments and run the command they name.
+ *
+ * @param args - without the program's own name
+ * @returns the exit code: 0 done, 1 input at fault, 2 wrong usage, 3 machine lacks something, 4 fault of the program
+ */
+export async function runCommandLine(args: readonly string[], streams: Streams = { out: process.stdout, err: process.stderr }): Promise<ExitCode> {
+  let exitCode: ExitCode = 0
+  const done = (code: ExitCode) => { exitCode = code }
+  const tareline = describe(streams, done)
+  try {
+    await tareline.parseAsync(args, { from: 'user' })
+  } catch (error) {
+    const failure = failureOf(error)
+    createSpeaker({}, streams).faults(failure.faults)
+    return failure.exitCode
+  }
+  return exitCode
+}
+
+function describe(streams: Streams, done: (code: ExitCode) => void): Command {
+  const program = thisProgram()
+  const quietly = (command: Command) => command
+    .option('--json', 'print one JSON object on stdout, everything else on stderr')
+    .option('--quiet', 'say nothing but what is at fault')
+    .exitOverride()
+    .configureOutput({ writeOut: (text) => streams.out.write(text), writeErr: (text) => streams.err.write(text) })
+  const tareline = new Command('tareline')
+    .description('Makes brand health reviews from posts: what opinion of the brand itself has done, and how sure that is.')
+    .version(program.version)
+    .exitOverride()
+    .configureOutput({ writeOut: (text) => streams.out.write(text), writeErr: (text) => streams.err.write(text) })
+
+  quietly(tareline.command('check').argument('<account>', 'folder with an account.yaml'))
+    .description('read the account file, every input and the template; print the accounting of mentions; fit nothing')
+    .option('--rejects <dir>', 'write the rows that could not be read, with file, line and reason')
+    .action(async (account: string, flags: CheckFlags) => { done(await runCheck(program, account, flags, createSpeaker(flags, streams))) })
+
+  quietly(tareline.command('build').argument('<account...>', 'folders with an account.yaml'))
+    .description('fit the model and make the draft review of a period: review.html, review.pdf, findings.json, tables')
+    .option('--period <period>', 'e.g. 2026-10, 2026-Q4, 2026-W44; default: the last whole one that the mentions cover')
+    .option('--out <dir>', 'folder of the draft; default: ACCOUNT/drafts/PERIOD')
+    .option('--no-pdf', 'leave out the PDF')
+    .option('--seed <number>', 'seed of the draws; the same seed gives the same review', wholeNumber, 1)
+    .option('--threads <number>', 'threads to work with; the review does not depend on it', wholeNumber)
+    .option('--browser <file>', 'browser that prints the PDF; default: the first that is found')
+    .action(async (accounts: string[], flags: BuildFlags) => { done(await runBuild(program, accounts, flags, createSpeaker(flags, streams))) })
+  return tareline
+}
+
+function wholeNumber(text: string): number {
+  const value = Number(text)
+  if (!/^\d+$/.test(text) || !Number.isSafeInteger(value)) throw new InvalidArgumentError('expected a whole number of 0 or more.')
+  return value
+}

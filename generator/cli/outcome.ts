@@ -1,0 +1,23 @@
+import { CommanderError } from 'commander'
+import { InputFault, MachineFault, type Fault } from '../faults/fault.ts'
+
+/** 0 done, 1 the input or the archive is at fault, 2 wrong usage, 3 the machine lacks something, 4 a fault of the program itself. */
+export type ExitCode = 0 | 1 | 2 | 3 | 4
+
+/** What went wrong, as the command line reports it. */
+export interface Failure {
+  readonly exitCode: ExitCode
+  readonly faults: readonly Fault[]
+}
+
+/** Sort an error by who must mend it. */
+export function failureOf(error: unknown): Failure {
+  if (error instanceof InputFault) return { exitCode: 1, faults: error.faults }
+  if (error instanceof MachineFault) return { exitCode: 3, faults: [error.fault] }
+  if (error instanceof CommanderError) return { exitCode: error.exitCode === 0 ? 0 : 2, faults: [] }
+  const text = error instanceof Error ? (error.stack ?? error.message) : String(error)
+  return {
+    exitCode: 4,
+    faults: [{ code: 'program-fault', place: 'tareline', message: text, mend: 'This is a fault of the program: report it with this text; the data need no change.' }],
+  }
+}

@@ -1,0 +1,78 @@
+import { Listr, type ListrTaskWrapper, type DefaultRenderer, type SimpleRenderer } from 'listr2'
+import { silent, type Progress, type Stage } from '../build/stages.ts'
+import type { Speaker } from './speaker.ts'
+
+const titles: Readonly<Record<Stage, string>> = {
+  intake: 'Reading the mentions', fit: 'Fitting the model', document: 'Composing the review', print: 'Printing the PDF',
+}
+const stages = Object.keys(titles) as Stage[]
+
+export interface ShownProgress {
+  readonly progress: Progress
+  /** The work is over, well or badly: settle what is shown. */
+  end(failure?: unknown): Promise<void>
+}
+
+/** Live stages on a terminal, plain lines elsewhere, nothing with `--quiet`. */
+export function showProgress(speaker: Speaker, terminal: boolean, what: string): ShownProgress {
+  if (speaker.quiet) return { progress: silent, end: () => Promise.resolve() }
+  return terminal ? showLive(what) : showLines(speaker, what)
+}
+
+function showLines(speaker: Speaker, what: string): ShownProgress {
+  let told = 0
+  return {
+    progress: {
+      stage: (stage) => { speaker.note(`${what}: ${titles[stage]}`) },
+      detail: (text) => { speaker.note(`${what}:   ${text}`) },
+      draws: (share) => {
+        const quarter = Math.floor(share * 4)
+        if (quarter > told) speaker.note(`${what}:   draws ${25 * quarter} %`)
+        told = quarter
+      },
+    },
+    end: () => Promise.resolve(),
+  }
+}
+
+type LiveTask = ListrTaskWrapper<unknown, typeof DefaultRenderer, typeof SimpleRenderer>
+
+/** One line per stage; each waits until the work says that the next one begins. */
+function showLive(what: string): ShownProgress {
+  const marks = new Map(stages.map((stage) => [stage, deferred()]))
+  let current: LiveTask | undefined
+  const list = new Listr<unknown>(stages.map((stage) => ({
+    title: `${what}: ${titles[stage]}`,
+    task: (_, task) => {
+      current = task
+      return marks.get(stage)?.promise
+    },
+  })), { exitOnError: true, rendererOptions: { collapseErrors: false, showErrorMessage: false } })
+  const shown = list.run().catch(() => undefined)
+  const settleBefore = (stage: Stage) => { for (const earlier of stages.slice(0, stages.indexOf(stage))) marks.get(earlier)?.resolve() }
+  return {
+    progress: {
+      stage: settleBefore,
+      detail: (text) => { if (current !== undefined) current.output = text },
+      draws: (share) => { if (current !== undefined) current.output = `draws ${Math.round(100 * share)} %` },
+    },
+    end: async (failure) => {
+      for (const mark of marks.values()) {
+        if (failure === undefined) mark.resolve()
+        else mark.reject(new Error('stopped'))
+      }
+      await shown
+    },
+  }
+}
+
+function deferred(): { readonly promise: Promise<void>; resolve: () => void; reject: (error: Error) => void } {
+  let resolve: () => void = () => undefined
+  let reject: (error: Error) => void = () => undefined
+  const promise = new Promise<void>((yes, no) => {
+    resolve = yes
+    reject = no
+  })
+  promise.catch(() => undefined)
+  return { promise, resolve, reject }
+}
