@@ -1,4 +1,4 @@
-import { LineCounter, isAlias, isMap, isScalar, parseDocument } from 'yaml'
+import { LineCounter, isAlias, isMap, isScalar, parseDocument, visit } from 'yaml'
 import type { Document, ParsedNode } from 'yaml'
 import type { FormName } from '../words/forms.ts'
 import { formNames, isFormName, write } from '../words/forms.ts'
@@ -43,15 +43,15 @@ interface Point { readonly line: number, readonly column: number }
 export function parseSentences(text: string, reporter: Reporter): Sentences {
   const lines = new LineCounter()
   const document = parseDocument(text, { lineCounter: lines })
-  const place = placeIn(lines)
+  const [place, anchors] = [placeIn(lines), anchorsIn(document)]
   for (const error of document.errors) {
     const { line, col: column } = lines.linePos(error.pos[0])
     const point = { line, column }
     reporter.report({ position: { start: point, end: point } }, 'sentences-invalid', `YAML (${error.message.split('\n')[0]})`, 'a map from messages to arguments', 'Mend the syntax.')
   }
-  return new Map(entries(document.contents, document).map(([message, node]) => {
+  return new Map(entries(document.contents, anchors).map(([message, node]) => {
     const position = place(node)
-    const found = entries(node, document).map(([name, spec]) => [name, readArgument(name, asStrings(spec, document), place(spec), reporter)] as const)
+    const found = entries(node, anchors).map(([name, spec]) => [name, readArgument(name, asStrings(spec, anchors), place(spec), reporter)] as const)
     return [message, { position, arguments: Object.fromEntries(found.filter((entry): entry is [string, Argument] => entry[1] !== undefined)) }]
   }))
 }
@@ -87,15 +87,24 @@ function valueOf(argument: Argument, scope: Scope, words: Words): unknown {
   })
 }
 
+/** What the names of a file (`&name`) stand for, found in one walk. */
+type Anchors = ReadonlyMap<string, unknown>
+
+function anchorsIn(document: Document.Parsed): Anchors {
+  const anchors = new Map<string, unknown>()
+  visit(document, { Map: (_key, node) => void (node.anchor !== undefined && anchors.set(node.anchor, node)) })
+  return anchors
+}
+
 /** Keys and values of a map, or of the map that an alias (`*name`) stands for. */
-function entries(node: unknown, document: Document): readonly (readonly [string, ParsedNode | null])[] {
-  const found: unknown = isAlias(node) ? node.resolve(document) : node
+function entries(node: unknown, anchors: Anchors): readonly (readonly [string, ParsedNode | null])[] {
+  const found = isAlias(node) ? anchors.get(node.source) : node
   if (!isMap<ParsedNode, ParsedNode | null>(found)) return []
   return found.items.map((pair) => [isScalar(pair.key) ? String(pair.key.value) : '', pair.value])
 }
 
-function asStrings(node: ParsedNode | null, document: Document): Record<string, string> {
-  return Object.fromEntries(entries(node, document).map(([key, value]) => [key, isScalar(value) ? String(value.value) : '']))
+function asStrings(node: ParsedNode | null, anchors: Anchors): Record<string, string> {
+  return Object.fromEntries(entries(node, anchors).map(([key, value]) => [key, isScalar(value) ? String(value.value) : '']))
 }
 
 function placeIn(lines: LineCounter): (node: ParsedNode | null) => Position {
