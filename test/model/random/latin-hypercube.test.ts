@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
 import { ModelError } from '../../../model/model-error.ts'
-import { createGenerator } from '../../../model/random/generator.ts'
+import { createGenerator, type Generator } from '../../../model/random/generator.ts'
 import { latinHypercube } from '../../../model/random/latin-hypercube.ts'
 
 const column = (points: Float64Array, d: number, index: number) => points.filter((_, i) => i % d === index)
@@ -39,4 +39,11 @@ test('the mean of a smooth function varies far less than with plain draws', () =
 
 test.each([[0, 1], [1, 0], [2.5, 1]])('shape %d x %d is refused', (n, d) => {
   expect(() => latinHypercube(n, d, createGenerator(1, 0))).toThrow(ModelError)
+})
+
+test('a jitter that rounds up to the next stratum, or to 1, is held below it', () => {
+  const last: Generator = { ...createGenerator(1, 0), uniform: () => 1 - Number.EPSILON / 2, shuffle: () => undefined }
+  const points = latinHypercube(1000, 1, last)
+  expect(points.every((value, i) => value < (i + 1) / 1000)).toBe(true)
+  expect((999 + last.uniform()) / 1000).toBe(1)
 })

@@ -1,5 +1,8 @@
 import { expect, test } from 'vitest'
-import { edges } from '../../../model/random/ziggurat.ts'
+import { seedState } from '../../../model/random/xoshiro.ts'
+import { drawNormal, edges } from '../../../model/random/ziggurat.ts'
+import { mean, sampleVariance } from '../../../model/statistics/moments.ts'
+import { normalCdf, normalDensity } from '../../../model/statistics/normal.ts'
 
 // Doornik (2005), section 2, constants for 128 layers; recalled from memory, and verified here: the layers close exactly
 // at the mode, and each holds the area of the bottom one.
@@ -33,4 +36,19 @@ test('the top layer, which takes up the rounding of the two constants, closes at
 
 test('it can fail: a start moved by 1e-6 does not hold the area', () => {
   expect(Math.abs((start + 1e-6) * density(start + 1e-6) + tailArea() - area)).toBeGreaterThan(1e-9)
+})
+
+test('beyond the start draws fall off as the normal tail does: mean and variance of the excess within 3.5 standard errors', () => {
+  const state = seedState(8, 0)
+  const excess: number[] = []
+  for (let i = 0; i < 4_000_000; i += 1) {
+    const beyond = Math.abs(drawNormal(state)) - start
+    if (beyond > 0) excess.push(beyond)
+  }
+  // Moments of a normal above `start`: hazard h = f / (1 - F), mean excess h - start, variance 1 - h (h - start).
+  const hazard = normalDensity(start) / normalCdf(-start)
+  const variance = 1 - hazard * (hazard - start)
+  expect(Math.abs(excess.length - 8_000_000 * normalCdf(-start))).toBeLessThan(3.5 * Math.sqrt(8_000_000 * normalCdf(-start)))
+  expect(Math.abs(mean(excess) - (hazard - start))).toBeLessThan(3.5 * Math.sqrt(variance / excess.length))
+  expect(Math.abs(sampleVariance(excess) / variance - 1)).toBeLessThan(3.5 * Math.sqrt(6 / excess.length))
 })

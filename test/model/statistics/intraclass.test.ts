@@ -39,7 +39,7 @@ describe('unequal groups', () => {
 })
 
 test('floored at 0 where authors differ less than chance has it, though the component stays negative', () => {
-  const sums = oneWaySums([[-1, 1], [-1, 1], [-1.1, 1.2]])
+  const sums = oneWaySums([[-0.1, 0.1], [-0.1, 0.1], [-0.11, 0.12]])
   expect(intraclassCorrelation(sums)).toEqual({ value: 0 })
   expect(oneWayAnova(sums).betweenVariance).toBeLessThan(0)
 })

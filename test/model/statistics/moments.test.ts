@@ -35,3 +35,7 @@ test('what cannot be computed with is refused by name', () => {
   expect(() => sampleVariance([1, 2, Infinity])).toThrow('values[2] Infinity')
   expect(() => requireFinite([0, -Infinity], 'draws')).toThrow('draws[1] -Infinity')
 })
+
+test('a centre that is a little off, as rounding leaves it, is made good', () => {
+  expect(sampleVariance([1, 2, 6], 3.01)).toBeCloseTo(7, 12)
+})
