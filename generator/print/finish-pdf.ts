@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { PDFArray, PDFDict, PDFDocument, PDFHexString, PDFName, PDFString } from '@cantoo/pdf-lib'
+import { PDFArray, PDFDict, PDFDocument, PDFHexString, PDFName, PDFString, ParseSpeeds } from '@cantoo/pdf-lib'
 import { markArtifacts } from './mark-artifacts.ts'
 
 /** What the file says of itself. */
@@ -12,15 +12,20 @@ export interface PdfFacts {
   readonly language: string
 }
 
+/** Read a print, its dates untouched, without pausing: nothing else waits in this process. */
+export async function readPdf(pdf: Uint8Array): Promise<PDFDocument> {
+  return PDFDocument.load(pdf, { updateMetadata: false, parseSpeed: ParseSpeeds.Fastest })
+}
+
 /**
  * Finish a print: dates and file identifier from the review instead of the clock, title, author and language, the running head marked as
  * no part of the text, a description on every link.
  *
- * @param pdf - a tagged print by Chromium
+ * @param document - a tagged print by Chromium, as `readPdf` reads it; changed in place
+ * @param html - what was printed: the file's identifier is made from it and the facts
  * @returns the same bytes for the same input
  */
-export async function finishPdf(pdf: Uint8Array, facts: PdfFacts): Promise<Uint8Array> {
-  const document = await PDFDocument.load(pdf, { updateMetadata: false })
+export async function finishPdf(document: PDFDocument, html: string, facts: PdfFacts): Promise<Uint8Array> {
   const date = new Date(`${facts.date}T00:00:00Z`)
   document.setTitle(facts.title, { showInWindowTitleBar: true })
   document.setAuthor(facts.author)
@@ -30,17 +35,12 @@ export async function finishPdf(pdf: Uint8Array, facts: PdfFacts): Promise<Uint8
   document.setModificationDate(date)
   for (const page of document.getPages()) markArtifacts(document.context, page.node)
   describeLinks(document)
-  const identifier = PDFHexString.of(createHash('md5').update(fingerprint(pdf)).update(JSON.stringify(facts)).digest('hex'))
+  const identifier = PDFHexString.of(createHash('md5').update(html).update(JSON.stringify(facts)).digest('hex'))
   const identifiers = PDFArray.withContext(document.context)
   identifiers.push(identifier)
   identifiers.push(identifier)
   document.context.trailerInfo.ID = identifiers
-  return document.save({ addDefaultPage: false, updateFieldAppearances: false })
-}
-
-/** The print without its own two dates, which are the clock's. */
-function fingerprint(pdf: Uint8Array): string {
-  return Buffer.from(pdf).toString('latin1').replace(/\/(CreationDate|ModDate) \(D:[^)]*\)/g, '')
+  return document.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity })
 }
 
 /** PDF/UA-1, 7.18.5: a link says where it leads; Chromium leaves it out. */

@@ -10,7 +10,11 @@ export function markArtifacts(context: PDFContext, page: PDFPageLeaf): void {
   const contents = page.get(PDFName.of('Contents'))
   const single = contents instanceof PDFArray ? undefined : context.lookup(contents)
   if (!(single instanceof PDFRawStream)) return
-  const source = Buffer.from(inflateSync(single.getContents())).toString('latin1')
+  const filter = single.dict.get(PDFName.of('Filter'))
+  // An empty page has a stream without a filter; with any other filter the stream is left as it is.
+  if (filter !== undefined && filter !== PDFName.of('FlateDecode')) return
+  const bytes = filter === undefined ? single.getContents() : inflateSync(single.getContents())
+  const source = Buffer.from(bytes).toString('latin1')
   const marked = deflateSync(Buffer.from(withArtifacts(source), 'latin1'), { level: 6 })
   const stream = context.stream(marked, { Filter: 'FlateDecode' })
   context.assign(contents as PDFRef, stream)

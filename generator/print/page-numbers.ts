@@ -1,14 +1,13 @@
-import { PDFArray, PDFDict, PDFDocument, PDFName, PDFRef } from '@cantoo/pdf-lib'
+import { PDFArray, PDFDict, type PDFDocument, PDFName, PDFRef } from '@cantoo/pdf-lib'
 import type { Page } from 'puppeteer'
 
 /**
  * The page on which each target of a link inside the document stands.
  *
- * @param pdf - a print of the document; Chromium writes the target of every `a[href="#id"]` into the catalog's /Dests
+ * @param document - a print; Chromium writes the target of every `a[href="#id"]` into the catalog's /Dests
  * @returns id -> page, counted from 1
  */
-export async function pagesOfTargets(pdf: Uint8Array): Promise<ReadonlyMap<string, number>> {
-  const document = await PDFDocument.load(pdf, { updateMetadata: false })
+export function pagesOfTargets(document: PDFDocument): ReadonlyMap<string, number> {
   const numbers = new Map(document.getPages().map((page, index) => [page.ref.toString(), index + 1]))
   const targets = document.catalog.lookupMaybe(PDFName.of('Dests'), PDFDict)
   const pages = new Map<string, number>()

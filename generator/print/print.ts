@@ -1,5 +1,6 @@
+import type { PDFDocument } from '@cantoo/pdf-lib'
 import type { Browser, Page } from 'puppeteer'
-import { finishPdf, type PdfFacts } from './finish-pdf.ts'
+import { finishPdf, type PdfFacts, readPdf } from './finish-pdf.ts'
 import { isolatedPage } from './isolate-page.ts'
 import { fillPageNumbers, pagesOfTargets } from './page-numbers.ts'
 
@@ -18,7 +19,7 @@ export async function print(html: string, browser: Browser, facts: PdfFacts): Pr
     await page.evaluate('document.fonts.ready.then(() => undefined)')
     const pdf = await printSettled(page)
     if (refused.length > 0) throw new Error(`Unexpected requests by the review, expected none: ${refused.join(', ')}`)
-    return await finishPdf(pdf, facts)
+    return await finishPdf(pdf, html, facts)
   } finally {
     await page.browserContext().close()
   }
@@ -28,22 +29,22 @@ export async function print(html: string, browser: Browser, facts: PdfFacts): Pr
  * Print until the numbers in the contents are those of the print: a plain first pass to learn them, the real one, and a look that it settled.
  * The places of the numbers have a fixed width, so one pass settles it; the bound is there to fail loudly instead of looping.
  */
-async function printSettled(page: Page): Promise<Uint8Array> {
+async function printSettled(page: Page): Promise<PDFDocument> {
   const hasNumbers = await page.$('[data-page-of]') !== null
   if (!hasNumbers) return printTagged(page)
-  await fillPageNumbers(page, await pagesOfTargets(await printPlain(page)))
+  await fillPageNumbers(page, pagesOfTargets(await printPlain(page)))
   for (let pass = 0; pass < 3; pass += 1) {
     const pdf = await printTagged(page)
-    if (!await fillPageNumbers(page, await pagesOfTargets(pdf))) return pdf
+    if (!await fillPageNumbers(page, pagesOfTargets(pdf))) return pdf
   }
   throw new Error('Unexpected page numbers that never settle, expected the contents to keep its size')
 }
 
 /** Without tags and bookmarks: cheaper, and it breaks into pages in the same places. */
-async function printPlain(page: Page): Promise<Uint8Array> {
-  return page.pdf({ preferCSSPageSize: true, printBackground: true, tagged: false, outline: false })
+async function printPlain(page: Page): Promise<PDFDocument> {
+  return readPdf(await page.pdf({ preferCSSPageSize: true, printBackground: true, tagged: false, outline: false }))
 }
 
-async function printTagged(page: Page): Promise<Uint8Array> {
-  return page.pdf({ preferCSSPageSize: true, printBackground: true, tagged: true, outline: true })
+async function printTagged(page: Page): Promise<PDFDocument> {
+  return readPdf(await page.pdf({ preferCSSPageSize: true, printBackground: true, tagged: true, outline: true }))
 }

@@ -10,10 +10,12 @@ export interface DrawingPlace {
   readonly chart: string
   /** Unique in the page, also where a chart is shown twice. */
   readonly id: string
+  /** The computed text alternative. */
+  readonly alt: string
 }
 
 /**
- * Make compose's tree ready for the page: each chart's frame gets the place of its drawing, with the text alternative on it; wide tables are
+ * Make compose's tree ready for the page: each chart's frame gets the place of its drawing; wide tables are
  * marked; each line of the contents says whose page number it waits for.
  *
  * @returns a new tree, and the places to be drawn in, in order
@@ -34,8 +36,8 @@ function frameDrawing(figure: Element, chart: string, before: readonly DrawingPl
   const id = times === 0 ? chart : `${chart}-${times + 1}`
   const { dataAlt } = figure.properties
   figure.properties = without(figure.properties, ['dataChart', 'dataAlt'])
-  figure.children.push(h('div.drawing', { role: 'img', ariaLabel: typeof dataAlt === 'string' ? dataAlt : '', dataDrawing: id }))
-  return { chart, id }
+  figure.children.push(h('div.drawing', { dataDrawing: id }))
+  return { chart, id, alt: typeof dataAlt === 'string' ? dataAlt : '' }
 }
 
 function markWide(region: Element): void {

@@ -38,13 +38,21 @@ export async function render(document: Document, rendering: Rendering): Promise<
   return page(document, body, rendering)
 }
 
-/** Both sizes; the style sheet shows one of them, and neither has a text alternative of its own. */
-async function bothSizes({ chart, id }: DrawingPlace, { tables, charts, words, theme }: Rendering): Promise<string> {
+/**
+ * Both sizes, of which the style sheet shows one. Each is a picture of its own to assistive technology (and so a Figure with its alternative in
+ * a tagged PDF); the text alternative is written once, on the wide one, and the narrow one refers to it.
+ */
+async function bothSizes({ chart, id, alt }: DrawingPlace, { tables, charts, words, theme }: Rendering): Promise<string> {
   const spec = charts.get(chart)
   if (spec === undefined) throw new Error(`Unexpected chart "${chart}", expected one of ${[...charts.keys()].join(', ')}`)
   const wide = await drawChart({ ...spec, name: id }, tables, words, theme, 'wide')
   const narrow = await drawChart({ ...spec, name: id }, tables, words, theme, 'narrow')
-  return wide.replace('<svg ', '<svg class="for-wide" ') + narrow.replace('<svg ', '<svg class="for-narrow" ')
+  return wide.replace('<svg ', () => `<svg id="drawing-${id}" class="for-wide" role="img" aria-label="${attributeText(alt)}" `)
+    + narrow.replace('<svg ', () => `<svg class="for-narrow" role="img" aria-labelledby="drawing-${id}" `)
+}
+
+function attributeText(text: string): string {
+  return text.replaceAll('&', '&amp;').replaceAll('"', '&quot;').replaceAll('<', '&lt;').replaceAll('>', '&gt;')
 }
 
 /** One after the other: vega's counters and text metrics are shared by all drawings of a process. */

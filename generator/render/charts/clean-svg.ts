@@ -4,7 +4,7 @@
  *
  * @param svg - as vega writes it
  * @param prefix - unique in the page; put before every id
- * @returns an `<svg>` that scales with its box and is hidden from assistive technology: its frame carries the text alternative
+ * @returns an `<svg>` that scales with its box; whoever puts it into a page gives it its role and text alternative
  */
 export function cleanSvg(svg: string, prefix: string): string {
   const [, width, height] = /<svg[^>]*? width="([\d.]+)" height="([\d.]+)"/.exec(svg) ?? []
@@ -20,7 +20,7 @@ export function cleanSvg(svg: string, prefix: string): string {
     .replace(/\b(d|transform|x|y|x1|x2|y1|y2|width|height|r|cx|cy|points|dy|dx)="([^"]*)"/g, (_whole, name: string, value: string) => `${name}="${rounded(value)}"`)
     .replace(/<path[^>]*\sd="M0,0h0v0h0Z"[^>]*>(?:<\/path>)?/g, '')
     .replace(/<g>\s*<\/g>/g, '')
-  return `<svg viewBox="0 0 ${rounded(width)} ${rounded(height)}" width="${rounded(width)}" height="${rounded(height)}" aria-hidden="true" focusable="false">${inner}</svg>`
+  return `<svg viewBox="0 0 ${rounded(width)} ${rounded(height)}" width="${rounded(width)}" height="${rounded(height)}" focusable="false">${inner}</svg>`
 }
 
 function rounded(numbers: string): string {
