@@ -28,7 +28,7 @@ export function tableTree(
     const className = [`kind-${kindOf(table, column)}`]
     return at === rowHeader ? h('th', { scope: 'row', className }, content) : h('td', { className }, content)
   })
-  return h('div.table', { role: 'region', ariaLabel: caption, tabIndex: 0, dataTable: table.name }, [
+  return h('div.table', { role: 'group', ariaLabel: caption, tabIndex: 0, dataTable: table.name }, [
     h('table', { className: [`table-${table.name}`] }, [
       h('caption', [caption, ...after]),
       h('thead', [h('tr', columns.map((column) => h('th', { scope: 'col', className: [`kind-${kindOf(table, column)}`] }, header(columnHeader(column)))))]),

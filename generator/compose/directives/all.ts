@@ -6,13 +6,14 @@ import type { Directive, DirectiveNode } from './directive.ts'
 import { each } from './each.ts'
 import { figure } from './figure.ts'
 import { glossary } from './glossary.ts'
+import { made } from './made.ts'
 import { say } from './say.ts'
 import { section } from './section.ts'
 import { table } from './table.ts'
 import { when } from './when.ts'
 
 /** The template language: every word it has. */
-export const directives: readonly Directive[] = [section, figure, say, caveat, chart, table, contents, glossary, when, each, ...blocks]
+export const directives: readonly Directive[] = [section, figure, say, made, caveat, chart, table, contents, glossary, when, each, ...blocks]
 
 export function directiveOf(node: DirectiveNode): Directive | undefined {
   return directives.find(({ type, name }) => type === node.type && name === node.name)
