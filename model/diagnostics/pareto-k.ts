@@ -2,11 +2,16 @@ import { ModelError } from '../model-error.ts'
 import type { Decidable } from '../statistics/decidable.ts'
 import { fitGeneralisedPareto, generalisedParetoQuantile } from './generalised-pareto.ts'
 
+/**
+ * Why there is no Pareto k. `too-few-draws`: fewer than 5 in the tail. `flat-tail`: the largest ratios agree, which is
+ * harmless. `degenerate-tail`: a few draws outweigh the rest so far that the tail begins with zeros; not to be relied on.
+ */
+export type ParetoReason = 'too-few-draws' | 'flat-tail' | 'degenerate-tail'
+
 export interface SmoothedWeights {
   /** Shape (draws), sum 1, in the order given. */
   readonly weights: Float64Array
-  /** `too-few-draws`: fewer than 5 in the tail; `flat-tail`: largest ratios agree, there is nothing to smooth. */
-  readonly paretoK: Decidable<'too-few-draws' | 'flat-tail'>
+  readonly paretoK: Decidable<ParetoReason>
   /** Independent draws of the target that the weighted draws are worth: relative efficiency / sum of squared weights. */
   readonly effectiveSize: number
   /** How many of the largest ratios were replaced by quantiles of the fitted tail. */
@@ -35,7 +40,10 @@ export function paretoSmooth(logRatios: Float64Array, relativeEfficiency = 1): S
   const threshold = ratios[order[draws - tail - 1]]
   const top = order.subarray(draws - tail)
   const fit = fitGeneralisedPareto(Float64Array.from(top, (draw) => ratios[draw] - threshold))
-  if (fit === null) return finished(ratios, relativeEfficiency, { value: null, reason: 'flat-tail' }, 0)
+  if (fit === null) {
+    const flat = ratios[top[0]] === ratios[top[tail - 1]]
+    return finished(ratios, relativeEfficiency, { value: null, reason: flat ? 'flat-tail' : 'degenerate-tail' }, 0)
+  }
   top.forEach((draw, j) => { ratios[draw] = Math.min(1, threshold + generalisedParetoQuantile(fit, (j + 0.5) / tail)) })
   return finished(ratios, relativeEfficiency, { value: fit.k }, tail)
 }

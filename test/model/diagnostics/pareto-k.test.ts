@@ -67,6 +67,12 @@ test('equal ratios, the proposal being the target: equal weights, nothing to smo
   expect(even.effectiveSize).toBeCloseTo(100, 10)
 })
 
+test('one draw that outweighs all others is no flat tail', () => {
+  const logRatios = new Float64Array(100).fill(-1000).with(7, 0).with(8, -1)
+  expect(paretoSmooth(logRatios)).toMatchObject({ paretoK: { value: null, reason: 'degenerate-tail' }, tail: 0 })
+  expect(paretoSmooth(logRatios).effectiveSize).toBeLessThan(2)
+})
+
 test('few draws are weighted as they are', () => {
   expect(paretoSmooth(Float64Array.of(0, Math.log(3), -Infinity))).toMatchObject({ paretoK: { value: null, reason: 'too-few-draws' }, tail: 0 })
   const { weights } = paretoSmooth(Float64Array.of(0, Math.log(3), -Infinity))
