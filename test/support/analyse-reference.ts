@@ -1,0 +1,13 @@
+import { analyse, type Analysis, type AnalysisSpec } from '../../model/analyse.ts'
+import { localExecutor } from '../../model/fit/executor.ts'
+import type { IntakeTables } from '../../model/intake/intake-tables.ts'
+
+export const plainSpec: AnalysisSpec = {
+  interval: 0.9, seed: 1, targetMix: {},
+  facts: { givenNotUsed: [], smallestGroup: 10, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
+}
+
+/** The whole analysis in this thread. */
+export function analyseHere(tables: IntakeTables, spec: Partial<AnalysisSpec> = {}): Promise<Analysis> {
+  return analyse(tables, { ...plainSpec, ...spec }, localExecutor)
+}
