@@ -19,7 +19,7 @@ export async function readPdf(pdf: Uint8Array): Promise<PDFDocument> {
 
 /**
  * Finish a print: dates and file identifier from the review instead of the clock, title, author and language, the running head marked as
- * no part of the text, a description on every link.
+ * no part of the text, a description on every link, and no Figure but the pictures.
  *
  * @param document - a tagged print by Chromium, as `readPdf` reads it; changed in place
  * @param html - what was printed: the file's identifier is made from it and the facts
@@ -35,12 +35,24 @@ export async function finishPdf(document: PDFDocument, html: string, facts: PdfF
   document.setModificationDate(date)
   for (const page of document.getPages()) markArtifacts(document.context, page.node)
   describeLinks(document)
+  keepPictures(document)
   const identifier = PDFHexString.of(createHash('md5').update(html).update(JSON.stringify(facts)).digest('hex'))
   const identifiers = PDFArray.withContext(document.context)
   identifiers.push(identifier)
   identifiers.push(identifier)
   document.context.trailerInfo.ID = identifiers
   return document.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity })
+}
+
+/**
+ * PDF/UA-1, 7.3: a Figure has a text alternative. Chromium makes one of the picture, which has it, and one of the frame with the caption around it,
+ * which has none: the frame becomes a plain division.
+ */
+function keepPictures(document: PDFDocument): void {
+  for (const [, object] of document.context.enumerateIndirectObjects()) {
+    if (!(object instanceof PDFDict) || object.get(PDFName.of('S')) !== PDFName.of('Figure')) continue
+    if (!object.has(PDFName.of('Alt'))) object.set(PDFName.of('S'), PDFName.of('Div'))
+  }
 }
 
 /** PDF/UA-1, 7.18.5: a link says where it leads; Chromium leaves it out. */

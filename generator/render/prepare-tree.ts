@@ -35,7 +35,8 @@ function frameDrawing(figure: Element, chart: string, before: readonly DrawingPl
   const times = before.filter((place) => place.chart === chart).length
   const id = times === 0 ? chart : `${chart}-${times + 1}`
   const { dataAlt } = figure.properties
-  figure.properties = without(figure.properties, ['dataChart', 'dataAlt'])
+  // ARIA in HTML allows no role on a figure with a caption.
+  figure.properties = without(figure.properties, ['dataChart', 'dataAlt', 'role'])
   figure.children.push(h('div.drawing', { dataDrawing: id }))
   return { chart, id, alt: typeof dataAlt === 'string' ? dataAlt : '' }
 }

@@ -24,12 +24,12 @@ import { measureBy } from './text-metrics.ts'
  */
 export async function drawChart(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize = 'wide'): Promise<string> {
   const sized = worded(atSize(spec, size), words) as unknown as ChartSpec
-  const datasets = datasetsOf(sized, tables, words, theme, size)
-  const panelled = withPanels(sized, datasets, theme.chart.widths[size])
+  const read = readTables(sized, tables, words, theme, size)
+  const { spec: roomy, datasets } = withStack(withRoom(withPanels(sized, read, theme.chart.widths[size]), read), read)
   const warnings: string[] = []
   const config = { ...chartConfig(theme.chart), locale: vegaLocale(words.locale) }
   measureBy(theme.advances)
-  const { spec: compiled } = compile(asVegaLite({ ...panelled, datasets: datasets as unknown as Json }), { config, logger: collector(warnings) })
+  const { spec: compiled } = compile(asVegaLite({ ...roomy, datasets: datasets as unknown as Json }), { config, logger: collector(warnings) })
   if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${spec.name}: ${warnings.join('; ')}`)
   resetSVGDefIds()
   const view = new View(parse(compiled), { renderer: 'none', logLevel: Warn })
@@ -42,18 +42,34 @@ export async function drawChart(spec: ChartSpec, tables: readonly Table[], words
 
 type Datasets = Readonly<Record<string, readonly Datum[]>>
 
-function datasetsOf(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize): Datasets {
+function readTables(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize): Datasets {
   const text = JSON.stringify(spec)
   const uses = (column: string): boolean => text.includes(column)
   const { ends, panels } = layoutOf(spec)
   const made = ends === undefined ? [] : ['stack', 'ends']
   const named = [...tablesIn(spec).filter((name) => !made.includes(name)), ...(ends ? ['mix'] : []), ...(panels ? [panels.table] : [])]
-  const read = Object.fromEntries([...new Set(named)].map((name) => {
+  return Object.fromEntries([...new Set(named)].map((name) => {
     const table = tables.find((candidate) => candidate.name === name)
     if (table === undefined) throw new Error(`Unexpected table "${name}" in chart ${spec.name}, expected one of ${tables.map((known) => known.name).join(', ')}`)
     return [name, chartData(table, { words, theme, size, uses })]
   }))
-  return ends === undefined ? read : { ...read, ...stackedShares(read.mix, ends.factor, ends.height) }
+}
+
+/** A stack of shares gets its data, and the height that its labels need. */
+function withStack(spec: ChartSpec, datasets: Datasets): { readonly spec: ChartSpec, readonly datasets: Datasets } {
+  const { ends } = layoutOf(spec)
+  if (ends === undefined) return { spec, datasets }
+  const { stack, ends: labels, height } = stackedShares(datasets.mix, ends.factor, ends.height)
+  return { spec: { ...spec, height }, datasets: { ...datasets, stack, ends: labels } }
+}
+
+/** A chart of rows gets rows high enough for the label with the most lines. */
+function withRoom(spec: ChartSpec, datasets: Datasets): ChartSpec {
+  const { height } = spec
+  if (typeof height !== 'object' || height === null || !('step' in height)) return spec
+  const labels = Object.values(datasets).flat().flatMap((row) => Object.values(row)).filter((cell) => typeof cell === 'string')
+  const lines = Math.max(1, ...labels.map((label) => label.split('\n').length))
+  return { ...spec, height: { step: Math.max(Number(height.step), lines * 14 + 8) } }
 }
 
 /** Small multiples share the drawing's width: as many beside each other as there are, up to what the chart allows. */

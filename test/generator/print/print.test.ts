@@ -84,8 +84,7 @@ describe('structure', () => {
   })
 
   test('every picture has its text alternative, once', () => {
-    const pictures = withRole(structure, 'Figure').filter((figure) => withRole(figure, 'Figure').length === 1)
-    expect(pictures.map((figure) => figure.alt)).toEqual([
+    expect(withRole(structure, 'Figure').map((figure) => figure.alt)).toEqual([
       'Text alternative of "opinion", first', ...chartNames.map((name) => `Text alternative of "${name}", again`),
     ])
   })
