@@ -8,7 +8,7 @@ import { kindOf, typeAt, withoutNull } from './path-types.ts'
 import type { TypeNode, TypeScope } from './path-types.ts'
 import type { Selection } from './selection.ts'
 
-type At = Pick<Node, 'position'>
+type At = Pick<Node, 'position'> | undefined
 
 /** Check that the findings have a path; its type, or undefined after a report. */
 export function checkPath(path: Path, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {

@@ -7,6 +7,7 @@ import { InputFault } from '../faults/fault.ts'
 import type { Fault } from '../faults/fault.ts'
 import type { Table } from '../tables/table.ts'
 import type { Words } from '../words/words.ts'
+import { checkMessage } from './check-message.ts'
 import { checkSentences } from './check-sentences.ts'
 import { checkTree } from './check-template.ts'
 import type { Document } from './document.ts'
@@ -14,7 +15,7 @@ import { createReporter } from './faults.ts'
 import { fillNodes, fillTree } from './fill-template.ts'
 import { anchorsOf, headingsOf, rehypeContents, rehypeNoDanglingLinks, rehypeUniqueIds } from './headings.ts'
 import { parseMarkdown } from './parse-markdown.ts'
-import { findingsType } from './path-types.ts'
+import { findingsScope } from './path-types.ts'
 import { sanitise } from './sanitise.ts'
 import { argumentsFor, parseSentences } from './sentences.ts'
 import type { Sentences } from './sentences.ts'
@@ -72,11 +73,12 @@ function check(parsed: Parsed, { template, tables, charts, words }: Composition)
   const sections = [...parsed.sections.keys()]
   const anchors = new Set([...sections, ...[parsed.review, ...parsed.sections.values()].flatMap(anchorsOf)])
   const context = { words, sentences: parsed.sentences, charts, tables, sections, anchors }
-  const scope = findingsType()
   const faults: Fault[] = []
-  checkSentences(parsed.sentences, words, createReporter(template.sentences.place, faults))
-  const ofSections = [...parsed.sections].flatMap(([name, tree]) => checkTree(tree, template.sections[name]?.place ?? name, scope, context))
-  return [...faults, ...checkTree(parsed.review, template.review.place, scope, context), ...ofSections]
+  const ofSentences = createReporter(template.sentences.place, faults)
+  checkSentences(parsed.sentences, words, ofSentences)
+  checkMessage('document-title', findingsScope, context, undefined, ofSentences)
+  const ofSections = [...parsed.sections].flatMap(([name, tree]) => checkTree(tree, template.sections[name]?.place ?? name, findingsScope, context))
+  return [...faults, ...checkTree(parsed.review, template.review.place, findingsScope, context), ...ofSections]
 }
 
 function fill(parsed: Parsed, { findings, tables, words }: Composition): Root {

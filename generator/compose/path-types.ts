@@ -25,9 +25,7 @@ export interface TypeScope {
 }
 
 /** The scope outside any block. */
-export function findingsType(): TypeScope {
-  return { findings: z.toJSONSchema(findingsSchema) as TypeNode, names: {} }
-}
+export const findingsScope: TypeScope = { findings: z.toJSONSchema(findingsSchema) as TypeNode, names: {} }
 
 export type PathType = { readonly known: true, readonly type: TypeNode } | { readonly known: false, readonly unknown: string, readonly nearest: string | undefined }
 

@@ -17,7 +17,7 @@ export interface Scope {
   readonly item?: unknown
 }
 
-const stepForm = /^([\p{L}\p{N}_-]+)(?:\[([\w-]+)=(@?)([^\]]+)\])?$/u
+const stepForm = /^([\p{L}\p{N}_-]+)(?:\[([\w-]+)=(@?)([^\]@][^\]]*)\])?$/u
 
 /** Read a path; undefined where the text is none. */
 export function parsePath(text: string): Path | undefined {

@@ -31,7 +31,7 @@ export const table: Directive = {
     if (!found) reporter.report(node, 'table-unknown', `table "${name}"`, 'a known table', nearest(name, context.tables.map((known) => known.name)))
     else {
       checkMessage(`table-${name}`, scope, context, node, reporter)
-      checkColumns(use, found.columns.map((column) => column.key), context, reporter)
+      checkColumns(use, found.columns.map((column) => column.key), scope, context, reporter)
       checkRows(use, { ...scope, item: { properties: Object.fromEntries(found.columns.map(({ key }) => [key, {}])) } }, reporter)
     }
     checkMade(attributes['made'], node, context, reporter)
@@ -54,13 +54,12 @@ function labelsIn(scope: Scope): Labels {
   return new Map(Array.isArray(venues) ? venues.map(({ venue, label }: { readonly venue: string, readonly label: string }) => [venue, label]) : [])
 }
 
-function checkColumns({ node, attributes }: Use, known: readonly string[], context: CheckContext, reporter: Reporter): void {
+function checkColumns({ node, attributes }: Use, known: readonly string[], scope: TypeScope, context: CheckContext, reporter: Reporter): void {
   for (const column of parseColumns(attributes['columns'] ?? '')) {
     for (const key of column.keys.filter((key) => !known.includes(key))) {
       reporter.report(node, 'column-unknown', `column "${key}"`, `a column of table "${attributes['name']}"`, nearest(key, known))
     }
-    const header = columnHeader(column)
-    if (!context.words.has(header)) reporter.report(node, 'message-unknown', `message "${header}"`, 'the header of a column', 'Add it to the catalogue.')
+    checkMessage(columnHeader(column), scope, context, node, reporter)
   }
 }
 

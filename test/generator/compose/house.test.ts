@@ -1,0 +1,136 @@
+import { toString } from 'hast-util-to-string'
+import { expect, test } from 'vitest'
+import type { Document } from '../../../generator/compose/document.ts'
+import type { Findings } from '../../../model/findings/schema.ts'
+import { composeHouse, elementsOf, houseCharts, sectionText } from '../../support/house-composition.ts'
+import { hostileFindings } from '../../support/small-template.ts'
+import { sampleFindings } from '../../support/sample-findings.ts'
+
+const sample = sampleFindings()
+const usual = composeHouse(sample)
+const firstPage = (document: Document) => sectionText(document, 'first-page')
+const lead = (document: Document) => toString(elementsOf(document, 'div').find((div) => String(div.properties['className']) === 'lead')!).trim()
+const withOpinion = (opinion: Partial<Findings['opinion']>): Findings => ({ ...sample, opinion: { ...sample.opinion, ...opinion } })
+const estimate = (mean: number, low: number, high: number) => ({ mean, low, high, sd: (high - low) / 3.29 })
+
+test('raw and adjusted part: the headline says both, and the reason follows', () => {
+  expect(lead(usual)).toBe('Opinion of Skerrow Ferries rose by 2.2 points in October 2026 compared with September 2026 (90% interval 0.8 to 3.6), although the raw average of all mentions fell by 2.3 points.')
+  expect(firstPage(usual)).toContain('The main reason other than opinion: mentions shifted towards venues that speak less kindly (−1.7 points, 90% interval −2.1 to −1.3). Opinion itself raised it by 2.2 points (90% interval 0.8 to 3.6).')
+})
+
+test('what works against the change is not called its reason', () => {
+  const parts = sample.decomposition!.parts.map((part) => part.part === 'venue_mix' ? { ...part, estimate: estimate(1.7, 1.3, 2.1), movement: 'up' as const } : part)
+  expect(firstPage(composeHouse({ ...sample, decomposition: { ...sample.decomposition!, parts } }))).toContain('What held it up most: mentions shifted towards venues that speak more kindly (+1.7 points')
+})
+
+/** An announcement that opinion moved. */
+const announced = /[Oo]pinion (of Skerrow Ferries )?(rose|fell|has risen|has fallen|itself raised|itself lowered|itself: (raised|lowered))/
+
+test('no change is announced that its interval does not support', () => {
+  const findings = withOpinion({ change: estimate(2.2, -0.4, 4.8), movement: 'not-established', probability_up: 0.91, movement_since_base: 'not-established', since_base: estimate(1, -1.1, 3.1) })
+  const parts = sample.decomposition!.parts.map((part) => part.part === 'opinion' ? { ...part, movement: 'not-established' as const, estimate: estimate(2.2, -0.4, 4.8) } : part)
+  const document = composeHouse({ ...findings, decomposition: { ...sample.decomposition!, parts } })
+  expect(lead(document)).toBe('No change in opinion of Skerrow Ferries can be established for October 2026: compared with September 2026 it moved by between −0.4 and +4.8 points (90% interval). The raw average fell by 2.3 points, which by itself says nothing about opinion.')
+  const told = `${firstPage(document)} ${sectionText(document, 'opinion')} ${sectionText(document, 'moved')}`.replace('Probability that opinion rose', '')
+  expect(told).not.toMatch(announced)
+  expect(`${firstPage(usual)} ${sectionText(usual, 'opinion')}`).toMatch(announced)
+})
+
+test('a fall is told as a fall, without double signs', () => {
+  expect(lead(composeHouse(withOpinion({ change: estimate(-2.7, -4.1, -1.2), movement: 'down', raw_change: 1.1 }))))
+    .toBe('Opinion of Skerrow Ferries fell by 2.7 points in October 2026 compared with September 2026 (90% interval 1.2 to 4.1), although the raw average of all mentions rose by 1.1 points.')
+})
+
+test('no previous period: the level is told, the change since the base stands for the change', () => {
+  const document = composeHouse({
+    ...withOpinion({ previous: null, change: null, probability_up: null, movement: null, raw_previous: null, raw_change: null }), previous_period: null, decomposition: null,
+  })
+  expect(lead(document)).toBe('Opinion of Skerrow Ferries stood at 25.8 points in October 2026 (90% interval 21.9 to 29.7); there is no earlier period to compare it with.')
+  expect(firstPage(document)).toContain('Change since the base +6.8')
+  expect(firstPage(document)).not.toContain('Probability that opinion rose')
+  expect(firstPage(document)).toContain('There is no earlier period with mentions')
+  expect(firstPage(document)).not.toContain('not known')
+})
+
+test('an empty period says so and quotes no raw average', () => {
+  const document = composeHouse({ ...withOpinion({ raw: null, raw_change: null, mentions: 0, authors: 0, movement: 'not-established', change: estimate(0.1, -4, 4.2) }), decomposition: null })
+  expect(lead(document)).toMatch(/^No mention of Skerrow Ferries was posted in October 2026: .* No change in opinion of Skerrow Ferries can be established for October 2026: .*\(90% interval\)\.$/)
+  expect(firstPage(document)).toContain('No mention was posted in this period, so that there is no raw average')
+})
+
+test('failed diagnostics come first on the first page', () => {
+  const document = composeHouse({ ...sample, diagnostics: { ...sample.diagnostics, passed: false } })
+  expect(firstPage(document)).toMatch(/^\s*Skerrow Ferries: brand health review, October 2026 The checks of the computation failed for this period\./)
+  expect(firstPage(usual)).not.toContain('checks of the computation failed')
+})
+
+test('unknown authors: said, and no concentration is told', () => {
+  const document = composeHouse({ ...sample, speaking: { ...sample.speaking, concentration: { period: null, previous: null } } })
+  expect(sectionText(document, 'speaking')).toContain('Authors are not known for this period')
+  expect(sectionText(document, 'speaking')).not.toContain('most prolific 1%')
+})
+
+test('one venue only: no drift is told', () => {
+  const [venue] = sample.venues
+  const caveats = [{ code: 'one-venue', severity: 'serious' as const, figures: {}, evidence: '', meaning: '', remedy: '' }]
+  const document = composeHouse({ ...sample, venues: [{ ...venue!, movement: 'not-established', share: 1 }], caveats })
+  expect(sectionText(document, 'venues')).toContain('With one venue alone, its drift can’t be told from opinion.')
+  expect(sectionText(document, 'venues')).not.toMatch(/[Dd]rifted|Drift since base/)
+  expect(firstPage(document)).toContain('One venue only. All mentions come from one venue.')
+})
+
+test('without a serious caveat the first page shows the cautions, without either it says so', () => {
+  const only = (...severities: string[]) => composeHouse({ ...sample, caveats: sample.caveats.filter(({ severity }) => severities.includes(severity)) })
+  expect(firstPage(usual)).toContain('Serious caveats')
+  expect(firstPage(usual)).not.toContain('Coding not checked by people')
+  expect(firstPage(only('caution', 'note'))).toContain('Coding not checked by people')
+  expect(firstPage(only('note'))).toContain('No serious caveat and no caution applies')
+})
+
+test('small groups are left out of topics', () => {
+  const topics = sample.topics.map((topic) => topic.topic === 'weather' ? { ...topic, authors: 9 } : topic)
+  const section = sectionText(composeHouse({ ...sample, topics }), 'topics')
+  expect(section).not.toContain('Crossings in bad weather')
+  expect(section).toContain('Topics written about by fewer than 10 authors are not shown.')
+})
+
+test('no topics and no poster classes: their sections say so', () => {
+  const document = composeHouse({ ...sample, topics: [], posters: [] })
+  expect(sectionText(document, 'topics')).toContain('Topics are not told apart')
+  expect(sectionText(document, 'speaking')).toContain('Poster classes are not told apart')
+})
+
+test('every chart appears once, with its finding as title and a text alternative with figures', () => {
+  const figures = elementsOf(usual, 'figure')
+  expect(figures.map((figure) => figure.properties['dataChart']).sort()).toEqual([...houseCharts].sort())
+  for (const figure of figures) {
+    expect(figure.properties).toMatchObject({ role: 'group', className: ['chart'] })
+    expect(String(figure.properties['dataAlt'])).toMatch(/\d/)
+    expect(toString(figure).length).toBeGreaterThan(40)
+  }
+})
+
+test('headings skip no level, ids are unique, every link inside leads somewhere', () => {
+  expect(usual.headings[0]?.depth).toBe(1)
+  usual.headings.slice(1).forEach(({ depth }, at) => expect(depth - usual.headings[at]!.depth).toBeLessThanOrEqual(1))
+  const ids = new Set([...elementsOf(usual, 'section').map((section) => section.properties['id']), ...usual.headings.map(({ id }) => id)])
+  expect(ids.size).toBe(elementsOf(usual, 'section').length + usual.headings.length)
+  for (const { properties } of elementsOf(usual, 'a')) expect(ids).toContain(String(properties['href']).slice(1))
+})
+
+test('nothing a client reads is left unworded', () => {
+  const text = elementsOf(usual, 'section').map((section) => toString(section)).join(' ')
+  expect(text).not.toMatch(/undefined|NaN|\[object|not-established|_mix|:figure|:say|\{[a-z]/)
+})
+
+test('a brand and labels that try to be HTML stay text', () => {
+  const document = composeHouse(hostileFindings())
+  expect(elementsOf(document, 'script')).toEqual([])
+  expect(elementsOf(document, 'img')).toEqual([])
+  expect(elementsOf(document, 'a').every(({ properties }) => String(properties['href']).startsWith('#'))).toBe(true)
+  expect(firstPage(document)).toContain('<script>alert(1)</script>')
+})
+
+test('the same in, the same out', () => {
+  expect(composeHouse(sampleFindings())).toEqual(usual)
+})
