@@ -13,11 +13,11 @@ const sharp = 3
 
 /** Caveats that rest on the fit: what the figures can bear. */
 export const fitRules: readonly CaveatRule[] = [
-  ({ findings }) => (findings.diagnostics.passed ? [] : [caveat('serious', 'fit-not-converged', { pareto_k: findings.diagnostics.pareto_k, ess: findings.diagnostics.ess })]),
+  ({ findings }) => (findings.diagnostics.converged ? [] : [caveat('serious', 'fit-not-converged', { pareto_k: findings.diagnostics.pareto_k ?? 1, ess: findings.diagnostics.ess })]),
   ({ findings }) => {
     const labels = new Map(findings.venues.map(({ venue, label }) => [venue, label]))
     const failed = new Set(findings.diagnostics.checks.filter((check) => !check.passed).map((check) => check.venue ?? ''))
-    return [...failed].map((venue) => caveat('caution', 'model-misfit', { venue: labels.get(venue) ?? venue }))
+    return [...failed].map((venue) => caveat('serious', 'model-misfit', { venue: labels.get(venue) ?? venue }))
   },
   ({ findings }) => {
     const { raw_change: raw, change } = findings.opinion

@@ -11,6 +11,9 @@ const unevenDays = 28
 /** A venue not seen in this last stretch has vanished; first seen in it, appeared. In days. */
 const recentDays = 91
 
+/** Values named one by one where the account does not map them. */
+const namedValues = 5
+
 /** Caveats that rest on what came in: authors, venues' histories, values and times. */
 export const intakeRules: readonly CaveatRule[] = [
   ({ findings, reading }) => {
@@ -51,7 +54,9 @@ export const intakeRules: readonly CaveatRule[] = [
     const factors = [...new Set(unmapped.map((row) => row.factor))]
     return factors.map((factor) => {
       const rows = unmapped.filter((row) => row.factor === factor)
-      return caveat('note', 'values-unmapped', { factor, values: rows.length, mentions: rows.reduce((total, row) => total + row.mentions, 0) })
+      const most = rows.slice(0, namedValues).map((row) => row.value)
+      const values = rows.length > namedValues ? [...most, '…'] : most
+      return caveat('note', 'values-unmapped', { factor, values: values.join(', '), mentions: rows.reduce((total, row) => total + row.mentions, 0) })
     })
   },
   ({ reading }) => {

@@ -111,11 +111,14 @@ const check = z.strictObject({ name: z.string(), venue: z.string().nullable(), o
 
 const diagnostics = z.strictObject({
   method: z.string(),
-  pareto_k: z.number(), rhat: z.number().nullable(),
+  /** Of the largest importance weights; null where so few outweigh the rest that it can't be told. */
+  pareto_k: z.number().nullable(), rhat: z.number().nullable(),
   /** Effective independent draws of the standard deviations. */
   ess: z.number(),
   draws: count, proposals: count,
-  /** Whether the diagnostics allow the figures to be published without reservation. */
+  /** Whether the draws can be relied on: Pareto k and effective draws. */
+  converged: z.boolean(),
+  /** Whether the figures can be published without reservation: converged, and every check passed. */
   passed: z.boolean(),
   /** Posterior predictive checks: can the model reproduce what it was fitted to? */
   checks: z.array(check),

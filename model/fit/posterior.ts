@@ -27,8 +27,8 @@ export interface Posterior {
   readonly sigmas: WeightedSigmas
   /** Equally weighted joint draws: what is said about states comes from these. */
   readonly draws: StateDraws
-  /** Of the largest weights; 0 where they all agree and there is no tail to fit. */
-  readonly paretoK: number
+  /** Of the largest weights; 0 where they all agree, null where so few outweigh the rest that there is no tail to fit. */
+  readonly paretoK: number | null
   /** Kish's effective number of the weighted proposals. */
   readonly effective: number
   /** Log evidence of the model, all standard deviations integrated out. */
@@ -105,7 +105,7 @@ interface Round {
   /** Smoothed, summing to 1. */
   readonly weights: Float64Array
   /** Of the largest weights; 0 where they all agree and there is no tail to fit. */
-  readonly paretoK: number
+  readonly paretoK: number | null
   readonly effective: number
   readonly logEvidence: number
 }
@@ -131,7 +131,7 @@ async function weigh(problem: FitProblem, executor: FitExecutor, proposal: Propo
   const density = proposalLogDensity(proposal, points)
   const logWeights = target.map((x, i) => x - density[i])
   const { weights, paretoK, effectiveSize } = paretoSmooth(logWeights)
-  return { points, logWeights, weights, paretoK: paretoK.value ?? 0, effective: effectiveSize, logEvidence: logMeanExp(logWeights) }
+  return { points, logWeights, weights, paretoK: paretoK.value ?? (paretoK.reason === 'flat-tail' ? 0 : null), effective: effectiveSize, logEvidence: logMeanExp(logWeights) }
 }
 
 /** Log of evidence times prior, as a density over z: shape (n, d) in, (n) out. */

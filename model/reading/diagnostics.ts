@@ -9,12 +9,13 @@ const leastEffective = 400
 /** Whether the fit can be trusted, by its own account: Pareto k, effective draws, posterior predictive checks. */
 export function readDiagnostics(reading: Reading, seed: number, interval: number): Findings['diagnostics'] {
   const { posterior } = reading
-  const trusted = posterior.paretoK <= paretoKLimit(posterior.sigmas.count) && posterior.effective >= leastEffective
+  const trusted = posterior.paretoK !== null && posterior.paretoK <= paretoKLimit(posterior.sigmas.count) && posterior.effective >= leastEffective
+  const checks = readChecks(reading, seed, interval)
   return {
     method: 'importance sampling of the standard deviations, states integrated out and drawn exactly',
     pareto_k: posterior.paretoK, rhat: null, ess: posterior.effective,
     draws: posterior.draws.count, proposals: posterior.sigmas.count,
-    passed: trusted,
-    checks: readChecks(reading, seed, interval),
+    converged: trusted, passed: trusted && checks.every((check) => check.passed),
+    checks,
   }
 }

@@ -11,7 +11,7 @@ export function sampleCaveats(): Caveat[] {
     raise('coder-unaudited', 'caution'),
     raise('authors-partly-unknown', 'caution', { venue: 'Video comments', share: 0.29 }),
     raise('empty-steps', 'caution', { steps: 1 }),
-    raise('values-unmapped', 'note', { factor: 'topic', values: 'harbour works', mentions: 118 }),
+    raise('values-unmapped', 'note', { factor: 'topic', values: 1, mentions: 118 }),
     raise('given-not-used', 'note', { keys: 'events, competitors' }),
     raise('no-sampling-error', 'note'),
     raise('survey-absent', 'note'),
@@ -22,10 +22,10 @@ export function sampleCaveats(): Caveat[] {
 /** A fit whose diagnostics allow publishing. */
 export function sampleDiagnostics(venues: readonly string[]): Findings['diagnostics'] {
   return {
-    method: 'importance-sampling', pareto_k: 0.31, rhat: null, ess: 2840, draws: 4000, proposals: 8000, passed: true,
+    method: 'importance-sampling', pareto_k: 0.31, rhat: null, ess: 2840, draws: 4000, proposals: 8000, converged: true, passed: true,
     checks: venues.flatMap((venue, at) => [
-      { name: 'dispersion', venue, observed: 1 + 0.02 * at, predicted: around(1, 0.12), p: 0.3 + 0.05 * at, passed: true },
-      { name: 'extremes', venue, observed: 3.1, predicted: around(3, 0.6), p: 0.44, passed: true },
+      { name: 'spread', venue, observed: 1 + 0.02 * at, predicted: around(1, 0.12), p: 0.3 + 0.05 * at, passed: true },
+      { name: 'memory', venue, observed: 3.1, predicted: around(3, 0.6), p: 0.44, passed: true },
     ]),
   }
 }
@@ -37,7 +37,7 @@ export function sampleMethod(
   return {
     base: { from: '2024-05-06', to: '2025-05-05' },
     target_mix: targetMix, target_source: { venue: 'base', topic: 'base', poster: 'base' },
-    priors: { mu: 3, venue_drift: 2, venue: 30, topic: 30, poster: 30, tau: 20 },
+    priors: { initial: 50, mu: 3, venue_drift: 2, fixed_factor: 30, tau: 20 },
     cells: 9104, steps: 130,
     venues: venues.map(({ venue, label }, at) => ({ venue, label, standard_deviation: 58 + 3 * at, intraclass: at === 4 ? null : 0.14 + 0.03 * at, mean_design_effect: 1.1 + 0.05 * at })),
     smallest_group: 10, prepared_by: 'Ines Carrow', reviewed_by: null, time_zone: 'Europe/Lisbon', reporting: 'month',
