@@ -1,9 +1,11 @@
 import type { Element, Properties, Root } from 'hast'
 import { h } from 'hastscript'
 import { visit } from 'unist-util-visit'
+import { fitsPortrait } from './table-width.ts'
+import type { AdvanceTable } from './theme.ts'
 
-/** From how many columns on a table gets a landscape page of its own on paper. */
-const wideFrom = 9
+const fewColumns = 4
+const fewRows = 16
 
 /** Where a chart goes: the element that holds it, and which. */
 export interface DrawingPlace {
@@ -15,17 +17,17 @@ export interface DrawingPlace {
 }
 
 /**
- * Make compose's tree ready for the page: each chart's frame gets the place of its drawing; wide tables are
- * marked; each line of the contents says whose page number it waits for.
+ * Make compose's tree ready for the page: each chart's frame gets the place of its drawing; tables are
+ * marked by their size; each line of the contents says whose page number it waits for.
  *
  * @returns a new tree, and the places to be drawn in, in order
  */
-export function prepareTree(tree: Root): { readonly tree: Root, readonly places: readonly DrawingPlace[] } {
+export function prepareTree(tree: Root, advances: AdvanceTable): { readonly tree: Root, readonly places: readonly DrawingPlace[] } {
   const prepared = structuredClone(tree)
   const places: DrawingPlace[] = []
   visit(prepared, 'element', (element) => {
     if (typeof element.properties.dataChart === 'string') places.push(frameDrawing(element, element.properties.dataChart, places))
-    if (element.tagName === 'div' && hasClass(element, 'table')) markWide(element)
+    if (element.tagName === 'div' && hasClass(element, 'table')) markTable(element, advances)
     if (element.tagName === 'a') awaitPageNumber(element)
   })
   return { tree: prepared, places }
@@ -41,10 +43,18 @@ function frameDrawing(figure: Element, chart: string, before: readonly DrawingPl
   return { chart, id, alt: typeof dataAlt === 'string' ? dataAlt : '' }
 }
 
-function markWide(region: Element): void {
-  let columns = 0
-  visit(region, 'element', (element) => { if (element.tagName === 'th' && element.properties.scope === 'col') columns += 1 })
-  region.properties = { ...without(region.properties, ['dataTable']), className: columns >= wideFrom ? ['table', 'wide'] : ['table'] }
+/** What the style sheet cannot count: columns that need a landscape page, so few that they stand closer, so few rows that no page break is needed. */
+function classesOf(region: Element, advances: AdvanceTable): readonly string[] {
+  let [columns, rows] = [0, 0]
+  visit(region, 'element', (element) => {
+    if (element.tagName === 'th' && element.properties.scope === 'col') columns += 1
+    if (element.tagName === 'tr') rows += 1
+  })
+  return [...(fitsPortrait(region, advances) ? [] : ['wide']), ...(columns <= fewColumns ? ['few-columns'] : []), ...(rows <= fewRows ? ['few-rows'] : [])]
+}
+
+function markTable(region: Element, advances: AdvanceTable): void {
+  region.properties = { ...without(region.properties, ['dataTable']), className: ['table', ...classesOf(region, advances)] }
 }
 
 function awaitPageNumber(link: Element): void {

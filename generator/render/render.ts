@@ -32,7 +32,7 @@ export interface Rendering {
  * @throws {Error} a chart that is not among `charts`, or that cannot be drawn as specified
  */
 export async function render(document: Document, rendering: Rendering): Promise<string> {
-  const { tree, places } = prepareTree(document.tree)
+  const { tree, places } = prepareTree(document.tree, rendering.theme.advances)
   const drawings = new Map(await inTurn(places, async (place) => [place.id, await bothSizes(place, rendering)] as const))
   const body = toHtml(tree).replace(/ data-drawing="([^"]+)">/g, (_whole, id: string) => `>${drawings.get(id) ?? ''}`)
   return page(document, body, rendering)

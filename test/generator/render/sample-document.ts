@@ -50,7 +50,7 @@ export function sampleDocument(tables: readonly Table[] = tablesOf(sampleFinding
     ]),
     h('h2', { id: 'tables' }, 'Tables'),
     tableOf(tables, 'opinion', ['step', 'adjusted', 'low', 'high', 'raw', 'mentions']),
-    tableOf(tables, 'venues', ['label', 'mentions', 'authors', 'share', 'raw', 'level', 'level_low', 'level_high', 'drift', 'drift_low', 'drift_high', 'spread']),
+    tableOf(tables, 'venues', ['label', 'mentions', 'authors', 'share', 'raw', 'level', 'level_low', 'level_high', 'drift', 'drift_low', 'drift_high', 'slope', 'slope_low', 'slope_high', 'probability_drift_down', 'spread', 'venue', 'label', 'level']),
   ] }
   return { tree, title: 'Skerrow Ferries: brand health review, October 2026', lang: 'en-GB', headings: [{ depth: 2, id: 'tables', text: 'Tables' }] }
 }
