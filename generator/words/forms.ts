@@ -23,7 +23,7 @@ interface Bounds { readonly low: number, readonly high: number }
 export const forms = {
   points: ofNumber((value, words) => points(value, words.locale)),
   change: ofNumber((value, words) => change(value, words.locale)),
-  size: ofNumber((value, words) => size(value, words.locale)),
+  size: ofNumber(size),
   count: ofNumber((value, words) => count(value, words.locale)),
   number: ofNumber((value, words) => number(value, words.locale)),
   share: ofNumber((value, words) => share(value, words.locale)),

@@ -23,9 +23,10 @@ export function change(value: number, locale: string): string {
   return figure(value, locale, { ...oneDecimal, signDisplay: 'exceptZero' })
 }
 
-/** How far something moved, without its sign: `2.7`. */
-export function size(value: number, locale: string): string {
-  return figure(Math.abs(value), locale, oneDecimal)
+/** How far something moved, without its sign: `2.7`; what rounds to zero but is not is `less than 0.1`. */
+export function size(value: number, words: Words): string {
+  const [absolute, shown] = [Math.abs(value), figure(Math.abs(value), words.locale, oneDecimal)]
+  return absolute > 0 && absolute < 0.05 ? words.say('size-under', { size: figure(0.1, words.locale, oneDecimal) }) : shown
 }
 
 /** A whole number, grouped: `12,480`. */
@@ -84,5 +85,5 @@ export function interval(bounds: { readonly low: number, readonly high: number }
 /** How far something moved, as bounds without sign, the smaller first: `1.2 to 5.0`; bounds on both sides of zero keep their signs. */
 export function sizeInterval({ low, high }: { readonly low: number, readonly high: number }, words: Words): string {
   if (low < 0 && high > 0) return interval({ low, high }, change, words)
-  return interval({ low: Math.min(Math.abs(low), Math.abs(high)), high: Math.max(Math.abs(low), Math.abs(high)) }, size, words)
+  return interval({ low: Math.min(Math.abs(low), Math.abs(high)), high: Math.max(Math.abs(low), Math.abs(high)) }, points, words)
 }

@@ -11,7 +11,7 @@ export function sampleCaveats(): Caveat[] {
     raise('coder-unaudited', 'caution'),
     raise('authors-partly-unknown', 'caution', { venue: 'Video comments', share: 0.29 }),
     raise('empty-steps', 'caution', { steps: 1 }),
-    raise('values-unmapped', 'note', { factor: 'topic', values: 1, mentions: 118 }),
+    raise('values-unmapped', 'note', { factor: 'topic', values: 'harbour works', mentions: 118 }),
     raise('given-not-used', 'note', { keys: 'events, competitors' }),
     raise('no-sampling-error', 'note'),
     raise('survey-absent', 'note'),

@@ -15,7 +15,12 @@ const estimate = (mean: number, low: number, high: number) => ({ mean, low, high
 
 test('raw and adjusted part: the headline says both, and the reason follows', () => {
   expect(lead(usual)).toBe('Opinion of Skerrow Ferries rose by 2.2 points in October 2026 compared with September 2026 (90% interval 0.8 to 3.6), although the raw average of all mentions fell by 2.3 points.')
-  expect(firstPage(usual)).toContain('The main reason other than opinion: mentions shifted towards venues that speak less kindly (−1.7 points, 90% interval −2.1 to −1.3). Opinion itself raised it by 2.2 points (90% interval 0.8 to 3.6).')
+  expect(firstPage(usual)).toContain('The main reason: mentions shifted towards venues that speak less kindly (−1.7 points, 90% interval −2.1 to −1.3). Opinion itself raised it by 2.2 points (90% interval 0.8 to 3.6).')
+})
+
+test('where opinion moved the same way, the reason is one beside it', () => {
+  const parts = sample.decomposition!.parts.map((part) => part.part === 'opinion' ? { ...part, estimate: estimate(-1.2, -2, -0.4), movement: 'down' as const } : part)
+  expect(firstPage(composeHouse({ ...sample, decomposition: { ...sample.decomposition!, parts } }))).toContain('The main reason other than opinion: mentions shifted')
 })
 
 test('what works against the change is not called its reason', () => {

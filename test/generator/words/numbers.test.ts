@@ -15,7 +15,7 @@ test('a change has its sign, and none where it rounds to zero', () => {
   expect([2.71, -0.3, 0.04, -0.04, 0].map((value) => change(value, 'en-GB'))).toEqual(['+2.7', '\u22120.3', '0.0', '0.0', '0.0'])
 })
 
-test.each([points, change, size, number, count, share, shareInColumn])('%o never shows a negative zero nor a hyphen for a minus', (format) => {
+test.each([points, change, number, count, share, shareInColumn])('%o never shows a negative zero nor a hyphen for a minus', (format) => {
   fc.assert(fc.property(fc.double({ min: -100, max: 100, noNaN: true }), (value) => {
     const text = format(value, 'en-GB')
     return !text.includes('-') && !/^\u22120(\.0+)?%?$/.test(text)
@@ -47,6 +47,10 @@ test('bands of probability are those of the guidance note', () => {
   expect([0.995, 0.95, 0.7, 0.5, 0.33, 0.2, 0.05, 0.001].map(probabilityBand))
     .toEqual(['virtually_certain', 'very_likely', 'likely', 'open', 'open', 'unlikely', 'very_unlikely', 'exceptionally_unlikely'])
   expect(probability(0.94, words)).toBe('very likely (94%)')
+})
+
+test('a size has no sign, and is never nothing where something moved', () => {
+  expect([2.71, -0.3, 0.04, -0.001, 0].map((value) => size(value, words))).toEqual(['2.7', '0.3', 'less than 0.1', 'less than 0.1', '0.0'])
 })
 
 test('intervals', () => {
