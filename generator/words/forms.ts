@@ -45,7 +45,9 @@ export const forms = {
   digits: ofNumber((value) => String(value)),
   text: ofString((value) => value),
   /** A factor's name: `venue` is worded, one that the account adds stays as it is. */
-  factor: ofString((value, words) => words.has(`factor-${value}`) ? words.say(`factor-${value}`) : value),
+  factor: ofString(factorName),
+  /** The factor that a part of a decomposition is the mix of: `segment_mix` is that of segment. */
+  'mix-factor': ofString((value, words) => factorName(value.replace(/_mix$/, ''), words)),
   /** A value of the findings that chooses a case of a message: text, truth or nothing (`none`); ICU allows no hyphen there. */
   code: { from: 'any', write: (value: unknown) => value === null || value === undefined ? 'none' : String(value).replaceAll('-', '_') } satisfies Form,
   /** The label of a venue, topic, poster class or other level. */
@@ -59,6 +61,10 @@ export const formNames = Object.keys(forms) as readonly FormName[]
 
 export function isFormName(name: string): name is FormName {
   return Object.hasOwn(forms, name)
+}
+
+function factorName(factor: string, words: Words): string {
+  return words.has(`factor-${factor}`) ? words.say(`factor-${factor}`) : factor
 }
 
 /** What one decimal shows of a number's direction. */

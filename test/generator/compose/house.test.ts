@@ -1,6 +1,7 @@
 import { toString } from 'hast-util-to-string'
 import { expect, test } from 'vitest'
 import type { Document } from '../../../generator/compose/document.ts'
+import { blankFindings } from '../../../model/findings/blank.ts'
 import type { Findings } from '../../../model/findings/schema.ts'
 import { composeHouse, elementsOf, houseCharts, sectionText } from '../../support/house-composition.ts'
 import { hostileFindings } from '../../support/small-template.ts'
@@ -90,6 +91,18 @@ test('without a serious caveat the first page shows the cautions, without either
   expect(firstPage(usual)).not.toContain('Coding not checked by people')
   expect(firstPage(only('caution', 'note'))).toContain('Coding not checked by people')
   expect(firstPage(only('note'))).toContain('No serious caveat and no caution applies')
+})
+
+test('the mix of a factor that the account adds is named by it', () => {
+  const parts = sample.decomposition!.parts.map((part) => part.part === 'venue_mix' ? { ...part, part: 'segment_mix' } : part)
+  const document = composeHouse({ ...sample, decomposition: { ...sample.decomposition!, parts, largest: 'segment_mix' } })
+  expect(firstPage(document)).toContain('The main reason: the mix of segment shifted towards less kind mentions')
+  expect(sectionText(document, 'moved')).toContain('The mix of segment: lowered the raw average by 1.7 points')
+  expect(sectionText(document, 'moved')).toContain('Mix: segment')
+})
+
+test('findings without anything in them compose too, so that a template can be checked without a fit', () => {
+  expect(sectionText(composeHouse(blankFindings), 'moved')).toContain('No mention was posted in this period')
 })
 
 test('small groups are left out of topics', () => {
