@@ -52,6 +52,13 @@ describe('what is written', () => {
     expect(texts.filter((text) => /^[+\u2212]?\d+\.\d$/.test(text))).toEqual(expect.arrayContaining(['+2.2', '\u22121.7']))
     expect(texts).toContain('raw_change')
   })
+  test('axes count in plain figures, also in tens', async () => {
+    const findings = stretchedFindings({ venues: 2, topics: 3, steps: 26, grid: 'week' })
+    const far = { ...findings, topics: findings.topics.map((of, index) => ({ ...of, offset: { mean: 30 * index - 30, low: 30 * index - 32, high: 30 * index - 28, sd: 1 } })) }
+    const texts = textsOf(await draw(await sampleRendering(far), 'topics'))
+    expect(texts).toEqual(expect.arrayContaining(['+20', '0', '\u221220']))
+    expect(texts.join(' ')).not.toMatch(/\de[+\u2212-]?\d/)
+  })
   test('labels of untrusted origin stay text', async () => {
     const findings = stretchedFindings({ venues: 2, topics: 2, steps: 26, grid: 'week' })
     const evil = { ...findings, topics: findings.topics.map((of) => ({ ...of, label: '<script>"&' })) }
