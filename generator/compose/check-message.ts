@@ -1,15 +1,14 @@
-import type { Node } from 'unist'
 import { checkForm, checkSelection } from './check-paths.ts'
 import type { CheckContext } from './directives/directive.ts'
 import { nearest } from './faults.ts'
-import type { Reporter } from './faults.ts'
+import type { Placed, Reporter } from './faults.ts'
 import type { TypeScope } from './path-types.ts'
 import { kindOf } from './path-types.ts'
 import type { Argument } from './sentences.ts'
 import { forms } from '../words/forms.ts'
 
 /** Check a message where it is used: the catalogue has it, and its sentence's figures exist in that scope. */
-export function checkMessage(message: string, scope: TypeScope, context: Pick<CheckContext, 'words' | 'sentences'>, at: Pick<Node, 'position'> | undefined, reporter: Reporter): void {
+export function checkMessage(message: string, scope: TypeScope, context: Pick<CheckContext, 'words' | 'sentences'>, at: Placed | undefined, reporter: Reporter): void {
   if (!context.words.has(message)) {
     reporter.report(at, 'message-unknown', `message "${message}"`, `a message of the catalogue ${context.words.language}`, nearest(message, context.words.keys))
     return
@@ -21,7 +20,7 @@ export function checkMessage(message: string, scope: TypeScope, context: Pick<Ch
   for (const argument of Object.values(sentence?.arguments ?? {})) checkArgument(argument, scope, at, reporter)
 }
 
-function checkArgument(argument: Argument, scope: TypeScope, at: Pick<Node, 'position'> | undefined, reporter: Reporter): void {
+function checkArgument(argument: Argument, scope: TypeScope, at: Placed | undefined, reporter: Reporter): void {
   if (!argument.selection) {
     checkForm(argument.of, argument.as, scope, at, reporter)
     return

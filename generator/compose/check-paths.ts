@@ -1,14 +1,13 @@
-import type { Node } from 'unist'
 import type { FormName } from '../words/forms.ts'
 import { forms } from '../words/forms.ts'
 import type { Clause, Condition } from './condition.ts'
-import type { Reporter } from './faults.ts'
+import type { Placed, Reporter } from './faults.ts'
 import type { Path } from './path.ts'
 import { kindOf, typeAt, withoutNull } from './path-types.ts'
 import type { TypeNode, TypeScope } from './path-types.ts'
 import type { Selection } from './selection.ts'
 
-type At = Pick<Node, 'position'> | undefined
+type At = Placed | undefined
 
 /** Check that the findings have a path; its type, or undefined after a report. */
 export function checkPath(path: Path, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {

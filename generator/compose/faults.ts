@@ -1,11 +1,15 @@
 import { closest } from 'fastest-levenshtein'
-import type { Node } from 'unist'
 import type { Fault } from '../faults/fault.ts'
+
+/** Anything that may know where in its file it stands: a node of a tree, an entry of sentences.yaml. */
+export interface Placed {
+  readonly position?: { readonly start: { readonly line: number, readonly column: number } } | undefined
+}
 
 /** Collects what is wrong in one file; all faults of a template are told at once. */
 export interface Reporter {
   readonly place: string
-  readonly report: (at: Pick<Node, 'position'> | undefined, code: string, unexpected: string, expected: string, mend: string) => void
+  readonly report: (at: Placed | undefined, code: string, unexpected: string, expected: string, mend: string) => void
 }
 
 /** A reporter that adds to `faults`, naming file, line and column. */

@@ -1,8 +1,7 @@
-import type { Node } from 'unist'
 import { parseCondition } from './condition.ts'
 import type { Condition } from './condition.ts'
 import { nearest } from './faults.ts'
-import type { Reporter } from './faults.ts'
+import type { Placed, Reporter } from './faults.ts'
 import { parsePath } from './path.ts'
 import type { Path } from './path.ts'
 import { orders } from './selection.ts'
@@ -13,14 +12,14 @@ export const selectionKeys = ['of', 'where', 'by', 'order', 'most', 'last'] as c
 type Given = Readonly<Record<string, string | null | undefined>>
 
 /** Read a path of an attribute; what is no path is reported. */
-export function readPath(text: string, at: Pick<Node, 'position'>, reporter: Reporter): Path | undefined {
+export function readPath(text: string, at: Placed, reporter: Reporter): Path | undefined {
   const path = parsePath(text)
   if (!path) reporter.report(at, 'path-invalid', `path "${text}"`, 'names with dots between', 'Write it like opinion.change.mean or parts[part=opinion].estimate.')
   return path
 }
 
 /** Read a condition of an attribute; what is none is reported. */
-export function readCondition(text: string, at: Pick<Node, 'position'>, reporter: Reporter): Condition | undefined {
+export function readCondition(text: string, at: Placed, reporter: Reporter): Condition | undefined {
   const condition = parseCondition(text)
   if (!condition) {
     reporter.report(at, 'condition-invalid', `condition "${text}"`, 'PATH exists, PATH is VALUE, PATH < VALUE, some LIST: ...',
@@ -30,7 +29,7 @@ export function readCondition(text: string, at: Pick<Node, 'position'>, reporter
 }
 
 /** Read `of`, `where`, `by`, `order`, `most`, `last`; undefined, and reported, where one of them is wrong. */
-export function readSelection(given: Given, at: Pick<Node, 'position'>, reporter: Reporter): Selection | undefined {
+export function readSelection(given: Given, at: Placed, reporter: Reporter): Selection | undefined {
   const of = readPath(given['of'] ?? '', at, reporter)
   const by = optional(given['by'], (text) => readPath(text, at, reporter))
   const where = optional(given['where'], (text) => readCondition(text, at, reporter))
@@ -51,13 +50,13 @@ function optional<T>(text: string | null | undefined, read: (text: string) => T 
   return value === undefined ? { wrong: true } : { value, wrong: false }
 }
 
-function readOrder(text: string, at: Pick<Node, 'position'>, reporter: Reporter): Order | undefined {
+function readOrder(text: string, at: Placed, reporter: Reporter): Order | undefined {
   const order = orders.find((known) => known === text)
   if (!order) reporter.report(at, 'attribute-invalid', `order "${text}"`, orders.join(', '), nearest(text, orders))
   return order
 }
 
-function readMost(name: string, text: string, at: Pick<Node, 'position'>, reporter: Reporter): number | undefined {
+function readMost(name: string, text: string, at: Placed, reporter: Reporter): number | undefined {
   if (/^[1-9]\d{0,3}$/.test(text)) return Number(text)
   reporter.report(at, 'attribute-invalid', `${name} "${text}"`, 'a whole number from 1', `Write it like ${name}=3.`)
   return undefined

@@ -36,8 +36,7 @@ export interface Argument {
   readonly position: Position
 }
 
-interface Position { readonly start: Point, readonly end: Point }
-interface Point { readonly line: number, readonly column: number }
+interface Position { readonly start: { readonly line: number, readonly column: number } }
 
 /** Read `sentences.yaml`; what can't be read is reported and left out. */
 export function parseSentences(text: string, reporter: Reporter): Sentences {
@@ -46,8 +45,7 @@ export function parseSentences(text: string, reporter: Reporter): Sentences {
   const [place, anchors] = [placeIn(lines), anchorsIn(document)]
   for (const error of document.errors) {
     const { line, col: column } = lines.linePos(error.pos[0])
-    const point = { line, column }
-    reporter.report({ position: { start: point, end: point } }, 'sentences-invalid', `YAML (${error.message.split('\n')[0]})`, 'a map from messages to arguments', 'Mend the syntax.')
+    reporter.report({ position: { start: { line, column } } }, 'sentences-invalid', `YAML (${error.message.split('\n')[0]})`, 'a map from messages to arguments', 'Mend the syntax.')
   }
   return new Map(entries(document.contents, anchors).map(([message, node]) => {
     const position = place(node)
@@ -110,7 +108,6 @@ function asStrings(node: ParsedNode | null, anchors: Anchors): Record<string, st
 function placeIn(lines: LineCounter): (node: ParsedNode | null) => Position {
   return (node) => {
     const { line, col } = lines.linePos(node?.range[0] ?? 0)
-    const point = { line, column: col }
-    return { start: point, end: point }
+    return { start: { line, column: col } }
   }
 }
