@@ -1,10 +1,9 @@
-import { endWall } from './calendar.ts'
+import { endWall, weekOf } from './calendar.ts'
+import { labels, scoreOf } from './graded-score.ts'
 import { brand } from './posts.ts'
 import type { Post } from './posts.ts'
 import type { Draws } from './seeded-draws.ts'
-import { labels, scoreOf } from './graded-score.ts'
 import { copyOf, stormText } from './wording.ts'
-import { weekOf } from './calendar.ts'
 
 /** What is wrong with a row as exported; `none` for nearly all. */
 export type Flaw = 'none' | 'time' | 'score' | 'venue' | 'id-repeated' | 'repost'

@@ -18,7 +18,7 @@ interface Thread {
 const pullOfThread = 0.25
 const running = 8
 
-/** The conversations of discussion boards: half of the threads stay short, and replies lean a little to the tone they find. */
+/** The conversations of discussion boards: a few run at a time on each topic, and replies lean a little to the tone they find. */
 export function followThreads(draws: Draws): Threads {
   const byTopic = new Map<string, Thread[]>()
   const byName = new Map<string, Thread>()

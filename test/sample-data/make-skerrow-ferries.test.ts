@@ -107,6 +107,15 @@ describe('the story', () => {
     expect(last.standardised - yearBefore.standardised).toBeGreaterThan(1)
   })
 
+  test('its figures are those that TRUTH.md tells', () => {
+    const told = readFileSync(join(folder, 'TRUTH.md'), 'utf8').replace(/\s+/g, ' ')
+    const [last, before, yearBefore] = [month('2026-10'), month('2026-09'), month('2025-10')]
+    const points = (change: number) => `${Math.abs(change).toFixed(1)} points`
+    expect(told).toContain(`October 2026 stands ${points(last.truth - yearBefore.truth)} above October 2025`)
+    expect(told).toContain(`${points(last.truth - before.truth)} from September to October 2026, comes`)
+    expect(told).toContain(`It falls by ${points(last.raw - before.raw)} from September to October 2026, and by ${points(last.raw - yearBefore.raw)} in the year`)
+  })
+
   test('it is the mix and the boards that pull the raw average down: without them it rises', () => {
     const rest = summarise(own.filter((post) => post.venue !== 'boards' && post.topic !== 'punctuality'), demo.story)
     expect(rest[29].raw - rest[28].raw).toBeGreaterThan(0)
