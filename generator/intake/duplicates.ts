@@ -13,16 +13,19 @@ const week = 7 * 86_400 * 1_000_000
  * before in the same source, then, among the rest, reposts.
  *
  * @param eligible - SQL condition on `scanned`: readable and in scope
+ * @param filled - the columns that `scanned` has
  */
-export async function findDuplicates(database: Database, zone: ZoneSql, eligible: string): Promise<Duplicates> {
+export async function findDuplicates(database: Database, zone: ZoneSql, eligible: string, filled: { readonly id: boolean; readonly text: boolean }): Promise<Duplicates> {
   await database.run('CREATE TEMP TABLE repeated (row BIGINT)')
-  const sameId = await findSameIds(database, eligible)
-  const repost = await findReposts(database, zone, eligible)
+  const sameId = filled.id ? await findSameIds(database, eligible) : 0
+  const repost = filled.text ? await findReposts(database, zone, eligible) : 0
   return { sameId, repost }
 }
 
 async function findSameIds(database: Database, eligible: string): Promise<number> {
-  await database.run(`CREATE TEMP TABLE id_twice AS SELECT id FROM scanned WHERE ${eligible} AND id IS NOT NULL GROUP BY id HAVING count(*) > 1`)
+  // Sorting one number a row and comparing neighbours takes half the time of grouping by as many different numbers.
+  await database.run(`CREATE TEMP TABLE id_twice AS SELECT DISTINCT id FROM (
+    SELECT id, lag(id) OVER () AS before FROM (SELECT id FROM scanned WHERE ${eligible} AND id IS NOT NULL ORDER BY id)) WHERE id = before`)
   await database.run(`INSERT INTO repeated SELECT row FROM (
     SELECT scanned.rowid AS row, row_number() OVER (PARTITION BY id ORDER BY scanned.rowid) AS place
     FROM scanned JOIN id_twice USING (id) WHERE ${eligible}) WHERE place > 1`)

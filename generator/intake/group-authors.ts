@@ -16,29 +16,31 @@ export interface AuthorGroups {
 const bits = 63
 
 /**
- * Who posted how often, counted. One pass makes `active`: one row an author and period, with the levels they were in as
- * bits, so that distinct authors by level need no pass of their own.
+ * Who posted how often, counted. `active` has one row an author and period with more than one mention there, with the
+ * levels they were in as bits, so that distinct authors by level need no grouping by author of their own; mentions that
+ * are their author's only one in the period, and those without an author, are counted as they stand.
  */
 export async function groupAuthors(database: Database, names: MentionNames): Promise<AuthorGroups> {
   const masks = names.levels.flatMap((levels, factor) => (factor === 0 ? [] : chunks(levels.length).map((chunk) => ({ factor, chunk, column: `mask_${factor}_${chunk}` }))))
   const columns = masks.map(({ factor, chunk, column }) =>
     `bit_or(CASE WHEN factor_${factor} // ${bits} = ${chunk} THEN 1::BIGINT << (factor_${factor} % ${bits})::BIGINT ELSE 0 END) AS ${column}`)
   await database.run(`CREATE TEMP TABLE active AS SELECT period, min(factor_0) AS venue, count(*) AS posts${columns.map((column) => `, ${column}`).join('')}
-    FROM classified WHERE author IS NOT NULL GROUP BY author, period`)
-  const concentration = await counted(database, 'SELECT period AS a, venue AS b, posts AS c, count(*) AS n FROM active GROUP BY ALL ORDER BY ALL')
-  const venueAuthors = await counted(database, `SELECT period AS a, 0 AS b, factor_0 AS c, count(*) AS n FROM (
-    SELECT period, venue AS factor_0 FROM active UNION ALL SELECT period, factor_0 FROM classified WHERE author IS NULL) GROUP BY ALL ORDER BY ALL`)
-  const levelAuthors = []
+    FROM classified WHERE NOT alone_in_period GROUP BY author, period`)
+  const concentration = await counted(database, `SELECT a, b, c, sum(n)::BIGINT AS n FROM (
+    SELECT period AS a, venue AS b, posts AS c, count(*) AS n FROM active GROUP BY ALL
+    UNION ALL SELECT period, factor_0, 1, count(*) FROM classified WHERE alone_in_period AND author IS NOT NULL GROUP BY ALL) GROUP BY ALL ORDER BY ALL`)
+  const byLevel = [...await counted(database, `SELECT period AS a, 0 AS b, level AS c, count(*) AS n FROM (
+    SELECT period, venue AS level FROM active UNION ALL SELECT period, factor_0 FROM classified WHERE alone_in_period) GROUP BY ALL ORDER BY ALL`)]
   for (const { factor, chunk, column } of masks) {
-    levelAuthors.push(...await counted(database, `SELECT a, ${factor} AS b, c, sum(n)::BIGINT AS n FROM (
+    byLevel.push(...await counted(database, `SELECT a, ${factor} AS b, c, sum(n)::BIGINT AS n FROM (
       SELECT period AS a, ${chunk * bits} + bit AS c, n FROM (SELECT period, ${column} AS mask, count(*) AS n FROM active GROUP BY ALL), range(${bits}) AS bit(bit) WHERE (mask >> bit) & 1 = 1
-      UNION ALL SELECT period, factor_${factor}, count(*) FROM classified WHERE author IS NULL AND factor_${factor} // ${bits} = ${chunk} GROUP BY ALL) GROUP BY ALL ORDER BY ALL`))
+      UNION ALL SELECT period, factor_${factor}, count(*) FROM classified WHERE alone_in_period AND factor_${factor} // ${bits} = ${chunk} GROUP BY ALL) GROUP BY ALL ORDER BY ALL`))
   }
-  const byStep = await counted(database, 'SELECT step AS a, 0 AS b, 0 AS c, count(DISTINCT author) + count(*) FILTER (author IS NULL) AS n FROM classified GROUP BY ALL ORDER BY ALL')
-  const withAuthor = await counted(database, 'SELECT 0 AS a, venue AS b, 0 AS c, sum(posts)::BIGINT AS n FROM active GROUP BY ALL ORDER BY ALL')
+  const byStep = await counted(database, 'SELECT step AS a, 0 AS b, 0 AS c, count(*) AS n FROM classified WHERE first_in_step GROUP BY ALL ORDER BY ALL')
+  const withAuthor = await counted(database, 'SELECT 0 AS a, factor_0 AS b, 0 AS c, count(author) AS n FROM classified GROUP BY ALL ORDER BY ALL')
   return {
     byStep: byStep.map(({ a, n }) => ({ step: a, authors: n })),
-    byPeriodLevel: [...venueAuthors, ...levelAuthors].map(({ a, b, c, n }) => ({ period: a, factor: b, level: c, authors: n })),
+    byPeriodLevel: byLevel.map(({ a, b, c, n }) => ({ period: a, factor: b, level: c, authors: n })),
     concentration: concentration.map(({ a, b, c, n }) => ({ period: a, venue: b, mentionsPerAuthor: c, authors: n })),
     withAuthor: withAuthor.map(({ b, n }) => ({ venue: b, mentions: n })),
   }

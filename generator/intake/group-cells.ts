@@ -18,11 +18,13 @@ interface CellSums {
 /** The cells of `classified`, ordered by step and levels. */
 export async function groupCells(database: Database, factors: readonly string[], names: MentionNames): Promise<readonly CellPart[]> {
   const keys = ['step', ...factors.map((_, index) => `factor_${index}`)].join(', ')
+  // An author with one mention in the step needs no grouping: only the others are grouped by author.
   const rows = await database.rows<CellSums>(`
-    SELECT ${keys}, mentions, score, squares, coalesce(authors, 0) AS authors, coalesce(known, 0) AS known, coalesce(clusters, 0) AS clusters
-    FROM (SELECT ${keys}, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares FROM classified GROUP BY ${keys})
-    LEFT JOIN (SELECT ${keys}, count(*) AS authors, sum(posts)::BIGINT AS known, sum(posts * posts)::BIGINT AS clusters FROM (
-      SELECT author, ${keys}, count(*) AS posts FROM classified WHERE author IS NOT NULL GROUP BY author, ${keys}) GROUP BY ${keys}) USING (${keys})
+    SELECT ${keys}, mentions, score, squares, single + coalesce(authors, 0) AS authors, known, single + coalesce(clusters, 0) AS clusters
+    FROM (SELECT ${keys}, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares,
+      count(author) AS known, count(*) FILTER (author IS NOT NULL AND alone_in_step) AS single FROM classified GROUP BY ${keys})
+    LEFT JOIN (SELECT ${keys}, count(*) AS authors, sum(posts * posts)::BIGINT AS clusters FROM (
+      SELECT author, ${keys}, count(*) AS posts FROM classified WHERE NOT alone_in_step GROUP BY author, ${keys}) GROUP BY ${keys}) USING (${keys})
     ORDER BY ${keys}`)
   return rows.map((row) => cellOf(row, factors, names))
 }

@@ -19,12 +19,15 @@ interface VariationSums {
  * @returns by number of the venue
  */
 export async function groupVariation(database: Database): Promise<ReadonlyMap<number, AuthorVariation>> {
+  await database.run(`CREATE TEMP TABLE centre AS SELECT factor_0, step, CAST(round(sum(score)::DOUBLE / count(*)) AS BIGINT) AS centre
+    FROM classified WHERE author IS NOT NULL GROUP BY ALL`)
+  const centred = 'SELECT author, alone, factor_0, score - centre AS score FROM classified JOIN centre USING (factor_0, step) WHERE author IS NOT NULL'
   const rows = await database.rows<VariationSums>(`
-    SELECT venue, posts, count(*) AS authors, sum(total)::HUGEINT AS sum, sum(total * total)::HUGEINT AS sum_squares, sum(squares)::HUGEINT AS squares FROM (
-      SELECT author, min(factor_0) AS venue, count(*) AS posts, sum(score - centre)::HUGEINT AS total, sum((score - centre) * (score - centre))::HUGEINT AS squares
-      FROM classified JOIN (SELECT factor_0, step, CAST(round(sum(score)::DOUBLE / count(*)) AS BIGINT) AS centre FROM classified WHERE author IS NOT NULL GROUP BY ALL) USING (factor_0, step)
-      WHERE author IS NOT NULL GROUP BY author)
-    GROUP BY venue, posts ORDER BY venue, posts`)
+    SELECT venue, posts, count(*) AS authors, sum(total)::HUGEINT AS sum, sum(total::HUGEINT * total)::HUGEINT AS sum_squares, sum(squares)::HUGEINT AS squares FROM (
+      SELECT min(factor_0) AS venue, count(*) AS posts, sum(score)::BIGINT AS total, sum(score * score)::HUGEINT AS squares FROM (${centred}) WHERE NOT alone GROUP BY author)
+    GROUP BY venue, posts
+    UNION ALL SELECT factor_0, 1, count(*), sum(score)::HUGEINT, sum(score * score)::HUGEINT, sum(score * score)::HUGEINT FROM (${centred}) WHERE alone GROUP BY factor_0
+    ORDER BY venue, posts`)
   const venues = new Map<number, VariationSums[]>()
   for (const row of rows) venues.set(row.venue, [...(venues.get(row.venue) ?? []), row])
   return new Map([...venues].map(([venue, sums]) => [venue, variationOf(sums)]))

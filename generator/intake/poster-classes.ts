@@ -1,29 +1,52 @@
 import type { Account } from '../account/account.ts'
 import type { Database } from './database.ts'
+import { momentBits, slotBits } from './mention-table.ts'
 
-const window = 90 * 86_400 * 1_000_000
+/** Ninety days in seconds. */
+const window = 90 * 86_400
 
 /**
- * Make `classified` of `mention`: every mention with its poster class, by its author's mentions in the 90 days up to and
- * including it; for mentions in the first 90 days of a source the window is those 90 days whole, or everyone would look
- * occasional at the start of history. Where the account has no factor `poster`, it is `mention` as it stands.
+ * Make `classified` of `mention`, still sorted by author and moment: every mention with its poster class, and with what
+ * its neighbours say, so that later counts need not group by author where an author has but one mention.
+ *
+ * The class goes by the author's mentions in the 90 days up to and including this one (of several in one second, those
+ * before it in the files); for mentions in the first 90 days of a source the window is those 90 days whole, or everyone
+ * would look occasional at the start of history.
+ *
+ * Added columns, each true for mentions without an author: `first_in_step`: none of its author's before it in the step;
+ * `alone_in_step`, `alone_in_period`, `alone`: the only one of its author in the step, the period, at all.
  */
 export async function classifyPosters(database: Database, account: Account): Promise<void> {
-  const index = account.factors.indexOf('poster')
-  if (index < 0) {
-    await database.run('ALTER TABLE mention RENAME TO classified')
-    return
-  }
-  const { occasional, regular } = account.posters
-  const classOf = `CASE WHEN posts <= ${occasional} THEN 0 WHEN posts <= ${regular} THEN 2 ELSE 1 END`
-  await database.run(`CREATE TEMP TABLE opening AS SELECT source, min(instant) AS since, min(instant) + ${window} AS until FROM mention GROUP BY source`)
+  const poster = account.factors.indexOf('poster')
+  const others = account.factors.map((_, index) => `factor_${index}`).filter((_, index) => index !== poster)
+  const classed = poster < 0 ? '' : `, CAST(CASE WHEN author IS NULL THEN 3 ELSE ${classOf(account)} END AS USMALLINT) AS factor_${poster}`
+  const joined = poster < 0 ? '' : 'LEFT JOIN early USING (author, source) LEFT JOIN opening USING (source)'
+  if (poster >= 0) await createOpening(database)
+  const neighbours = ['author', 'moment', 'slot'].flatMap((column) => [`lag(${column}) OVER () AS ${column}_before`, `lead(${column}) OVER () AS ${column}_after`])
+  const far = [...new Set([account.posters.occasional, account.posters.regular])].flatMap((back) => [`lag(author, ${back}) OVER () AS author_${back}`, `lag(moment, ${back}) OVER () AS moment_${back}`])
+  const before = 'author_before IS DISTINCT FROM author'
+  const after = 'author_after IS DISTINCT FROM author'
+  const period = (column: string): string => `(${column} >> ${slotBits})`
+  await database.run(`CREATE TEMP TABLE classified AS SELECT author, slot & ${2 ** slotBits - 1} AS step, ${period('slot')} AS period, score, ${others.join(', ')}${classed},
+      author IS NULL OR ${before} OR slot_before <> slot AS first_in_step,
+      author IS NULL OR ((${before} OR slot_before <> slot) AND (${after} OR slot_after <> slot)) AS alone_in_step,
+      author IS NULL OR ((${before} OR ${period('slot_before')} <> ${period('slot')}) AND (${after} OR ${period('slot_after')} <> ${period('slot')})) AS alone_in_period,
+      author IS NULL OR (${before} AND ${after}) AS alone
+    FROM (SELECT *, ${[...neighbours, ...(poster < 0 ? [] : far)].join(', ')} FROM mention) ${joined}`)
+  await database.run(`DROP TABLE mention${poster < 0 ? '' : '; DROP TABLE opening; DROP TABLE early'}`)
+}
+
+/** `opening (source, until)`: the end of each source's first 90 days; `early`: how often each author posted in them. */
+async function createOpening(database: Database): Promise<void> {
+  await database.run(`CREATE TEMP TABLE opening AS SELECT source, (min(moment) >> ${momentBits}) AS since, (min(moment) >> ${momentBits}) + ${window} AS until FROM mention GROUP BY source`)
   await database.run(`CREATE TEMP TABLE early AS SELECT author, opening.source, count(*) AS early_posts
-    FROM mention JOIN opening ON instant >= since AND instant < until WHERE author IS NOT NULL GROUP BY ALL`)
-  await database.run(`CREATE TEMP TABLE classified AS
-    SELECT * EXCLUDE (trailing_posts, early_posts, until, posts) REPLACE (CAST(${classOf} AS USMALLINT) AS factor_${index})
-    FROM (SELECT *, CASE WHEN instant < until THEN early_posts ELSE trailing_posts END AS posts FROM (
-      SELECT *, count(*) OVER (PARTITION BY author ORDER BY instant RANGE BETWEEN ${window - 1} PRECEDING AND CURRENT ROW) AS trailing_posts FROM mention WHERE author IS NOT NULL)
-      JOIN (SELECT source, until FROM opening) USING (source) LEFT JOIN early USING (author, source))
-    UNION ALL SELECT * REPLACE (3::USMALLINT AS factor_${index}) FROM mention WHERE author IS NULL`)
-  await database.run('DROP TABLE mention; DROP TABLE opening; DROP TABLE early')
+    FROM mention JOIN opening ON (moment >> ${momentBits}) >= since AND (moment >> ${momentBits}) < until WHERE author IS NOT NULL GROUP BY ALL`)
+}
+
+/** More than N mentions stand in the window if the N-th before this one does. */
+function classOf(account: Account): string {
+  const { occasional, regular } = account.posters
+  const within = (back: number): string => `(author_${back} = author AND (moment >> ${momentBits}) - (moment_${back} >> ${momentBits}) < ${window})`
+  return `CASE WHEN (moment >> ${momentBits}) < until THEN CASE WHEN early_posts > ${regular} THEN 1 WHEN early_posts > ${occasional} THEN 2 ELSE 0 END
+    WHEN ${within(regular)} THEN 1 WHEN ${within(occasional)} THEN 2 ELSE 0 END`
 }

@@ -17,11 +17,11 @@ import { createScanned, scanFile, type ScannedFile } from './scan-mentions.ts'
 
 export interface IntakeOptions {
   /** Name of the period under review; default: the last whole one that the mentions cover. */
-  readonly period?: string
+  readonly period?: string | undefined
   /** Folder to write `mentions.csv` into: file, line and reason of every row that could not be read. */
-  readonly rejects?: string
-  readonly progress?: (message: string) => void
-  readonly threads?: number
+  readonly rejects?: string | undefined
+  readonly progress?: ((message: string) => void) | undefined
+  readonly threads?: number | undefined
 }
 
 /**
@@ -83,7 +83,7 @@ async function gather(database: Database, account: Account, files: ReadonlyMap<s
 
 async function scanAll(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, progress: (message: string) => void): Promise<readonly ScannedFile[]> {
   const scanned: ScannedFile[] = []
-  await createScanned(database, account.factors)
+  await createScanned(database, account)
   for (const [index, source] of account.mentions.entries()) {
     if (source.kind === 'cells') continue
     for (const file of source.files) {

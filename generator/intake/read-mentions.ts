@@ -10,7 +10,7 @@ import { groupVariation } from './group-variation.ts'
 import type { LevelReader } from './level-names.ts'
 import { createMentions, type MentionNames } from './mention-table.ts'
 import { classifyPosters } from './poster-classes.ts'
-import { aboutOthers } from './scan-mentions.ts'
+import { filledColumns, lastReject, otherBrandReasons } from './scan-mentions.ts'
 
 /** Everything that is grouped from mentions: no row of it stands for a person. */
 export interface GroupedMentions {
@@ -36,10 +36,10 @@ export interface SettledMentions {
 export async function settleMentions(
   database: Database, account: Account, { zone, span }: Dated, end: number, levelOf: LevelReader, progress: (message: string) => void,
 ): Promise<SettledMentions> {
-  const eligible = `reason = 0 AND about = 0 AND ${zone.day} <= ${end}`
+  const eligible = `fate = 0 AND ${zone.until(end)}`
   progress('Looking for duplicates')
-  const duplicates = await findDuplicates(database, zone, eligible)
-  const outOfScope = await countOutOfScope(database, `${zone.day} > ${end}`)
+  const duplicates = await findDuplicates(database, zone, eligible, filledColumns(account))
+  const outOfScope = await countOutOfScope(database, `NOT (${zone.until(end)})`)
   if (span === null || span.first > end) return { duplicates, outOfScope, grouped: null }
   progress('Naming and classing mentions')
   const names = await createMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, levelOf)
@@ -51,7 +51,7 @@ export async function settleMentions(
 }
 
 async function countOutOfScope(database: Database, after: string): Promise<Readonly<Record<string, number>>> {
-  const rows = await database.rows<{ about: number; rows: bigint }>(
-    `SELECT about, count(*) AS rows FROM scanned WHERE reason = 0 AND (about > 0 OR ${after}) GROUP BY about ORDER BY about`)
-  return Object.fromEntries(rows.map(({ about, rows: count }) => [about === 0 ? 'after-period' : aboutOthers[about - 1]!, Number(count)]))
+  const rows = await database.rows<{ fate: number; rows: bigint }>(
+    `SELECT fate, count(*) AS rows FROM scanned WHERE fate > ${lastReject} OR (fate = 0 AND ${after}) GROUP BY fate ORDER BY fate`)
+  return Object.fromEntries(rows.map(({ fate, rows: count }) => [fate === 0 ? 'after-period' : otherBrandReasons[fate - lastReject - 1]!, Number(count)]))
 }

@@ -11,6 +11,8 @@ export interface RecordLines {
 export interface Cut {
   readonly delimiter: string
   readonly quote: string
+  /** Whether the first record is a header. */
+  readonly header: boolean
 }
 
 const [newline, carriageReturn] = [0x0a, 0x0d]
@@ -20,13 +22,13 @@ const [newline, carriageReturn] = [0x0a, 0x0d]
  * record's line is not its number.
  *
  * @param ordinals - asked-for records among the sound ones, from 0, ascending; the header is none
- * @param malformed - bytes at which malformed records begin (or the line break before), ascending
+ * @param malformed - where DuckDB says that malformed records begin, ascending: a byte too far or a line break too early
  */
 export async function lineNumbers(file: string, cut: Cut, ordinals: ArrayLike<number>, malformed: ArrayLike<number>): Promise<RecordLines> {
   const lines: RecordLines = { sound: new Float64Array(ordinals.length), malformed: new Float64Array(malformed.length) }
-  let [ordinal, nextSound, nextMalformed] = [-1, 0, 0]
+  let [ordinal, nextSound, nextMalformed] = [cut.header ? -1 : 0, 0, 0]
   await eachRecord(file, cut, (line, offset) => {
-    if (nextMalformed < malformed.length && malformed[nextMalformed]! <= offset) { lines.malformed[nextMalformed++] = line; return }
+    if (nextMalformed < malformed.length && malformed[nextMalformed]! - 1 <= offset) { lines.malformed[nextMalformed++] = line; return }
     if (ordinal === ordinals[nextSound]) lines.sound[nextSound++] = line
     ordinal++
   })

@@ -2,11 +2,11 @@ import { mkdir, open } from 'node:fs/promises'
 import path from 'node:path'
 import type { Database } from './database.ts'
 import { lineNumbers } from './record-lines.ts'
-import { rejectReasons, type ScannedFile } from './scan-mentions.ts'
+import { lastReject, rejectReasons, type ScannedFile } from './scan-mentions.ts'
 
 /** Rows that could not be read, by reason. */
 export async function countRejects(database: Database, files: readonly ScannedFile[]): Promise<Readonly<Record<string, number>>> {
-  const rows = await database.rows<{ reason: number; rows: bigint }>('SELECT reason, count(*) AS rows FROM scanned WHERE reason > 0 GROUP BY reason ORDER BY reason')
+  const rows = await database.rows<{ reason: number; rows: bigint }>(`SELECT fate AS reason, count(*) AS rows FROM scanned WHERE fate BETWEEN 1 AND ${lastReject} GROUP BY fate ORDER BY fate`)
   const counts = new Map(rows.map(({ reason, rows: count }) => [rejectReasons[reason - 1]!, Number(count)]))
   const malformed = files.reduce((total, file) => total + file.malformed.length, 0)
   if (malformed > 0) counts.set('row-malformed', (counts.get('row-malformed') ?? 0) + malformed)
@@ -38,7 +38,7 @@ interface Reject {
 
 async function rejectsOf(database: Database, scanned: ScannedFile): Promise<readonly Reject[]> {
   const rows = await database.rows<{ ordinal: bigint; reason: number }>(
-    `SELECT rowid - ${scanned.first} AS ordinal, reason FROM scanned WHERE reason > 0 AND rowid >= ${scanned.first} AND rowid < ${scanned.first + scanned.sound} ORDER BY rowid`)
+    `SELECT rowid - ${scanned.first} AS ordinal, fate AS reason FROM scanned WHERE fate BETWEEN 1 AND ${lastReject} AND rowid >= ${scanned.first} AND rowid < ${scanned.first + scanned.sound} ORDER BY rowid`)
   const ordinals = rows.map((row) => Number(row.ordinal))
   if (ordinals.length + scanned.malformed.length === 0) return []
   const lines = scanned.cut === null

@@ -4,6 +4,7 @@ import { InputFault } from '../faults/fault.ts'
 import { csvForm, type StatedForm } from './csv-header.ts'
 import { identifier, literal, type Database } from './database.ts'
 import type { InputFile } from './input-file.ts'
+import type { Cut } from './record-lines.ts'
 
 /** A file as SQL can select from it, every field as text. */
 export interface Relation {
@@ -11,8 +12,10 @@ export interface Relation {
   /** SQL that gives a column of the file as VARCHAR. */
   readonly column: (name: string) => string
   readonly header: readonly string[]
-  /** For CSV: how its records are cut. */
-  readonly cut: { readonly delimiter: string; readonly quote: string } | null
+  /** SQL BOOLEAN: the row could be picked apart. */
+  readonly sound: string
+  /** How the records of a text are cut; null for Parquet. */
+  readonly cut: Cut | null
 }
 
 /**
@@ -33,8 +36,11 @@ export async function relationOf(database: Database, file: InputFile, wanted: re
   const types = names.map((name) => `${literal(name)}: 'VARCHAR'`).join(', ')
   const options = `auto_detect = false, header = true, delim = ${literal(delimiter)}, quote = ${literal(quote)}, escape = ${literal(quote)}`
   const sql = `read_csv(${literal(plainPath(file.readable))}, ${options}, columns = {${types}}, ignore_errors = true, store_rejects = true${zipped(file)})`
-  return { sql, column: (name) => identifier(`c:${name}`), header, cut: { delimiter, quote } }
+  return { sql, column: (name) => identifier(`c:${name}`), header, sound: 'true', cut: { delimiter, quote, header: true } }
 }
+
+/** Every line a record: neither byte can stand in one. */
+const lines: Cut = { delimiter: '\0', quote: '\0', header: false }
 
 function zipped(file: InputFile): string {
   return file.readable.endsWith('.gz') ? ", compression = 'gzip'" : ''
@@ -43,8 +49,8 @@ function zipped(file: InputFile): string {
 /** A line is read as one field and picked apart, since rows that are no JSON would otherwise come as empty ones. */
 function ndjsonRelation(file: InputFile): Relation {
   const sql = `(SELECT line, json_valid(line) AS sound FROM read_csv(${literal(plainPath(file.readable))}, auto_detect = false, header = false, delim = '', quote = '', escape = '', `
-    + `columns = {'line': 'VARCHAR'}, max_line_size = 33554432, ignore_errors = true, store_rejects = true${zipped(file)}))`
-  return { sql, column: (name) => `CASE WHEN sound THEN json_extract_string(line, ${literal(`$."${name.replace(/["\\]/g, '\\$&')}"`)}) END`, header: [], cut: null }
+    + `columns = {'line': 'VARCHAR'}, max_line_size = 33554432, ignore_errors = true, store_rejects = true${zipped(file)}) WHERE line <> '')`
+  return { sql, column: (name) => `CASE WHEN sound THEN json_extract_string(line, ${literal(`$."${name.replace(/["\\]/g, '\\$&')}"`)}) END`, header: [], sound: 'sound', cut: lines }
 }
 
 async function parquetRelation(database: Database, file: InputFile, wanted: readonly string[]): Promise<Relation> {
@@ -53,7 +59,7 @@ async function parquetRelation(database: Database, file: InputFile, wanted: read
     const described = await database.rows<{ column_name: string }>(`SELECT column_name FROM (DESCRIBE SELECT * FROM ${sql})`)
     const header = described.map((row) => row.column_name)
     requireColumns(file, wanted, header)
-    return { sql, column: (name) => `CAST(${identifier(name)} AS VARCHAR)`, header, cut: null }
+    return { sql, column: (name) => `CAST(${identifier(name)} AS VARCHAR)`, header, sound: 'true', cut: null }
   } catch (error) {
     if (error instanceof InputFault) throw error
     throw new InputFault([faultOf('file-unreadable', file.path, { reason: 'no Parquet' })])

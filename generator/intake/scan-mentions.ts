@@ -6,11 +6,14 @@ import { relationOf, type Relation } from './relation.ts'
 import { scoreSql } from './score-sql.ts'
 import { timeSql } from './time-sql.ts'
 
-/** Why a row cannot be read; the order in which they are looked for. The codes stand in `scanned.reason`. */
+/** Why a row cannot be read, in the order in which reasons are looked for; `scanned.fate` is 1 for the first. */
 export const rejectReasons = ['row-malformed', 'time-unreadable', 'score-unreadable', 'score-outside-range', 'venue-missing'] as const
 
-/** Whom a mention is about. The codes stand in `scanned.about`. */
-export const aboutOthers = ['other-brand', 'brand-missing'] as const
+/** Why a readable row is not about the brand; `scanned.fate` goes on from the reasons of rejection. */
+export const otherBrandReasons = ['other-brand', 'brand-missing'] as const
+
+/** Fates up to this one are rejections; 0 is none. */
+export const lastReject = rejectReasons.length
 
 /** What the scan of one file found. */
 export interface ScannedFile {
@@ -24,13 +27,29 @@ export interface ScannedFile {
 
 /**
  * Every mention becomes one narrow row of `scanned`, in the order of sources, files and rows: hashes and numbers in the
- * place of ids, handles and texts, which are not kept. `factor_N` is the N-th factor of the account.
+ * place of ids, handles and texts, which are not kept. `factor_N` is the N-th factor of the account; columns that no
+ * source fills are left out.
  *
  * Hashes have 64 bits: among 5 million ids the chance that any two different ones agree is 7 in 10 million.
  */
-export async function createScanned(database: Database, factors: readonly string[]): Promise<void> {
-  const levels = factors.map((_, index) => `factor_${index} VARCHAR`).join(', ')
-  await database.run(`CREATE TEMP TABLE scanned (source USMALLINT, reason UTINYINT, about UTINYINT, clock BIGINT, zoned BOOLEAN, score INTEGER, id UBIGINT, handle UBIGINT, text UBIGINT, ${levels})`)
+export async function createScanned(database: Database, account: Account): Promise<void> {
+  await database.run(`CREATE TEMP TABLE scanned (${scannedColumns(account).map(({ name, type }) => `${name} ${type}`).join(', ')})`)
+}
+
+/** Which of the columns that only some accounts fill are there. */
+export function filledColumns(account: Account): { readonly id: boolean; readonly author: boolean; readonly text: boolean } {
+  const sources = account.mentions.filter((source): source is MentionSource => source.kind === 'mentions')
+  const filled = (ours: string): boolean => sources.some((source) => source.columns[ours] !== undefined)
+  return { id: filled('id'), author: filled('author'), text: filled('text') }
+}
+
+function scannedColumns(account: Account): readonly { readonly name: string; readonly type: string }[] {
+  const { id, author, text } = filledColumns(account)
+  return [
+    { name: 'source', type: 'USMALLINT' }, { name: 'fate', type: 'UTINYINT' }, { name: 'clock', type: 'BIGINT' }, { name: 'zoned', type: 'BOOLEAN' }, { name: 'score', type: 'INTEGER' },
+    ...(id ? [{ name: 'id', type: 'UBIGINT' }] : []), ...(author ? [{ name: 'handle', type: 'UBIGINT' }] : []), ...(text ? [{ name: 'text', type: 'UBIGINT' }] : []),
+    ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [{ name: `factor_${index}`, type: 'VARCHAR' }])),
+  ]
 }
 
 /** Read one file into `scanned`. */
@@ -49,29 +68,41 @@ function usedColumns(source: MentionSource, factors: readonly string[]): readonl
 }
 
 function scanSql(account: Account, source: MentionSource, sourceIndex: number, relation: Relation): string {
+  const time = timeSql('posted', source.timeFormat)
+  const score = scoreSql('scored', source.score)
+  const read = `SELECT ${fieldsSql(account, source, relation).join(', ')} FROM ${relation.sql}`
+  const timed = [time.drafts, [...time.readings, `${score.score} AS score`], [time.clock, time.zoned]]
+    .reduce((inner, columns) => `SELECT *, ${columns.join(', ')} FROM (${inner})`, read)
+  const unscored = `CASE WHEN ${score.outside} THEN 4 ELSE 3 END`
+  const columns: Readonly<Record<string, string>> = {
+    source: String(sourceIndex),
+    fate: `CASE WHEN NOT sound THEN 1 WHEN clock IS NULL THEN 2 WHEN score IS NULL THEN ${unscored} WHEN ${blank('factor_0')} THEN 5 ELSE other END`,
+    id: `CASE WHEN id <> '' THEN xor(hash(id), hash(${sourceIndex})) END`,
+    handle: "CASE WHEN handle <> '' THEN hash(handle) END",
+    text: 'CASE WHEN length(words) >= 40 THEN hash(words) END',
+  }
+  return `SELECT ${scannedColumns(account).map(({ name }) => columns[name] ?? name).join(', ')} FROM (${timed})`
+}
+
+/** The fields of a row as they stand in the file; values of factors are tidied when they are named, not here. */
+function fieldsSql(account: Account, source: MentionSource, relation: Relation): readonly string[] {
   const field = (ours: string): string => {
     const theirs = source.columns[ours]
     return theirs === undefined ? 'NULL::VARCHAR' : relation.column(theirs)
   }
-  const trimmed = (ours: string): string => `trim(${field(ours)})`
-  const filled = (ours: string): string => `nullif(${trimmed(ours)}, '')`
-  const time = timeSql('posted', source.timeFormat)
-  const score = scoreSql('scored', source.score)
-  const sound = relation.header.length === 0 ? 'sound' : 'true'
-  const levels = account.factors.map((factor, index) =>
-    `${factor === 'poster' ? 'NULL' : factor === 'venue' ? filled(factor) : `coalesce(${filled(factor)}, 'none')`} AS factor_${index}`)
-  const brand = `lower(${filled('brand')})`
-  const about = source.columns.brand === undefined ? '0' : `CASE ${brand} WHEN ${literal(account.brand.toLowerCase())} THEN 0 ELSE CASE WHEN ${brand} IS NULL THEN 2 ELSE 1 END END`
-  const ours = [
-    `${trimmed('posted_at')} AS posted`, `${trimmed('score')} AS scored`, `${sound} AS sound`, `${about} AS about`,
-    `hash(${filled('id')}, ${sourceIndex}) AS id_hash, ${filled('id')} IS NOT NULL AS has_id`,
-    `hash(${filled('author')}) AS handle_hash, ${filled('author')} IS NOT NULL AS has_author`,
-    `${source.columns.text === undefined ? 'NULL::VARCHAR' : comparable(field('text'))} AS words`, ...levels,
+  const brand = `lower(trim(${field('brand')}))`
+  const other = source.columns.brand === undefined ? '0'
+    : `CASE WHEN ${brand} = ${literal(account.brand.toLowerCase())} THEN 0 WHEN ${brand} <> '' THEN ${lastReject + 1} ELSE ${lastReject + 2} END`
+  return [
+    `CASE WHEN starts_with(${field('posted_at')}, ' ') THEN ltrim(${field('posted_at')}) ELSE ${field('posted_at')} END AS posted`, `${field('score')} AS scored`, `${relation.sound} AS sound`, `${other} AS other`, `${field('id')} AS id`, `${field('author')} AS handle`,
+    `${source.columns.text === undefined ? 'NULL::VARCHAR' : comparable(field('text'))} AS words`,
+    ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [`${factor === 'venue' ? field(factor) : `coalesce(${field(factor)}, '')`} AS factor_${index}`])),
   ]
-  const reason = `CASE WHEN NOT sound THEN 1 WHEN clock IS NULL THEN 2 WHEN score IS NULL THEN CASE WHEN ${score.outside} THEN 4 ELSE 3 END WHEN factor_0 IS NULL THEN 5 ELSE 0 END`
-  return `SELECT ${sourceIndex}, ${reason}, about, clock, zoned, score, CASE WHEN has_id THEN id_hash END, CASE WHEN has_author THEN handle_hash END, `
-    + `CASE WHEN length(words) >= 40 THEN hash(words) END, ${account.factors.map((_, index) => `factor_${index}`).join(', ')} `
-    + `FROM (SELECT *, ${time.clock} AS clock, ${time.zoned} AS zoned, ${score.score} AS score FROM (SELECT ${ours.join(', ')} FROM ${relation.sql}))`
+}
+
+/** Whether a field holds nothing but spaces. */
+function blank(field: string): string {
+  return `(${field} IS NULL OR ${field} = '' OR (starts_with(${field}, ' ') AND trim(${field}) = ''))`
 }
 
 /** A text as reposts are compared: lower case, without links, handles and spacing. */

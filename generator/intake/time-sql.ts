@@ -14,41 +14,49 @@ const shift = 200_000
 const earliest = Date.UTC(1900, 0, 1) * 1000
 const latest = Date.UTC(2200, 0, 1) * 1000
 
+/** Columns to be selected in three levels, each from the one before, so that nothing is worked out twice. */
 export interface TimeSql {
-  /** BIGINT or NULL. */
+  readonly drafts: readonly string[]
+  readonly readings: readonly string[]
+  /** `clock`: BIGINT or NULL. */
   readonly clock: string
-  /** BOOLEAN. */
+  /** `zoned`: BOOLEAN. */
   readonly zoned: string
 }
 
-/** How the text of a time is read: by the account's form, or as ISO 8601 or an epoch in seconds or milliseconds. */
+/**
+ * How the text of a time is read: by the account's form, or as ISO 8601 or an epoch in seconds or milliseconds.
+ * DuckDB would also take the words epoch and infinity for times; here they are none.
+ */
 export function timeSql(text: string, format: string | null): TimeSql {
-  const held = (clock: string): string => `CASE WHEN ${clock} BETWEEN ${earliest} AND ${latest - 1} THEN ${clock} END`
-  if (format !== null) return { clock: held(`epoch_us(try_strptime(${text}, ${literal(format)}))`), zoned: format.includes('%z') ? 'true' : 'false' }
-  const wall = `TRY_CAST(${text} AS TIMESTAMP)`
+  const clock = `CASE WHEN reading BETWEEN ${earliest} AND ${latest - 1} THEN reading END AS clock`
+  if (format !== null) {
+    return { drafts: [`CASE WHEN lower(trim(${text})) NOT IN ('epoch', 'infinity', '-infinity') THEN epoch_us(try_strptime(${text}, ${literal(format)})) END AS wall`], readings: ['wall AS reading'], clock, zoned: `${format.includes('%z')} AS zoned` }
+  }
   // Nearly every time is 19 characters without an offset, or those and a Z: no pattern need be matched for them.
-  const plain = `(strlen(${text}) = 19 AND ${text}[17] = ':')`
-  const offset = `regexp_matches(${text}, ':\\d\\d(:\\d\\d(\\.\\d+)?)? ?(Z|z|UTC|[+-]\\d\\d(:?\\d\\d)?)$')`
-  const isWall = `(${wall} IS NOT NULL AND ${text}[1] BETWEEN '0' AND '9')`
+  const plain = `strlen(${text}) = 19 AND (wall % 60000000 <> 0 OR ${text}[17] = ':')`
+  const offset = `regexp_matches(${text}, ':\\d\\d(:\\d\\d(\\.\\d+)?)? ?(Z|z|UTC|[+-]\\d\\d(:?\\d\\d)?)\\s*$')`
   return {
-    clock: `CASE WHEN ${isWall} THEN ${held(`CASE WHEN ${plain} OR ${text}[-1] = 'Z' OR NOT ${offset} THEN epoch_us(${wall}) ELSE epoch_us(TRY_CAST(${text} AS TIMESTAMPTZ)) END`)} `
-      + `ELSE ${held(otherForms(text))} END`,
-    zoned: `CASE WHEN ${isWall} THEN NOT ${plain} AND ${offset} ELSE ${basicIso(text)} IS NULL END`,
+    drafts: [`CASE WHEN ${text} < ':' THEN epoch_us(TRY_CAST(${text} AS TIMESTAMP)) END AS wall`],
+    readings: [
+      `CASE WHEN wall IS NULL THEN ${otherForms(text)} WHEN ${plain} OR ends_with(${text}, 'Z') OR NOT ${offset} THEN wall ELSE epoch_us(TRY_CAST(${text} AS TIMESTAMPTZ)) END AS reading`,
+      `CASE WHEN wall IS NULL THEN ${basicIso(text)} IS NULL WHEN ${plain} THEN false ELSE ends_with(${text}, 'Z') OR ${offset} END AS was_zoned`,
+    ],
+    clock, zoned: 'was_zoned AS zoned',
   }
 }
 
 /** ISO 8601's basic form, which DuckDB's cast does not know: 20261031, 20261031T142500. */
 function basicIso(text: string): string {
-  return `try_strptime(${text}, ['%Y%m%dT%H%M%S', '%Y%m%d'])`
+  return `CASE WHEN regexp_full_match(${text}, '\\d{8}(T\\d{6})?\\s*') THEN try_strptime(trim(${text}), ['%Y%m%dT%H%M%S', '%Y%m%d']) END`
 }
 
 function otherForms(text: string): string {
-  const basic = `CASE WHEN strlen(${text}) IN (8, 15) THEN epoch_us(${basicIso(text)}) END`
   const zoned = `epoch_us(TRY_CAST(regexp_replace(${text}, '^(\\d{4})(\\d\\d)(\\d\\d)T(\\d\\d)(\\d\\d)(\\d\\d)', '\\1-\\2-\\3T\\4:\\5:\\6') AS TIMESTAMPTZ))`
   const number = `TRY_CAST(${text} AS DOUBLE)`
   // 1e11 seconds is the year 5138, 1e11 milliseconds is 1973: no mention lies on the wrong side of it.
   const epoch = `CASE WHEN abs(${number}) < 1e11 THEN CAST(round(${number} * 1e6) AS BIGINT) WHEN abs(${number}) < 1e14 THEN CAST(round(${number} * 1e3) AS BIGINT) END`
-  return `coalesce(${basic}, ${epoch}, ${zoned})`
+  return `CASE WHEN ${text} < ':' THEN coalesce(epoch_us(${basicIso(text)}), ${epoch}, ${zoned}) END`
 }
 
 /** The readings of `clock` and `zoned` in a zone, as SQL over those two columns. */
@@ -56,6 +64,8 @@ export interface ZoneSql {
   readonly instant: string
   /** Day number in the zone. */
   readonly day: string
+  /** BOOLEAN: posted on that day or before. */
+  readonly until: (day: number) => string
   /** BOOLEAN: a wall time that the clocks skipped, and one that they showed twice. */
   readonly nonexistent: string
   readonly doubled: string
@@ -65,7 +75,8 @@ export interface ZoneSql {
  * A wall time that does not exist or exists twice is read as the first valid instant: the moment of the change, or the
  * earlier of the two.
  */
-export function zoneSql({ start, transitions }: ZoneClock): ZoneSql {
+export function zoneSql(clock: ZoneClock): ZoneSql {
+  const { start, transitions } = clock
   const last = transitions.at(-1)?.after ?? start
   const cases = (branches: readonly string[], otherwise: string): string =>
     (branches.length === 0 ? otherwise : `CASE ${branches.join(' ')} ELSE ${otherwise} END`)
@@ -82,9 +93,25 @@ export function zoneSql({ start, transitions }: ZoneClock): ZoneSql {
   return {
     instant: `CASE WHEN zoned THEN clock ELSE ${fromWall} END`,
     day: `CAST((CASE WHEN zoned THEN clock + ${offset} ELSE ${wall} END + ${shift * dayLength}) // ${dayLength} - ${shift} AS INTEGER)`,
+    until: (day) => `clock < CASE WHEN zoned THEN ${lastInstantOf(clock, day + 1) * second} ELSE ${firstWallOf(clock, day + 1) * second} END`,
     nonexistent: within(skipped.map(({ at, before, after }) => [at + before, at + after])),
     doubled: within(transitions.filter(({ before, after }) => after < before).map(({ at, before, after }) => [at + after, at + before])),
   }
+}
+
+/** Seconds since 1970 of the last time that a day begins: where clocks are set back over midnight, it begins twice. */
+function lastInstantOf({ start, transitions }: ZoneClock, day: number): number {
+  const midnight = day * 86_400
+  const passed = transitions.filter(({ at, after }) => at + after <= midnight).at(-1)
+  const skipping = transitions.find(({ at, before, after }) => at + before <= midnight && midnight < at + after)
+  return skipping?.at ?? midnight - (passed?.after ?? start)
+}
+
+/** Wall time in seconds from which on unzoned times are read as that day or later: a skipped time counts as the one after the gap. */
+function firstWallOf({ transitions }: ZoneClock, day: number): number {
+  const midnight = day * 86_400
+  const skipping = transitions.find(({ at, before, after }) => at + before < midnight && midnight <= at + after)
+  return skipping === undefined ? midnight : skipping.at + skipping.before
 }
 
 function signed(offset: number): string {
