@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto'
 import { createReadStream, createWriteStream } from 'node:fs'
+import { symlink } from 'node:fs/promises'
 import { isUtf8 } from 'node:buffer'
 import path from 'node:path'
 import { pipeline } from 'node:stream/promises'
@@ -41,13 +42,22 @@ export async function lookOver(folder: string, file: string, scratch: string): P
   const kind = fileKind(file)
   try {
     const { sha256, encoding, start } = kind === 'parquet' ? await hashOnly(absolute) : await hashText(absolute)
-    if (encoding === 'utf-8') return { path: file, sha256, kind, readable: absolute, start: decode(start, encoding) }
-    const copy = path.join(scratch, `${createHash('sha256').update(file).digest('hex').slice(0, 24)}.txt`)
+    const name = createHash('sha256').update(file).digest('hex').slice(0, 24)
+    if (encoding === 'utf-8') return { path: file, sha256, kind, readable: await plainlyNamed(absolute, path.join(scratch, name)), start: decode(start, encoding) }
+    const copy = path.join(scratch, `${name}.txt`)
     await transcode(absolute, copy, encoding)
     return { path: file, sha256, kind, readable: copy, start: decode(start, encoding) }
   } catch (error) {
     throw new InputFault([faultOf('file-unreadable', file, { reason: error instanceof Error ? error.message.split('\n')[0]! : 'no reason given' })])
   }
+}
+
+/** DuckDB takes some characters of a path for a pattern: such a file is read through a link in the scratch folder. */
+async function plainlyNamed(absolute: string, link: string): Promise<string> {
+  if (!/[[\]*?{}]/.test(absolute)) return absolute
+  const named = `${link}${absolute.endsWith('.gz') ? '.gz' : ''}`
+  await symlink(absolute, named)
+  return named
 }
 
 interface Looked {

@@ -35,7 +35,7 @@ export async function relationOf(database: Database, file: InputFile, wanted: re
   const names = header.map((name, index) => (wanted.includes(name) ? `c:${name}` : `n:${index}`))
   const types = names.map((name) => `${literal(name)}: 'VARCHAR'`).join(', ')
   const options = `auto_detect = false, header = true, delim = ${literal(delimiter)}, quote = ${literal(quote)}, escape = ${literal(quote)}`
-  const sql = `read_csv(${literal(plainPath(file.readable))}, ${options}, columns = {${types}}, ignore_errors = true, store_rejects = true${zipped(file)})`
+  const sql = `read_csv(${literal(file.readable)}, ${options}, columns = {${types}}, ignore_errors = true, store_rejects = true${zipped(file)})`
   return { sql, column: (name) => identifier(`c:${name}`), header, sound: 'true', cut: { delimiter, quote, header: true } }
 }
 
@@ -48,13 +48,13 @@ function zipped(file: InputFile): string {
 
 /** A line is read as one field and picked apart, since rows that are no JSON would otherwise come as empty ones. */
 function ndjsonRelation(file: InputFile): Relation {
-  const sql = `(SELECT line, json_valid(line) AS sound FROM read_csv(${literal(plainPath(file.readable))}, auto_detect = false, header = false, delim = '', quote = '', escape = '', `
+  const sql = `(SELECT line, json_valid(line) AS sound FROM read_csv(${literal(file.readable)}, auto_detect = false, header = false, delim = '', quote = '', escape = '', `
     + `columns = {'line': 'VARCHAR'}, max_line_size = 33554432, ignore_errors = true, store_rejects = true${zipped(file)}) WHERE line <> '')`
   return { sql, column: (name) => `CASE WHEN sound THEN json_extract_string(line, ${literal(`$."${name.replace(/["\\]/g, '\\$&')}"`)}) END`, header: [], sound: 'sound', cut: lines }
 }
 
 async function parquetRelation(database: Database, file: InputFile, wanted: readonly string[]): Promise<Relation> {
-  const sql = `read_parquet(${literal(plainPath(file.readable))})`
+  const sql = `read_parquet(${literal(file.readable)})`
   try {
     const described = await database.rows<{ column_name: string }>(`SELECT column_name FROM (DESCRIBE SELECT * FROM ${sql})`)
     const header = described.map((row) => row.column_name)
@@ -70,9 +70,4 @@ function requireColumns(file: InputFile, wanted: readonly string[], header: read
   const absent = wanted.filter((column) => !header.includes(column))
   if (absent.length === 0) return
   throw new InputFault([faultOf('columns-absent', `${file.path}:1`, { columns: absent, header, nearest: header.length === 0 ? 'none' : closest(absent[0]!, [...header]) })])
-}
-
-/** A path in which nothing is a pattern. */
-function plainPath(file: string): string {
-  return file.replace(/[[*?]/g, '[$&]')
 }

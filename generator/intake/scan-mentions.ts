@@ -4,7 +4,7 @@ import type { InputFile } from './input-file.ts'
 import { malformedRows, type MalformedRow } from './malformed-rows.ts'
 import { relationOf, type Relation } from './relation.ts'
 import { scoreSql } from './score-sql.ts'
-import { timeSql } from './time-sql.ts'
+import { timeSql, timeText } from './time-sql.ts'
 
 /** Why a row cannot be read, in the order in which reasons are looked for; `scanned.fate` is 1 for the first. */
 export const rejectReasons = ['row-malformed', 'time-unreadable', 'score-unreadable', 'score-outside-range', 'venue-missing'] as const
@@ -94,7 +94,7 @@ function fieldsSql(account: Account, source: MentionSource, relation: Relation):
   const other = source.columns.brand === undefined ? '0'
     : `CASE WHEN ${brand} = ${literal(account.brand.toLowerCase())} THEN 0 WHEN ${brand} <> '' THEN ${lastReject + 1} ELSE ${lastReject + 2} END`
   return [
-    `CASE WHEN starts_with(${field('posted_at')}, ' ') THEN ltrim(${field('posted_at')}) ELSE ${field('posted_at')} END AS posted`, `${field('score')} AS scored`, `${relation.sound} AS sound`, `${other} AS other`, `${field('id')} AS id`, `${field('author')} AS handle`,
+    `${timeText(field('posted_at'))} AS posted`, `${field('score')} AS scored`, `${relation.sound} AS sound`, `${other} AS other`, `${field('id')} AS id`, `${field('author')} AS handle`,
     `${source.columns.text === undefined ? 'NULL::VARCHAR' : comparable(field('text'))} AS words`,
     ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [`${factor === 'venue' ? field(factor) : `coalesce(${field(factor)}, '')`} AS factor_${index}`])),
   ]

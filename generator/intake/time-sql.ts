@@ -25,7 +25,7 @@ export interface TimeSql {
 }
 
 /**
- * How the text of a time is read: by the account's form, or as ISO 8601 or an epoch in seconds or milliseconds.
+ * How the `timeText` of a time is read: by the account's form, or as ISO 8601 or an epoch in seconds or milliseconds.
  * DuckDB would also take the words epoch and infinity for times; here they are none.
  */
 export function timeSql(text: string, format: string | null): TimeSql {
@@ -46,13 +46,20 @@ export function timeSql(text: string, format: string | null): TimeSql {
   }
 }
 
+/** The text of a time without spaces around it, so that its first character tells what it can be. */
+export function timeText(field: string): string {
+  return `CASE WHEN starts_with(${field}, ' ') OR ends_with(${field}, ' ') THEN trim(${field}) ELSE ${field} END`
+}
+
 /** ISO 8601's basic form, which DuckDB's cast does not know: 20261031, 20261031T142500. */
 function basicIso(text: string): string {
   return `CASE WHEN regexp_full_match(${text}, '\\d{8}(T\\d{6})?\\s*') THEN try_strptime(trim(${text}), ['%Y%m%dT%H%M%S', '%Y%m%d']) END`
 }
 
 function otherForms(text: string): string {
-  const zoned = `epoch_us(TRY_CAST(regexp_replace(${text}, '^(\\d{4})(\\d\\d)(\\d\\d)T(\\d\\d)(\\d\\d)(\\d\\d)', '\\1-\\2-\\3T\\4:\\5:\\6') AS TIMESTAMPTZ))`
+  const spread = `regexp_replace(upper(${text}), '^(\\d{4})(\\d\\d)(\\d\\d)T(\\d\\d)(\\d\\d)(\\d\\d)', '\\1-\\2-\\3T\\4:\\5:\\6')`
+  const withSeconds = `regexp_replace(${spread}, '^(.{10}[T ]\\d\\d:\\d\\d)( ?[Z+-])', '\\1:00\\2')`
+  const zoned = `epoch_us(TRY_CAST(${withSeconds} AS TIMESTAMPTZ))`
   const number = `TRY_CAST(${text} AS DOUBLE)`
   // 1e11 seconds is the year 5138, 1e11 milliseconds is 1973: no mention lies on the wrong side of it.
   const epoch = `CASE WHEN abs(${number}) < 1e11 THEN CAST(round(${number} * 1e6) AS BIGINT) WHEN abs(${number}) < 1e14 THEN CAST(round(${number} * 1e3) AS BIGINT) END`
