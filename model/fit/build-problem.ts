@@ -35,7 +35,7 @@ export function buildProblem(tables: IntakeTables, variance: Float64Array): FitP
     const from = addGroup('venue', anchored.length, venueScale)
     anchored.forEach((v, i) => { venueFixed[v] = from + i })
   }
-  const columns: { readonly factor: number; readonly from: number }[] = []
+  const columns: FactorColumns[] = []
   tables.factors.forEach(({ name, levels }, f) => {
     if (f === 0 || levels.length < 2) return
     columns.push({ factor: f, from: addGroup(name, levels.length, scales.push({ name, prior: priors.fixedFactor }) - 1) })
@@ -44,22 +44,29 @@ export function buildProblem(tables: IntakeTables, variance: Float64Array): FitP
   const position: ScalePositions = { mu: 0, drift, venue: venueScale, tau }
   return {
     steps, walks: walking.length, venueWalk, venueFixed, groups, border,
-    cells: layCells(tables, columns, variance),
+    cells: layCells(tables, columns, border, variance),
     movementMultiplier: new Float64Array(steps).fill(1),
     scales, position, initialSd: priors.initial,
   }
 }
 
-function layCells(tables: IntakeTables, columns: readonly { readonly factor: number; readonly from: number }[], variance: Float64Array): FitCells {
+interface FactorColumns {
+  readonly factor: number
+  /** Border column of the factor's first level. */
+  readonly from: number
+}
+
+function layCells(tables: IntakeTables, columns: readonly FactorColumns[], border: number, variance: Float64Array): FitCells {
   const { cells, timeline } = tables
+  const venue = cells.levels[0]
   const start = new Int32Array(timeline.steps.length + 1)
   for (let c = 0; c < cells.count; c++) start[cells.step[c] + 1]++
   for (let t = 0; t < timeline.steps.length; t++) start[t + 1] += start[t]
-  const q = columns.length
-  const fixed = new Int32Array(cells.count * q)
-  columns.forEach(({ factor, from }, i) => {
-    const level = cells.levels[factor]
-    for (let c = 0; c < cells.count; c++) fixed[c * q + i] = from + level[c]
+  const effects = columns.map(({ factor, from }) => {
+    const column = cells.levels[factor].map((level) => from + level)
+    return { column, cross: column.map((place, c) => venue[c] * border + place) }
   })
-  return { count: cells.count, start, venue: cells.levels[0], fixed, fixedPerCell: q, mean: cells.mean, variance }
+  // a later factor's columns lie further right: its row holds the pair in the lower triangle
+  const pairs = effects.flatMap(({ column }, i) => effects.slice(0, i).map((earlier) => column.map((place, c) => place * border + earlier.column[c])))
+  return { count: cells.count, start, venue, effects, pairs, mean: cells.mean, variance }
 }

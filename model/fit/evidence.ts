@@ -6,9 +6,13 @@ export interface Workspace {
   readonly precision: BorderedPrecision
   readonly vector: BorderedVector
   readonly scratch: Float64Array
+  /** Shape (cells): w_c and w_c y_c. */
+  readonly weight: Float64Array
+  readonly weightedMean: Float64Array
+  /** Of the step at hand, shape (venues). */
   readonly venueWeight: Float64Array
   readonly venueSum: Float64Array
-  /** Shape (venues, s). */
+  /** Of the step at hand, shape (venues, s). */
   readonly crossWeight: Float64Array
 }
 
@@ -19,6 +23,8 @@ export function createWorkspace(problem: FitProblem): Workspace {
     precision: createBorderedPrecision(problem.steps, block, problem.border),
     vector: createBorderedVector(problem.steps, block, problem.border),
     scratch: new Float64Array(problem.border),
+    weight: new Float64Array(problem.cells.count),
+    weightedMean: new Float64Array(problem.cells.count),
     venueWeight: new Float64Array(venues),
     venueSum: new Float64Array(venues),
     crossWeight: new Float64Array(venues * problem.border),
@@ -91,79 +97,77 @@ const logBatch = 16
 
 /** Add H' W H to Q and H' W y to h; return sum log w_c and sum w_c y_c^2. */
 function assembleData(problem: FitProblem, tau: number, work: Workspace): { logWeights: number; squares: number } {
-  const { cells, steps, venueWalk, venueFixed } = problem
-  const { start, venue, fixed, fixedPerCell: q, mean, variance } = cells
-  const { venueWeight, venueSum, crossWeight } = work
-  const { diagonal, rows, corner, block: b, border: s } = work.precision
-  const { walk, fixed: fixedSum } = work.vector
+  const { cells, steps } = problem
+  const { start, venue, effects, pairs, mean, variance } = cells
+  const { weight, weightedMean, venueWeight, venueSum, crossWeight } = work
+  const { corner } = work.precision
+  const fixedSum = work.vector.fixed
   const tau2 = tau * tau
   let logWeights = 0
   let squares = 0
   let product = 1
-  let inProduct = 0
   for (let t = 0; t < steps; t++) {
+    const from = start[t]
+    const to = start[t + 1]
     venueWeight.fill(0)
     venueSum.fill(0)
     crossWeight.fill(0)
-    for (let c = start[t]; c < start[t + 1]; c++) {
+    for (let c = from; c < to; c++) {
       const total = variance[c] + tau2
       product *= total
-      if (++inProduct === logBatch) {
+      if (c % logBatch === 0) {
         logWeights -= Math.log(product)
         product = 1
-        inProduct = 0
       }
       const w = 1 / total
       const wy = w * mean[c]
       squares += wy * mean[c]
-      const v = venue[c]
-      venueWeight[v] += w
-      venueSum[v] += wy
-      const at = c * q
-      for (let i = 0; i < q; i++) {
-        const column = fixed[at + i]
-        crossWeight[v * s + column] += w
-        fixedSum[column] += wy
-        for (let j = 0; j < i; j++) {
-          const other = fixed[at + j]
-          corner[column > other ? column * s + other : other * s + column] += w
-        }
+      weight[c] = w
+      weightedMean[c] = wy
+      venueWeight[venue[c]] += w
+      venueSum[venue[c]] += wy
+    }
+    for (const { column, cross } of effects) {
+      for (let c = from; c < to; c++) {
+        crossWeight[cross[c]] += weight[c]
+        fixedSum[column[c]] += weightedMean[c]
       }
     }
-    spreadStep(t)
+    for (const place of pairs) for (let c = from; c < to; c++) corner[place[c]] += weight[c]
+    spreadStep(problem, work, t)
   }
-  if (inProduct > 0) logWeights -= Math.log(product)
-  return { logWeights, squares }
+  return { logWeights: logWeights - Math.log(product), squares }
+}
 
-  /** What the step's venues add up to, put where it belongs. */
-  function spreadStep(t: number): void {
-    const d = t * b * b
-    const r = t * s * b
-    for (let v = 0; v < venueWeight.length; v++) {
-      const w = venueWeight[v]
-      if (w === 0) continue
-      const component = venueWalk[v]
-      const anchor = venueFixed[v]
-      diagonal[d] += w
-      walk[t * b] += venueSum[v]
-      if (component > 0) {
-        diagonal[d + component * b] += w
-        diagonal[d + component * b + component] += w
-        walk[t * b + component] += venueSum[v]
-      }
-      if (anchor >= 0) {
-        rows[r + anchor * b] += w
-        corner[anchor * s + anchor] += w
-        fixedSum[anchor] += venueSum[v]
-      }
-      for (let i = 0; i < s; i++) {
-        const x = crossWeight[v * s + i]
-        if (x === 0) continue
-        rows[r + i * b] += x
-        if (component > 0) rows[r + i * b + component] += x
-        if (anchor >= 0) corner[i > anchor ? i * s + anchor : anchor * s + i] += x
-        corner[i * s + i] += x
-      }
+/** What the step's venues add up to, put where it belongs. */
+function spreadStep({ venueWalk, venueFixed }: FitProblem, { precision, vector, venueWeight, venueSum, crossWeight }: Workspace, t: number): void {
+  const { diagonal, rows, corner, block: b, border: s } = precision
+  const d = t * b * b
+  const r = t * s * b
+  for (let v = 0; v < venueWeight.length; v++) {
+    const w = venueWeight[v]
+    if (w === 0) continue
+    const component = venueWalk[v]
+    const anchor = venueFixed[v]
+    diagonal[d] += w
+    vector.walk[t * b] += venueSum[v]
+    if (component > 0) {
+      diagonal[d + component * b] += w
+      diagonal[d + component * b + component] += w
+      vector.walk[t * b + component] += venueSum[v]
+    }
+    if (anchor >= 0) {
+      rows[r + anchor * b] += w
+      corner[anchor * s + anchor] += w
+      vector.fixed[anchor] += venueSum[v]
+    }
+    for (let i = 0; i < s; i++) {
+      const x = crossWeight[v * s + i]
+      if (x === 0) continue
+      rows[r + i * b] += x
+      if (component > 0) rows[r + i * b + component] += x
+      if (anchor >= 0) corner[i > anchor ? i * s + anchor : anchor * s + i] += x
+      corner[i * s + i] += x
     }
   }
 }

@@ -1,7 +1,7 @@
 import { createGenerator } from '../random/generator.ts'
 import { createWorkspace, logEvidence } from './evidence.ts'
 import type { FitProblem } from './problem.ts'
-import { createStateWorkspace, drawStates, stateWidth } from './states.ts'
+import { drawStates } from './states.ts'
 
 /**
  * The heavy work of a fit, in batches whose rows do not depend on each other. Who calls does not know whether one thread
@@ -36,13 +36,5 @@ export function evidenceRows(problem: FitProblem, sigmas: Float64Array): Float64
 
 /** What one thread does for `FitExecutor.states`. */
 export function stateRows(problem: FitProblem, sigmas: Float64Array, seed: number, firstStream: number): Float64Array {
-  const d = problem.scales.length
-  const width = stateWidth(problem)
-  const work = createStateWorkspace(problem)
-  const n = sigmas.length / d
-  const out = new Float64Array(n * width)
-  for (let i = 0; i < n; i++) {
-    drawStates(problem, sigmas.subarray(i * d, (i + 1) * d), createGenerator(seed, firstStream + i), work, out, i * width)
-  }
-  return out
+  return drawStates(problem, sigmas, (row) => createGenerator(seed, firstStream + row))
 }

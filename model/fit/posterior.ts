@@ -10,16 +10,17 @@ import { fitProposal, normalProposal, placePoints, proposalLogDensity, type Prop
 import { resample } from './resample.ts'
 
 /*
- * The posterior over the standard deviations, by importance sampling with every state integrated out:
+ * The posterior over the standard deviations, by adaptive importance sampling with every state integrated out:
  *
- *   mode in z ──▶ normal proposal ──▶ pilot draws ──▶ matched proposal ──▶ ... ──▶ proposals, weighted
- *                                                                                      │ resampled
- *                                                                                      ▼
- *                                                              one exact draw of all states for each
+ *   mode in z ──▶ normal proposal ──▶ round ──▶ proposal fitted to all rounds ──▶ round ──▶ ... ──▶ all rounds, weighted
+ *                                                                                                      │ resampled
+ *                                                                                                      ▼
+ *                                                                            an exact draw of all states for each
  *
- * z makes the prior standard normal (prior-scale.ts). The proposal's tails outlast every normal's, so weights are
- * bounded whatever the data (the evidence is). Independent draws need no burn-in, and the Pareto k of the weights says
- * whether they can be trusted (Vehtari, Simpson, Gelman, Yao and Gabry 2024).
+ * z makes the prior standard normal (prior-scale.ts). All rounds count: every point is weighed against the mixture of all
+ * proposals (Cornuet, Marin, Mira and Robert 2012, Scand. J. Statist. 39:798). The proposals' tails outlast a normal's, so
+ * weights are bounded whatever the data (the evidence is). Independent draws need no burn-in, and the Pareto k of the
+ * weights says whether they can be trusted (Vehtari, Simpson, Gelman, Yao and Gabry 2024).
  */
 export interface Posterior {
   readonly problem: FitProblem
@@ -53,7 +54,7 @@ export interface StateDraws {
 
 export interface PosteriorOptions {
   readonly seed: number
-  /** Weighted proposals in the last round. */
+  /** Weighted proposals, all rounds together. */
   readonly proposals: number
   /** Joint draws of the states. */
   readonly draws: number
@@ -63,51 +64,39 @@ export interface PosteriorOptions {
 
 /** Streams of the seed: one per purpose, the draws of the states from the last one on. */
 const streams = { rounds: 0, resampling: 1, states: 16 } as const
-const pilotRounds = [400, 800, 1600] as const
-/** Effective share of a pilot that is good enough to stop adapting. */
-const goodEnough = 0.3
-/** Effective draws below which the last round is made again, with a proposal matched to it. */
+/** Shares of the proposals in each round: small ones first, to learn where to look. */
+const roundShares = [0.1, 0.25, 0.65] as const
+/** Effective draws below which another round is made, as large as all before it together. */
 const leastEffective = 1000
-const mostLastRounds = 3
+const mostExtraRounds = 2
 
 export async function samplePosterior(problem: FitProblem, executor: FitExecutor, options: PosteriorOptions): Promise<Posterior> {
   const generator = createGenerator(options.seed, streams.rounds)
   const progress = options.progress ?? (() => undefined)
   let proposal = await firstProposal(problem, executor)
+  let pool = emptyPool()
   progress(0.1)
-  for (const n of pilotRounds) {
-    const round = await weigh(problem, executor, proposal, n, generator)
-    proposal = matchProposal(round, proposal)
-    if (round.effective > goodEnough * n) break
+  for (const share of roundShares) {
+    pool = await addRound(problem, executor, pool, proposal, Math.round(share * options.proposals), generator)
+    proposal = fitProposal(pool.points, temper(pool.logWeights), proposal.dimension) ?? proposal
+    progress(0.1 + 0.5 * pool.logWeights.length / options.proposals)
   }
-  progress(0.2)
-  let last = await weigh(problem, executor, proposal, options.proposals, generator)
-  for (let extra = 1; extra < mostLastRounds && last.effective < leastEffective; extra++) {
-    proposal = matchProposal(last, proposal)
-    const again = await weigh(problem, executor, proposal, options.proposals * 2 ** extra, generator)
-    if (again.effective > last.effective) last = again
+  let weighted = paretoSmooth(pool.logWeights)
+  for (let extra = 0; extra < mostExtraRounds && weighted.effectiveSize < leastEffective; extra++) {
+    pool = await addRound(problem, executor, pool, proposal, pool.logWeights.length, generator)
+    proposal = fitProposal(pool.points, temper(pool.logWeights), proposal.dimension) ?? proposal
+    weighted = paretoSmooth(pool.logWeights)
   }
-  progress(0.6)
-  const sigmas = toSigmas(problem, last.points)
-  const draws = await drawJointly(problem, executor, sigmas, last.weights, options)
+  const values = toSigmas(problem, pool.points)
+  const draws = await drawJointly(problem, executor, values, weighted.weights, options)
   progress(1)
+  const { value: k, ...undecided } = weighted.paretoK
   return {
     problem, draws,
-    sigmas: { count: last.weights.length, values: sigmas, weights: last.weights },
-    paretoK: last.paretoK, effective: last.effective, logEvidence: last.logEvidence,
+    sigmas: { count: weighted.weights.length, values, weights: weighted.weights },
+    paretoK: k ?? ('reason' in undecided && undecided.reason === 'flat-tail' ? 0 : null),
+    effective: weighted.effectiveSize, logEvidence: logMeanExp(pool.logWeights),
   }
-}
-
-interface Round {
-  /** Shape (n, d), in z. */
-  readonly points: Float64Array
-  readonly logWeights: Float64Array
-  /** Smoothed, summing to 1. */
-  readonly weights: Float64Array
-  /** Of the largest weights; 0 where they all agree and there is no tail to fit. */
-  readonly paretoK: number | null
-  readonly effective: number
-  readonly logEvidence: number
 }
 
 /** The normal at the mode. */
@@ -119,19 +108,47 @@ async function firstProposal(problem: FitProblem, executor: FitExecutor): Promis
   return proposal
 }
 
-/** The proposal matched to a weighted round; the one before where the round is too poor to match. */
-function matchProposal(round: Round, before: Proposal): Proposal {
-  return fitProposal(round.points, temper(round.logWeights), before.dimension) ?? before
+/** All points so far, weighed against the mixture of the proposals they came from. */
+interface Pool {
+  readonly rounds: readonly { readonly proposal: Proposal; readonly count: number }[]
+  /** Shape (n, d), in z. */
+  readonly points: Float64Array
+  /** Shape (n): log of evidence times prior. */
+  readonly target: Float64Array
+  readonly logWeights: Float64Array
 }
 
-async function weigh(problem: FitProblem, executor: FitExecutor, proposal: Proposal, n: number, generator: Generator): Promise<Round> {
-  const points = latinHypercube(n, proposal.dimension, generator)
-  placePoints(proposal, points)
-  const target = await logTarget(problem, executor, points)
-  const density = proposalLogDensity(proposal, points)
-  const logWeights = target.map((x, i) => x - density[i])
-  const { weights, paretoK, effectiveSize } = paretoSmooth(logWeights)
-  return { points, logWeights, weights, paretoK: paretoK.value ?? (paretoK.reason === 'flat-tail' ? 0 : null), effective: effectiveSize, logEvidence: logMeanExp(logWeights) }
+function emptyPool(): Pool {
+  return { rounds: [], points: new Float64Array(0), target: new Float64Array(0), logWeights: new Float64Array(0) }
+}
+
+async function addRound(problem: FitProblem, executor: FitExecutor, pool: Pool, proposal: Proposal, count: number, generator: Generator): Promise<Pool> {
+  const fresh = latinHypercube(count, proposal.dimension, generator)
+  placePoints(proposal, fresh)
+  const rounds = [...pool.rounds, { proposal, count }]
+  const points = join(pool.points, fresh)
+  const target = join(pool.target, await logTarget(problem, executor, fresh))
+  const mixture = mixtureLogDensity(rounds, points)
+  return { rounds, points, target, logWeights: target.map((x, i) => x - mixture[i]) }
+}
+
+/** Log of sum_r (n_r / n) q_r at every point. */
+function mixtureLogDensity(rounds: Pool['rounds'], points: Float64Array): Float64Array {
+  const all = rounds.reduce((total, { count }) => total + count, 0)
+  const each = rounds.map(({ proposal, count }) => proposalLogDensity(proposal, points).map((x) => x + Math.log(count / all)))
+  return each[0].map((_, i) => logSumExp(each.map((density) => density[i])))
+}
+
+function logSumExp(values: readonly number[]): number {
+  const top = Math.max(...values)
+  return top + Math.log(values.reduce((sum, x) => sum + Math.exp(x - top), 0))
+}
+
+function join(a: Float64Array, b: Float64Array): Float64Array {
+  const out = new Float64Array(a.length + b.length)
+  out.set(a)
+  out.set(b, a.length)
+  return out
 }
 
 /** Log of evidence times prior, as a density over z: shape (n, d) in, (n) out. */

@@ -59,10 +59,19 @@ export interface FitCells {
   /** Shape (steps + 1): the cells of step t are start[t] .. start[t + 1] - 1. */
   readonly start: Int32Array
   readonly venue: Int32Array
-  /** Shape (cells, fixedPerCell): border columns of the cell's other effects. */
-  readonly fixed: Int32Array
-  readonly fixedPerCell: number
+  /** The other effects of the cells, one entry per factor. */
+  readonly effects: readonly CellEffects[]
+  /** For every two of those factors, shape (cells): the place in the border's corner of the cell's two columns. */
+  readonly pairs: readonly Int32Array[]
   readonly mean: Float64Array
   /** V_c. */
   readonly variance: Float64Array
+}
+
+/** Where one factor of every cell goes. */
+export interface CellEffects {
+  /** Shape (cells): border column. */
+  readonly column: Int32Array
+  /** Shape (cells): venue x border + column, where a step's weights by venue and column are summed. */
+  readonly cross: Int32Array
 }

@@ -2,8 +2,8 @@ import type { Generator } from '../random/generator.ts'
 
 /**
  * Equally weighted rows in place of weighted ones, by systematic resampling (Carpenter, Clifford and Fearnhead 1999,
- * IEE Proc. Radar 146:2): a row of weight w is taken floor or ceiling of count x w times. The rows come back in random
- * order, so that any stretch of them is a sample too.
+ * IEE Proc. Radar 146:2): a row of weight w is taken floor or ceiling of count x w times. The rows come back in their
+ * order, those taken more than once side by side.
  *
  * @param weights - shape (n), >= 0, summing to 1
  * @returns shape (count), indices into `weights`
@@ -18,6 +18,5 @@ export function resample(weights: Float64Array, count: number, generator: Genera
     while (row < weights.length - 1 && cumulative <= mark) cumulative += weights[++row]
     chosen[i] = row
   }
-  generator.shuffle(chosen)
   return chosen
 }

@@ -35,19 +35,37 @@ export function conditionalMean(problem: FitProblem, sigma: Float64Array, work: 
 }
 
 /**
- * One joint draw of all states given the standard deviations, exactly: L'^-1 (u + z), z standard normal
- * (Rue and Held 2005, Gaussian Markov Random Fields, algorithm 2.4).
+ * Joint draws of all states given the standard deviations, exactly: L'^-1 (u + z), z standard normal
+ * (Rue and Held 2005, Gaussian Markov Random Fields, algorithm 2.4). Rows with the same standard deviations side by side
+ * share one factor.
  *
- * @param target - written from `at` on, `stateWidth` numbers
+ * @param sigmas - shape (n, scales)
+ * @param generatorOf - the random stream of a row
+ * @returns shape (n, stateWidth)
  */
-export function drawStates(problem: FitProblem, sigma: Float64Array, generator: Generator, work: StateWorkspace, target: Float64Array, at: number): void {
-  logEvidence(problem, sigma, work.evidence)
+export function drawStates(problem: FitProblem, sigmas: Float64Array, generatorOf: (row: number) => Generator): Float64Array {
+  const work = createStateWorkspace(problem)
   const { precision, vector } = work.evidence
-  for (let i = 0; i < vector.walk.length; i++) vector.walk[i] += generator.normal()
-  for (let i = 0; i < vector.fixed.length; i++) vector.fixed[i] += generator.normal()
-  solveBackward(precision, vector, work.solution)
-  target.set(work.solution.walk, at)
-  target.set(work.solution.fixed, at + work.solution.walk.length)
+  const d = problem.scales.length
+  const width = stateWidth(problem)
+  const n = sigmas.length / d
+  const out = new Float64Array(n * width)
+  const disturbed = createBorderedVector(problem.steps, 1 + problem.walks, problem.border)
+  for (let row = 0; row < n; row++) {
+    if (row === 0 || !sameRow(sigmas, row, d)) logEvidence(problem, sigmas.subarray(row * d, (row + 1) * d), work.evidence)
+    const generator = generatorOf(row)
+    for (let i = 0; i < vector.walk.length; i++) disturbed.walk[i] = vector.walk[i] + generator.normal()
+    for (let i = 0; i < vector.fixed.length; i++) disturbed.fixed[i] = vector.fixed[i] + generator.normal()
+    solveBackward(precision, disturbed, work.solution)
+    out.set(work.solution.walk, row * width)
+    out.set(work.solution.fixed, row * width + work.solution.walk.length)
+  }
+  return out
+}
+
+function sameRow(sigmas: Float64Array, row: number, d: number): boolean {
+  for (let j = row * d; j < (row + 1) * d; j++) if (sigmas[j] !== sigmas[j - d]) return false
+  return true
 }
 
 /**

@@ -57,36 +57,35 @@ export function createBorderedVector(steps: number, block: number, border: numbe
 /**
  * Replace the lower triangle of an n x n matrix at `at` by the inverse of its Cholesky factor.
  *
- * @returns log determinant of the matrix, or NaN where it is not positive definite
+ * @returns determinant of the matrix, or NaN where it is not positive definite
  */
 function invertCholesky(matrix: Float64Array, at: number, n: number): number {
-  let logDeterminant = 0
+  let determinant = 1
+  const end = at + n * n
   for (let j = 0; j < n; j++) {
     const rowJ = at + j * n
     let pivot = matrix[rowJ + j]
-    for (let k = 0; k < j; k++) pivot -= matrix[rowJ + k] * matrix[rowJ + k]
+    for (let k = rowJ; k < rowJ + j; k++) pivot -= matrix[k] * matrix[k]
     if (!(pivot > 0)) return NaN
-    logDeterminant += Math.log(pivot)
-    const root = Math.sqrt(pivot)
-    matrix[rowJ + j] = root
-    for (let i = j + 1; i < n; i++) {
-      const rowI = at + i * n
+    determinant *= pivot
+    const inverse = 1 / Math.sqrt(pivot)
+    matrix[rowJ + j] = inverse
+    for (let rowI = rowJ + n; rowI < end; rowI += n) {
       let sum = matrix[rowI + j]
       for (let k = 0; k < j; k++) sum -= matrix[rowI + k] * matrix[rowJ + k]
-      matrix[rowI + j] = sum / root
+      matrix[rowI + j] = sum * inverse
     }
   }
   // in place, column by column from the left: column j of the inverse needs columns >= j of L only
   for (let j = 0; j < n; j++) {
-    matrix[at + j * n + j] = 1 / matrix[at + j * n + j]
     for (let i = j + 1; i < n; i++) {
       const rowI = at + i * n
-      let sum = matrix[rowI + j] * matrix[at + j * n + j]
-      for (let k = j + 1; k < i; k++) sum += matrix[rowI + k] * matrix[at + k * n + j]
-      matrix[rowI + j] = -sum / matrix[rowI + i]
+      let sum = 0
+      for (let k = j; k < i; k++) sum += matrix[rowI + k] * matrix[at + k * n + j]
+      matrix[rowI + j] = -sum * matrix[rowI + i]
     }
   }
-  return logDeterminant
+  return determinant
 }
 
 /**
@@ -95,60 +94,108 @@ function invertCholesky(matrix: Float64Array, at: number, n: number): number {
  * @returns log determinant of Q, or NaN where Q is not positive definite to working precision
  */
 export function factorise(q: BorderedPrecision): number {
-  const { steps, block: b, border: s, diagonal, rows, corner } = q
+  const { steps, block, border, diagonal, corner } = q
   let logDeterminant = 0
   for (let t = 0; t < steps; t++) {
-    const d = t * b * b
-    logDeterminant += invertCholesky(diagonal, d, b)
-    if (Number.isNaN(logDeterminant)) return NaN
-    const r = t * s * b
-    // M_t[i, k] = sum over j <= k of F_t[i, j] Linv[k, j]; from the right, so that F can be overwritten
-    for (let i = 0; i < s; i++) {
-      const row = r + i * b
-      for (let k = b - 1; k >= 0; k--) {
-        let sum = 0
-        for (let j = 0; j <= k; j++) sum += rows[row + j] * diagonal[d + k * b + j]
-        rows[row + k] = sum
-      }
-    }
-    for (let i = 0; i < s; i++) {
-      const rowI = r + i * b
-      for (let j = 0; j <= i; j++) {
-        const rowJ = r + j * b
-        let sum = 0
-        for (let k = 0; k < b; k++) sum += rows[rowI + k] * rows[rowJ + k]
-        corner[i * s + j] -= sum
-      }
-    }
-    if (t + 1 < steps) coupleNext(q, t)
+    logDeterminant += Math.log(invertCholesky(diagonal, t * block * block, block))
+    solveRows(q, t)
+    takeFromCorner(q, t)
+    if (t + 1 < steps) takeFromNext(q, t)
   }
-  const last = invertCholesky(corner, 0, s)
-  return logDeterminant + last
+  return logDeterminant + logOfCorner(corner, border)
+}
+
+/** The corner may be large enough for its determinant to leave the range of numbers: its logarithm is summed from the pivots. */
+function logOfCorner(corner: Float64Array, border: number): number {
+  const determinant = invertCholesky(corner, 0, border)
+  if (Number.isNaN(determinant)) return NaN
+  let logDeterminant = 0
+  for (let i = 0; i < border; i++) logDeterminant -= 2 * Math.log(corner[i * border + i])
+  return logDeterminant
+}
+
+/** M_t[i, k] = sum over j <= k of F_t[i, j] Linv[k, j]; from the right, so that F can be overwritten. Two rows at a time. */
+function solveRows({ block: b, border: s, diagonal, rows }: BorderedPrecision, t: number): void {
+  const d = t * b * b
+  const end = (t + 1) * s * b
+  for (let row = t * s * b; row < end; row += 2 * b) {
+    const twin = row + b < end ? row + b : row
+    for (let k = b - 1; k >= 0; k--) {
+      let sum = 0
+      let twinSum = 0
+      for (let j = 0; j <= k; j++) {
+        const l = diagonal[d + k * b + j]
+        sum += rows[row + j] * l
+        twinSum += rows[twin + j] * l
+      }
+      rows[twin + k] = twinSum
+      rows[row + k] = sum
+    }
+  }
+}
+
+/** G -= M_t M_t', two rows by two columns at a time: half the loads for the same products. */
+function takeFromCorner({ block: b, border: s, rows, corner }: BorderedPrecision, t: number): void {
+  const r = t * s * b
+  for (let i = 0; i < s; i += 2) {
+    const row0 = r + i * b
+    // the row after the last one: the last again, its products left unused
+    const row1 = i + 1 < s ? row0 + b : row0
+    for (let j = 0; j <= i; j += 2) {
+      const column0 = r + j * b
+      const column1 = j + 1 < s ? column0 + b : column0
+      let sum00 = 0
+      let sum01 = 0
+      let sum10 = 0
+      let sum11 = 0
+      for (let k = 0; k < b; k++) {
+        const x0 = rows[row0 + k]
+        const x1 = rows[row1 + k]
+        const y0 = rows[column0 + k]
+        const y1 = rows[column1 + k]
+        sum00 += x0 * y0
+        sum01 += x0 * y1
+        sum10 += x1 * y0
+        sum11 += x1 * y1
+      }
+      corner[i * s + j] -= sum00
+      if (i + 1 < s) corner[(i + 1) * s + j] -= sum10
+      if (j + 1 < s) {
+        // above the diagonal where j = i: never read
+        corner[i * s + j + 1] -= sum01
+        if (i + 1 < s) corner[(i + 1) * s + j + 1] -= sum11
+      }
+    }
+  }
 }
 
 /** D_(t+1) -= W_t W_t' and F_(t+1) -= M_t W_t', with W_t[j, k] = E_t[j] Linv_t[k, j], which is 0 for k < j. */
-function coupleNext(q: BorderedPrecision, t: number): void {
-  const { block: b, border: s, diagonal, coupling, rows } = q
+function takeFromNext({ block: b, border: s, diagonal, coupling, rows }: BorderedPrecision, t: number): void {
   const d = t * b * b
   const next = d + b * b
   const e = t * b
   for (let i = 0; i < b; i++) {
-    const ei = coupling[e + i]
-    if (ei === 0) continue
     for (let j = 0; j <= i; j++) {
       let sum = 0
-      for (let k = i; k < b; k++) sum += diagonal[d + k * b + i] * diagonal[d + k * b + j]
-      diagonal[next + i * b + j] -= ei * coupling[e + j] * sum
+      for (let k = d + i * b; k < next; k += b) sum += diagonal[k + i] * diagonal[k + j]
+      diagonal[next + i * b + j] -= coupling[e + i] * coupling[e + j] * sum
     }
   }
-  const r = t * s * b
-  const nextRows = r + s * b
-  for (let i = 0; i < s; i++) {
-    const row = r + i * b
+  const ahead = s * b
+  const end = (t + 1) * ahead
+  for (let row = t * ahead; row < end; row += 2 * b) {
+    const twin = row + b
     for (let j = 0; j < b; j++) {
       let sum = 0
-      for (let k = j; k < b; k++) sum += rows[row + k] * diagonal[d + k * b + j]
-      rows[nextRows + i * b + j] -= coupling[e + j] * sum
+      let twinSum = 0
+      for (let k = j; k < b; k++) {
+        const l = diagonal[d + k * b + j]
+        sum += rows[row + k] * l
+        // a twin beyond the last row is the next step's first: summed and thrown away
+        twinSum += rows[twin + k] * l
+      }
+      rows[row + ahead + j] -= coupling[e + j] * sum
+      if (twin < end) rows[twin + ahead + j] -= coupling[e + j] * twinSum
     }
   }
 }

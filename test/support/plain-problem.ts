@@ -30,7 +30,7 @@ export function plainProblem(observations: readonly PlainObservation[], options:
     venueFixed: Int32Array.from({ length: groups + 1 }, (_, v) => (v < groups ? v : -1)),
     groups: fixedGroups, border: groups,
     cells: {
-      count: sorted.length, start, fixedPerCell: 0, fixed: new Int32Array(0),
+      count: sorted.length, start, effects: [], pairs: [],
       venue: Int32Array.from(sorted, ({ group }) => group ?? groups),
       mean: Float64Array.from(sorted, ({ value }) => value),
       variance: Float64Array.from(sorted, ({ variance }) => variance ?? 0),
