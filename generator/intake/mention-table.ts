@@ -6,6 +6,7 @@ import { InputFault } from '../faults/fault.ts'
 import { literal, type Database } from './database.ts'
 import { byText, type LevelReader } from './level-names.ts'
 import { filledColumns } from './scan-mentions.ts'
+import type { Spellings } from './spellings.ts'
 import type { ZoneSql } from './time-sql.ts'
 
 /** Names of the numbers in the table `mention`. */
@@ -16,6 +17,12 @@ export interface MentionNames {
   readonly periods: readonly string[]
   /** One list of level names per factor of the account. */
   readonly levels: readonly (readonly string[])[]
+}
+
+/** How the numbers and texts of a factor in `scanned` become levels of the account. */
+export interface Naming {
+  readonly spellings: Spellings
+  readonly levelOf: LevelReader
 }
 
 /** Poster classes, in the order of their numbers. */
@@ -40,7 +47,7 @@ const mostLevels = 2000
  * @throws {InputFault} `too-many-levels`
  */
 export async function createMentions(
-  database: Database, account: Account, zone: ZoneSql, eligible: string, span: { readonly first: number; readonly last: number }, levelOf: LevelReader,
+  database: Database, account: Account, zone: ZoneSql, eligible: string, span: { readonly first: number; readonly last: number }, naming: Naming,
 ): Promise<MentionNames> {
   const steps = stepsBetween(account.grid, span.first, span.last)
   const periodNames = steps.map((start) => periodHolding(account.reporting, midpointDay(account.grid, start)).name)
@@ -48,27 +55,15 @@ export async function createMentions(
   await createDays(database, steps, periodNames.map((name) => periods.indexOf(name)), span.last)
   const [repeated] = await database.rows<{ rows: bigint }>('SELECT count(*) AS rows FROM repeated')
   const kept = `scanned WHERE ${eligible}${repeated!.rows === 0n ? '' : ' AND scanned.rowid NOT IN (SELECT row FROM repeated)'}`
-  const read = account.factors.map((factor, index) => ({ factor, index })).filter(({ factor }) => factor !== 'poster')
-  const values = await database.rows<FactorValue>(`SELECT ${read.map(({ index }) => `factor_${index}`).join(', ')}, count(*) AS mentions
-    FROM ${kept} GROUP BY GROUPING SETS (${read.map(({ index }) => `(factor_${index})`).join(', ')}) ORDER BY ALL LIMIT ${mostLevels * read.length}`)
-  const levels: (readonly string[])[] = account.factors.map(() => posterClasses)
-  for (const { factor, index } of read) {
-    const own = values.flatMap((row) => { const value = row[`factor_${index}`]; return value === null || value === undefined ? [] : [{ value, mentions: Number(row.mentions) }] })
-    if (own.length >= mostLevels) throw new InputFault([faultOf('too-many-levels', `mentions ${factor}`, { factor, most: mostLevels })])
-    levels[index] = await createLevels(database, factor, index, own, levelOf)
-  }
+  const coded: FactorSql[] = []
+  for (const [index, factor] of account.factors.entries()) coded.push(factor === 'poster' ? { levels: posterClasses, level: '', joins: '' } : await nameLevels(database, factor, index, kept, naming))
+  const read = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
+  const author = filledColumns(account).author ? `CASE WHEN handle IS NOT NULL THEN hash(xor(handle, hash(${coded[0]!.level}))) END` : 'NULL::UBIGINT'
   const seconds = `((instant + ${secondsTo1970 * 1_000_000}) // 1000000)::UBIGINT`
-  const author = filledColumns(account).author ? 'CASE WHEN handle IS NOT NULL THEN hash(xor(handle, hash(level_0.code))) END' : 'NULL::UBIGINT'
   await database.run(`CREATE TEMP TABLE mention AS
-    SELECT ${author} AS author, ${seconds} * ${2 ** momentBits} + row::UBIGINT AS moment, slot, score, source, ${read.map(({ index }) => `level_${index}.code AS factor_${index}`).join(', ')}
-    FROM (SELECT *, ${zone.instant} AS instant, ${zone.day} AS day, rowid AS row FROM ${kept}) JOIN step_day USING (day)
-    ${read.map(({ index }) => `JOIN level_${index} ON level_${index}.value = factor_${index}`).join(' ')} ORDER BY author, moment`)
-  return { steps, periods, levels }
-}
-
-interface FactorValue {
-  readonly mentions: bigint
-  readonly [factor: `factor_${number}`]: string | null
+    SELECT ${author} AS author, ${seconds} * ${2 ** momentBits} + row::UBIGINT AS moment, slot, score, source, ${read.map((index) => `${coded[index]!.level} AS factor_${index}`).join(', ')}
+    FROM (SELECT *, ${zone.instant} AS instant, ${zone.day} AS day, rowid AS row FROM ${kept}) JOIN step_day USING (day) ${coded.map((factor) => factor.joins).join(' ')} ORDER BY author, moment`)
+  return { steps, periods, levels: coded.map((factor) => factor.levels) }
 }
 
 /** `step_day (day, slot)`: the step and the period that each day belongs to. */
@@ -78,14 +73,33 @@ async function createDays(database: Database, steps: readonly number[], periodOf
     SELECT unnest(range(start, coalesce(lead(start) OVER (ORDER BY start), ${lastDay + 1}))) AS day, slot FROM (VALUES ${rows.join(', ')}) AS v(start, slot))`)
 }
 
-/** `level_N (value, code)`: the account's level of every spelling in the data. */
-async function createLevels(
-  database: Database, factor: string, index: number, values: readonly { readonly value: string; readonly mentions: number }[], levelOf: LevelReader,
-): Promise<readonly string[]> {
-  const named = values.map(({ value, mentions }) => ({ value, name: levelOf(factor, value.replace(/^ +| +$/g, '') || 'none', mentions) }))
-  const names = [...new Set(named.map(({ name }) => name))].sort(byText)
-  await database.run(`CREATE TEMP TABLE level_${index} (value VARCHAR, code USMALLINT)`)
-  const rows = named.map(({ value, name }) => `(${literal(value)}, ${names.indexOf(name)})`)
-  if (rows.length > 0) await database.run(`INSERT INTO level_${index} VALUES ${rows.join(', ')}`)
-  return names
+interface FactorSql {
+  readonly levels: readonly string[]
+  /** SQL of the level's number, and the joins that it needs. */
+  readonly level: string
+  readonly joins: string
+}
+
+/** Name every spelling of a factor; `code_level_N (code, level)` and `other_level_N (other, level)` hold the numbers. */
+async function nameLevels(database: Database, factor: string, index: number, kept: string, { spellings, levelOf }: Naming): Promise<FactorSql> {
+  const found = await database.rows<{ code: number | null; other: string | null; mentions: bigint }>(
+    `SELECT code_${index} AS code, other_${index} AS other, count(*) AS mentions FROM ${kept} GROUP BY ALL ORDER BY ALL LIMIT ${mostLevels + 1}`)
+  if (found.length > mostLevels) throw new InputFault([faultOf('too-many-levels', `mentions ${factor}`, { factor, most: mostLevels })])
+  const named = found.map(({ code, other, mentions }) => {
+    const spelling = code === null ? other ?? '' : spellings[index]![code]!
+    return { code, other, name: levelOf(factor, spelling.replace(/^ +| +$/g, '') || 'none', Number(mentions)) }
+  })
+  const levels = [...new Set(named.map(({ name }) => name))].sort(byText)
+  const coded = named.filter(({ code }) => code !== null).map(({ code, name }) => `(${code}, ${levels.indexOf(name)})`)
+  const others = named.filter(({ code }) => code === null).map(({ other, name }) => `(${literal(other ?? '')}, ${levels.indexOf(name)})`)
+  await database.run(`CREATE TEMP TABLE code_level_${index} (code UTINYINT, level USMALLINT)`)
+  await database.run(`CREATE TEMP TABLE other_level_${index} (other VARCHAR, level USMALLINT)`)
+  if (coded.length > 0) await database.run(`INSERT INTO code_level_${index} VALUES ${coded.join(', ')}`)
+  if (others.length > 0) await database.run(`INSERT INTO other_level_${index} VALUES ${others.join(', ')}`)
+  const byCode = `LEFT JOIN code_level_${index} ON code_level_${index}.code = code_${index}`
+  if (others.length === 0) return { levels, level: `code_level_${index}.level`, joins: byCode }
+  return {
+    levels, level: `coalesce(code_level_${index}.level, other_level_${index}.level)`,
+    joins: `${byCode} LEFT JOIN other_level_${index} ON other_level_${index}.other = other_${index}`,
+  }
 }

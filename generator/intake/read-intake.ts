@@ -13,7 +13,8 @@ import { settleMentions } from './read-mentions.ts'
 import { cellsWithin, daysOf, readReadyMade } from './ready-made.ts'
 import { countRejects, writeRejects } from './rejects.ts'
 import { coveredPeriod, namedPeriod } from './review-period.ts'
-import { createScanned, scanFile, type ScannedFile } from './scan-mentions.ts'
+import { createScanned, sampleFile, scanFile, type ScannedFile } from './scan-mentions.ts'
+import { joinSpellings, type Spellings } from './spellings.ts'
 
 export interface IntakeOptions {
   /** Name of the period under review; default: the last whole one that the mentions cover. */
@@ -65,14 +66,14 @@ async function gather(database: Database, account: Account, files: ReadonlyMap<s
   const asked = options.period === undefined ? null : namedPeriod(account, options.period)
   const names = levelNames(account)
   const ready = await readReadyMade(database, account, files, names.levelOf)
-  const scanned = await scanAll(database, account, files, progress)
+  const { scanned, spellings } = await scanAll(database, account, files, progress)
   const rejected = await countRejects(database, scanned)
   if (options.rejects !== undefined) await writeRejects(database, scanned, options.rejects)
   const dated = await dateMentions(database, account)
   const spans = [dated.span, daysOf(ready.parts, account.grid)].filter((span) => span !== null)
   const review = asked ?? (spans.length === 0 ? null
     : coveredPeriod(account, Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))))
-  const settled = review === null ? null : await settleMentions(database, account, dated, dayNumber(review.end), names.levelOf, progress)
+  const settled = review === null ? null : await settleMentions(database, account, dated, dayNumber(review.end), { spellings, levelOf: names.levelOf }, progress)
   return {
     review, scanned, rejected, dated, settled, unmapped: names.unmapped(),
     ready: review === null ? [] : cellsWithin(ready.parts, account.grid, review),
@@ -81,18 +82,26 @@ async function gather(database: Database, account: Account, files: ReadonlyMap<s
   }
 }
 
-async function scanAll(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, progress: (message: string) => void): Promise<readonly ScannedFile[]> {
+interface Scan {
+  readonly scanned: readonly ScannedFile[]
+  readonly spellings: Spellings
+}
+
+async function scanAll(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, progress: (message: string) => void): Promise<Scan> {
+  const sources = account.mentions.flatMap((source, index) => (source.kind === 'mentions' ? [{ source, index }] : []))
+  const samples: Spellings[] = []
+  for (const { source } of sources) samples.push(await sampleFile(database, account, source, files.get(source.files[0]!)!))
+  const spellings = joinSpellings(samples, account.factors)
   const scanned: ScannedFile[] = []
   await createScanned(database, account)
-  for (const [index, source] of account.mentions.entries()) {
-    if (source.kind === 'cells') continue
+  for (const { source, index } of sources) {
     for (const file of source.files) {
       progress(`Reading ${file}`)
       const last = scanned.at(-1)
-      scanned.push(await scanFile(database, account, index, files.get(file)!, last === undefined ? 0 : last.first + last.sound))
+      scanned.push(await scanFile(database, account, index, files.get(file)!, spellings, last === undefined ? 0 : last.first + last.sound))
     }
   }
-  return scanned
+  return { scanned, spellings }
 }
 
 function rowsOf(scanned: readonly ScannedFile[], name: string): number {

@@ -7,8 +7,7 @@ import { findDuplicates, type Duplicates } from './duplicates.ts'
 import { groupAuthors, type AuthorGroups } from './group-authors.ts'
 import { groupCells } from './group-cells.ts'
 import { groupVariation } from './group-variation.ts'
-import type { LevelReader } from './level-names.ts'
-import { createMentions, type MentionNames } from './mention-table.ts'
+import { createMentions, type MentionNames, type Naming } from './mention-table.ts'
 import { classifyPosters } from './poster-classes.ts'
 import { filledColumns, lastReject, otherBrandReasons } from './scan-mentions.ts'
 
@@ -34,7 +33,7 @@ export interface SettledMentions {
  * @param end - day number of the last day of the period under review
  */
 export async function settleMentions(
-  database: Database, account: Account, { zone, span }: Dated, end: number, levelOf: LevelReader, progress: (message: string) => void,
+  database: Database, account: Account, { zone, span }: Dated, end: number, naming: Naming, progress: (message: string) => void,
 ): Promise<SettledMentions> {
   const eligible = `fate = 0 AND ${zone.until(end)}`
   progress('Looking for duplicates')
@@ -42,7 +41,7 @@ export async function settleMentions(
   const outOfScope = await countOutOfScope(database, `NOT (${zone.until(end)})`)
   if (span === null || span.first > end) return { duplicates, outOfScope, grouped: null }
   progress('Naming and classing mentions')
-  const names = await createMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, levelOf)
+  const names = await createMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, naming)
   await classifyPosters(database, account)
   progress('Grouping cells')
   const parts = await groupCells(database, account.factors, names)

@@ -4,6 +4,7 @@ import type { InputFile } from './input-file.ts'
 import { malformedRows, type MalformedRow } from './malformed-rows.ts'
 import { relationOf, type Relation } from './relation.ts'
 import { scoreSql } from './score-sql.ts'
+import { codeSql, sampleSpellings, spellingSql, type Spellings } from './spellings.ts'
 import { timeSql, timeText } from './time-sql.ts'
 
 /** Why a row cannot be read, in the order in which reasons are looked for; `scanned.fate` is 1 for the first. */
@@ -27,8 +28,8 @@ export interface ScannedFile {
 
 /**
  * Every mention becomes one narrow row of `scanned`, in the order of sources, files and rows: hashes and numbers in the
- * place of ids, handles and texts, which are not kept. `factor_N` is the N-th factor of the account; columns that no
- * source fills are left out.
+ * place of ids, handles and texts, which are not kept. `code_N` and `other_N` are the N-th factor of the account, see
+ * spellings.ts; columns that no source fills are left out.
  *
  * Hashes have 64 bits: among 5 million ids the chance that any two different ones agree is 7 in 10 million.
  */
@@ -48,18 +49,29 @@ function scannedColumns(account: Account): readonly { readonly name: string; rea
   return [
     { name: 'source', type: 'USMALLINT' }, { name: 'fate', type: 'UTINYINT' }, { name: 'clock', type: 'BIGINT' }, { name: 'zoned', type: 'BOOLEAN' }, { name: 'score', type: 'INTEGER' },
     ...(id ? [{ name: 'id', type: 'UBIGINT' }] : []), ...(author ? [{ name: 'handle', type: 'UBIGINT' }] : []), ...(text ? [{ name: 'text', type: 'UBIGINT' }] : []),
-    ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [{ name: `factor_${index}`, type: 'VARCHAR' }])),
+    ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [{ name: `code_${index}`, type: 'UTINYINT' }, { name: `other_${index}`, type: 'VARCHAR' }])),
   ]
 }
 
 /** Read one file into `scanned`. */
-export async function scanFile(database: Database, account: Account, sourceIndex: number, file: InputFile, first: number): Promise<ScannedFile> {
+export async function scanFile(database: Database, account: Account, sourceIndex: number, file: InputFile, spellings: Spellings, first: number): Promise<ScannedFile> {
   const source = account.mentions[sourceIndex] as MentionSource
-  const used = usedColumns(source, account.factors)
-  const relation = await relationOf(database, file, used.map((ours) => source.columns[ours]!), source)
-  await database.run(`INSERT INTO scanned ${scanSql(account, source, sourceIndex, relation)}`)
+  const relation = await mentionRelation(database, account, source, file)
+  await database.run(`INSERT INTO scanned ${scanSql(account, source, sourceIndex, relation, spellings)}`)
   const [counted] = await database.rows<{ rows: bigint }>('SELECT count(*) AS rows FROM scanned')
   return { file, first, sound: Number(counted!.rows) - first, malformed: file.kind === 'parquet' ? [] : await malformedRows(database), cut: relation.cut }
+}
+
+/** The spellings at the beginning of a file. */
+export async function sampleFile(database: Database, account: Account, source: MentionSource, file: InputFile): Promise<Spellings> {
+  const spellings = await sampleSpellings(database, account.factors, source, await mentionRelation(database, account, source, file))
+  // The rows will be read again, and those that cannot be cut reported then.
+  if (file.kind !== 'parquet') await malformedRows(database)
+  return spellings
+}
+
+function mentionRelation(database: Database, account: Account, source: MentionSource, file: InputFile): Promise<Relation> {
+  return relationOf(database, file, usedColumns(source, account.factors).map((ours) => source.columns[ours]!), source)
 }
 
 function usedColumns(source: MentionSource, factors: readonly string[]): readonly string[] {
@@ -67,11 +79,12 @@ function usedColumns(source: MentionSource, factors: readonly string[]): readonl
   return Object.keys(source.columns).filter((ours) => read.has(ours))
 }
 
-function scanSql(account: Account, source: MentionSource, sourceIndex: number, relation: Relation): string {
+function scanSql(account: Account, source: MentionSource, sourceIndex: number, relation: Relation, spellings: Spellings): string {
   const time = timeSql('posted', source.timeFormat)
   const score = scoreSql('scored', source.score)
   const read = `SELECT ${fieldsSql(account, source, relation).join(', ')} FROM ${relation.sql}`
-  const timed = [time.drafts, [...time.readings, `${score.score} AS score`], [time.clock, time.zoned]]
+  const factors = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
+  const timed = [[...time.drafts, ...factors.map((index) => `${codeSql(`factor_${index}`, spellings[index]!)} AS code_${index}`)], [...time.readings, `${score.score} AS score`], [time.clock, time.zoned]]
     .reduce((inner, columns) => `SELECT *, ${columns.join(', ')} FROM (${inner})`, read)
   const unscored = `CASE WHEN ${score.outside} THEN 4 ELSE 3 END`
   const columns: Readonly<Record<string, string>> = {
@@ -80,6 +93,7 @@ function scanSql(account: Account, source: MentionSource, sourceIndex: number, r
     id: `CASE WHEN id <> '' THEN xor(hash(id), hash(${sourceIndex})) END`,
     handle: "CASE WHEN handle <> '' THEN hash(handle) END",
     text: 'CASE WHEN length(words) >= 40 THEN hash(words) END',
+    ...Object.fromEntries(factors.map((index) => [`other_${index}`, `CASE WHEN code_${index} IS NULL THEN factor_${index} END`])),
   }
   return `SELECT ${scannedColumns(account).map(({ name }) => columns[name] ?? name).join(', ')} FROM (${timed})`
 }
@@ -96,7 +110,7 @@ function fieldsSql(account: Account, source: MentionSource, relation: Relation):
   return [
     `${timeText(field('posted_at'))} AS posted`, `${field('score')} AS scored`, `${relation.sound} AS sound`, `${other} AS other`, `${field('id')} AS id`, `${field('author')} AS handle`,
     `${source.columns.text === undefined ? 'NULL::VARCHAR' : comparable(field('text'))} AS words`,
-    ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [`${factor === 'venue' ? field(factor) : `coalesce(${field(factor)}, '')`} AS factor_${index}`])),
+    ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [`${spellingSql(factor, source, relation)} AS factor_${index}`])),
   ]
 }
 
