@@ -28,16 +28,16 @@ export async function groupAuthors(database: Database, names: MentionNames): Pro
     FROM classified WHERE NOT alone_in_period GROUP BY author, period`)
   const concentration = await counted(database, `SELECT a, b, c, sum(n)::BIGINT AS n FROM (
     SELECT period AS a, venue AS b, posts AS c, count(*) AS n FROM active GROUP BY ALL
-    UNION ALL SELECT period, factor_0, 1, count(*) FROM classified WHERE alone_in_period AND author IS NOT NULL GROUP BY ALL) GROUP BY ALL ORDER BY ALL`)
-  const byLevel = [...await counted(database, `SELECT period AS a, 0 AS b, level AS c, count(*) AS n FROM (
-    SELECT period, venue AS level FROM active UNION ALL SELECT period, factor_0 FROM classified WHERE alone_in_period) GROUP BY ALL ORDER BY ALL`)]
+    UNION ALL SELECT period, factor_0, 1, known_alone_in_period FROM cell_sum WHERE known_alone_in_period > 0) GROUP BY ALL ORDER BY ALL`)
+  const byLevel = [...await counted(database, `SELECT period AS a, 0 AS b, level AS c, sum(n)::BIGINT AS n FROM (
+    SELECT period, venue AS level, 1 AS n FROM active UNION ALL SELECT period, factor_0, alone_in_period FROM cell_sum) GROUP BY ALL ORDER BY ALL`)]
   for (const { factor, chunk, column } of masks) {
     byLevel.push(...await counted(database, `SELECT a, ${factor} AS b, c, sum(n)::BIGINT AS n FROM (
       SELECT period AS a, ${chunk * bits} + bit AS c, n FROM (SELECT period, ${column} AS mask, count(*) AS n FROM active GROUP BY ALL), range(${bits}) AS bit(bit) WHERE (mask >> bit) & 1 = 1
-      UNION ALL SELECT period, factor_${factor}, count(*) FROM classified WHERE alone_in_period AND factor_${factor} // ${bits} = ${chunk} GROUP BY ALL) GROUP BY ALL ORDER BY ALL`))
+      UNION ALL SELECT period, factor_${factor}, alone_in_period FROM cell_sum WHERE factor_${factor} // ${bits} = ${chunk}) GROUP BY ALL ORDER BY ALL`))
   }
-  const byStep = await counted(database, 'SELECT step AS a, 0 AS b, 0 AS c, count(*) AS n FROM classified WHERE first_in_step GROUP BY ALL ORDER BY ALL')
-  const withAuthor = await counted(database, 'SELECT 0 AS a, factor_0 AS b, 0 AS c, count(author) AS n FROM classified GROUP BY ALL ORDER BY ALL')
+  const byStep = await counted(database, 'SELECT step AS a, 0 AS b, 0 AS c, sum(first_in_step)::BIGINT AS n FROM cell_sum GROUP BY ALL ORDER BY ALL')
+  const withAuthor = await counted(database, 'SELECT 0 AS a, factor_0 AS b, 0 AS c, sum(known)::BIGINT AS n FROM cell_sum GROUP BY ALL ORDER BY ALL')
   return {
     byStep: byStep.map(({ a, n }) => ({ step: a, authors: n })),
     byPeriodLevel: byLevel.map(({ a, b, c, n }) => ({ period: a, factor: b, level: c, authors: n })),

@@ -15,15 +15,25 @@ interface CellSums {
   readonly [level: `factor_${number}`]: number
 }
 
+/**
+ * `cell_sum`: one row a cell with everything that can be summed of its mentions in one pass, so that `classified` need not
+ * be read again: of all, of those with an author (`known`), of those that are the first or only one of their author.
+ */
+export async function sumCells(database: Database, factors: readonly string[]): Promise<void> {
+  const keys = cellKeys(factors)
+  await database.run(`CREATE TEMP TABLE cell_sum AS SELECT ${keys}, period, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares,
+    count(author) AS known, coalesce(sum(score) FILTER (author IS NOT NULL), 0)::HUGEINT AS known_score, count(*) FILTER (author IS NOT NULL AND alone_in_step) AS single,
+    count(*) FILTER (first_in_step) AS first_in_step, count(*) FILTER (alone_in_period) AS alone_in_period, count(author) FILTER (alone_in_period) AS known_alone_in_period
+    FROM classified GROUP BY ${keys}, period`)
+}
+
 /** The cells of `classified`, ordered by step and levels. */
 export async function groupCells(database: Database, factors: readonly string[], names: MentionNames): Promise<readonly CellPart[]> {
-  const keys = ['step', ...factors.map((_, index) => `factor_${index}`)].join(', ')
+  const keys = cellKeys(factors)
   // An author with one mention in the step needs no grouping: only the others are grouped by author.
   const rows = await database.rows<CellSums>(`
     SELECT ${keys}, mentions, score, squares, single + coalesce(authors, 0) AS authors, known, single + coalesce(clusters, 0) AS clusters
-    FROM (SELECT ${keys}, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares,
-      count(author) AS known, count(*) FILTER (author IS NOT NULL AND alone_in_step) AS single FROM classified GROUP BY ${keys})
-    LEFT JOIN (SELECT ${keys}, count(*) AS authors, sum(posts * posts)::BIGINT AS clusters FROM (
+    FROM cell_sum LEFT JOIN (SELECT ${keys}, count(*) AS authors, sum(posts * posts)::BIGINT AS clusters FROM (
       SELECT author, ${keys}, count(*) AS posts FROM classified WHERE NOT alone_in_step GROUP BY author, ${keys}) GROUP BY ${keys}) USING (${keys})
     ORDER BY ${keys}`)
   return rows.map((row) => cellOf(row, factors, names))
@@ -43,4 +53,8 @@ function cellOf(row: CellSums, factors: readonly string[], names: MentionNames):
     clustering: Number(row.clusters + unknown) / mentions,
     deff: Number.NaN,
   }
+}
+
+function cellKeys(factors: readonly string[]): string {
+  return ['step', ...factors.map((_, index) => `factor_${index}`)].join(', ')
 }

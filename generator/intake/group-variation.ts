@@ -19,8 +19,8 @@ interface VariationSums {
  * @returns by number of the venue
  */
 export async function groupVariation(database: Database): Promise<ReadonlyMap<number, AuthorVariation>> {
-  await database.run(`CREATE TEMP TABLE centre AS SELECT factor_0, step, CAST(round(sum(score)::DOUBLE / count(*)) AS BIGINT) AS centre
-    FROM classified WHERE author IS NOT NULL GROUP BY ALL`)
+  await database.run(`CREATE TEMP TABLE centre AS SELECT factor_0, step, CAST(round(sum(known_score)::DOUBLE / sum(known)) AS BIGINT) AS centre
+    FROM cell_sum WHERE known > 0 GROUP BY ALL`)
   const centred = 'SELECT author, alone, factor_0, score - centre AS score FROM classified JOIN centre USING (factor_0, step) WHERE author IS NOT NULL'
   const rows = await database.rows<VariationSums>(`
     SELECT venue, posts, count(*) AS authors, sum(total)::HUGEINT AS sum, sum(total::HUGEINT * total)::HUGEINT AS sum_squares, sum(squares)::HUGEINT AS squares FROM (

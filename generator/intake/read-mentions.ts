@@ -5,7 +5,7 @@ import type { Database } from './database.ts'
 import type { Dated } from './dated-mentions.ts'
 import { findDuplicates, type Duplicates } from './duplicates.ts'
 import { groupAuthors, type AuthorGroups } from './group-authors.ts'
-import { groupCells } from './group-cells.ts'
+import { groupCells, sumCells } from './group-cells.ts'
 import { groupVariation } from './group-variation.ts'
 import { createMentions, type MentionNames, type Naming } from './mention-table.ts'
 import { classifyPosters } from './poster-classes.ts'
@@ -44,6 +44,7 @@ export async function settleMentions(
   const names = await createMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, naming)
   await classifyPosters(database, account)
   progress('Grouping cells')
+  await sumCells(database, account.factors)
   const parts = await groupCells(database, account.factors, names)
   progress('Counting authors')
   return { duplicates, outOfScope, grouped: { names, parts, variation: await groupVariation(database), authors: await groupAuthors(database, names) } }
