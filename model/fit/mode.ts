@@ -13,8 +13,10 @@ export interface Mode {
 /** Width of the differences in z, where the posterior's scale is about 1. */
 const step = 1e-2
 const mostIterations = 100
-/** A rise smaller than this no longer moves a proposal. */
-const enough = 0.02
+/** A step that promises less than this no longer moves a proposal. */
+const enough = 0.01
+/** Longer steps leap over the mode onto the plain where a standard deviation is as good as 0. */
+const longestMove = 0.7
 
 /**
  * The highest point of a smooth log density and its curvature there, by BFGS with numerical gradients (Nocedal and
@@ -28,12 +30,11 @@ export async function findMode(evaluate: Evaluate, start: Float64Array): Promise
   let gradient = await numericalGradient(evaluate, point, value)
   const inverse = identity(d)
   for (let iteration = 0; iteration < mostIterations; iteration++) {
-    const move = limitLength(multiply(inverse, gradient, d), 3)
-    const next = await searchLine(evaluate, point, value, move, dot(move, gradient))
-    if (next === null || next.value - value < enough) {
-      if (next !== null) ({ point, value } = next)
-      break
-    }
+    const move = limitLength(multiply(inverse, gradient, d), longestMove)
+    const slope = dot(move, gradient)
+    if (slope < enough) break
+    const next = await searchLine(evaluate, point, value, move, slope)
+    if (next === null) break
     const nextGradient = await numericalGradient(evaluate, next.point, next.value)
     // maximising: the curvature pair is (s, -(g' - g))
     updateInverse(inverse, difference(next.point, point), difference(gradient, nextGradient), d)

@@ -66,6 +66,10 @@ export interface PosteriorOptions {
 const streams = { rounds: 0, resampling: 1, states: 16 } as const
 /** Shares of the proposals in each round: small ones first, to learn where to look. */
 const roundShares = [0.1, 0.25, 0.65] as const
+/** Variance of the first round's proposal over the curvature's: too wide costs draws, too narrow hides what lies outside. */
+const firstWidening = 1.3
+/** Effective draws that a proposal is fitted to, at least: with fewer the weights are tempered. */
+const leastFitted = 40
 /** Effective draws below which another round is made, as large as all before it together. */
 const leastEffective = 1000
 const mostExtraRounds = 2
@@ -102,8 +106,7 @@ export async function samplePosterior(problem: FitProblem, executor: FitExecutor
 /** The normal at the mode. */
 async function firstProposal(problem: FitProblem, executor: FitExecutor): Promise<Proposal> {
   const mode = await findMode((points) => logTarget(problem, executor, points), new Float64Array(problem.scales.length))
-  // a little wider than the curvature says: too wide costs draws, too narrow hides what lies outside
-  const proposal = normalProposal(mode.point, mode.covariance.map((x) => 1.3 * x))
+  const proposal = normalProposal(mode.point, mode.covariance.map((x) => firstWidening * x))
   if (proposal === null) throw new Error('the curvature was made positive definite, so its inverse has a factor')
   return proposal
 }
@@ -176,7 +179,7 @@ async function drawJointly(problem: FitProblem, executor: FitExecutor, from: Flo
 
 /** Weights for matching moments: raised to a power below 1 where a few would decide everything. */
 function temper(logWeights: Float64Array): Float64Array {
-  const least = Math.min(200, 0.25 * logWeights.length)
+  const least = Math.min(leastFitted, 0.25 * logWeights.length)
   for (let power = 1; ; power *= 0.8) {
     const weights = normalise(logWeights.map((x) => power * x))
     if (kishEffectiveSize(weights) >= least || power < 0.01) return weights

@@ -1,3 +1,4 @@
+import { kishEffectiveSize } from '../statistics/kish.ts'
 import { normalQuantile } from '../statistics/normal.ts'
 import { fitMarginal, marginalLogDensity, marginalQuantile, standardMarginal, type SplitMarginal } from './marginal.ts'
 
@@ -19,7 +20,8 @@ export function normalProposal(centre: Float64Array, covariance: Float64Array): 
 }
 
 /**
- * The proposal that matches a weighted sample's mean and covariance and, along each axis of its factor, its shape.
+ * The proposal that matches a weighted sample's mean and covariance and, along each axis of its factor, its shape;
+ * a little wider, because few effective draws show less than there is.
  *
  * @param points - shape (n, d)
  * @param weights - shape (n), >= 0, summing to 1
@@ -44,7 +46,11 @@ export function fitProposal(points: Float64Array, weights: Float64Array, d: numb
     standardise(points, i * d, centre, factor, s)
     for (let j = 0; j < d; j++) axes[j][i] = s[j]
   }
-  return { dimension: d, centre, factor, marginals: axes.map((axis) => fitMarginal(axis, weights)) }
+  return { dimension: d, centre, factor, marginals: axes.map((axis) => widen(fitMarginal(axis, weights), 1 + d / kishEffectiveSize(weights))) }
+}
+
+function widen({ mode, left, right }: SplitMarginal, factor: number): SplitMarginal {
+  return { mode, left: { ...left, width: left.width * factor }, right: { ...right, width: right.width * factor } }
 }
 
 /** Turn uniforms, shape (n, d), into points of the proposal, in place. */

@@ -7,7 +7,7 @@ const steps = 78
 
 /** Venues drift and the mix shifts while opinion goes its own way, all drawn from the model. */
 export const drawn: SimulationOptions = {
-  steps, venues: 4, topics: 3, posters: 2, mentionsPerStep: 500,
+  steps, venues: 4, topics: 3, posters: 2, mentionsPerStep: 1000,
   sigmas: { mu: 0.025, venueDrift: [0.015, 0.004, 0.003, 0.008], venue: 0.2, topic: 0.25, poster: 0.15, tau: 0.03 },
   mix: {
     venue: { from: [0.2, 0.3, 0.3, 0.2], to: [0.5, 0.15, 0.15, 0.2] },
