@@ -48,7 +48,7 @@ export const accountWordings = {
   }),
   'account-alias': (details: { readonly found: string }): Wording => ({
     unexpected: `${details.found}`, expected: 'plain values: an account file has no anchors, aliases or tags',
-    mend: 'Write the value out where it is needed.',
+    mend: 'Write the value out where it is needed; put quotes around one that begins with an asterisk, an ampersand or an exclamation mark.',
   }),
   'account-key-unknown': (details: { readonly key: string; readonly nearest: string; readonly known: readonly string[] }): Wording => ({
     unexpected: `key \`${details.key}\``, expected: `one of ${details.known.join(', ')}`,

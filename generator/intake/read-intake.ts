@@ -5,7 +5,7 @@ import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
 import { tablesOf, type Material } from './tables.ts'
-import { openDatabase, type Database } from './database.ts'
+import { openDatabase } from './database.ts'
 import { dateMentions } from './dated-mentions.ts'
 import { lookOver, type InputFile } from './input-file.ts'
 import { levelNames } from './level-names.ts'
@@ -13,7 +13,7 @@ import { settleMentions } from './read-mentions.ts'
 import { cellsWithin, daysOf, readReadyMade } from './ready-made.ts'
 import { countRejects, writeRejects } from './rejects.ts'
 import { coveredPeriod, namedPeriod } from './review-period.ts'
-import { createScanned, sampleFile, scanFile, type ScannedFile } from './scan-mentions.ts'
+import { createScanned, sampleFile, scanFile, type ScannedFile, type ScanPlace } from './scan-mentions.ts'
 import { joinSpellings, type Spellings } from './spellings.ts'
 
 export interface IntakeOptions {
@@ -42,7 +42,7 @@ export async function readIntake(account: Account, options: IntakeOptions = {}):
     const files = await lookOverAll(account, scratch, options)
     const database = await openDatabase({ readable: [...files.values()].map((file) => file.readable), scratch, threads: options.threads })
     try {
-      return tablesOf(account, await gather(database, account, files, options))
+      return tablesOf(account, await gather({ database, account, scratch }, files, options))
     } finally {
       database.close()
     }
@@ -61,12 +61,13 @@ async function lookOverAll(account: Account, scratch: string, options: IntakeOpt
   return files
 }
 
-async function gather(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Material> {
+async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Material> {
+  const { database, account } = place
   const progress = options.progress ?? ((): void => undefined)
   const asked = options.period === undefined ? null : namedPeriod(account, options.period)
   const names = levelNames(account)
   const ready = await readReadyMade(database, account, files, names.levelOf)
-  const { scanned, spellings } = await scanAll(database, account, files, progress)
+  const { scanned, spellings } = await scanAll(place, files, progress)
   const rejected = await countRejects(database, scanned)
   if (options.rejects !== undefined) await writeRejects(database, scanned, options.rejects)
   const dated = await dateMentions(database, account)
@@ -87,7 +88,8 @@ interface Scan {
   readonly spellings: Spellings
 }
 
-async function scanAll(database: Database, account: Account, files: ReadonlyMap<string, InputFile>, progress: (message: string) => void): Promise<Scan> {
+async function scanAll(place: ScanPlace, files: ReadonlyMap<string, InputFile>, progress: (message: string) => void): Promise<Scan> {
+  const { database, account } = place
   const sources = account.mentions.flatMap((source, index) => (source.kind === 'mentions' ? [{ source, index }] : []))
   const samples: Spellings[] = []
   for (const { source } of sources) samples.push(await sampleFile(database, account, source, files.get(source.files[0]!)!))
@@ -97,8 +99,7 @@ async function scanAll(database: Database, account: Account, files: ReadonlyMap<
   for (const { source, index } of sources) {
     for (const file of source.files) {
       progress(`Reading ${file}`)
-      const last = scanned.at(-1)
-      scanned.push(await scanFile(database, account, index, files.get(file)!, spellings, last === undefined ? 0 : last.first + last.sound))
+      scanned.push(await scanFile(place, index, files.get(file)!, spellings))
     }
   }
   return { scanned, spellings }

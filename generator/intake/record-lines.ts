@@ -35,7 +35,21 @@ export async function lineNumbers(file: string, cut: Cut, ordinals: ArrayLike<nu
   return lines
 }
 
-async function eachRecord(file: string, cut: Cut, begins: (line: number, offset: number) => void): Promise<void> {
+/** Byte at which the record begins whose quote is never closed, or null. */
+export async function unclosedQuote(file: string, cut: Cut): Promise<number | null> {
+  let last = 0
+  const open = await eachRecord(file, cut, (_, offset) => { last = offset })
+  return open ? last : null
+}
+
+/** The bytes of a file, unzipped. */
+export function bytesOf(file: string): AsyncIterable<Buffer> {
+  const stream = createReadStream(file, { highWaterMark: 1 << 20 })
+  return (file.endsWith('.gz') ? stream.pipe(createGunzip()) : stream) as AsyncIterable<Buffer>
+}
+
+/** @returns whether a quote is still open at the end */
+async function eachRecord(file: string, cut: Cut, begins: (line: number, offset: number) => void): Promise<boolean> {
   const [quote, delimiter] = [cut.quote.charCodeAt(0), cut.delimiter.charCodeAt(0)]
   let [line, position, before] = [1, 0, delimiter]
   let [quoted, atRecord, atField] = [false, true, true]
@@ -56,11 +70,7 @@ async function eachRecord(file: string, cut: Cut, begins: (line: number, offset:
     }
     position += chunk.length
   }
-}
-
-function bytesOf(file: string): AsyncIterable<Buffer> {
-  const stream = createReadStream(file, { highWaterMark: 1 << 20 })
-  return (file.endsWith('.gz') ? stream.pipe(createGunzip()) : stream) as AsyncIterable<Buffer>
+  return quoted
 }
 
 function hasMark(chunk: Buffer): boolean {

@@ -5,6 +5,7 @@ import { malformedRows, type MalformedRow } from './malformed-rows.ts'
 import { relationOf, type Relation } from './relation.ts'
 import { scoreSql } from './score-sql.ts'
 import { codeSql, sampleSpellings, spellingSql, type Spellings } from './spellings.ts'
+import { withoutUnclosedQuote } from './unclosed-quotes.ts'
 import { timeSql, timeText } from './time-sql.ts'
 
 /** Why a row cannot be read, in the order in which reasons are looked for; `scanned.fate` is 1 for the first. */
@@ -53,13 +54,35 @@ function scannedColumns(account: Account): readonly { readonly name: string; rea
   ]
 }
 
+/** Where `scanFile` reads from and writes to. */
+export interface ScanPlace {
+  readonly database: Database
+  readonly account: Account
+  readonly scratch: string
+}
+
 /** Read one file into `scanned`. */
-export async function scanFile(database: Database, account: Account, sourceIndex: number, file: InputFile, spellings: Spellings, first: number): Promise<ScannedFile> {
+export async function scanFile(place: ScanPlace, sourceIndex: number, file: InputFile, spellings: Spellings, attempt = 0): Promise<ScannedFile> {
+  const { database, account } = place
   const source = account.mentions[sourceIndex] as MentionSource
   const relation = await mentionRelation(database, account, source, file)
+  const before = await extentOf(database)
   await database.run(`INSERT INTO scanned ${scanSql(account, source, sourceIndex, relation, spellings)}`)
-  const [counted] = await database.rows<{ rows: bigint }>('SELECT count(*) AS rows FROM scanned')
-  return { file, first, sound: Number(counted!.rows) - first, malformed: file.kind === 'parquet' ? [] : await malformedRows(database), cut: relation.cut }
+  const after = await extentOf(database)
+  const malformed = file.kind === 'parquet' ? [] : await malformedRows(database)
+  const first = after.end - (after.rows - before.rows)
+  const closed = malformed.length === 0 || relation.cut === null ? null : await withoutUnclosedQuote(file, relation.cut, place.scratch, attempt)
+  if (closed !== null) {
+    await database.run(`DELETE FROM scanned WHERE rowid >= ${first}`)
+    return scanFile(place, sourceIndex, closed, spellings, attempt + 1)
+  }
+  return { file, first, sound: after.rows - before.rows, malformed, cut: relation.cut }
+}
+
+/** How many rows `scanned` has, and the number of the next: rows that were deleted leave a gap. */
+async function extentOf(database: Database): Promise<{ readonly rows: number; readonly end: number }> {
+  const [extent] = await database.rows<{ rows: bigint; end: bigint }>('SELECT count(*) AS rows, coalesce(max(rowid), -1) + 1 AS "end" FROM scanned')
+  return { rows: Number(extent!.rows), end: Number(extent!.end) }
 }
 
 /** The spellings at the beginning of a file. */

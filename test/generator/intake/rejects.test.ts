@@ -60,6 +60,21 @@ describe('rejects', () => {
     expect(await rejectsOf('a.csv', text)).not.toMatch(/ann|secret|forum/)
   })
 
+  test('a quote that is never closed loses its own line and no other', async () => {
+    const rows = Array.from({ length: 2000 }, (_, index) => (index === 700 || index === 900 ? '2025-03-03,forum,3,"ann,words' : index === 1500 ? 'never,forum,3,ann,words' : `2025-03-03,forum,3,ann,words ${index}`))
+    const content = `t,v,s,who,said\n${rows.join('\n')}\n`
+    // The quote of row 900 closes the one of row 700: between the two it cannot be known what was meant.
+    const one = content.replace('"ann,words\n2025-03-03,forum,3,ann,words 901', 'ann,words\n2025-03-03,forum,3,ann,words 901')
+    for (const [file, bytes] of [['a.csv', one], ['a.csv.gz', gzipSync(one)]] as const) {
+      expect(await rejectsOf(file, bytes)).toBe(`file,line,reason\n${file},702,row-malformed\n${file},1502,time-unreadable\n`)
+    }
+    await withAccount({ 'account.yaml': yaml('"*.csv"'), 'a.csv': one, 'b.csv': 't,v,s,who,said\nnever,forum,3,ann,words\n2025-03-04,forum,3,ann,\n' }, async (folder) => {
+      const { accounting } = await readIntake(await readAccount(folder), { period: '2025-12', rejects: folder })
+      expect(accounting).toMatchObject({ received: 2002, modelled: 1999, rejected: 3 })
+      expect(await readFile(path.join(folder, 'mentions.csv'), 'utf8')).toContain('b.csv,2,time-unreadable')
+    })
+  })
+
   test('of NDJSON count blank lines too', async () => {
     expect(await rejectsOf('a.ndjson', '{"t":"2025-03-03","v":"forum","s":3}\n\n{"t":"2025-03-03","v":"forum","s":30}\nno json\n'))
       .toBe('file,line,reason\na.ndjson,3,score-outside-range\na.ndjson,4,row-malformed\n')
