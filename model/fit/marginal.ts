@@ -37,24 +37,23 @@ const firstStride = 0.2
 const lastStride = 0.02
 
 /**
- * The marginal of greatest weighted likelihood, by pattern search (Hooke and Jeeves 1961, J. ACM 8:212). Likelihood rather
+ * The marginal of greatest likelihood, by pattern search (Hooke and Jeeves 1961, J. ACM 8:212). Likelihood rather
  * than moments, because it punishes a density that is too thin where the sample is: what importance weights suffer from.
  *
  * @param values - shape (n), of mean about 0 and variance about 1
- * @param weights - shape (n), >= 0, summing to 1
  */
-export function fitMarginal(values: Float64Array, weights: Float64Array): SplitMarginal {
+export function fitMarginal(values: Float64Array): SplitMarginal {
   // mode, log widths, tails
   const at = [0, 0, 0, usual, usual]
   const marginal = (): SplitMarginal => ({ mode: at[0], left: { width: Math.exp(at[1]), tail: at[3] }, right: { width: Math.exp(at[2]), tail: at[4] } })
-  let best = weightedLogLikelihood(marginal(), values, weights)
+  let best = logLikelihood(marginal(), values)
   for (let stride = firstStride; stride > lastStride;) {
     let rose = false
     for (let k = 0; k < at.length; k++) {
       for (const move of [stride, -stride]) {
         const before = at[k]
         at[k] = k < 3 ? before + move : Math.max(heaviest, Math.min(lightest, before + 0.5 * move))
-        const found = weightedLogLikelihood(marginal(), values, weights)
+        const found = logLikelihood(marginal(), values)
         if (found > best) {
           best = found
           rose = true
@@ -68,9 +67,9 @@ export function fitMarginal(values: Float64Array, weights: Float64Array): SplitM
   return marginal()
 }
 
-function weightedLogLikelihood(m: SplitMarginal, values: Float64Array, weights: Float64Array): number {
+function logLikelihood(m: SplitMarginal, values: Float64Array): number {
   let total = 0
-  for (let i = 0; i < values.length; i++) if (weights[i] > 0) total += weights[i] * marginalLogDensity(m, values[i])
+  for (const value of values) total += marginalLogDensity(m, value)
   return total
 }
 

@@ -1,4 +1,4 @@
-import { paretoSmooth } from '../diagnostics/pareto-k.ts'
+import { paretoSmooth, type SmoothedWeights } from '../diagnostics/pareto-k.ts'
 import { createGenerator, type Generator } from '../random/generator.ts'
 import { latinHypercube } from '../random/latin-hypercube.ts'
 import type { FitExecutor } from './executor.ts'
@@ -72,25 +72,22 @@ const firstWidening = 1.3
 const leastFitted = 40
 /** Effective draws below which another round is made, as large as all before it together. */
 const leastEffective = 1000
-const mostExtraRounds = 2
+const mostRounds = 5
 
 export async function samplePosterior(problem: FitProblem, executor: FitExecutor, options: PosteriorOptions): Promise<Posterior> {
   const generator = createGenerator(options.seed, streams.rounds)
   const progress = options.progress ?? (() => undefined)
-  let proposal = await firstProposal(problem, executor)
-  let pool = emptyPool()
-  progress(0.1)
-  for (const share of roundShares) {
-    pool = await addRound(problem, executor, pool, proposal, Math.round(share * options.proposals), generator)
-    proposal = fitProposal(pool.points, temper(pool.logWeights), proposal.dimension) ?? proposal
+  let pool = emptyPool
+  let weighted: SmoothedWeights | null = null
+  const sizes = roundShares.map((share) => Math.round(share * options.proposals))
+  while (sizes.length > 0 || (weighted !== null && weighted.effectiveSize < leastEffective && pool.rounds.length < mostRounds)) {
+    const proposal = pool.rounds.length === 0 ? await firstProposal(problem, executor) : nextProposal(pool, generator)
     progress(0.1 + 0.5 * pool.logWeights.length / options.proposals)
+    pool = await addRound(problem, executor, pool, proposal, sizes.shift() ?? pool.logWeights.length, generator)
+    if (sizes.length === 0) weighted = paretoSmooth(pool.logWeights)
   }
-  let weighted = paretoSmooth(pool.logWeights)
-  for (let extra = 0; extra < mostExtraRounds && weighted.effectiveSize < leastEffective; extra++) {
-    pool = await addRound(problem, executor, pool, proposal, pool.logWeights.length, generator)
-    proposal = fitProposal(pool.points, temper(pool.logWeights), proposal.dimension) ?? proposal
-    weighted = paretoSmooth(pool.logWeights)
-  }
+  if (weighted === null) throw new Error('there is at least one round')
+  progress(0.6)
   const values = toSigmas(problem, pool.points)
   const draws = await drawJointly(problem, executor, values, weighted.weights, options)
   progress(1)
@@ -101,6 +98,12 @@ export async function samplePosterior(problem: FitProblem, executor: FitExecutor
     paretoK: k ?? ('reason' in undecided && undecided.reason === 'flat-tail' ? 0 : null),
     effective: weighted.effectiveSize, logEvidence: logMeanExp(pool.logWeights),
   }
+}
+
+/** Fitted to all points so far; the last one again where they are too poor to fit. */
+function nextProposal({ rounds, points, logWeights }: Pool, generator: Generator): Proposal {
+  const { proposal } = rounds[rounds.length - 1]
+  return fitProposal(points, temper(logWeights), proposal.dimension, generator) ?? proposal
 }
 
 /** The normal at the mode. */
@@ -121,9 +124,7 @@ interface Pool {
   readonly logWeights: Float64Array
 }
 
-function emptyPool(): Pool {
-  return { rounds: [], points: new Float64Array(0), target: new Float64Array(0), logWeights: new Float64Array(0) }
-}
+const emptyPool: Pool = { rounds: [], points: new Float64Array(0), target: new Float64Array(0), logWeights: new Float64Array(0) }
 
 async function addRound(problem: FitProblem, executor: FitExecutor, pool: Pool, proposal: Proposal, count: number, generator: Generator): Promise<Pool> {
   const fresh = latinHypercube(count, proposal.dimension, generator)

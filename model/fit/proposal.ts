@@ -1,5 +1,7 @@
+import type { Generator } from '../random/generator.ts'
 import { kishEffectiveSize } from '../statistics/kish.ts'
 import { normalQuantile } from '../statistics/normal.ts'
+import { resample } from './resample.ts'
 import { fitMarginal, marginalLogDensity, marginalQuantile, standardMarginal, type SplitMarginal } from './marginal.ts'
 
 /** A density over R^d to draw from: z = centre + C s, the coordinates of s independent split marginals. */
@@ -10,6 +12,9 @@ export interface Proposal {
   readonly factor: Float64Array
   readonly marginals: readonly SplitMarginal[]
 }
+
+/** Rows that shapes are fitted to: more would not tell them better than a proposal needs. */
+const fittedRows = 1000
 
 /** A proposal with this covariance (shape (d, d)) and no skewness; null where it is not positive definite. */
 export function normalProposal(centre: Float64Array, covariance: Float64Array): Proposal | null {
@@ -25,9 +30,10 @@ export function normalProposal(centre: Float64Array, covariance: Float64Array): 
  *
  * @param points - shape (n, d)
  * @param weights - shape (n), >= 0, summing to 1
+ * @param generator - moved on: shapes are fitted to a resample
  * @returns null where the weighted covariance is not positive definite
  */
-export function fitProposal(points: Float64Array, weights: Float64Array, d: number): Proposal | null {
+export function fitProposal(points: Float64Array, weights: Float64Array, d: number, generator: Generator): Proposal | null {
   const n = weights.length
   const centre = new Float64Array(d)
   for (let i = 0; i < n; i++) for (let j = 0; j < d; j++) centre[j] += weights[i] * points[i * d + j]
@@ -40,13 +46,15 @@ export function fitProposal(points: Float64Array, weights: Float64Array, d: numb
   }
   const factor = cholesky(covariance, d)
   if (factor === null) return null
-  const axes = Array.from({ length: d }, () => new Float64Array(n))
+  const sample = resample(weights, Math.min(n, fittedRows), generator)
+  const axes = Array.from({ length: d }, () => new Float64Array(sample.length))
   const s = new Float64Array(d)
-  for (let i = 0; i < n; i++) {
-    standardise(points, i * d, centre, factor, s)
+  sample.forEach((row, i) => {
+    standardise(points, row * d, centre, factor, s)
     for (let j = 0; j < d; j++) axes[j][i] = s[j]
-  }
-  return { dimension: d, centre, factor, marginals: axes.map((axis) => widen(fitMarginal(axis, weights), 1 + d / kishEffectiveSize(weights))) }
+  })
+  const spare = 1 + d / kishEffectiveSize(weights)
+  return { dimension: d, centre, factor, marginals: axes.map((axis) => widen(fitMarginal(axis), spare)) }
 }
 
 function widen({ mode, left, right }: SplitMarginal, factor: number): SplitMarginal {
