@@ -1,6 +1,6 @@
 import type { IntakeTables } from '../intake/intake-tables.ts'
 import { priors, walkFactor } from './priors.ts'
-import type { FitCells, FitProblem, FixedGroup, Scale, ScalePositions } from './problem.ts'
+import type { EffectRuns, FitCells, FitProblem, FixedGroup, Scale, ScalePositions } from './problem.ts'
 
 /**
  * Lay out the model of section 2 for these tables: which venue walks, which effects stand still, where each
@@ -56,17 +56,25 @@ interface FactorColumns {
   readonly from: number
 }
 
-function layCells(tables: IntakeTables, columns: readonly FactorColumns[], border: number, variance: Float64Array): FitCells {
-  const { cells, timeline } = tables
-  const venue = cells.levels[0]
-  const start = new Int32Array(timeline.steps.length + 1)
-  for (let c = 0; c < cells.count; c++) start[cells.step[c] + 1]++
-  for (let t = 0; t < timeline.steps.length; t++) start[t + 1] += start[t]
-  const effects = columns.map(({ factor, from }) => {
-    const column = cells.levels[factor].map((level) => from + level)
-    return { column, cross: column.map((place, c) => venue[c] * border + place) }
-  })
-  // a later factor's columns lie further right: its row holds the pair in the lower triangle
-  const pairs = effects.flatMap(({ column }, i) => effects.slice(0, i).map((earlier) => column.map((place, c) => place * border + earlier.column[c])))
-  return { count: cells.count, start, venue, effects, pairs, mean: cells.mean, variance }
+function layCells(tables: IntakeTables, factors: readonly FactorColumns[], border: number, variance: Float64Array): FitCells {
+  const { cells } = tables
+  const columns = factors.map(({ factor, from }) => cells.levels[factor].map((level) => from + level))
+  const still = new Int32Array(cells.count)
+  const venues = tables.factors[0].levels.length
+  return {
+    count: cells.count, mean: cells.mean, variance,
+    venues: groupCells(cells.step, cells.levels[0], still, venues, 1),
+    effects: columns.map((column) => groupCells(cells.step, cells.levels[0], column, venues, border)),
+    // a later factor's columns lie further right: its row holds the pair in the lower triangle
+    pairs: columns.flatMap((column, i) => columns.slice(0, i).map((earlier) => column.map((place, c) => place * border + earlier[c]))),
+  }
+}
+
+/** Group cells by step, venue and column. */
+export function groupCells(step: Int32Array, venue: Int32Array, column: Int32Array, venues: number, columns: number): EffectRuns {
+  const key = Float64Array.from(step, (t, c) => (t * venues + venue[c]) * columns + column[c])
+  const order = Int32Array.from(key.keys()).sort((a, b) => key[a] - key[b] || a - b)
+  const firsts = Array.from(order.keys()).filter((i) => i === 0 || key[order[i]] !== key[order[i - 1]])
+  const of = (values: Int32Array) => Int32Array.from(firsts, (i) => values[order[i]])
+  return { order, start: Int32Array.from([...firsts, order.length]), step: of(step), venue: of(venue), column: of(column) }
 }

@@ -8,7 +8,7 @@ export interface Effort {
 
 /** Multiplications and additions that about fill the time a reader waits for a small fit. */
 const budget = 8e8
-const proposals = { least: 2000, most: 16000 } as const
+const proposals = { least: 2500, most: 16000 } as const
 const draws = { least: 2000, most: 4000 } as const
 /** Numbers that all draws of the states may take together: 256 MB. */
 const memory = 32e6

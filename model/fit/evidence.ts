@@ -1,5 +1,5 @@
 import { createBorderedPrecision, createBorderedVector, factorise, solveForward, type BorderedPrecision, type BorderedVector } from '../linear/bordered-precision.ts'
-import type { FitProblem } from './problem.ts'
+import type { EffectRuns, FitCells, FitProblem } from './problem.ts'
 
 /** Memory for one evaluation, made once and reused: nothing is allocated inside the loops. */
 export interface Workspace {
@@ -9,25 +9,16 @@ export interface Workspace {
   /** Shape (cells): w_c and w_c y_c. */
   readonly weight: Float64Array
   readonly weightedMean: Float64Array
-  /** Of the step at hand, shape (venues). */
-  readonly venueWeight: Float64Array
-  readonly venueSum: Float64Array
-  /** Of the step at hand, shape (venues, s). */
-  readonly crossWeight: Float64Array
 }
 
 export function createWorkspace(problem: FitProblem): Workspace {
   const block = 1 + problem.walks
-  const venues = problem.venueWalk.length
   return {
     precision: createBorderedPrecision(problem.steps, block, problem.border),
     vector: createBorderedVector(problem.steps, block, problem.border),
     scratch: new Float64Array(problem.border),
     weight: new Float64Array(problem.cells.count),
     weightedMean: new Float64Array(problem.cells.count),
-    venueWeight: new Float64Array(venues),
-    venueSum: new Float64Array(venues),
-    crossWeight: new Float64Array(venues * problem.border),
   }
 }
 
@@ -97,77 +88,85 @@ const logBatch = 16
 
 /** Add H' W H to Q and H' W y to h; return sum log w_c and sum w_c y_c^2. */
 function assembleData(problem: FitProblem, tau: number, work: Workspace): { logWeights: number; squares: number } {
-  const { cells, steps } = problem
-  const { start, venue, effects, pairs, mean, variance } = cells
-  const { weight, weightedMean, venueWeight, venueSum, crossWeight } = work
-  const { corner } = work.precision
-  const fixedSum = work.vector.fixed
+  const sums = weighCells(problem.cells, tau, work)
+  addVenues(problem, work)
+  for (const effect of problem.cells.effects) addEffect(problem, effect, work)
+  const { weight, precision: { corner } } = work
+  for (const place of problem.cells.pairs) for (let c = 0; c < place.length; c++) corner[place[c]] += weight[c]
+  return sums
+}
+
+/** w_c and w_c y_c of every cell. */
+function weighCells({ count, mean, variance }: FitCells, tau: number, { weight, weightedMean }: Workspace): { logWeights: number; squares: number } {
   const tau2 = tau * tau
   let logWeights = 0
   let squares = 0
   let product = 1
-  for (let t = 0; t < steps; t++) {
-    const from = start[t]
-    const to = start[t + 1]
-    venueWeight.fill(0)
-    venueSum.fill(0)
-    crossWeight.fill(0)
-    for (let c = from; c < to; c++) {
-      const total = variance[c] + tau2
-      product *= total
-      if (c % logBatch === 0) {
-        logWeights -= Math.log(product)
-        product = 1
-      }
-      const w = 1 / total
-      const wy = w * mean[c]
-      squares += wy * mean[c]
-      weight[c] = w
-      weightedMean[c] = wy
-      venueWeight[venue[c]] += w
-      venueSum[venue[c]] += wy
+  for (let c = 0; c < count; c++) {
+    const total = variance[c] + tau2
+    product *= total
+    if (c % logBatch === 0) {
+      logWeights -= Math.log(product)
+      product = 1
     }
-    for (const { column, cross } of effects) {
-      for (let c = from; c < to; c++) {
-        crossWeight[cross[c]] += weight[c]
-        fixedSum[column[c]] += weightedMean[c]
-      }
-    }
-    for (const place of pairs) for (let c = from; c < to; c++) corner[place[c]] += weight[c]
-    spreadStep(problem, work, t)
+    const w = 1 / total
+    const wy = w * mean[c]
+    squares += wy * mean[c]
+    weight[c] = w
+    weightedMean[c] = wy
   }
   return { logWeights: logWeights - Math.log(product), squares }
 }
 
-/** What the step's venues add up to, put where it belongs. */
-function spreadStep({ venueWalk, venueFixed }: FitProblem, { precision, vector, venueWeight, venueSum, crossWeight }: Workspace, t: number): void {
+/** Opinion and the venue's own walk, or its anchored offset. */
+function addVenues({ cells: { venues }, venueWalk, venueFixed }: FitProblem, { precision, vector, weight, weightedMean }: Workspace): void {
   const { diagonal, rows, corner, block: b, border: s } = precision
-  const d = t * b * b
-  const r = t * s * b
-  for (let v = 0; v < venueWeight.length; v++) {
-    const w = venueWeight[v]
-    if (w === 0) continue
-    const component = venueWalk[v]
-    const anchor = venueFixed[v]
+  const { order, start, step, venue } = venues
+  for (let r = 0; r < step.length; r++) {
+    let w = 0
+    let wy = 0
+    for (let i = start[r]; i < start[r + 1]; i++) {
+      w += weight[order[i]]
+      wy += weightedMean[order[i]]
+    }
+    const t = step[r]
+    const d = t * b * b
+    const component = venueWalk[venue[r]]
+    const anchor = venueFixed[venue[r]]
     diagonal[d] += w
-    vector.walk[t * b] += venueSum[v]
+    vector.walk[t * b] += wy
     if (component > 0) {
       diagonal[d + component * b] += w
       diagonal[d + component * b + component] += w
-      vector.walk[t * b + component] += venueSum[v]
+      vector.walk[t * b + component] += wy
     }
     if (anchor >= 0) {
-      rows[r + anchor * b] += w
+      rows[(t * s + anchor) * b] += w
       corner[anchor * s + anchor] += w
-      vector.fixed[anchor] += venueSum[v]
+      vector.fixed[anchor] += wy
     }
-    for (let i = 0; i < s; i++) {
-      const x = crossWeight[v * s + i]
-      if (x === 0) continue
-      rows[r + i * b] += x
-      if (component > 0) rows[r + i * b + component] += x
-      if (anchor >= 0) corner[i > anchor ? i * s + anchor : anchor * s + i] += x
-      corner[i * s + i] += x
+  }
+}
+
+/** One factor's columns of the border against opinion, the venues and themselves. */
+function addEffect({ venueWalk, venueFixed }: FitProblem, effect: EffectRuns, { precision, vector, weight, weightedMean }: Workspace): void {
+  const { rows, corner, block: b, border: s } = precision
+  const { order, start, step, venue, column } = effect
+  for (let r = 0; r < step.length; r++) {
+    let w = 0
+    let wy = 0
+    for (let i = start[r]; i < start[r + 1]; i++) {
+      w += weight[order[i]]
+      wy += weightedMean[order[i]]
     }
+    const own = column[r]
+    const row = (step[r] * s + own) * b
+    const component = venueWalk[venue[r]]
+    const anchor = venueFixed[venue[r]]
+    rows[row] += w
+    if (component > 0) rows[row + component] += w
+    if (anchor >= 0) corner[own > anchor ? own * s + anchor : anchor * s + own] += w
+    corner[own * s + own] += w
+    vector.fixed[own] += wy
   }
 }

@@ -53,25 +53,31 @@ export interface ScalePositions {
   readonly tau: number
 }
 
-/** Cells sorted by step. */
 export interface FitCells {
   readonly count: number
-  /** Shape (steps + 1): the cells of step t are start[t] .. start[t + 1] - 1. */
-  readonly start: Int32Array
-  readonly venue: Int32Array
-  /** The other effects of the cells, one entry per factor. */
-  readonly effects: readonly CellEffects[]
-  /** For every two of those factors, shape (cells): the place in the border's corner of the cell's two columns. */
-  readonly pairs: readonly Int32Array[]
   readonly mean: Float64Array
   /** V_c. */
   readonly variance: Float64Array
+  /** Cells of one step and venue. */
+  readonly venues: CellRuns
+  /** One entry per factor with effects in the border: cells of one step, venue and level. */
+  readonly effects: readonly EffectRuns[]
+  /** For every two of those factors, shape (cells): the place in the border's corner of the cell's two columns. */
+  readonly pairs: readonly Int32Array[]
 }
 
-/** Where one factor of every cell goes. */
-export interface CellEffects {
-  /** Shape (cells): border column. */
+/** Cells in groups, so that a group's weights are summed before they are put anywhere. */
+export interface CellRuns {
+  /** Shape (cells): cells in the order of their groups. */
+  readonly order: Int32Array
+  /** Shape (groups + 1): group r is order[start[r]] .. order[start[r + 1] - 1]. */
+  readonly start: Int32Array
+  /** Shape (groups). */
+  readonly step: Int32Array
+  readonly venue: Int32Array
+}
+
+export interface EffectRuns extends CellRuns {
+  /** Shape (groups): border column. */
   readonly column: Int32Array
-  /** Shape (cells): venue x border + column, where a step's weights by venue and column are summed. */
-  readonly cross: Int32Array
 }

@@ -1,12 +1,12 @@
 import type { Findings } from '../findings/schema.ts'
-import { createGenerator, type Generator } from '../random/generator.ts'
+import { createGenerator } from '../random/generator.ts'
 import { estimateOf } from '../statistics/estimate.ts'
 import type { Reading } from './context.ts'
 
 type Check = Findings['diagnostics']['checks'][number]
 
 /** Draws that are checked: enough for p-values as small as they are judged by, few enough not to be felt. */
-const checkedDraws = 1000
+const checkedDraws = 500
 /** Streams of the seed set aside for replicates, away from those of the states. */
 const firstStream = 1_000_000
 /** Probability that a right model fails any of a review's checks: shared out over all of them (Bonferroni). */
@@ -23,21 +23,20 @@ const familyWise = 0.02
  */
 export function readChecks(reading: Reading, seed: number, interval: number): Check[] {
   const found = reading.tables.factors[0].levels.flatMap(({ name }, v) => {
-    const cells = cellsOf(reading, v)
-    if (cells.length < 10) return []
+    const cells = venueCells(reading, v)
+    if (cells.count < 10) return []
     const observed = { spread: new Float64Array(checkedDraws), memory: new Float64Array(checkedDraws) }
     const replicated = { spread: new Float64Array(checkedDraws), memory: new Float64Array(checkedDraws) }
     const generator = createGenerator(seed, firstStream + v)
-    const residual = new Float64Array(cells.length)
-    const noise = new Float64Array(cells.length)
+    const residual = new Float64Array(cells.count)
+    const noise = new Float64Array(cells.count)
     for (let k = 0; k < checkedDraws; k++) {
-      const draw = Math.floor(k * reading.columns.count / checkedDraws)
-      fillResiduals(reading, cells, draw, residual)
-      fillNoise(generator, noise)
+      fillResiduals(reading, v, cells, Math.floor(k * reading.columns.count / checkedDraws), residual)
+      generator.fillNormal(noise)
       observed.spread[k] = meanSquare(residual)
       replicated.spread[k] = meanSquare(noise)
-      observed.memory[k] = stepMemory(reading, cells, residual)
-      replicated.memory[k] = stepMemory(reading, cells, noise)
+      observed.memory[k] = stepMemory(cells, residual)
+      replicated.memory[k] = stepMemory(cells, noise)
     }
     return (['spread', 'memory'] as const).map((check) => compare(check, name, observed[check], replicated[check], interval))
   })
@@ -45,27 +44,38 @@ export function readChecks(reading: Reading, seed: number, interval: number): Ch
   return found.map((check) => ({ ...check, passed: check.p > tolerated && check.p < 1 - tolerated }))
 }
 
-function cellsOf(reading: Reading, venue: number): Int32Array {
-  const { cells } = reading.tables
-  return Int32Array.from({ length: cells.count }, (_, c) => c).filter((c) => cells.levels[0][c] === venue)
+/** One venue's cells, gathered once: the checks run over them thousands of times. */
+interface VenueCells {
+  readonly count: number
+  readonly step: Int32Array
+  /** Per factor other than venue, the cell's level. */
+  readonly levels: readonly Int32Array[]
+  readonly mean: Float64Array
+  readonly variance: Float64Array
 }
 
-/** (y_c - fitted) / sqrt(V_c + tau^2) with the states and tau of one draw. */
-function fillResiduals(reading: Reading, cells: Int32Array, draw: number, target: Float64Array): void {
-  const { tables, columns, sampling, posterior } = reading
-  const scales = posterior.problem.scales.length
-  const tau = posterior.draws.sigmas[draw * scales + posterior.problem.position.tau]
-  for (let i = 0; i < cells.length; i++) {
-    const c = cells[i]
-    const t = tables.cells.step[c]
-    let fitted = columns.mu[t][draw] + columns.drift[tables.cells.levels[0][c]][t][draw]
-    for (let f = 0; f < columns.offset.length; f++) fitted += columns.offset[f][tables.cells.levels[f][c]][draw]
-    target[i] = (tables.cells.mean[c] - fitted) / Math.sqrt(sampling.variance[c] + tau * tau)
+function venueCells({ tables: { cells }, sampling }: Reading, venue: number): VenueCells {
+  const own = Int32Array.from({ length: cells.count }, (_, c) => c).filter((c) => cells.levels[0][c] === venue)
+  return {
+    count: own.length,
+    step: own.map((c) => cells.step[c]),
+    levels: cells.levels.slice(1).map((level) => own.map((c) => level[c])),
+    mean: Float64Array.from(own, (c) => cells.mean[c]),
+    variance: Float64Array.from(own, (c) => sampling.variance[c]),
   }
 }
 
-function fillNoise(generator: Generator, target: Float64Array): void {
-  generator.fillNormal(target)
+/** (y_c - fitted) / sqrt(V_c + tau^2) with the states and tau of one draw. */
+function fillResiduals({ columns, posterior }: Reading, venue: number, cells: VenueCells, draw: number, target: Float64Array): void {
+  const scales = posterior.problem.scales.length
+  const tau = posterior.draws.sigmas[draw * scales + posterior.problem.position.tau]
+  const level = Float64Array.from(columns.mu, (mu, t) => mu[draw] + columns.drift[venue][t][draw] + columns.offset[0][venue][draw])
+  const offsets = columns.offset.slice(1).map((levels) => Float64Array.from(levels, (column) => column[draw]))
+  for (let i = 0; i < cells.count; i++) {
+    let fitted = level[cells.step[i]]
+    for (let f = 0; f < offsets.length; f++) fitted += offsets[f][cells.levels[f][i]]
+    target[i] = (cells.mean[i] - fitted) / Math.sqrt(cells.variance[i] + tau * tau)
+  }
 }
 
 function meanSquare(values: Float64Array): number {
@@ -75,16 +85,15 @@ function meanSquare(values: Float64Array): number {
 }
 
 /** Lag-one correlation over neighbouring steps of the step's summed residual, scaled to unit variance. */
-function stepMemory(reading: Reading, cells: Int32Array, values: Float64Array): number {
-  const { step } = reading.tables.cells
+function stepMemory({ count, step }: VenueCells, values: Float64Array): number {
   let products = 0
   let squares = 0
   let before = { step: -2, value: 0 }
-  for (let i = 0; i < cells.length;) {
-    const t = step[cells[i]]
+  for (let i = 0; i < count;) {
+    const t = step[i]
     let total = 0
     let n = 0
-    for (; i < cells.length && step[cells[i]] === t; i++, n++) total += values[i]
+    for (; i < count && step[i] === t; i++, n++) total += values[i]
     const value = total / Math.sqrt(n)
     if (before.step === t - 1) products += before.value * value
     squares += value * value

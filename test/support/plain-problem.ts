@@ -1,3 +1,4 @@
+import { groupCells } from '../../model/fit/build-problem.ts'
 import type { FitProblem, FixedGroup } from '../../model/fit/problem.ts'
 
 export interface PlainObservation {
@@ -19,9 +20,6 @@ export function plainProblem(observations: readonly PlainObservation[], options:
   const groups = options.groups ?? 0
   const names = ['mu', ...(groups > 0 ? ['group'] : []), 'tau']
   const sorted = [...observations].sort((a, b) => a.step - b.step)
-  const start = new Int32Array(options.steps + 1)
-  for (const { step } of sorted) start[step + 1] += 1
-  for (let t = 0; t < options.steps; t++) start[t + 1] += start[t]
   // an observation without an effect stands in a venue of its own that loads on none
   const fixedGroups: FixedGroup[] = groups > 0 ? [{ name: 'group', from: 0, count: groups, scale: 1 }] : []
   return {
@@ -30,8 +28,8 @@ export function plainProblem(observations: readonly PlainObservation[], options:
     venueFixed: Int32Array.from({ length: groups + 1 }, (_, v) => (v < groups ? v : -1)),
     groups: fixedGroups, border: groups,
     cells: {
-      count: sorted.length, start, effects: [], pairs: [],
-      venue: Int32Array.from(sorted, ({ group }) => group ?? groups),
+      count: sorted.length, effects: [], pairs: [],
+      venues: groupCells(Int32Array.from(sorted, ({ step }) => step), Int32Array.from(sorted, ({ group }) => group ?? groups), new Int32Array(sorted.length), groups + 1, 1),
       mean: Float64Array.from(sorted, ({ value }) => value),
       variance: Float64Array.from(sorted, ({ variance }) => variance ?? 0),
     },
