@@ -1,4 +1,4 @@
-import { parse, resetSVGDefIds, View, Warn } from 'vega'
+import { Error as ErrorsOnly, parse, resetSVGDefIds, View } from 'vega'
 import { compile } from 'vega-lite'
 import type { Table } from '../../tables/table.ts'
 import type { Words } from '../../words/words.ts'
@@ -32,7 +32,8 @@ export async function drawChart(spec: ChartSpec, tables: readonly Table[], words
   const { spec: compiled } = compile(asVegaLite({ ...roomy, datasets: datasets as unknown as Json }), { config, logger: collector(warnings) })
   if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${spec.name}: ${warnings.join('; ')}`)
   resetSVGDefIds()
-  const view = new View(parse(compiled), { renderer: 'none', logLevel: Warn })
+  // a layer without rows, such as labels' leaders where none had to move, has no extent, and vega would warn of it
+  const view = new View(parse(compiled), { renderer: 'none', logLevel: ErrorsOnly })
   try {
     return cleanSvg(await view.toSVG(), `${spec.name}-${size}`)
   } finally {

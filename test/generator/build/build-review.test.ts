@@ -1,0 +1,139 @@
+import { createHash } from 'node:crypto'
+import { cp, mkdir, mkdtemp, readFile, readdir, rm, writeFile } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+import axe from 'axe-core'
+import { PDFDocument, PDFName, PDFDict } from '@cantoo/pdf-lib'
+import type { Browser } from 'puppeteer'
+import { afterAll, beforeAll, describe, expect, test } from 'vitest'
+import { findingsSchema } from '../../../model/findings/schema.ts'
+import { readAccount } from '../../../generator/account/read-account.ts'
+import { buildReview } from '../../../generator/build/build-review.ts'
+import { silent } from '../../../generator/build/stages.ts'
+import { InputFault } from '../../../generator/faults/fault.ts'
+import { openBrowser } from '../../../generator/print/open-browser.ts'
+import { thisProgram } from '../../../generator/program/program.ts'
+
+const account = join(import.meta.dirname, '../intake/fixtures/open-cells')
+let scratch: string
+let browser: Browser
+
+beforeAll(async () => {
+  scratch = await mkdtemp(join(tmpdir(), 'build-'))
+  browser = await openBrowser()
+})
+afterAll(async () => {
+  await browser.close()
+  await rm(scratch, { recursive: true, force: true })
+})
+
+async function build(out: string, options: { readonly threads?: number; readonly seed?: number } = {}) {
+  return buildReview(thisProgram(), await readAccount(account), {
+    out: join(scratch, out), seed: options.seed ?? 1, threads: options.threads, browser: () => Promise.resolve(browser), progress: silent,
+  })
+}
+
+/** Every file below a folder with its hash. */
+async function hashes(folder: string): Promise<Record<string, string>> {
+  const files = await readdir(folder, { recursive: true, withFileTypes: true })
+  const entries = files.filter((file) => file.isFile()).map(async (file) => {
+    const path = join(file.parentPath, file.name)
+    return [path.slice(folder.length), createHash('sha256').update(await readFile(path)).digest('hex')] as const
+  })
+  return Object.fromEntries((await Promise.all(entries)).sort(([a], [b]) => (a < b ? -1 : 1)))
+}
+
+describe('a build', () => {
+  test('with the same inputs and seed gives the same bytes, with one thread and with two', async () => {
+    await build('one', { threads: 1 })
+    await build('two', { threads: 2 })
+    const one = await hashes(join(scratch, 'one'))
+    expect(Object.keys(one)).toEqual(expect.arrayContaining(['/findings.json', '/review.html', '/review.pdf', '/tables/opinion.csv']))
+    expect(await hashes(join(scratch, 'two'))).toEqual(one)
+  })
+
+  test('it can fail: another seed gives other bytes', async () => {
+    await build('other', { seed: 2 })
+    const [one, other] = [await hashes(join(scratch, 'one')), await hashes(join(scratch, 'other'))]
+    expect(other['/findings.json']).not.toBe(one['/findings.json'])
+    expect(other['/review.pdf']).not.toBe(one['/review.pdf'])
+  })
+
+  test('writes findings of the shape that is shipped', async () => {
+    const findings = findingsSchema.parse(JSON.parse(await readFile(join(scratch, 'one/findings.json'), 'utf8')))
+    expect(findings.period.name).toBe('2025-08')
+    expect(findings.program.seed).toBe(1)
+  })
+
+  test('replaces a draft, and leaves no unfinished folder behind', async () => {
+    await build('one', { threads: 1 })
+    expect((await readdir(scratch)).filter((entry) => entry.startsWith('.'))).toEqual([])
+  })
+
+  test('refuses a folder that holds anything else, and leaves it as it is', async () => {
+    const folder = join(scratch, 'mine')
+    await mkdir(folder)
+    await writeFile(join(folder, 'letter.txt'), 'dear client')
+    const fault = await build('mine').catch((error: unknown) => error)
+    expect(fault).toBeInstanceOf(InputFault)
+    expect((fault as InputFault).faults[0].code).toBe('out-not-a-draft')
+    expect(await readdir(folder)).toEqual(['letter.txt'])
+  })
+
+  test('that fails on the way leaves the earlier draft untouched and no trace', async () => {
+    const before = await hashes(join(scratch, 'one'))
+    const broken = buildReview(thisProgram(), await readAccount(account), {
+      out: join(scratch, 'one'), seed: 1, browser: () => Promise.reject(new Error('no browser')), progress: silent,
+    })
+    await expect(broken).rejects.toThrow('no browser')
+    expect(await hashes(join(scratch, 'one'))).toEqual(before)
+    expect((await readdir(scratch)).filter((entry) => entry.startsWith('.'))).toEqual([])
+  })
+})
+
+describe('an account’s own template', () => {
+  test('is used, and its fault is told at its line', async () => {
+    const own = join(scratch, 'own')
+    await cp(account, own, { recursive: true })
+    const yaml = await readFile(join(own, 'account.yaml'), 'utf8')
+    await writeFile(join(own, 'account.yaml'), `${yaml}template: template.md\n`)
+    const run = async () => buildReview(thisProgram(), await readAccount(own), { out: join(scratch, 'own-draft'), seed: 1, browser: null, progress: silent })
+
+    await writeFile(join(own, 'template.md'), '::section{name="opinion"}\n\n::section{name="glossary"}\n')
+    await run()
+    const html = await readFile(join(scratch, 'own-draft/review.html'), 'utf8')
+    expect(html).toContain('id="opinion-heading"')
+    expect(html).not.toContain('id="venues-heading"')
+
+    await writeFile(join(own, 'template.md'), 'Opinion\n\n::section{name="opinoin"}\n')
+    const fault = await run().catch((error: unknown) => error)
+    expect((fault as InputFault).faults[0]).toMatchObject({ place: 'template.md:3:1' })
+    expect((fault as InputFault).faults[0].mend).toContain('opinion')
+  })
+})
+
+describe('the review itself', () => {
+  test.each([390, 1280])('has no violation that axe-core finds, at %i px', async (width) => {
+    const page = await browser.newPage()
+    try {
+      await page.setBypassCSP(true)
+      await page.setViewport({ width, height: 900 })
+      await page.setContent(await readFile(join(scratch, 'one/review.html'), 'utf8'), { waitUntil: 'load' })
+      await page.evaluate(axe.source)
+      const violations = await page.evaluate('axe.run().then((found) => found.violations.map(({ id, nodes }) => `${id}: ${nodes[0].html}`))')
+      expect(violations).toEqual([])
+      expect(await page.evaluate('document.documentElement.scrollWidth <= window.innerWidth')).toBe(true)
+    } finally {
+      await page.close()
+    }
+  })
+
+  test('is a tagged PDF whose every figure has a text alternative', async () => {
+    const pdf = await PDFDocument.load(await readFile(join(scratch, 'one/review.pdf')))
+    expect(pdf.catalog.lookup(PDFName.of('MarkInfo'), PDFDict).get(PDFName.of('Marked'))?.toString()).toBe('true')
+    const figures = pdf.context.enumerateIndirectObjects().map(([, object]) => object)
+      .filter((object): object is PDFDict => object instanceof PDFDict && object.get(PDFName.of('S')) === PDFName.of('Figure'))
+    expect(figures.length).toBeGreaterThan(5)
+    for (const figure of figures) expect(figure.get(PDFName.of('Alt'))).toBeDefined()
+  })
+})
