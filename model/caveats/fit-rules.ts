@@ -30,13 +30,15 @@ export const fitRules: readonly CaveatRule[] = [
     return top !== undefined && top > concentrated ? [caveat('caution', 'concentration', { share: top })] : []
   },
   ({ findings }) => {
-    const moved = [
-      ...findings.venues.map((level) => ({ ...level, factor: 'venue' })),
-      ...findings.topics.map((level) => ({ ...level, factor: 'topic' })),
-      ...findings.posters.map((level) => ({ ...level, factor: 'poster' })),
-      ...findings.factors.flatMap(({ factor, levels }) => levels.map((level) => ({ ...level, factor }))),
-    ].filter(({ share, share_previous: before }) => before !== null && Math.abs(share - before) >= mixMoved)
-    return moved.map(({ factor, label, share, share_previous }) => caveat('note', 'mix-moved', { factor, level: label, from: share_previous ?? 0, to: share }))
+    const factors = [
+      { factor: 'venue', levels: findings.venues }, { factor: 'topic', levels: findings.topics }, { factor: 'poster', levels: findings.posters }, ...findings.factors,
+    ]
+    // one caveat a factor, for the level that moved most: the others' shares had to give way
+    return factors.flatMap(({ factor, levels }) => {
+      const moves = levels.flatMap(({ label, share, share_previous: before }) => (before === null ? [] : [{ label, from: before, to: share }]))
+      const most = moves.reduce<(typeof moves)[number] | null>((a, b) => (a === null || Math.abs(b.to - b.from) > Math.abs(a.to - a.from) ? b : a), null)
+      return most === null || Math.abs(most.to - most.from) < mixMoved ? [] : [caveat('note', 'mix-moved', { factor, level: most.label, from: most.from, to: most.to })]
+    })
   },
   ({ reading }) => {
     const { columns, previousSteps, periodSteps } = reading

@@ -54,6 +54,8 @@ const part = z.strictObject({
   part: z.string(),
   estimate,
   movement,
+  /** Of a mix: the level whose change of share did most in the part's direction; its own estimate. null for other parts. */
+  leading: z.strictObject({ level: z.string(), label: z.string(), share_from: share, share_to: share, estimate }).nullable(),
 })
 
 const decomposition = z.strictObject({

@@ -23,9 +23,9 @@ export function readDecomposition(reading: Reading): Findings['decomposition'] {
   const parts = decompose(reading)
   if (parts === null) return null
   const { tables: { timeline }, summary } = reading
-  const found = parts.columns.map(({ part, column }) => {
+  const found = parts.columns.map(({ part, column, mix }) => {
     const estimate = summary.estimate(column)
-    return { part, estimate, movement: movementOf(estimate) }
+    return { part, estimate, movement: movementOf(estimate), leading: mix === null ? null : leadingLevel(reading, mix, estimate.mean) }
   })
   const moved = found.filter(({ part, movement }) => part !== 'opinion' && movement !== 'not-established')
   const largest = moved.reduce<(typeof moved)[number] | null>((a, b) => (a === null || Math.abs(b.estimate.mean) > Math.abs(a.estimate.mean) ? b : a), null)
@@ -39,7 +39,22 @@ export interface Decomposition {
   /** On the score's scale. */
   readonly rawChange: number
   /** The parts, draw by draw; they sum to `rawChange` in each. */
-  readonly columns: readonly { readonly part: string; readonly column: Float64Array }[]
+  readonly columns: readonly DecompositionPart[]
+}
+
+export interface DecompositionPart {
+  readonly part: string
+  readonly column: Float64Array
+  /** Of a mix: what its levels did; null for other parts. */
+  readonly mix: MixChange | null
+}
+
+interface MixChange {
+  readonly factor: number
+  readonly before: Float64Array
+  readonly after: Float64Array
+  /** Rate of each level at the mean of before and after, by draw. */
+  readonly rates: readonly Float64Array[]
 }
 
 /** The parts as draws; see `readDecomposition`. */
@@ -53,17 +68,30 @@ export function decompose(reading: Reading): Decomposition | null {
   const opinion = difference(after.opinion, before.opinion)
   const timing = difference(difference(after.movement, after.opinion), difference(before.movement, before.opinion))
   const venue = splitVenues(offset[0], before, after, count)
+  const mixOf = (factor: number, rates: readonly Float64Array[]): MixChange => ({ factor, before: before.shares[factor], after: after.shares[factor], rates })
+  const venueRates = offset[0].map((alpha, v) => sum(alpha, average([before.drift[v], after.drift[v]])))
   const others = factors.slice(1).map(({ name }, i) => ({
-    part: `${name}_mix`,
+    part: `${name}_mix`, mix: mixOf(i + 1, offset[i + 1]),
     column: combine(offset[i + 1], difference(after.shares[i + 1], before.shares[i + 1]), count),
   }))
-  const explained = [
-    { part: 'opinion', column: opinion }, { part: 'timing', column: timing },
-    { part: 'venue_mix', column: venue.mix }, { part: 'venue_drift', column: venue.drift }, ...others,
+  const explained: readonly DecompositionPart[] = [
+    { part: 'opinion', column: opinion, mix: null }, { part: 'timing', column: timing, mix: null },
+    { part: 'venue_mix', column: venue.mix, mix: mixOf(0, venueRates) }, { part: 'venue_drift', column: venue.drift, mix: null }, ...others,
   ]
   const rawChange = after.raw - before.raw
   const fitted = explained.reduce<Float64Array>((total, { column }) => sum(total, column), new Float64Array(count))
-  return { rawChange, columns: [...explained, { part: 'unexplained', column: fitted.map((x) => rawChange - x) }] }
+  return { rawChange, columns: [...explained, { part: 'unexplained', column: fitted.map((x) => rawChange - x), mix: null }] }
+}
+
+/**
+ * The level that did most of a mix's part. Each level's own part is its change of share times its rate against the target mix;
+ * changes of shares sum to 0, so that these add up to the part whatever the rates are told against.
+ */
+function leadingLevel({ tables, centre, summary }: Reading, { factor, before, after, rates }: MixChange, part: number) {
+  const own = rates.map((rate, l) => summary.estimate(difference(rate, centre[factor]).map((x) => x * (after[l] - before[l]))))
+  const leading = own.reduce((best, estimate, l) => (estimate.mean * Math.sign(part) > own[best].mean * Math.sign(part) ? l : best), 0)
+  const { name, label } = tables.factors[factor].levels[leading]
+  return { level: name, label, share_from: before[leading], share_to: after[leading], estimate: own[leading] }
 }
 
 /** One period's pooled average and what it is made of. */

@@ -87,8 +87,16 @@ function decomposition(): NonNullable<Findings['decomposition']> {
   const rest = rawChange - means.reduce((sum, [, value]) => sum + value, 0)
   return {
     from: '2026-09', to: '2026-10', raw_change: rawChange, largest: 'venue_mix',
-    parts: [...means, ['unexplained', rest, 0.3, 'not-established'] as const].map(([part, value, half, movement]) => ({ part, estimate: around(value, half), movement })),
+    parts: [...means, ['unexplained', rest, 0.3, 'not-established'] as const].map(([part, value, half, movement]) => ({ part, estimate: around(value, half), movement, leading: leadingOf(part, value) })),
   }
+}
+
+/** The level that did most of a mix, as the sample's story has it. */
+function leadingOf(part: string, value: number): NonNullable<Findings['decomposition']>['parts'][number]['leading'] {
+  const estimate = around(0.8 * value, 0.3)
+  if (part === 'venue_mix') return { level: 'boards', label: 'Discussion boards', share_from: 0.33, share_to: 0.4, estimate }
+  if (part === 'topic_mix') return { level: 'punctuality', label: 'Punctuality', share_from: 0.24, share_to: 0.46, estimate }
+  return part === 'poster_mix' ? { level: 'prolific', label: 'Prolific posters', share_from: 0.3, share_to: 0.34, estimate } : null
 }
 
 function venues(): Findings['venues'] {

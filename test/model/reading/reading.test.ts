@@ -52,6 +52,27 @@ describe('decomposition of the change in the raw average', () => {
     expect(readDecomposition(reading)!.parts.map(({ part }) => part)).toEqual(['opinion', 'timing', 'venue_mix', 'venue_drift', 'topic_mix', 'poster_mix', 'unexplained'])
   })
 
+  test('levels of a mix add up to its part, and the leading one is told', () => {
+    const { parts } = readDecomposition(reading)!
+    const { columns, mix, centre, tables: { factors } } = reading
+    const topic = parts.find(({ part }) => part === 'topic_mix')!
+    const level = factors[1].levels.findIndex(({ name }) => name === topic.leading!.level)
+    const sharesOf = (month: string) => {
+      const { cells, timeline } = tables
+      const inMonth = Array.from({ length: cells.count }, (_, c) => c).filter((c) => timeline.periods[timeline.periodOf[cells.step[c]]].name === month)
+      const all = inMonth.reduce((total, c) => total + cells.mentions[c], 0)
+      return factors[1].levels.map((_, l) => inMonth.reduce((total, c) => total + (cells.levels[1][c] === l ? cells.mentions[c] : 0), 0) / all)
+    }
+    const [before, after] = [sharesOf('2025-07'), sharesOf('2025-08')]
+    expect(topic.leading!.share_from).toBeCloseTo(before[level], 12)
+    expect(topic.leading!.share_to).toBeCloseTo(after[level], 12)
+    const own = factors[1].levels.map((_, l) => 100 * (after[l] - before[l]) * columns.offset[1][l].reduce((total, x, i) => total + (x - centre[1][i]) / columns.count, 0))
+    expect(own.reduce((a, b) => a + b, 0)).toBeCloseTo(topic.estimate.mean, 9)
+    expect(topic.leading!.estimate.mean).toBeCloseTo(own[level], 9)
+    expect(Math.max(...own.map((x) => x * Math.sign(topic.estimate.mean)))).toBeCloseTo(own[level] * Math.sign(topic.estimate.mean), 9)
+    expect(mix.shares[1].length).toBe(own.length)
+  })
+
   test('the opinion part is the change of adjusted opinion', () => {
     const opinion = readDecomposition(reading)!.parts[0].estimate
     const { change } = readOpinion(reading)

@@ -1,0 +1,87 @@
+import { mkdtemp, readFile, readdir, rm } from 'node:fs/promises'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+import { Writable } from 'node:stream'
+import { afterAll, beforeAll, describe, expect, test } from 'vitest'
+import { runCommandLine } from '../../../generator/cli/command-line.ts'
+
+const account = join(import.meta.dirname, '../intake/fixtures/open-cells')
+let scratch: string
+beforeAll(async () => { scratch = await mkdtemp(join(tmpdir(), 'command-')) })
+afterAll(() => rm(scratch, { recursive: true, force: true }))
+
+async function run(...args: string[]): Promise<{ readonly code: number; readonly out: string; readonly err: string }> {
+  const collect = () => {
+    const chunks: string[] = []
+    return { chunks, stream: new Writable({ write: (chunk: Buffer, _, done) => { chunks.push(String(chunk)); done() } }) }
+  }
+  const [out, err] = [collect(), collect()]
+  const code = await runCommandLine(args, { out: out.stream, err: err.stream })
+  return { code, out: out.chunks.join(''), err: err.chunks.join('') }
+}
+
+describe('check', () => {
+  test('prints the accounting, exit code 0', async () => {
+    const { code, out } = await run('check', account)
+    expect(code).toBe(0)
+    expect(out).toMatch(/received\s+424\n/)
+    expect(out).toMatch(/modelled\s+424\n/)
+  })
+
+  test('--json: one object on stdout, as the contract has it', async () => {
+    const { code, out } = await run('check', account, '--json')
+    expect(code).toBe(0)
+    expect(JSON.parse(out)).toMatchObject({ ok: true, faults: [], accounting: { received: 424, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 424 } })
+  })
+
+  test('a folder without an account file: exit code 1, the fault as data and in words', async () => {
+    const { code, out, err } = await run('check', scratch, '--json')
+    expect(code).toBe(1)
+    expect(JSON.parse(out)).toMatchObject({ ok: false, faults: [{ code: 'account-missing', place: expect.stringContaining('account.yaml') as string }] })
+    expect(err).toContain('account.yaml')
+  })
+})
+
+describe('build', () => {
+  test('--no-pdf --quiet: says nothing, writes everything but the PDF', async () => {
+    const out = join(scratch, 'draft')
+    expect(await run('build', account, '--out', out, '--no-pdf', '--quiet')).toEqual({ code: 0, out: '', err: '' })
+    expect((await readdir(out)).sort()).toEqual(expect.arrayContaining(['findings.json', 'review.html', 'tables']))
+    expect(await readdir(out)).not.toContain('review.pdf')
+  })
+
+  test('--period: an earlier one; --json says which', async () => {
+    const { code, out } = await run('build', account, '--out', join(scratch, 'july'), '--no-pdf', '--json', '--period', '2025-07')
+    expect(code).toBe(0)
+    expect(JSON.parse(out)).toMatchObject({ ok: true, faults: [], drafts: [{ account: 'skerrow-ferries', period: '2025-07' }] })
+    const findings = JSON.parse(await readFile(join(scratch, 'july/findings.json'), 'utf8')) as { opinion: { series: { step: string }[] } }
+    // a review reads nothing dated after its period
+    expect(findings.opinion.series.at(-1)!.step < '2025-08-01').toBe(true)
+  })
+
+  test('one faulty account does not stop the others', async () => {
+    const { code, out } = await run('build', scratch, account, '--no-pdf', '--json', '--quiet', '--period', '2025-06')
+    expect(code).toBe(1)
+    expect(JSON.parse(out)).toMatchObject({ ok: false, drafts: [{ period: '2025-06' }], faults: [{ code: 'account-missing' }] })
+    await rm(join(account, 'drafts'), { recursive: true })
+  })
+})
+
+describe('usage', () => {
+  test.each([[['bild']], [['build']], [['check', account, '--no-such']], [['build', account, '--seed', 'x']], [['build', account, account, '--out', 'x']]])('%j: exit code 2', async (args) => {
+    expect((await run(...args)).code).toBe(2)
+  })
+
+  test('--help and --version: exit code 0', async () => {
+    expect((await run('--help')).code).toBe(0)
+    expect((await run('build', '--help')).out).toContain('--no-pdf')
+    expect((await run('--version')).out).toMatch(/^\d+\.\d+\.\d+\n$/)
+  })
+})
+
+test('a machine without the browser that was asked for: exit code 3, and what to do', async () => {
+  const { code, err } = await run('build', account, '--out', join(scratch, 'none'), '--browser', join(scratch, 'no-browser'))
+  expect(code).toBe(3)
+  expect(err).toContain('no-browser')
+  expect(await readdir(scratch)).not.toContain('none')
+})
