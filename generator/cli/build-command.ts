@@ -1,7 +1,7 @@
 import { basename, relative, resolve } from 'node:path'
 import type { Browser } from 'puppeteer'
 import { readAccount } from '../account/read-account.ts'
-import { buildReview, type Draft } from '../build/build-review.ts'
+import { buildReview, type Draft } from '../review/build-review.ts'
 import type { Fault } from '../faults/fault.ts'
 import { openBrowser } from '../print/open-browser.ts'
 import type { Program } from '../program/program.ts'

@@ -1,6 +1,6 @@
 import { basename, resolve } from 'node:path'
 import type { Accounting } from '../../model/intake/intake-tables.ts'
-import { checkAccount } from '../build/check-account.ts'
+import { checkAccount } from '../review/check-account.ts'
 import type { Program } from '../program/program.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
 import { showProgress } from './show-progress.ts'

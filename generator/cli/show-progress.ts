@@ -1,5 +1,5 @@
 import { Listr, type ListrTaskWrapper, type DefaultRenderer, type SimpleRenderer } from 'listr2'
-import { silent, type Progress, type Stage } from '../build/stages.ts'
+import { silent, type Progress, type Stage } from '../review/stages.ts'
 import type { Speaker } from './speaker.ts'
 
 const titles: Readonly<Record<Stage, string>> = {
