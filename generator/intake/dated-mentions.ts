@@ -18,14 +18,30 @@ const second = 1_000_000
 const margin = 3 * 86_400
 const readable = `(fate = 0 OR fate > ${lastReject})`
 
+interface Clocks {
+  readonly low: bigint | null
+  readonly high: bigint | null
+}
+
 /** Read the clocks of the account's zone over the stretch of time that `scanned` covers. */
 export async function dateMentions(database: Database, account: Account): Promise<Dated> {
-  const [range] = await database.rows<{ low: bigint | null; high: bigint | null }>(`SELECT min(clock) AS low, max(clock) AS high FROM scanned WHERE ${readable}`)
-  const [low, high] = [Number(range!.low ?? 0) / second, Number(range!.high ?? 0) / second]
-  const zone = zoneSql(zoneClock(account.timeZone, low - margin, high + margin))
-  const [dated] = await database.rows<{ first: number | null; last: number | null; nonexistent: bigint; doubled: bigint }>(
-    `SELECT min(${zone.day}) FILTER (fate = 0) AS first, max(${zone.day}) FILTER (fate = 0) AS last, `
-    + `count(*) FILTER (${zone.nonexistent}) AS nonexistent, count(*) FILTER (${zone.doubled}) AS doubled FROM scanned WHERE ${readable}`)
-  const { first, last, nonexistent, doubled } = dated!
-  return { zone, span: first === null || last === null ? null : { first, last }, nonexistent: Number(nonexistent), doubled: Number(doubled) }
+  const [range, inScope] = await Promise.all([readable, 'fate = 0'].map((which) => clocksOf(database, which)))
+  const zone = zoneSql(zoneClock(account.timeZone, Number(range!.low ?? 0) / second - margin, Number(range!.high ?? 0) / second + margin))
+  const [ruled] = await database.rows<{ nonexistent: bigint; doubled: bigint }>(
+    `SELECT count(*) FILTER (${zone.nonexistent}) AS nonexistent, count(*) FILTER (${zone.doubled}) AS doubled FROM scanned WHERE ${readable}`)
+  return { zone, span: await spanOf(database, zone, inScope!), nonexistent: Number(ruled!.nonexistent), doubled: Number(ruled!.doubled) }
+}
+
+async function clocksOf(database: Database, which: string): Promise<Clocks> {
+  const [clocks] = await database.rows<Clocks>(`SELECT min(clock) AS low, max(clock) AS high FROM scanned WHERE ${which}`)
+  return clocks!
+}
+
+/** A clock is less than `margin` from its day in the zone, whatever the offset: only mentions near the ends are looked at. */
+async function spanOf(database: Database, zone: ZoneSql, { low, high }: Clocks): Promise<Dated['span']> {
+  if (low === null || high === null) return null
+  const near = (bound: string): string => `FROM scanned WHERE fate = 0 AND clock ${bound}`
+  const [span] = await database.rows<{ first: number; last: number }>(`SELECT (SELECT min(${zone.day}) ${near(`<= ${low + BigInt(margin * second)}`)}) AS first,
+    (SELECT max(${zone.day}) ${near(`>= ${high - BigInt(margin * second)}`)}) AS last`)
+  return span!
 }

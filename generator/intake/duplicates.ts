@@ -6,6 +6,8 @@ export interface Duplicates {
   readonly repost: number
 }
 
+/** The upper half of an id's hash. */
+const half = '(id >> 32)::UINTEGER'
 const week = 7 * 86_400 * 1_000_000
 
 /**
@@ -23,13 +25,15 @@ export async function findDuplicates(database: Database, zone: ZoneSql, eligible
 }
 
 async function findSameIds(database: Database, eligible: string): Promise<number> {
-  // Sorting one number a row and comparing neighbours takes half the time of grouping by as many different numbers.
-  await database.run(`CREATE TEMP TABLE id_twice AS SELECT DISTINCT id FROM (
-    SELECT id, lag(id) OVER () AS before FROM (SELECT id FROM scanned WHERE ${eligible} AND id IS NOT NULL ORDER BY id)) WHERE id = before`)
+  // Sorting one number a row and comparing neighbours takes half the time of grouping by as many different numbers, and
+  // sorting half the number again half of that: of the few ids that share it, the whole is looked at.
+  await database.run(`CREATE TEMP TABLE half_twice AS SELECT DISTINCT half FROM (
+    SELECT half, lag(half) OVER () AS before FROM (SELECT ${half} AS half FROM scanned WHERE ${eligible} AND id IS NOT NULL ORDER BY half)) WHERE half = before`)
+  await database.run(`CREATE TEMP TABLE id_twice AS SELECT id FROM scanned JOIN half_twice ON half = ${half} WHERE ${eligible} AND id IS NOT NULL GROUP BY id HAVING count(*) > 1`)
   await database.run(`INSERT INTO repeated SELECT row FROM (
     SELECT scanned.rowid AS row, row_number() OVER (PARTITION BY id ORDER BY scanned.rowid) AS place
     FROM scanned JOIN id_twice USING (id) WHERE ${eligible}) WHERE place > 1`)
-  await database.run('DROP TABLE id_twice')
+  await database.run('DROP TABLE id_twice; DROP TABLE half_twice')
   return count(database, 'repeated')
 }
 

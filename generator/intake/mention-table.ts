@@ -9,7 +9,7 @@ import { filledColumns } from './scan-mentions.ts'
 import type { Spellings } from './spellings.ts'
 import type { ZoneSql } from './time-sql.ts'
 
-/** Names of the numbers in the table `mention`. */
+/** Names of the numbers in `mention`. */
 export interface MentionNames {
   /** Day number on which each step begins. */
   readonly steps: readonly number[]
@@ -39,14 +39,15 @@ const secondsTo1970 = -Date.UTC(1900, 0, 1) / 1000
 const mostLevels = 2000
 
 /**
- * The modelled mentions as numbers only: `mention (author, moment, slot, score, source, factor_0, ...)`, sorted by author
- * and moment. The author, one handle in one venue, is a hash or NULL; the factor `poster` is still to come.
+ * The modelled mentions as numbers only, as views of `scanned`: `kept` are its rows that are modelled, `mention (author,
+ * moment, slot, score, source, clock, factor_0, ...)` what they say. The author, one handle in one venue, is a hash or
+ * NULL; the factor `poster` is still to come. Views, since writing a row a mention costs as much as working it out.
  *
  * @param eligible - SQL condition on `scanned`: readable and in scope
  * @param span - day numbers of the first and last mention that can be eligible
  * @throws {InputFault} `too-many-levels`
  */
-export async function createMentions(
+export async function viewMentions(
   database: Database, account: Account, zone: ZoneSql, eligible: string, span: { readonly first: number; readonly last: number }, naming: Naming,
 ): Promise<MentionNames> {
   const steps = stepsBetween(account.grid, span.first, span.last)
@@ -54,16 +55,20 @@ export async function createMentions(
   const periods = [...new Set(periodNames)]
   await createDays(database, steps, periodNames.map((name) => periods.indexOf(name)), span.last)
   const [repeated] = await database.rows<{ rows: bigint }>('SELECT count(*) AS rows FROM repeated')
-  const kept = `scanned WHERE ${eligible}${repeated!.rows === 0n ? '' : ' AND scanned.rowid NOT IN (SELECT row FROM repeated)'}`
+  await database.run(`CREATE TEMP VIEW kept AS SELECT *, rowid AS row FROM scanned WHERE ${eligible}${repeated!.rows === 0n ? '' : ' AND scanned.rowid NOT IN (SELECT row FROM repeated)'}`)
   const coded: FactorSql[] = []
-  for (const [index, factor] of account.factors.entries()) coded.push(factor === 'poster' ? { levels: posterClasses, level: '', joins: '' } : await nameLevels(database, factor, index, kept, naming))
+  for (const [index, factor] of account.factors.entries()) coded.push(factor === 'poster' ? { levels: posterClasses, level: '', joins: '' } : await nameLevels(database, factor, index, naming))
   const read = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
   const author = filledColumns(account).author ? `CASE WHEN handle IS NOT NULL THEN hash(xor(handle, hash(${coded[0]!.level}))) END` : 'NULL::UBIGINT'
-  const seconds = `((instant + ${secondsTo1970 * 1_000_000}) // 1000000)::UBIGINT`
-  await database.run(`CREATE TEMP TABLE mention AS
-    SELECT ${author} AS author, ${seconds} * ${2 ** momentBits} + row::UBIGINT AS moment, slot, score, source, ${read.map((index) => `${coded[index]!.level} AS factor_${index}`).join(', ')}
-    FROM (SELECT *, ${zone.instant} AS instant, ${zone.day} AS day, rowid AS row FROM ${kept}) JOIN step_day USING (day) ${coded.map((factor) => factor.joins).join(' ')} ORDER BY author, moment`)
+  await database.run(`CREATE TEMP VIEW mention AS
+    SELECT ${author} AS author, ${secondsSql('instant')} * ${2 ** momentBits} + row::UBIGINT AS moment, slot, score, source, clock, ${read.map((index) => `${coded[index]!.level} AS factor_${index}`).join(', ')}
+    FROM (SELECT *, ${zone.instant} AS instant, ${zone.day} AS day FROM kept) JOIN step_day USING (day) ${coded.map((factor) => factor.joins).join(' ')}`)
   return { steps, periods, levels: coded.map((factor) => factor.levels) }
+}
+
+/** Whole seconds since 1900 of an instant in microseconds since 1970. */
+export function secondsSql(instant: string): string {
+  return `((${instant} + ${secondsTo1970 * 1_000_000}) // 1000000)::UBIGINT`
 }
 
 /** `step_day (day, slot)`: the step and the period that each day belongs to. */
@@ -81,9 +86,9 @@ interface FactorSql {
 }
 
 /** Name every spelling of a factor; `code_level_N (code, level)` and `other_level_N (other, level)` hold the numbers. */
-async function nameLevels(database: Database, factor: string, index: number, kept: string, { spellings, levelOf }: Naming): Promise<FactorSql> {
+async function nameLevels(database: Database, factor: string, index: number, { spellings, levelOf }: Naming): Promise<FactorSql> {
   const found = await database.rows<{ code: number | null; other: string | null; mentions: bigint }>(
-    `SELECT code_${index} AS code, other_${index} AS other, count(*) AS mentions FROM ${kept} GROUP BY ALL ORDER BY ALL LIMIT ${mostLevels + 1}`)
+    `SELECT code_${index} AS code, other_${index} AS other, count(*) AS mentions FROM kept GROUP BY ALL ORDER BY ALL LIMIT ${mostLevels + 1}`)
   if (found.length > mostLevels) throw new InputFault([faultOf('too-many-levels', `mentions ${factor}`, { factor, most: mostLevels })])
   const named = found.map(({ code, other, mentions }) => {
     const spelling = code === null ? other ?? '' : spellings[index]![code]!

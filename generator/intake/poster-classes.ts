@@ -1,12 +1,15 @@
 import type { Account } from '../account/account.ts'
 import type { Database } from './database.ts'
-import { momentBits, slotBits } from './mention-table.ts'
+import { momentBits, secondsSql, slotBits } from './mention-table.ts'
+import type { ZoneSql } from './time-sql.ts'
 
 /** Ninety days in seconds. */
 const window = 90 * 86_400
+/** A clock without offset is less than this many microseconds from its instant. */
+const clockMargin = 2 * 86_400 * 1_000_000
 
 /**
- * Make `classified` of `mention`, still sorted by author and moment: every mention with its poster class, and with what
+ * Make `classified` of `mention`, sorted by author and moment: every mention with its poster class, and with what
  * its neighbours say, so that later counts need not group by author where an author has but one mention.
  *
  * The class goes by the author's mentions in the 90 days up to and including this one (of several in one second, those
@@ -16,16 +19,19 @@ const window = 90 * 86_400
  * Added columns, each true for mentions without an author: `first_in_step`: none of its author's before it in the step;
  * `alone_in_step`, `alone_in_period`, `alone`: the only one of its author in the step, the period, at all.
  */
-export async function classifyPosters(database: Database, account: Account): Promise<void> {
+export async function classifyPosters(database: Database, account: Account, zone: ZoneSql): Promise<void> {
   const poster = account.factors.indexOf('poster')
   const others = account.factors.map((_, index) => `factor_${index}`).filter((_, index) => index !== poster)
-  const openings = poster < 0 ? [] : await createEarly(database)
+  const openings = poster < 0 ? [] : await createEarly(database, zone)
   const classed = poster < 0 ? '' : `, CAST(CASE WHEN author IS NULL THEN 3 ELSE ${classOf(account)} END AS UTINYINT) AS factor_${poster}`
-  const neighbours = ['author', 'slot'].flatMap((column) => [`lag(${column}) OVER () AS ${column}_before`, `lead(${column}) OVER () AS ${column}_after`])
-  const far = poster < 0 ? [] : [account.posters.occasional, account.posters.regular].flatMap((back) => [`lag(author, ${back}) OVER () AS author_${back}`, `lag(moment, ${back}) OVER () AS moment_${back}`])
+  const backs = poster < 0 ? [] : [account.posters.occasional, account.posters.regular]
+  const neighbours = [
+    ...[...new Set([1, ...backs])].map((back) => `lag(author, ${back}) OVER () AS author_${back}`), ...backs.map((back) => `lag(moment, ${back}) OVER () AS moment_${back}`),
+    'lead(author) OVER () AS author_after', 'lag(slot) OVER () AS slot_before', 'lead(slot) OVER () AS slot_after',
+  ]
   // Only the mentions of an opening are looked up: a key that is NULL meets nothing, and costs nothing.
   const opening = openings.length === 0 ? 'NULL' : `CASE ${openings.map(({ source, until }) => `WHEN source = ${source} AND moment < ${until} THEN author`).join(' ')} END`
-  const before = 'author_before IS DISTINCT FROM author'
+  const before = 'author_1 IS DISTINCT FROM author'
   const after = 'author_after IS DISTINCT FROM author'
   const period = (column: string): string => `(${column} >> ${slotBits})`
   await database.run(`CREATE TEMP TABLE classified AS SELECT author, (slot & ${2 ** slotBits - 1})::USMALLINT AS step, ${period('slot')}::USMALLINT AS period, score, ${others.join(', ')}${classed},
@@ -33,18 +39,19 @@ export async function classifyPosters(database: Database, account: Account): Pro
       author IS NULL OR ((${before} OR slot_before <> slot) AND (${after} OR slot_after <> slot)) AS alone_in_step,
       author IS NULL OR ((${before} OR ${period('slot_before')} <> ${period('slot')}) AND (${after} OR ${period('slot_after')} <> ${period('slot')})) AS alone_in_period,
       author IS NULL OR (${before} AND ${after}) AS alone
-    FROM (SELECT *, ${opening} AS early_author, ${[...neighbours, ...far].join(', ')} FROM mention)
+    FROM (SELECT *, ${opening} AS early_author, ${neighbours.join(', ')} FROM (SELECT * FROM mention ORDER BY author, moment))
     ${poster < 0 ? '' : 'LEFT JOIN early ON early.author_early = early_author AND early.source_early = source'}`)
-  await database.run(`DROP TABLE mention${poster < 0 ? '' : '; DROP TABLE early'}`)
 }
 
 /** `early (author_early, source_early, early_posts)`: how often each author posted in the first 90 days of each source; returns the moments at which those end. */
-async function createEarly(database: Database): Promise<readonly { readonly source: number; readonly until: bigint }[]> {
-  const openings = await database.rows<{ source: number; since: bigint; until: bigint }>(`SELECT source, (since << ${momentBits}) AS since, ((since + ${window}) << ${momentBits}) AS until
-    FROM (SELECT source, min(moment) >> ${momentBits} AS since FROM mention GROUP BY source) ORDER BY source`)
-  const counts = openings.map(({ source, since, until }) =>
-    `SELECT author, ${source}::USMALLINT, count(*) FROM mention WHERE author IS NOT NULL AND moment >= ${since} AND moment < ${until} GROUP BY author HAVING count(*) > 1`)
-  await database.run(`CREATE TEMP TABLE early (author_early UBIGINT, source_early USMALLINT, early_posts BIGINT)`)
+async function createEarly(database: Database, zone: ZoneSql): Promise<readonly { readonly source: number; readonly until: bigint }[]> {
+  // The earliest clock has the earliest instant, among those with and those without an offset: only these few are converted.
+  const openings = await database.rows<{ source: number; until: bigint; clock: bigint }>(`
+    SELECT source, (min(${secondsSql(zone.instant)}) + ${window}) << ${momentBits} AS until, min(${zone.instant}) + ${window * 1_000_000 + clockMargin} AS clock
+    FROM (SELECT source, zoned, min(clock) AS clock FROM kept GROUP BY source, zoned) GROUP BY source ORDER BY source`)
+  const counts = openings.map(({ source, until, clock }) =>
+    `SELECT author, source, count(*) FROM mention WHERE author IS NOT NULL AND source = ${source} AND clock < ${clock} AND moment < ${until} GROUP BY author, source HAVING count(*) > 1`)
+  await database.run('CREATE TEMP TABLE early (author_early UBIGINT, source_early USMALLINT, early_posts BIGINT)')
   if (counts.length > 0) await database.run(`INSERT INTO early ${counts.join(' UNION ALL ')}`)
   return openings
 }

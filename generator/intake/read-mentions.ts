@@ -7,7 +7,7 @@ import { findDuplicates, type Duplicates } from './duplicates.ts'
 import { groupAuthors, type AuthorGroups } from './group-authors.ts'
 import { groupCells, sumCells } from './group-cells.ts'
 import { groupVariation } from './group-variation.ts'
-import { createMentions, type MentionNames, type Naming } from './mention-table.ts'
+import { viewMentions, type MentionNames, type Naming } from './mention-table.ts'
 import { classifyPosters } from './poster-classes.ts'
 import { filledColumns, lastReject, otherBrandReasons } from './scan-mentions.ts'
 
@@ -41,8 +41,8 @@ export async function settleMentions(
   const outOfScope = await countOutOfScope(database, `NOT (${zone.until(end)})`)
   if (span === null || span.first > end) return { duplicates, outOfScope, grouped: null }
   progress('Naming and classing mentions')
-  const names = await createMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, naming)
-  await classifyPosters(database, account)
+  const names = await viewMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, naming)
+  await classifyPosters(database, account, zone)
   progress('Grouping cells')
   await sumCells(database, account.factors)
   const parts = await groupCells(database, account.factors, names)

@@ -107,7 +107,7 @@ function scanSql(account: Account, source: MentionSource, sourceIndex: number, r
   const score = scoreSql('scored', source.score)
   const read = `SELECT ${fieldsSql(account, source, relation).join(', ')} FROM ${relation.sql}`
   const factors = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
-  const timed = [[...time.drafts, ...factors.map((index) => `${codeSql(`factor_${index}`, spellings[index]!)} AS code_${index}`)], [...time.readings, `${score.score} AS score`], [time.clock, time.zoned]]
+  const timed = [[time.draft, ...factors.map((index) => `${codeSql(`factor_${index}`, spellings[index]!)} AS code_${index}`)], [time.zoned, `${score.score} AS score`], [time.reading], [time.clock]]
     .reduce((inner, columns) => `SELECT *, ${columns.join(', ')} FROM (${inner})`, read)
   const unscored = `CASE WHEN ${score.outside} THEN 4 ELSE 3 END`
   const columns: Readonly<Record<string, string>> = {

@@ -1,4 +1,4 @@
-import type { ZoneClock } from '../calendar/time-zone.ts'
+import type { Transition, ZoneClock } from '../calendar/time-zone.ts'
 import { literal } from './database.ts'
 
 /**
@@ -14,14 +14,14 @@ const shift = 200_000
 const earliest = Date.UTC(1900, 0, 1) * 1000
 const latest = Date.UTC(2200, 0, 1) * 1000
 
-/** Columns to be selected in three levels, each from the one before, so that nothing is worked out twice. */
+/** Columns to be selected in four levels, each from the one before, so that nothing is worked out twice. */
 export interface TimeSql {
-  readonly drafts: readonly string[]
-  readonly readings: readonly string[]
-  /** `clock`: BIGINT or NULL. */
-  readonly clock: string
+  readonly draft: string
   /** `zoned`: BOOLEAN. */
   readonly zoned: string
+  readonly reading: string
+  /** `clock`: BIGINT or NULL. */
+  readonly clock: string
 }
 
 /**
@@ -31,18 +31,19 @@ export interface TimeSql {
 export function timeSql(text: string, format: string | null): TimeSql {
   const clock = `CASE WHEN reading BETWEEN ${earliest} AND ${latest - 1} THEN reading END AS clock`
   if (format !== null) {
-    return { drafts: [`CASE WHEN lower(trim(${text})) NOT IN ('epoch', 'infinity', '-infinity') THEN epoch_us(try_strptime(${text}, ${literal(format)})) END AS wall`], readings: ['wall AS reading'], clock, zoned: `${format.includes('%z')} AS zoned` }
+    return {
+      draft: `CASE WHEN lower(trim(${text})) NOT IN ('epoch', 'infinity', '-infinity') THEN epoch_us(try_strptime(${text}, ${literal(format)})) END AS wall`,
+      zoned: `${format.includes('%z')} AS zoned`, reading: 'wall AS reading', clock,
+    }
   }
   // Nearly every time is 19 characters without an offset, or those and a Z: no pattern need be matched for them.
   const plain = `strlen(${text}) = 19 AND (wall % 60000000 <> 0 OR ${text}[17] = ':')`
   const offset = `regexp_matches(${text}, ':\\d\\d(:\\d\\d(\\.\\d+)?)? ?(Z|z|UTC|[+-]\\d\\d(:?\\d\\d)?)\\s*$')`
   return {
-    drafts: [`CASE WHEN ${text} < ':' THEN epoch_us(TRY_CAST(${text} AS TIMESTAMP)) END AS wall`],
-    readings: [
-      `CASE WHEN wall IS NULL THEN ${otherForms(text)} WHEN ${plain} OR ends_with(${text}, 'Z') OR NOT ${offset} THEN wall ELSE epoch_us(TRY_CAST(${text} AS TIMESTAMPTZ)) END AS reading`,
-      `CASE WHEN wall IS NULL THEN ${basicIso(text)} IS NULL WHEN ${plain} THEN false ELSE ends_with(${text}, 'Z') OR ${offset} END AS was_zoned`,
-    ],
-    clock, zoned: 'was_zoned AS zoned',
+    draft: `CASE WHEN ${text} < ':' THEN epoch_us(TRY_CAST(${text} AS TIMESTAMP)) END AS wall`,
+    zoned: `CASE WHEN wall IS NULL THEN ${basicIso(text)} IS NULL WHEN ${plain} THEN false ELSE ends_with(${text}, 'Z') OR ${offset} END AS zoned`,
+    reading: `CASE WHEN wall IS NULL THEN ${otherForms(text)} WHEN NOT zoned OR ends_with(${text}, 'Z') THEN wall ELSE epoch_us(TRY_CAST(${text} AS TIMESTAMPTZ)) END AS reading`,
+    clock,
   }
 }
 
@@ -88,12 +89,14 @@ export function zoneSql(clock: ZoneClock): ZoneSql {
   const cases = (branches: readonly string[], otherwise: string): string =>
     (branches.length === 0 ? otherwise : `CASE ${branches.join(' ')} ELSE ${otherwise} END`)
   const offset = cases(transitions.map(({ at, before }) => `WHEN clock < ${at * second} THEN ${before * second}`), String(last * second))
-  const fromWall = cases(transitions.flatMap(({ at, before, after }) => [
-    `WHEN clock < ${(at + before) * second} THEN clock - ${signed(before)}`,
-    ...(after > before ? [`WHEN clock < ${(at + after) * second} THEN ${at * second}`] : []),
-  ]), `clock - ${signed(last)}`)
+  // After clocks were set forward, a wall time that they skipped comes out before the change, and is moved to it.
+  const since = (change: Transition | undefined, offset: number): string =>
+    (change === undefined || change.after < change.before ? `clock - ${signed(offset)}` : `greatest(clock - ${signed(offset)}, ${change.at * second})`)
+  const fromWall = cases(transitions.map(({ at, before }, index) => `WHEN clock < ${(at + before) * second} THEN ${since(transitions[index - 1], before)}`), since(transitions.at(-1), last))
   const skipped = transitions.filter(({ before, after }) => after > before)
-  const wall = cases(skipped.map(({ at, before, after }) =>
+  // A wall time that was skipped has another day only where midnight was.
+  const overMidnight = skipped.filter(({ at, before, after }) => Math.floor((at + before) / 86_400) !== Math.floor((at + after) / 86_400))
+  const wall = cases(overMidnight.map(({ at, before, after }) =>
     `WHEN clock >= ${(at + before) * second} AND clock < ${(at + after) * second} THEN ${(at + after) * second}`), 'clock')
   const within = (ranges: readonly (readonly [number, number])[]): string =>
     (ranges.length === 0 ? 'false' : `NOT zoned AND (${ranges.map(([low, high]) => `(clock >= ${low * second} AND clock < ${high * second})`).join(' OR ')})`)

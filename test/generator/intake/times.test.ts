@@ -15,8 +15,8 @@ async function readings(texts: readonly string[], zone: string, until = '2100-01
     const database = await openDatabase({ readable: [], scratch, threads: 1 })
     const time = timeSql('posted', null)
     const sql = zoneSql(zoneClock(zone, ...range))
-    const levels = [time.drafts, time.readings, [time.clock, time.zoned]]
-      .reduce((inner, columns) => `SELECT *, ${columns.join(', ')} FROM (${inner})`, `SELECT place, ${timeText('raw')} AS posted FROM (VALUES ${texts.map((text, index) => `(${index}, ${literal(text)})`).join(', ')}) AS t(place, raw)`)
+    const levels = [time.draft, time.zoned, time.reading, time.clock]
+      .reduce((inner, column) => `SELECT *, ${column} FROM (${inner})`, `SELECT place, ${timeText('raw')} AS posted FROM (VALUES ${texts.map((text, index) => `(${index}, ${literal(text)})`).join(', ')}) AS t(place, raw)`)
     const rows = await database.rows<{ instant: bigint | null; day: number | null; rule: string; inside: boolean }>(
       `SELECT ${sql.instant} AS instant, ${sql.day} AS day, CASE WHEN ${sql.nonexistent} THEN ' nonexistent' WHEN ${sql.doubled} THEN ' doubled' ELSE '' END AS rule,
         ${sql.until(Date.parse(until) / 86_400_000)} AS inside FROM (${levels}) ORDER BY place`)
