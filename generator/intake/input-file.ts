@@ -8,11 +8,12 @@ import { createGunzip } from 'node:zlib'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
 
-/** A file of the account, looked over once: its hash, and where to read it as UTF-8. */
+/** A file of the account, looked over: where to read it as UTF-8. */
 export interface InputFile {
   /** Relative to the account folder. */
   readonly path: string
-  readonly sha256: string
+  /** Begins the names of its copies in the scratch folder. */
+  readonly copyName: string
   readonly kind: FileKind
   /** Absolute: the file itself, or its transcoded copy in the scratch folder. */
   readonly readable: string
@@ -32,7 +33,7 @@ export function fileKind(name: string): FileKind {
 }
 
 /**
- * Hash a file, see how its text is encoded, and put a UTF-8 copy into the scratch folder if it is not UTF-8.
+ * See how the text of a file is encoded, and put a UTF-8 copy into the scratch folder if it is not UTF-8.
  * Bytes that are neither UTF-8 nor marked as UTF-16 are taken for windows-1252, in which every byte means something.
  *
  * @throws {InputFault} `file-unreadable`
@@ -40,13 +41,29 @@ export function fileKind(name: string): FileKind {
 export async function lookOver(folder: string, file: string, scratch: string): Promise<InputFile> {
   const absolute = path.join(folder, file)
   const kind = fileKind(file)
-  try {
-    const { sha256, encoding, start } = kind === 'parquet' ? await hashOnly(absolute) : await hashText(absolute)
-    const name = createHash('sha256').update(file).digest('hex').slice(0, 24)
-    if (encoding === 'utf-8') return { path: file, sha256, kind, readable: await plainlyNamed(absolute, path.join(scratch, name)), start: decode(start, encoding) }
-    const copy = path.join(scratch, `${name}.txt`)
+  const copyName = createHash('sha256').update(file).digest('hex').slice(0, 24)
+  return readingFile(file, async () => {
+    const { encoding, start } = kind === 'parquet' ? { encoding: 'utf-8' as const, start: Buffer.alloc(0) } : await lookAtText(absolute)
+    const looked = { path: file, copyName, kind, start: decode(start, encoding) }
+    if (encoding === 'utf-8') return { ...looked, readable: await plainlyNamed(absolute, path.join(scratch, copyName)) }
+    const copy = path.join(scratch, `${copyName}.txt`)
     await transcode(absolute, copy, encoding)
-    return { path: file, sha256, kind, readable: copy, start: decode(start, encoding) }
+    return { ...looked, readable: copy }
+  })
+}
+
+/** The SHA-256 of a file's bytes, in hexadecimal digits. @throws {InputFault} `file-unreadable` */
+export async function hashOf(folder: string, file: string): Promise<string> {
+  return readingFile(file, async () => {
+    const hash = createHash('sha256')
+    for await (const chunk of createReadStream(path.join(folder, file), { highWaterMark: 1 << 20 }) as AsyncIterable<Buffer>) hash.update(chunk)
+    return hash.digest('hex')
+  })
+}
+
+async function readingFile<T>(file: string, read: () => Promise<T>): Promise<T> {
+  try {
+    return await read()
   } catch (error) {
     throw new InputFault([faultOf('file-unreadable', file, { reason: error instanceof Error ? error.message.split('\n')[0]! : 'no reason given' })])
   }
@@ -60,22 +77,13 @@ async function plainlyNamed(absolute: string, link: string): Promise<string> {
   return named
 }
 
-interface Looked {
-  readonly sha256: string
+interface LookedAt {
   readonly encoding: Encoding
   readonly start: Buffer
 }
 
-async function hashOnly(absolute: string): Promise<Looked> {
-  const hash = createHash('sha256')
-  for await (const chunk of createReadStream(absolute, { highWaterMark: 1 << 20 }) as AsyncIterable<Buffer>) hash.update(chunk)
-  return { sha256: hash.digest('hex'), encoding: 'utf-8', start: Buffer.alloc(0) }
-}
-
-async function hashText(absolute: string): Promise<Looked> {
-  const hash = createHash('sha256')
+async function lookAtText(absolute: string): Promise<LookedAt> {
   const raw = createReadStream(absolute, { highWaterMark: 1 << 20 })
-  raw.on('data', (chunk) => { hash.update(chunk) })
   let valid = true
   let start = Buffer.alloc(0)
   let rest = Buffer.alloc(0)
@@ -88,7 +96,7 @@ async function hashText(absolute: string): Promise<Looked> {
     rest = Buffer.from(whole.subarray(cut))
   }
   const marked = start[0] === 0xff && start[1] === 0xfe
-  return { sha256: hash.digest('hex'), encoding: marked ? 'utf-16le' : valid && isUtf8(rest) ? 'utf-8' : 'windows-1252', start }
+  return { encoding: marked ? 'utf-16le' : valid && isUtf8(rest) ? 'utf-8' : 'windows-1252', start }
 }
 
 function textOf(raw: ReturnType<typeof createReadStream>, absolute: string): AsyncIterable<Buffer> {

@@ -7,7 +7,7 @@ import { dayNumber } from '../calendar/days.ts'
 import { tablesOf, type Material } from './tables.ts'
 import { openDatabase } from './database.ts'
 import { dateMentions } from './dated-mentions.ts'
-import { lookOver, type InputFile } from './input-file.ts'
+import { hashOf, lookOver, type InputFile } from './input-file.ts'
 import { levelNames } from './level-names.ts'
 import { settleMentions } from './read-mentions.ts'
 import { cellsWithin, daysOf, readReadyMade } from './ready-made.ts'
@@ -28,7 +28,7 @@ export interface IntakeOptions {
 /**
  * From the account's files to the intake tables:
  *
- *   files ──look over──▶ hashes, UTF-8 ──scan──▶ `scanned`, one narrow row a mention ──date──▶ the period under review
+ *   files ──look over──▶ UTF-8 ──scan──▶ `scanned`, one narrow row a mention ──date──▶ the period under review
  *     ──settle──▶ out of scope, duplicates, `classified` ──group──▶ cells and counts ──▶ tables, with ready-made cells
  *
  * Mentions stay inside the database, which can reach the account's files and nothing else. The tables do not depend on
@@ -41,9 +41,13 @@ export async function readIntake(account: Account, options: IntakeOptions = {}):
   try {
     const files = await lookOverAll(account, scratch, options)
     const database = await openDatabase({ readable: [...files.values()].map((file) => file.readable), scratch, threads: options.threads })
+    // Files are hashed while the database works.
+    const hashing = hashAll(account, files.keys())
     try {
-      return tablesOf(account, await gather({ database, account, scratch }, files, options))
+      const [material, hashes] = await Promise.all([gather({ database, account, scratch }, files, options), hashing])
+      return tablesOf(account, { ...material, inputs: material.inputs.map(({ path: file, rows }) => ({ path: file, sha256: hashes.get(file)!, rows })) })
     } finally {
+      await hashing.catch(() => undefined)
       database.close()
     }
   } finally {
@@ -61,7 +65,14 @@ async function lookOverAll(account: Account, scratch: string, options: IntakeOpt
   return files
 }
 
-async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Material> {
+async function hashAll(account: Account, files: Iterable<string>): Promise<ReadonlyMap<string, string>> {
+  const hashes = new Map<string, string>()
+  for (const file of files) hashes.set(file, await hashOf(account.folder, file))
+  return hashes
+}
+
+/** Everything but the hashes of the files. */
+async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Gathered> {
   const { database, account } = place
   const progress = options.progress ?? ((): void => undefined)
   const asked = options.period === undefined ? null : namedPeriod(account, options.period)
@@ -79,9 +90,11 @@ async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, o
     review, scanned, rejected, dated, settled, unmapped: names.unmapped(),
     ready: review === null ? [] : cellsWithin(ready.parts, account.grid, review),
     readyAfter: review === null ? 0 : ready.parts.length - cellsWithin(ready.parts, account.grid, review).length,
-    inputs: [...files.values()].map(({ path: name, sha256 }) => ({ path: name, sha256, rows: ready.rows.get(name) ?? rowsOf(scanned, name) })),
+    inputs: [...files.values()].map(({ path: name }) => ({ path: name, rows: ready.rows.get(name) ?? rowsOf(scanned, name) })),
   }
 }
+
+type Gathered = Omit<Material, 'inputs'> & { readonly inputs: readonly { readonly path: string; readonly rows: number }[] }
 
 interface Scan {
   readonly scanned: readonly ScannedFile[]

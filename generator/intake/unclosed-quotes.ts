@@ -20,7 +20,7 @@ export async function withoutUnclosedQuote(file: InputFile, cut: Cut, scratch: s
   const offset = await unclosedQuote(file.readable, cut)
   if (offset === null) return null
   if (attempt >= most) throw new InputFault([faultOf('file-unreadable', file.path, { reason: `more than ${most} quotes that are never closed` })])
-  const copy = `${scratch}/${file.sha256.slice(0, 24)}-${attempt}.txt`
+  const copy = `${scratch}/${file.copyName}-${attempt}.txt`
   await pipeline(bytesOf(file.readable), (chunks: AsyncIterable<Buffer>) => overwriteLine(chunks, offset), createWriteStream(copy))
   return { ...file, readable: copy }
 }
