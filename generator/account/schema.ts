@@ -4,10 +4,11 @@ import { expectations as expected } from '../faults/catalogue-account.ts'
 
 /** The shape of account.yaml, key by key; what hangs together between keys is in combinations.ts. */
 
-const text = z.string().trim().min(1, expected.text)
+const noNul = (given: string): boolean => !given.includes('\0')
+const text = z.string().trim().min(1, expected.text).refine(noNul, expected.text)
 const date = z.string().refine(isDate, expected.date)
 const number = z.number()
-const oneCharacter = z.string().length(1, expected.delimiter)
+const oneCharacter = z.string().length(1, expected.delimiter).refine(noNul, expected.delimiter)
 /** Data values may look like numbers or truth values in YAML: they are compared as text. */
 const value = z.preprocess((given) => (typeof given === 'number' || typeof given === 'boolean' ? String(given) : given), text)
 

@@ -64,7 +64,7 @@ function cleverFaults(document: Document.Parsed, placeAt: PlaceAt): readonly Fau
     Alias: (_, node) => report(node, `alias *${node.source}`),
     Value: (_, node) => { if (node.anchor) report(node, `anchor &${node.anchor}`) },
     Pair: (_, pair) => {
-      if (isScalar(pair.key) && pair.key.value === '__proto__') report(pair.key, 'key __proto__')
+      if (isScalar(pair.key) && pair.key.value === '__proto__') faults.push(faultOf('account-key-reserved', placeAt(pair.key.range?.[0] ?? 0, ''), { key: '__proto__' }))
     },
   })
   return faults

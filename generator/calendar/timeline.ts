@@ -14,7 +14,7 @@ export interface TimelineInput {
   readonly reporting: Reporting
   /** As the account gives it; null for the first 12 months of mentions. */
   readonly base: DateRange | null
-  /** Day numbers of the first and the last mention that the review reads. */
+  /** Day numbers of the first and the last mention that the review reads; where only its step is known, of that. */
   readonly firstDay: number
   readonly lastDay: number
   readonly review: Period
@@ -24,7 +24,7 @@ export interface TimelineInput {
 export function timeline(input: TimelineInput): Timeline {
   const starts = stepsBetween(input.grid, input.firstDay, input.lastDay)
   const midpoints = starts.map((start) => midpointDay(input.grid, start))
-  const base = input.base ?? firstYear(stepStart(input.grid, input.firstDay), input.review)
+  const base = input.base ?? defaultBase(input, midpoints)
   const periods: Period[] = []
   const periodOf = Int32Array.from(midpoints, (day) => {
     const last = periods.at(-1)
@@ -45,7 +45,13 @@ export function timeline(input: TimelineInput): Timeline {
   }
 }
 
-/** Twelve months from the first step, or as much of them as ends with the period under review. */
+/** The first twelve months of mentions; from the beginning of their step where, of so short a history, they would hold no midpoint. */
+function defaultBase({ grid, firstDay, review }: TimelineInput, midpoints: readonly number[]): DateRange {
+  const base = firstYear(firstDay, review)
+  return midpoints.some((day) => day >= dayNumber(base.from) && day <= dayNumber(base.to)) ? base : firstYear(stepStart(grid, firstDay), review)
+}
+
+/** Twelve months from a day, or as much of them as ends with the period under review. */
 function firstYear(first: number, review: Period): DateRange {
   const { year, month } = monthOf(first)
   const dayOfMonth = first - firstOfMonth(year, month)

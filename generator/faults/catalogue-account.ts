@@ -50,6 +50,10 @@ export const accountWordings = {
     unexpected: `${details.found}`, expected: 'plain values: an account file has no anchors, aliases or tags',
     mend: 'Write the value out where it is needed; put quotes around one that begins with an asterisk, an ampersand or an exclamation mark.',
   }),
+  'account-key-reserved': (details: { readonly key: string }): Wording => ({
+    unexpected: `key \`${details.key}\``, expected: 'any other name: this one means something to the program itself',
+    mend: 'Rename the key.',
+  }),
   'account-key-unknown': (details: { readonly key: string; readonly nearest: string; readonly known: readonly string[] }): Wording => ({
     unexpected: `key \`${details.key}\``, expected: `one of ${details.known.join(', ')}`,
     mend: `Did you mean \`${details.nearest}\`? Otherwise take the key out.`,

@@ -32,7 +32,7 @@ export const intakeWordings = {
   }),
   'too-many-levels': (details: { readonly factor: string; readonly most: number }): Wording => ({
     unexpected: `more than ${details.most} values of \`${details.factor}\``, expected: 'a column with a few values that repeat',
-    mend: 'Map another column to it under `columns`, or leave it out of `factors`.',
+    mend: 'Map another column to it under `columns`, give its values fewer names, or leave it out of `factors`.',
   }),
   'cell-value': (details: { readonly actual: string; readonly expected: string }): Wording => ({
     unexpected: details.actual === '' ? 'empty value' : `\`${details.actual}\``, expected: details.expected,

@@ -1,22 +1,17 @@
 import type { CellColumns, Factor } from '../../model/intake/intake-tables.ts'
-import { joinParts, type CellPart } from './cell-part.ts'
+import type { CellPart } from './cell-part.ts'
 
 /**
- * Cells as columns, sorted by step and then by the levels of each factor; parts of the same cell are joined.
+ * Cells as columns, sorted by step and then by the levels of each factor. Two sources may say something of the same cell:
+ * these stay two rows, since each has a design effect of its own.
  *
  * @param steps - day number on which each step begins
  */
 export function cellColumns(parts: readonly CellPart[], steps: readonly number[], factors: readonly Factor[]): CellColumns {
   const stepIndex = indexOf(steps)
   const levelIndex = factors.map((factor) => indexOf(factor.levels.map((level) => level.name)))
-  const keyed = parts.map((part) => ({ part, key: [stepIndex.get(part.step)!, ...part.levels.map((level, factor) => levelIndex[factor]!.get(level)!)] }))
-  keyed.sort((a, b) => compare(a.key, b.key))
-  const cells: { part: CellPart; readonly key: readonly number[] }[] = []
-  for (const { part, key } of keyed) {
-    const last = cells.at(-1)
-    if (last !== undefined && compare(last.key, key) === 0) last.part = joinParts(last.part, part)
-    else cells.push({ part, key })
-  }
+  const cells = parts.map((part) => ({ part, key: [stepIndex.get(part.step)!, ...part.levels.map((level, factor) => levelIndex[factor]!.get(level)!)] }))
+  cells.sort((a, b) => compare(a.key, b.key))
   const column = (value: (part: CellPart) => number): Float64Array => Float64Array.from(cells, (cell) => value(cell.part))
   return {
     count: cells.length,

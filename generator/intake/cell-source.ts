@@ -6,7 +6,7 @@ import type { CellPart } from './cell-part.ts'
 import { cellColumns, cellRow } from './cell-row.ts'
 import type { Database } from './database.ts'
 import type { InputFile } from './input-file.ts'
-import type { LevelReader } from './level-names.ts'
+import { tidyValue, type LevelReader } from './level-names.ts'
 import { lineNumbers } from './record-lines.ts'
 import { malformedRows } from './malformed-rows.ts'
 import { relationOf } from './relation.ts'
@@ -40,7 +40,7 @@ export async function readCellFile(
   const parts: CellPart[] = []
   for (const [index, row] of rows.entries()) {
     const place = `${file.path}:${lines === null ? index + 1 : lines.sound[index]}`
-    const part = cellRow((name) => (row[`f${present.indexOf(name)}`] ?? '').trim(), account.factors, account.grid)
+    const part = cellRow((name) => tidyValue(row[`f${present.indexOf(name)}`] ?? ''), account.factors, account.grid)
     if ('length' in part) {
       faults.push(...part.map(({ column: at, actual, expected }) => faultOf('cell-value', `${place} ${at}`, { actual, expected })))
       continue

@@ -41,8 +41,9 @@ export async function openDatabase(options: DatabaseOptions): Promise<Database> 
 /** A name as SQL takes it, whatever it holds. */
 export const identifier = (name: string): string => quotedIdentifier(name)
 
-/** A text as SQL takes it, whatever it holds. */
-export const literal = (text: string): string => quotedString(text)
+/** A text as SQL takes it, whatever it holds; SQL itself cannot hold a NUL. */
+export const literal = (text: string): string =>
+  (text.includes('\0') ? `(${text.split('\0').map(quotedString).join(' || chr(0) || ')})` : quotedString(text))
 
 function database(instance: DuckDBInstance, connection: DuckDBConnection): Database {
   return {

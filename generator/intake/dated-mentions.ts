@@ -29,7 +29,13 @@ export async function dateMentions(database: Database, account: Account): Promis
   const zone = zoneSql(zoneClock(account.timeZone, Number(range!.low ?? 0) / second - margin, Number(range!.high ?? 0) / second + margin))
   const [ruled] = await database.rows<{ nonexistent: bigint; doubled: bigint }>(
     `SELECT count(*) FILTER (${zone.nonexistent}) AS nonexistent, count(*) FILTER (${zone.doubled}) AS doubled FROM scanned WHERE ${readable}`)
-  return { zone, span: await spanOf(database, zone, inScope!), nonexistent: Number(ruled!.nonexistent), doubled: Number(ruled!.doubled) }
+  return { zone, span: await spanOf(database, zone, 'scanned WHERE fate = 0', inScope!), nonexistent: Number(ruled!.nonexistent), doubled: Number(ruled!.doubled) }
+}
+
+/** Day number of the first mention of `kept`, of which there is at least one. */
+export async function firstDayOf(database: Database, zone: ZoneSql): Promise<number> {
+  const [clocks] = await database.rows<Clocks>('SELECT min(clock) AS low, max(clock) AS high FROM kept')
+  return (await spanOf(database, zone, 'kept WHERE true', clocks!))!.first
 }
 
 async function clocksOf(database: Database, which: string): Promise<Clocks> {
@@ -38,9 +44,9 @@ async function clocksOf(database: Database, which: string): Promise<Clocks> {
 }
 
 /** A clock is less than `margin` from its day in the zone, whatever the offset: only mentions near the ends are looked at. */
-async function spanOf(database: Database, zone: ZoneSql, { low, high }: Clocks): Promise<Dated['span']> {
+async function spanOf(database: Database, zone: ZoneSql, which: string, { low, high }: Clocks): Promise<Dated['span']> {
   if (low === null || high === null) return null
-  const near = (bound: string): string => `FROM scanned WHERE fate = 0 AND clock ${bound}`
+  const near = (bound: string): string => `FROM ${which} AND clock ${bound}`
   const [span] = await database.rows<{ first: number; last: number }>(`SELECT (SELECT min(${zone.day}) ${near(`<= ${low + BigInt(margin * second)}`)}) AS first,
     (SELECT max(${zone.day}) ${near(`>= ${high - BigInt(margin * second)}`)}) AS last`)
   return span!

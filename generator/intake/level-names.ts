@@ -9,8 +9,18 @@ export interface LevelNames {
   readonly unmapped: () => readonly { readonly factor: string; readonly value: string; readonly mentions: number }[]
 }
 
+/** A value as a name: control characters, which nobody sees, count as spacing, and there is none around it. */
+export const tidyValue = (value: string): string => value.replace(/\p{Cc}+/gu, ' ').replace(/^ +| +$/g, '')
+
 /** Upper and lower case and spacing do not tell values apart. */
 export const foldValue = (value: string): string => value.trim().toLowerCase().replace(/\s+/g, ' ')
+
+/**
+ * A factor with more levels than this is refused: the column was mistaken, and the fit's time grows with the square of its
+ * venues. Spellings, of which a level may have several, are counted before they are named.
+ */
+export const mostLevels = (factor: string): number => (factor === 'venue' ? 60 : 400)
+export const mostSpellings = 2000
 
 /** Read values by the account's `venues` and `topics`; the values of other factors are their own names. */
 export function levelNames(account: Account): LevelNames {

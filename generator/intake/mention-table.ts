@@ -4,7 +4,7 @@ import { periodHolding } from '../calendar/periods.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
 import { literal, type Database } from './database.ts'
-import { byText, type LevelReader } from './level-names.ts'
+import { byText, mostSpellings, tidyValue, type LevelReader } from './level-names.ts'
 import { filledColumns } from './scan-mentions.ts'
 import type { Spellings } from './spellings.ts'
 import type { ZoneSql } from './time-sql.ts'
@@ -35,8 +35,6 @@ export const momentBits = 30
 export const slotBits = 16
 
 const secondsTo1970 = -Date.UTC(1900, 0, 1) / 1000
-/** More levels than this are no factor but free text. */
-const mostLevels = 2000
 
 /**
  * The modelled mentions as numbers only, as views of `scanned`: `kept` are its rows that are modelled, `mention (author,
@@ -88,11 +86,11 @@ interface FactorSql {
 /** Name every spelling of a factor; `code_level_N (code, level)` and `other_level_N (other, level)` hold the numbers. */
 async function nameLevels(database: Database, factor: string, index: number, { spellings, levelOf }: Naming): Promise<FactorSql> {
   const found = await database.rows<{ code: number | null; other: string | null; mentions: bigint }>(
-    `SELECT code_${index} AS code, other_${index} AS other, count(*) AS mentions FROM kept GROUP BY ALL ORDER BY ALL LIMIT ${mostLevels + 1}`)
-  if (found.length > mostLevels) throw new InputFault([faultOf('too-many-levels', `mentions ${factor}`, { factor, most: mostLevels })])
+    `SELECT code_${index} AS code, other_${index} AS other, count(*) AS mentions FROM kept GROUP BY ALL ORDER BY ALL LIMIT ${mostSpellings + 1}`)
+  if (found.length > mostSpellings) throw new InputFault([faultOf('too-many-levels', `mentions ${factor}`, { factor, most: mostSpellings })])
   const named = found.map(({ code, other, mentions }) => {
     const spelling = code === null ? other ?? '' : spellings[index]![code]!
-    return { code, other, name: levelOf(factor, spelling.replace(/^ +| +$/g, '') || 'none', Number(mentions)) }
+    return { code, other, name: levelOf(factor, tidyValue(spelling) || 'none', Number(mentions)) }
   })
   const levels = [...new Set(named.map(({ name }) => name))].sort(byText)
   const coded = named.filter(({ code }) => code !== null).map(({ code, name }) => `(${code}, ${levels.indexOf(name)})`)

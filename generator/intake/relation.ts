@@ -4,6 +4,7 @@ import { InputFault } from '../faults/fault.ts'
 import { csvForm, type StatedForm } from './csv-header.ts'
 import { identifier, literal, type Database } from './database.ts'
 import type { InputFile } from './input-file.ts'
+import { malformedRows } from './malformed-rows.ts'
 import type { Cut } from './record-lines.ts'
 
 /** A file as SQL can select from it, every field as text. */
@@ -21,11 +22,15 @@ export interface Relation {
 /**
  * The relation of a file. Of CSV, rows that cannot be cut into the header's fields go to `reject_errors`.
  *
- * @param wanted - columns that the file must have; lines of NDJSON may each lack any
+ * @param wanted - columns that the file must have; of NDJSON each must be in some line
  * @throws {InputFault} `columns-absent`, `header-twice`, `file-unreadable`
  */
 export async function relationOf(database: Database, file: InputFile, wanted: readonly string[], stated: StatedForm): Promise<Relation> {
-  if (file.kind === 'ndjson') return ndjsonRelation(file)
+  if (file.kind === 'ndjson') {
+    const lines = ndjsonRelation(file)
+    await requireKeys(database, file, wanted, lines.sql)
+    return lines
+  }
   if (file.kind === 'parquet') return parquetRelation(database, file, wanted)
   const { delimiter, quote, header } = csvForm(file.start, wanted, stated)
   const twice = header.find((name, index) => header.indexOf(name) !== index)
@@ -44,6 +49,21 @@ const lines: Cut = { delimiter: '\0', quote: '\0', header: false }
 
 function zipped(file: InputFile): string {
   return file.readable.endsWith('.gz') ? ", compression = 'gzip'" : ''
+}
+
+/** Keys are looked for in this many lines first, and in all lines only if some are not there. */
+const firstLines = 1000
+
+/** @throws {InputFault} `columns-absent` where no line of the file has one of the wanted keys */
+async function requireKeys(database: Database, file: InputFile, wanted: readonly string[], lineSql: string): Promise<void> {
+  for (const limit of [` LIMIT ${firstLines}`, '']) {
+    const objects = `SELECT line FROM ${lineSql} WHERE sound AND json_type(line) = 'OBJECT'${limit}`
+    const keys = (await database.rows<{ key: string }>(`SELECT DISTINCT unnest(json_keys(line)) AS key FROM (${objects}) ORDER BY key`)).map(({ key }) => key)
+    // The file will be read again, and lines that are too long reported then.
+    await malformedRows(database)
+    if (wanted.every((key) => keys.includes(key))) return
+    if (limit === '' && keys.length > 0) requireColumns(file, wanted, keys)
+  }
 }
 
 /** A line is read as one field and picked apart, since rows that are no JSON would otherwise come as empty ones. */

@@ -104,7 +104,7 @@ function usedColumns(source: MentionSource, factors: readonly string[]): readonl
 
 function scanSql(account: Account, source: MentionSource, sourceIndex: number, relation: Relation, spellings: Spellings): string {
   const time = timeSql('posted', source.timeFormat)
-  const score = scoreSql('scored', source.score)
+  const score = scoreSql('scored', source.score, relation.cut?.delimiter !== ',')
   const read = `SELECT ${fieldsSql(account, source, relation).join(', ')} FROM ${relation.sql}`
   const factors = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
   const timed = [[time.draft, ...factors.map((index) => `${codeSql(`factor_${index}`, spellings[index]!)} AS code_${index}`)], [time.zoned, `${score.score} AS score`], [time.reading], [time.clock]]
@@ -137,9 +137,9 @@ function fieldsSql(account: Account, source: MentionSource, relation: Relation):
   ]
 }
 
-/** Whether a field holds nothing but spaces. */
+/** Whether a field holds nothing but spaces and control characters, all of which sort before an exclamation mark. */
 function blank(field: string): string {
-  return `(${field} IS NULL OR ${field} = '' OR (starts_with(${field}, ' ') AND trim(${field}) = ''))`
+  return `(${field} IS NULL OR (${field} < '!' AND regexp_full_match(${field}, '[\\x00-\\x20]*')))`
 }
 
 /** A text as reposts are compared: lower case, without links, handles and spacing. */

@@ -13,10 +13,15 @@ export interface ScoreSql {
   readonly outside: string
 }
 
-/** How the text of a score is read: as one of the labels, or as a number of the range. */
-export function scoreSql(text: string, reading: ScoreReading): ScoreSql {
+/**
+ * How the text of a score is read: as one of the labels, or as a number of the range.
+ *
+ * @param decimalCommas - whether `3,5` is a number: not where commas part the fields
+ */
+export function scoreSql(text: string, reading: ScoreReading, decimalCommas: boolean): ScoreSql {
   if (reading.kind === 'range') {
-    const number = `TRY_CAST(${text} AS DOUBLE)`
+    const withPoint = `CASE WHEN regexp_full_match(${text}, '\\s*[-+]?\\d+,\\d+\\s*') THEN replace(${text}, ',', '.') ELSE ${text} END`
+    const number = `TRY_CAST(${decimalCommas ? withPoint : text} AS DOUBLE)`
     const inside = `${number} BETWEEN ${Math.min(reading.low, reading.high)} AND ${Math.max(reading.low, reading.high)}`
     const placed = `(${number} - ${signed(reading.low)}) / ${signed(reading.high - reading.low)}`
     return { score: `CASE WHEN ${inside} THEN CAST(round((2 * ${placed} - 1) * ${parts}) AS BIGINT) END`, outside: `(isfinite(${number}) AND NOT ${inside})` }

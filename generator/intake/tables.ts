@@ -11,7 +11,7 @@ import { summedAuthors } from './author-counts.ts'
 import { cellColumns } from './cell-columns.ts'
 import type { CellPart } from './cell-part.ts'
 import type { Dated } from './dated-mentions.ts'
-import { factorOf } from './level-names.ts'
+import { factorOf, mostLevels } from './level-names.ts'
 import type { SettledMentions } from './read-mentions.ts'
 import type { ScannedFile } from './scan-mentions.ts'
 
@@ -34,7 +34,7 @@ export interface Material {
 /**
  * The intake tables from what was gathered.
  *
- * @throws {InputFault} `no-mentions`, `target-mix-level`
+ * @throws {InputFault} `no-mentions`, `too-many-levels`, `target-mix-level`
  */
 export function tablesOf(account: Account, material: Material): IntakeTables {
   const { review, settled, ready } = material
@@ -46,10 +46,13 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
     throw new InputFault([faultOf('no-mentions', 'mentions', { accounting: [`rows ${accounting.received}`, ...reasons].join(', ') })])
   }
   const factors = account.factors.map((name, index) => factorOf(account, name, parts.map((part) => part.levels[index]!)))
+  checkLevels(factors)
   checkTarget(account, factors)
   const starts = parts.map((part) => part.step)
-  const [first, last] = starts.reduce(([low, high], step) => [Math.min(low, step), Math.max(high, step)], [Infinity, -Infinity])
-  const axis = timeline({ ...account, firstDay: first!, lastDay: nextStep(account.grid, last!) - 1, review })
+  const last = starts.reduce((high, step) => Math.max(high, step), -Infinity)
+  // Ready-made cells do not say on which day of their step they begin.
+  const first = ready.reduce((low, { step }) => Math.min(low, step), grouped?.firstDay ?? Infinity)
+  const axis = timeline({ ...account, firstDay: first, lastDay: nextStep(account.grid, last) - 1, review })
   const steps = axis.steps.map(dayNumber)
   const readyCells = cellColumns(ready, steps, factors)
   const indices = grouped === null ? null : indicesOf(grouped, axis, factors)
@@ -81,6 +84,12 @@ function accountingOf({ scanned, rejected, dated, settled, unmapped, ready, read
     'time-nonexistent': dated.nonexistent, 'time-doubled': dated.doubled,
   }
   return { received, ...counts, reasons: Object.fromEntries(Object.entries(reasons).filter(([, rows]) => rows > 0)), unmapped, inputs }
+}
+
+function checkLevels(factors: readonly Factor[]): void {
+  const faults = factors.filter(({ name, levels }) => levels.length > mostLevels(name))
+    .map(({ name }) => faultOf('too-many-levels', `mentions ${name}`, { factor: name, most: mostLevels(name) }))
+  if (faults.length > 0) throw new InputFault(faults)
 }
 
 /** A target can only be set for levels that mentions are in: nothing is known of the others. */

@@ -62,8 +62,8 @@ function otherForms(text: string): string {
   const withSeconds = `regexp_replace(${spread}, '^(.{10}[T ]\\d\\d:\\d\\d)( ?[Z+-])', '\\1:00\\2')`
   const zoned = `epoch_us(TRY_CAST(${withSeconds} AS TIMESTAMPTZ))`
   const number = `TRY_CAST(${text} AS DOUBLE)`
-  // 1e11 seconds is the year 5138, 1e11 milliseconds is 1973: no mention lies on the wrong side of it.
-  const epoch = `CASE WHEN abs(${number}) < 1e11 THEN CAST(round(${number} * 1e6) AS BIGINT) WHEN abs(${number}) < 1e14 THEN CAST(round(${number} * 1e3) AS BIGINT) END`
+  // 1e11 seconds is the year 5138, 1e11 milliseconds is 1973: no mention lies on the wrong side of it. A zero stands for a missing time.
+  const epoch = `CASE WHEN ${number} = 0 THEN NULL WHEN abs(${number}) < 1e11 THEN CAST(round(${number} * 1e6) AS BIGINT) WHEN abs(${number}) < 1e14 THEN CAST(round(${number} * 1e3) AS BIGINT) END`
   return `CASE WHEN ${text} < ':' THEN coalesce(epoch_us(${basicIso(text)}), ${epoch}, ${zoned}) END`
 }
 

@@ -126,6 +126,7 @@ const wrongs: readonly (readonly [string, string, string, string, RegExp])[] = [
   ['an alias', `${sound}prepared_by: &x Ana\nreviewed_by: *x\n`, 'account-alias', 'account.yaml:8:14', /alias/],
   ['a tag', `${sound}prepared_by: !secret Ana\n`, 'account-alias', 'account.yaml:7:14', /tag/],
   ['broken YAML', `${sound}venues: { a: [1\n`, 'account-unreadable', 'account.yaml:8:1', /YAML/],
+  ['a NUL in a column name', sound.replace('venue: source', 'venue: "sou\\0rce"'), 'account-value', 'account.yaml:5:38 mentions.0.columns.venue', /expected text/],
   ['no map at all', '- a\n', 'account-value', 'account.yaml', /map of keys/],
 ]
 
@@ -149,7 +150,10 @@ describe('an account file that is wrong', () => {
   })
 
   test('a key that would reach into every object is refused', async () => {
-    expect((await faultsOf(`${sound}venues:\n  __proto__: { label: x }\n`))[0]!.code).toBe('account-alias')
+    const [fault] = await faultsOf(`${sound}venues:\n  __proto__: { label: x }\n`)
+    expect(fault).toMatchObject({ code: 'account-key-reserved', place: 'account.yaml:8:3', mend: 'Rename the key.' })
+    expect(`${fault!.message}`).toMatch(/key `__proto__`.*any other name/)
+    expect(fault!.message).not.toMatch(/anchor|alias/)
   })
 
   test('a link that leads out of the folder is outside', async () => {

@@ -87,10 +87,20 @@ describe('timeline', () => {
   })
 
   test('the base is the first twelve months unless the account says otherwise', () => {
-    expect(timeline(input).base).toEqual({ from: '2025-03-03', to: '2026-03-02' })
+    // The first mention is of a Wednesday: its week, whose midpoint is the Thursday, is in the base.
+    const axis = timeline(input)
+    expect([axis.base, axis.inBase[0]]).toEqual([{ from: '2025-03-05', to: '2026-03-04' }, 1])
+    expect(axis.steps.filter((_, index) => axis.inBase[index] === 1).at(-1)).toBe('2026-02-23')
     expect(timeline({ ...input, review: periodNamed('month', '2025-09')! }).base.to).toBe('2025-09-30')
+    const sunday = timeline({ ...input, firstDay: dayNumber('2025-03-09') })
+    expect([sunday.base, sunday.steps[0], sunday.inBase[0], sunday.inBase[1]]).toEqual([{ from: '2025-03-09', to: '2026-03-08' }, '2025-03-03', 0, 1])
     const given = timeline({ ...input, base: { from: '2025-04-03', to: '2025-04-16' } })
     expect(given.steps.filter((_, index) => given.inBase[index] === 1)).toEqual(['2025-03-31', '2025-04-07'])
+  })
+
+  test('a history of one step is its own base, whatever day it begins on', () => {
+    const axis = timeline({ ...input, firstDay: dayNumber('2025-03-09'), lastDay: dayNumber('2025-03-09'), review: periodNamed('month', '2025-03')! })
+    expect([axis.base, [...axis.inBase]]).toEqual([{ from: '2025-03-03', to: '2025-03-31' }, [1]])
   })
 
   test('a period without a step is under review all the same', () => {

@@ -2,7 +2,6 @@ import { describe, expect, test } from 'vitest'
 import type { IntakeTables } from '../../../model/intake/intake-tables.ts'
 import { readAccount } from '../../../generator/account/read-account.ts'
 import { InputFault, type Fault } from '../../../generator/faults/fault.ts'
-import { joinParts, type CellPart } from '../../../generator/intake/cell-part.ts'
 import { readIntake } from '../../../generator/intake/read-intake.ts'
 import { withAccount } from './temporary-account.ts'
 
@@ -51,14 +50,14 @@ describe('a ready-made cell table', () => {
     expect([[...cells.freedom], [...cells.squares], [...cells.deff], [...cells.clustering]]).toEqual([[0, 0], [0, 0], [1, 1], [1, 1]])
   })
 
-  test('maps venues, and joins cells of two sources as their mentions would be', async () => {
+  test('maps venues; cells of two sources stay two rows, each with its own design effect', async () => {
     const tables = await intake({
       'account.yaml': yaml('  - cells: c.csv\n  - cells: d.csv\n', 'venues: { boards: { values: [a, b] } }\n'),
       'c.csv': `${header}2025-03-03,a,t,regular,2,2,0.5,0.5,1.5\n`, 'd.csv': `${header}2025-03-03,b,t,regular,2,1,-0.5,0.5,2.5\n`,
     })
     const { cells, accounting } = tables
-    // Scores 1 and 0, then 0 and -1.
-    expect([cells.count, cells.mentions[0], cells.authors[0], cells.mean[0], cells.squares[0], cells.freedom[0], cells.deff[0]]).toEqual([1, 4, 3, 0, 2, 3, 2])
+    expect([cells.count, [...cells.step], [...cells.levels[0]!], [...cells.mentions], [...cells.mean], [...cells.squares]]).toEqual([2, [0, 0], [0, 0], [2, 2], [0.5, -0.5], [0.5, 0.5]])
+    expect([...cells.deff]).toEqual([1.5, 2.5])
     expect(accounting).toMatchObject({ received: 2, modelled: 2, readyMade: true })
     expect([...accounting.withAuthor]).toEqual([4])
   })
@@ -73,9 +72,23 @@ describe('a ready-made cell table', () => {
     expect(variation.map((row) => row?.mentions)).toEqual([1, 1])
   })
 
-  test('a part whose spread is not known adds none', () => {
-    const part = (mentions: number, mean: number, freedom: number): CellPart => ({ step: 0, levels: [], mentions, authors: 1, mean, squares: freedom * 0.1, freedom, clustering: 1, deff: 1 })
-    expect(joinParts(part(3, 0.5, 2), part(5, 0, 0))).toMatchObject({ mentions: 8, squares: 0.2, freedom: 2 })
-    expect(joinParts(part(1, 0.5, 0), part(1, -0.5, 0))).toMatchObject({ mentions: 2, squares: 0.5, freedom: 1 })
+  test('keeps its design effect beside mentions of the same cell, whose own is still to be computed', async () => {
+    const source = '  - cells: c.csv\n  - files: m.csv\n    columns: { posted_at: t, venue: v, score: s, author: who }\n    score: { range: [-1, 1] }\n'
+    const { cells } = await intake({ 'account.yaml': yaml(source), 'c.csv': `${header}2025-03-03,a,none,occasional,4,2,0.5,0.5,3\n`, 'm.csv': 't,v,s,who\n2025-03-04,a,1,ann\n' })
+    expect([[...cells.step], [...cells.mentions], [...cells.deff]]).toEqual([[0, 0], [4, 1], [3, Number.NaN]])
+  })
+
+  test('the base begins with the first step where cells come first, with the first mention where that does', async () => {
+    const source = '  - cells: c.csv\n  - files: m.csv\n    columns: { posted_at: t, venue: v, score: s }\n    score: { range: [-1, 1] }\n'
+    const baseOf = async (step: string): Promise<string> => (await intake({
+      'account.yaml': yaml(source), 'c.csv': `${header}${step},a,none,occasional,4,2,0.5,0.5,3\n`, 'm.csv': 't,v,s\n2025-03-05,a,1\n2025-03-12,a,0\n',
+    })).timeline.base.from
+    expect([await baseOf('2025-03-03'), await baseOf('2025-03-10')]).toEqual(['2025-03-03', '2025-03-05'])
+  })
+
+  test('with more venues than a review can tell apart is refused', async () => {
+    const rows = (count: number): string => Array.from({ length: count }, (_, index) => `2025-03-03,v${index},b,c,2,1,0,0.1,\n`).join('')
+    expect((await faultsOf(rows(61)))[0]).toMatchObject({ code: 'too-many-levels', place: 'mentions venue' })
+    expect((await intake({ 'account.yaml': yaml('  - cells: c.csv\n'), 'c.csv': header + rows(60) })).factors[0]!.levels.length).toBe(60)
   })
 })

@@ -98,6 +98,28 @@ describe('forms of files', () => {
     expect(tables.timeline.steps).toEqual(['2025-06-09'])
   })
 
+  test('a zero is no time, a written-out 1970 is one', async () => {
+    const times = ['0', '0.0', '-0', '00000000', '1970-01-01', '1970-01-01T00:00:00Z', '1000']
+    const tables = await intake({ 'account.yaml': account('a.csv'), 'a.csv': `ref,published,source,tone,theme\n${times.map((time, index) => `${index},${time},forum,positive,\n`).join('')}` })
+    expect(tables.accounting).toMatchObject({ modelled: 3, reasons: { 'time-unreadable': 4 } })
+  })
+
+  test('decimal commas are read where commas do not part the fields', async () => {
+    const text = 'ref;published;source;tone;theme\n1;2025-03-03;forum;3,5;\n2;2025-03-10;forum; +5,0 ;\n3;2025-03-17;forum;4.5;\n4;2025-03-24;forum;1,2,3;\n5;2025-03-24;forum;7,5;\n'
+    const tables = await intake({ 'account.yaml': account('a.csv', '', 'score: { range: [1, 5] }'), 'a.csv': text })
+    expect([...tables.cells.mean]).toEqual([0.25, 1, 0.75])
+    expect(tables.accounting.reasons).toEqual({ 'score-unreadable': 1, 'score-outside-range': 1 })
+    const commas = await intake({ 'account.yaml': account('a.csv', '', 'score: { range: [1, 5] }'), 'a.csv': 'ref,published,source,tone,theme\n1,2025-03-03,forum,"3,5",\n2,2025-03-03,forum,3.5,\n' })
+    expect(commas.accounting).toMatchObject({ modelled: 1, reasons: { 'score-unreadable': 1 } })
+  })
+
+  test.each(["it's [a].csv", 'b{1}.csv', 'c?.csv', 'd*.csv', 'e "f", g.csv', '[a-c]/h.ndjson'])('a file may be named %s', async (file) => {
+    const content = file.endsWith('.csv') ? separated(',') : rows.map((row) => JSON.stringify(Object.fromEntries(header.map((name, index) => [name, row[index]])))).join('\n')
+    const tables = await intake({ 'account.yaml': account(JSON.stringify(file)), [file]: content })
+    expectThree(tables)
+    expect(tables.accounting.inputs.map(({ path }) => path)).toEqual([file])
+  })
+
   test('further factors are any mapped column; an empty field is none', async () => {
     const yaml = account('a.csv', 'factors: [venue, language]\n').replace('columns: {', 'columns: { language: lang,')
     const tables = await intake({ 'account.yaml': yaml, 'a.csv': 'ref,published,source,tone,theme,lang\n1,2025-03-03,forum,positive,,pt\n2,2025-03-03,forum,positive,,\n' })
@@ -115,6 +137,23 @@ describe('venues and topics', () => {
     expect(sum(tables.cells.mentions)).toBe(4)
   })
 
+  test('control characters are spacing, and a venue of nothing else is missing', async () => {
+    const yaml = account('a.csv', 'venues: { boards: { values: [old forum] } }\n')
+    const tables = await intake({ 'account.yaml': yaml, 'a.csv': 'ref,published,source,tone,theme\n1,2025-03-03,old\0forum,positive,fa\0res\n2,2025-03-03,\0 \x01,positive,\n3,2025-03-03,boards\0,positive,\0\n' })
+    expect(tables.accounting).toMatchObject({ modelled: 2, rejected: 1, reasons: { 'venue-missing': 1 }, unmapped: [] })
+    expect([levels(tables, 0), levels(tables, 1)]).toEqual([['boards'], ['fa res', 'none']])
+  })
+
+  test.each([['venue', 60], ['topic', 400]] as const)('%s may have %i levels and no more', async (factor, most) => {
+    const rowsOf = (count: number): string => Array.from({ length: count }, (_, index) => `${index},2025-03-03,${factor === 'venue' ? `v${index}` : 'forum'},positive,${factor === 'topic' ? `t${index}` : ''}\n`).join('')
+    const files = (count: number): Files => ({ 'account.yaml': account('a.csv'), 'a.csv': `ref,published,source,tone,theme\n${rowsOf(count)}` })
+    expect((await intake(files(most))).factors.find(({ name }) => name === factor)!.levels.length).toBe(most)
+    const [fault] = await faultsOf(files(most + 1))
+    expect(fault).toMatchObject({ code: 'too-many-levels', place: `mentions ${factor}` })
+    expect(fault!.message).toContain(`more than ${most} values`)
+    expect(fault!.mend).toContain('fewer names')
+  })
+
   test('a column with too many values is no factor', async () => {
     const many = Array.from({ length: 2100 }, (_, index) => `${index},2025-03-03,forum,positive,words ${index}`).join('\n')
     expect((await faultsOf({ 'account.yaml': account('a.csv'), 'a.csv': `ref,published,source,tone,theme\n${many}\n` }))[0]).toMatchObject({ code: 'too-many-levels', place: 'mentions topic' })
@@ -126,6 +165,17 @@ describe('what is wrong with the whole', () => {
     const [fault] = await faultsOf({ 'account.yaml': account('a.csv'), 'a.csv': 'ref,publshed,source,tone,theme\n1,2,3,4,5\n' })
     expect(fault).toMatchObject({ code: 'columns-absent', place: 'a.csv:1' })
     expect(fault!.mend).toContain('`publshed`')
+  })
+
+  test('keys that no line of NDJSON has, with the nearest; a line may lack any', async () => {
+    const line = (keys: readonly string[]): string => JSON.stringify(Object.fromEntries(keys.map((key, index) => [key, rows[0]![index]])))
+    const yaml = account('a.ndjson')
+    const [fault] = await faultsOf({ 'account.yaml': yaml, 'a.ndjson': `${line(['ref', 'publshed', 'source', 'tone', 'theme'])}\nnull\nno json\n` })
+    expect(fault).toMatchObject({ code: 'columns-absent', place: 'a.ndjson:1' })
+    expect(fault!.message).toMatch(/expected the columns `published`\./)
+    expect(fault!.mend).toContain('`publshed`')
+    const late = `${`${line(['ref', 'published', 'source', 'tone'])}\n`.repeat(1200)}${line(header)}\n`
+    expect((await intake({ 'account.yaml': yaml, 'a.ndjson': late })).accounting).toMatchObject({ received: 1201 })
   })
 
   test('a column twice', async () => {
