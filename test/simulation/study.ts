@@ -16,9 +16,13 @@ export const drawn: SimulationOptions = {
   },
 }
 
-/** Opinion rises by 12 points in waves; the first venue sours by 25 and grows from a fifth of the mentions to half. */
+/**
+ * Opinion rises by 12 points in waves; the first venue sours by 25 and grows from a fifth of the mentions to half; the others
+ * nearly stand still. (Where all venues wander, no amount of posts tells opinion from what they do together.)
+ */
 export const againstTheMix: SimulationOptions = {
   ...drawn,
+  sigmas: { mu: 0.025, venueDrift: [0.015, 0.002, 0.001, 0.003], venue: 0.2, topic: 0.25, poster: 0.15, tau: 0.03 },
   paths: {
     mu: Float64Array.from({ length: steps }, (_, t) => 0.12 * t / steps + 0.05 * Math.sin(t / 6)),
     drift: [Float64Array.from({ length: steps }, (_, t) => -0.25 * t / (steps - 1)), null, null, null],
