@@ -76,7 +76,7 @@ describe('rejects', () => {
   })
 
   test('of NDJSON count blank lines too', async () => {
-    expect(await rejectsOf('a.ndjson', '{"t":"2025-03-03","v":"forum","s":3}\n\n{"t":"2025-03-03","v":"forum","s":30}\nno json\n'))
+    expect(await rejectsOf('a.ndjson', '{"t":"2025-03-03","v":"forum","s":3,"who":"ann","said":""}\n\n{"t":"2025-03-03","v":"forum","s":30}\nno json\n'))
       .toBe('file,line,reason\na.ndjson,3,score-outside-range\na.ndjson,4,row-malformed\n')
   })
 
