@@ -2,7 +2,7 @@ import type { AuthorVariation } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import type { CellPart } from './cell-part.ts'
 import type { Database } from './database.ts'
-import { firstDayOf, type Dated } from './dated-mentions.ts'
+import { keptSpan, type Dated, type Span } from './dated-mentions.ts'
 import { findDuplicates, type Duplicates } from './duplicates.ts'
 import { groupAuthors, type AuthorGroups } from './group-authors.ts'
 import { groupCells, sumCells } from './group-cells.ts'
@@ -14,8 +14,8 @@ import { filledColumns, lastReject, otherBrandReasons } from './scan-mentions.ts
 /** Everything that is grouped from mentions: no row of it stands for a person. */
 export interface GroupedMentions {
   readonly names: MentionNames
-  /** Day number of the first mention. */
-  readonly firstDay: number
+  /** Of the modelled mentions. */
+  readonly span: Span
   readonly parts: readonly CellPart[]
   readonly variation: ReadonlyMap<number, AuthorVariation>
   readonly authors: AuthorGroups
@@ -49,7 +49,7 @@ export async function settleMentions(
   await sumCells(database, account.factors)
   const parts = await groupCells(database, account.factors, names)
   progress('Counting authors')
-  return { duplicates, outOfScope, grouped: { names, firstDay: await firstDayOf(database, zone), parts, variation: await groupVariation(database), authors: await groupAuthors(database, names) } }
+  return { duplicates, outOfScope, grouped: { names, span: await keptSpan(database, zone), parts, variation: await groupVariation(database), authors: await groupAuthors(database, names) } }
 }
 
 async function countOutOfScope(database: Database, after: string): Promise<Readonly<Record<string, number>>> {

@@ -1,7 +1,6 @@
 import type { Accounting, Factor, IntakeTables, Period } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
-import { nextStep } from '../calendar/grid.ts'
 import { timeline } from '../calendar/timeline.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
@@ -12,6 +11,7 @@ import { cellColumns } from './cell-columns.ts'
 import type { CellPart } from './cell-part.ts'
 import type { Dated } from './dated-mentions.ts'
 import { factorOf, mostLevels } from './level-names.ts'
+import { daysOf } from './ready-made.ts'
 import type { SettledMentions } from './read-mentions.ts'
 import type { ScannedFile } from './scan-mentions.ts'
 
@@ -48,11 +48,10 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
   const factors = account.factors.map((name, index) => factorOf(account, name, parts.map((part) => part.levels[index]!)))
   checkLevels(factors)
   checkTarget(account, factors)
-  const starts = parts.map((part) => part.step)
-  const last = starts.reduce((high, step) => Math.max(high, step), -Infinity)
-  // Ready-made cells do not say on which day of their step they begin.
-  const first = ready.reduce((low, { step }) => Math.min(low, step), grouped?.firstDay ?? Infinity)
-  const axis = timeline({ ...account, firstDay: first, lastDay: nextStep(account.grid, last) - 1, review })
+  // Ready-made cells do not say on which days of their step people posted.
+  const spans = [grouped?.span ?? null, daysOf(ready, account.grid)].filter((span) => span !== null)
+  const [firstDay, lastDay] = [Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))]
+  const axis = timeline({ ...account, firstDay, lastDay, review })
   const steps = axis.steps.map(dayNumber)
   const readyCells = cellColumns(ready, steps, factors)
   const indices = grouped === null ? null : indicesOf(grouped, axis, factors)
