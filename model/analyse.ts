@@ -13,7 +13,7 @@ import { createReading } from './reading/context.ts'
 import { readDecomposition } from './reading/decomposition.ts'
 import { readDiagnostics } from './reading/diagnostics.ts'
 import { readLevels } from './reading/levels.ts'
-import { readAccounting, readMethod, type AccountFacts } from './reading/method.ts'
+import { readAccounting, readMethod, readPeriodSteps, type AccountFacts } from './reading/method.ts'
 import { readOpinion } from './reading/opinion.ts'
 import { readScales } from './reading/scales.ts'
 import { readSpeaking } from './reading/speaking.ts'
@@ -53,6 +53,7 @@ export async function analyse(
   const findings: Unruled = {
     schema: 'tareline-findings/1',
     period: timeline.review, previous_period: reading.previousSteps === null ? null : timeline.periods[timeline.current - 1],
+    period_steps: readPeriodSteps(reading),
     grid: timeline.grid, interval: spec.interval,
     accounting: readAccounting(tables, spec.facts),
     opinion: readOpinion(reading),

@@ -1,6 +1,6 @@
 import type { Period, Timeline } from '../../model/intake/intake-tables.ts'
 import { dayNumber, firstOfMonth, isoDate, monthOf } from './days.ts'
-import { midpointDay, stepDays, stepsBetween, stepStart, type Grid } from './grid.ts'
+import { midpointDay, nextStep, stepDays, stepsBetween, stepStart, type Grid } from './grid.ts'
 import { periodHolding, type Reporting } from './periods.ts'
 
 /** First and last day, inclusive, as ISO dates. */
@@ -36,6 +36,9 @@ export function timeline(input: TimelineInput): Timeline {
     grid: input.grid,
     stepDays: stepDays(input.grid),
     steps: starts.map(isoDate),
+    lastDays: starts.map((start) => isoDate(Math.min(nextStep(input.grid, start) - 1, dayNumber(input.review.end)))),
+    lastMention: isoDate(input.lastDay),
+    quietDays: Math.max(0, dayNumber(input.review.end) - input.lastDay),
     periods,
     periodOf,
     inBase: Uint8Array.from(midpoints, (day) => (day >= from && day <= to ? 1 : 0)),

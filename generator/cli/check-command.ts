@@ -14,9 +14,10 @@ export interface CheckFlags extends SpeakerOptions {
 export async function runCheck(program: Program, folder: string, flags: CheckFlags, speaker: Speaker): Promise<ExitCode> {
   const shown = showProgress(speaker, false, basename(resolve(folder)))
   try {
-    const { accounting } = await checkAccount(program, folder, flags.rejects, shown.progress)
-    speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting) })
+    const { accounting, timeline } = await checkAccount(program, folder, flags.rejects, shown.progress)
+    speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting), period: timeline.review.name })
     speaker.say(describeAccounting(accounting))
+    speaker.say(`mentions from ${timeline.steps[0]} to ${timeline.lastMention}; a build would review ${timeline.review.name}`)
     return 0
   } catch (error) {
     const { exitCode, faults } = failureOf(error)
@@ -32,15 +33,16 @@ function accountingResult({ received, rejected, duplicates, outOfScope, modelled
 
 function describeAccounting({ received, rejected, duplicates, outOfScope, modelled, reasons, unmapped }: Accounting): string {
   const rows: readonly (readonly [string, number])[] = [
-    ['received', received], ['rejected', rejected], ['out of scope', outOfScope], ['duplicates', duplicates], ['modelled', modelled],
+    ['received', received], ['rejected', rejected], ['duplicates', duplicates], ['out of scope', outOfScope], ['modelled', modelled],
   ]
-  const width = Math.max(...rows.map(([, count]) => String(count).length))
-  const line = ([name, count]: readonly [string, number]) => `${name.padEnd(14)}${String(count).padStart(width)}`
-  const because = Object.entries(reasons).map((entry) => `  ${entry[0].padEnd(18)}${String(entry[1]).padStart(width)}`)
+  const because = Object.entries(reasons).map(([name, count]) => [`  ${name}`, count] as const)
+  const names = Math.max(...[...rows, ...because].map(([name]) => name.length)) + 2
+  const counts = String(received).length
+  const line = ([name, count]: readonly [string, number]) => `${name.padEnd(names)}${String(count).padStart(counts)}`
   const kept = unmapped.map(({ factor, value, mentions }) => `  ${factor} "${value}": ${mentions}`)
   return [
     ...rows.map(line),
-    ...(because.length > 0 ? ['reasons', ...because] : []),
+    ...(because.length > 0 ? ['reasons', ...because.map(line)] : []),
     ...(kept.length > 0 ? ['values the account does not map, kept under their own name', ...kept] : []),
   ].join('\n')
 }

@@ -9,7 +9,7 @@ import type { Program } from '../program/program.ts'
 import { render } from '../render/render.ts'
 import { tablesOf } from '../tables/tables-of.ts'
 import { loadHouse } from './house.ts'
-import { makeFindings } from './make-findings.ts'
+import { makeFindings, requireSteps } from './make-findings.ts'
 import type { Progress } from './stages.ts'
 import { openDraft, requireDraft } from './write-draft.ts'
 
@@ -46,13 +46,14 @@ export async function buildReview(program: Program, account: Account, options: B
   try {
     progress.stage('intake')
     const tables = await readIntake(account, { period: options.period, threads: options.threads, rejects: draft.rejects, progress: progress.detail })
+    requireSteps(account, tables)
     progress.stage('fit')
     const findings = await makeFindings(account, tables, house.words, { seed: options.seed, version: program.version, threads: options.threads, draws: progress.draws })
     progress.stage('document')
     const figures = tablesOf(findings)
     const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })
     const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme })
-    progress.stage('print')
+    if (browser !== null) progress.stage('print')
     const pdf = browser === null ? null : await print(html, await browser, {
       title: document.title, author: account.preparedBy ?? account.brand, date: findings.period.end, language: document.lang,
     })

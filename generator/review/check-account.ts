@@ -6,6 +6,7 @@ import { readIntake } from '../intake/read-intake.ts'
 import type { Program } from '../program/program.ts'
 import { tablesOf } from '../tables/tables-of.ts'
 import { loadHouse } from './house.ts'
+import { requireSteps } from './make-findings.ts'
 import type { Progress } from './stages.ts'
 
 /**
@@ -19,5 +20,7 @@ export async function checkAccount(program: Program, folder: string, rejects: st
   const house = await loadHouse(program, account)
   compose({ template: house.template, findings: blankFindings, tables: tablesOf(blankFindings), charts: [...house.charts.keys()], words: house.words })
   progress.stage('intake')
-  return readIntake(account, { rejects, progress: progress.detail })
+  const tables = await readIntake(account, { rejects, progress: progress.detail })
+  requireSteps(account, tables)
+  return tables
 }

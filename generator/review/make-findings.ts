@@ -2,7 +2,6 @@ import { availableParallelism } from 'node:os'
 import { analyse, type Analysis } from '../../model/analyse.ts'
 import { findingsSchema, type Findings } from '../../model/findings/schema.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
-import { ModelError } from '../../model/model-error.ts'
 import type { Account } from '../account/account.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
@@ -18,11 +17,7 @@ export interface FitOptions {
   readonly draws?: (share: number) => void
 }
 
-/**
- * Intake tables ──model──▶ analysis ──worded──▶ findings, checked against their schema.
- *
- * @throws {InputFault} `base-empty`, `period-empty`: the account's base or the period asked for holds no step
- */
+/** Intake tables ──model──▶ analysis ──worded──▶ findings, checked against their schema. */
 export async function makeFindings(account: Account, tables: IntakeTables, words: Words, options: FitOptions): Promise<Findings> {
   const analysis = await fit(account, tables, options)
   const { caveats, ...computed } = analysis
@@ -42,7 +37,7 @@ async function fit(account: Account, tables: IntakeTables, options: FitOptions):
       interval: account.interval, seed: options.seed,
       targetMix: Object.fromEntries(account.targetMix.map(({ factor, shares }) => [factor, Object.fromEntries(shares.map(({ level, share }) => [level, share]))])),
       facts: {
-        givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
+        givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, posterBounds: account.posters, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
         timeZone: account.timeZone, reporting: account.reporting,
       },
     }, (problem) => {
@@ -50,16 +45,18 @@ async function fit(account: Account, tables: IntakeTables, options: FitOptions):
       open.push(threads)
       return threads.executor
     }, options.draws)
-  } catch (error) {
-    throw error instanceof ModelError ? asInputFault(error, account) : error
   } finally {
     await Promise.all(open.map((threads) => threads.close()))
   }
 }
 
-/** What the model could not compute with because of what the account asks for; anything else is the program's own fault. */
-function asInputFault(error: ModelError, account: Account): Error {
-  if (error.code === 'base-empty') return new InputFault([faultOf('base-empty', account.places['base'] ?? 'account.yaml', { reason: error.message })])
-  if (error.code === 'period-empty') return new InputFault([faultOf('period-empty', 'account.yaml', { reason: error.message })])
-  return error
+/**
+ * What a fit needs of the time axis, asked before it begins.
+ *
+ * @throws {InputFault} `period-empty`, `base-empty`: no step's middle lies in the period under review, or in the base
+ */
+export function requireSteps(account: Account, { timeline }: IntakeTables): void {
+  const span = { first: timeline.steps[0], last: timeline.lastMention }
+  if (timeline.current < 0) throw new InputFault([faultOf('period-empty', '--period', { name: timeline.review.name, ...span })])
+  if (!timeline.inBase.includes(1)) throw new InputFault([faultOf('base-empty', account.places['base'] ?? 'account.yaml', { ...timeline.base, ...span })])
 }

@@ -11,6 +11,10 @@ const unevenDays = 28
 /** A venue not seen in this last stretch has vanished; first seen in it, appeared. In days. */
 const recentDays = 91
 
+/** A period whose last days, so many and a step's length more, hold no mention is probably not over. */
+const unfinishedDays = 7
+/** Share of rows that could not be read above which what is left may not stand for the rest. */
+const manyRejected = 0.05
 /** Values named one by one where the account does not map them. */
 const namedValues = 5
 
@@ -42,6 +46,14 @@ export const intakeRules: readonly CaveatRule[] = [
   },
   ({ findings }) => findings.venues.filter((venue) => venue.authors < fewAuthors).map((venue) => caveat('note', 'venue-thin', { venue: venue.label, authors: venue.authors })),
   ({ findings }) => (findings.opinion.mentions < fewMentions ? [caveat('caution', 'thin-data', { mentions: findings.opinion.mentions })] : []),
+  ({ reading }) => {
+    const { lastMention, quietDays, stepDays } = reading.tables.timeline
+    return quietDays > unfinishedDays + stepDays ? [caveat('serious', 'period-unfinished', { last: lastMention })] : []
+  },
+  ({ findings }) => {
+    const { received, rejected } = findings.accounting
+    return rejected > received * manyRejected ? [caveat('serious', 'many-rejected', { count: rejected, share: rejected / received })] : []
+  },
   ({ findings }) => {
     const empty = findings.opinion.series.filter((step) => step.mentions === 0).length
     return empty === 0 ? [] : [caveat('note', 'empty-steps', { steps: empty })]

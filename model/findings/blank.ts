@@ -5,7 +5,8 @@ const zero: Estimate = { mean: 0, low: 0, high: 0, sd: 0 }
 /** Findings of the right shape that hold nothing: for checking a template before there is anything to report. */
 export const blankFindings: Findings = {
   schema: 'tareline-findings/1', account: '', brand: '', locale: 'en-GB',
-  period: { name: '2000-01', start: '2000-01-01', end: '2000-01-31' }, previous_period: null, grid: 'week', interval: 0.9,
+  period: { name: '2000-01', start: '2000-01-01', end: '2000-01-31' }, previous_period: null,
+  period_steps: { count: 0, from: '2000-01-03', to: '2000-01-30' }, grid: 'week', interval: 0.9,
   accounting: {
     received: 0, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 0, reasons: {}, unmapped: [], given_not_used: [], in_period: 0,
     first_step: '2000-01-03', last_step: '2000-01-31',
@@ -21,7 +22,7 @@ export const blankFindings: Findings = {
   diagnostics: { method: '', pareto_k: 0, rhat: null, ess: 0, draws: 0, proposals: 0, converged: true, passed: true, checks: [] },
   method: {
     base: { from: '2000-01-01', to: '2000-12-31' }, target_mix: [], target_source: {}, priors: {}, cells: 0, steps: 0, venues: [],
-    smallest_group: 10, prepared_by: null, reviewed_by: null, time_zone: 'UTC', reporting: 'month',
+    smallest_group: 10, poster_bounds: { occasional: 1, regular: 5 }, prepared_by: null, reviewed_by: null, time_zone: 'UTC', reporting: 'month',
   },
   inputs: [], program: { version: '', seed: 0 },
 }

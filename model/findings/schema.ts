@@ -37,7 +37,7 @@ const opinion = z.strictObject({
     /** True where the step belongs to the period under review. */
     in_period: z.boolean(),
   })),
-  /** Every period of the grid, oldest first. */
+  /** Every period up to the one under review, oldest first. */
   periods: z.array(z.strictObject({ period: z.string(), adjusted: estimate, since_base: estimate, raw: z.number().nullable(), mentions: count, authors: count })),
   period: estimate,
   /** null where there is no period before. */
@@ -149,6 +149,8 @@ const method = z.strictObject({
   /** Pooled within-cell standard deviation and intraclass correlation by author, per venue. */
   venues: z.array(z.strictObject({ venue: z.string(), label: z.string(), standard_deviation: z.number(), intraclass: z.number().nullable(), mean_design_effect: z.number() })),
   smallest_group: count,
+  /** Most mentions in 90 days of an occasional and of a regular author; above, an author is prolific. */
+  poster_bounds: z.strictObject({ occasional: count, regular: count }),
   prepared_by: z.string().nullable(), reviewed_by: z.string().nullable(),
   time_zone: z.string(), reporting: z.enum(['month', 'quarter', 'week']),
 })
@@ -157,6 +159,8 @@ export const findingsSchema = z.strictObject({
   schema: z.literal('tareline-findings/1'),
   account: z.string(), brand: z.string(), locale: z.string(),
   period, previous_period: period.nullable(),
+  /** The steps that count as the period, those whose middle lies in it: how many, first and last day. */
+  period_steps: z.strictObject({ count, from: isoDate, to: isoDate }),
   grid: z.enum(['day', 'week', 'month']), interval: z.number().min(0.5).max(0.99),
   accounting, opinion,
   /** null where there is no period before, or one of the two holds no mention. */

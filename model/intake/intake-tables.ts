@@ -12,6 +12,12 @@ export interface Timeline {
   readonly stepDays: number
   /** ISO date on which each step begins, every step from the first to the last that holds a mention. */
   readonly steps: readonly string[]
+  /** ISO date of each step's last day, the last one cut at the end of the period under review: a review reads nothing later. */
+  readonly lastDays: readonly string[]
+  /** ISO date of the last mention; where only its step is known, a day of that. */
+  readonly lastMention: string
+  /** Days from the last mention to the end of the period under review. */
+  readonly quietDays: number
   /** Every period that holds the midpoint of a step, in order of time. */
   readonly periods: readonly Period[]
   /** Shape (steps): index into `periods` of the period that holds the step's midpoint. */

@@ -8,6 +8,7 @@ import { points } from './summarise.ts'
 export interface AccountFacts {
   readonly givenNotUsed: readonly string[]
   readonly smallestGroup: number
+  readonly posterBounds: { readonly occasional: number; readonly regular: number }
   readonly preparedBy: string | null
   readonly reviewedBy: string | null
   readonly timeZone: string
@@ -28,6 +29,12 @@ export function readAccounting(tables: IntakeTables, facts: AccountFacts): Findi
   }
 }
 
+/** Which days the period's figures are about: whole steps, cut at the end of what the review reads. */
+export function readPeriodSteps({ tables: { timeline }, periodSteps }: Reading): Findings['period_steps'] {
+  const last = periodSteps[periodSteps.length - 1]
+  return { count: periodSteps.length, from: timeline.steps[periodSteps[0]], to: timeline.lastDays[last] }
+}
+
 /** What a colleague needs to make the figures again: base, target mix, priors, sizes, design effects. */
 export function readMethod(reading: Reading, facts: AccountFacts): Findings['method'] {
   const { tables, mix, sampling } = reading
@@ -46,7 +53,7 @@ export function readMethod(reading: Reading, facts: AccountFacts): Findings['met
       venue: name, label, standard_deviation: points * Math.sqrt(sampling.withinCell[v]), intraclass: sampling.intraclass[v],
       mean_design_effect: meanDesignEffect(reading, v),
     })),
-    smallest_group: facts.smallestGroup, prepared_by: facts.preparedBy, reviewed_by: facts.reviewedBy,
+    smallest_group: facts.smallestGroup, poster_bounds: { ...facts.posterBounds }, prepared_by: facts.preparedBy, reviewed_by: facts.reviewedBy,
     time_zone: facts.timeZone, reporting: facts.reporting,
   }
 }

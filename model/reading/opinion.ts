@@ -21,7 +21,8 @@ export function readOpinion(reading: Reading): Findings['opinion'] {
     since_base: summary.estimate(difference(columns.mu[t], baseMu)),
     raw: scaled(byStep.raw[t]), mentions: byStep.mentions[t], authors: authors.byStep[t], in_period: inPeriod.has(t),
   }))
-  const periods = timeline.periods.flatMap((period, p) => {
+  // a step that begins in the period may have its middle in the next one: that one is not reviewed yet
+  const periods = timeline.periods.slice(0, timeline.current + 1).flatMap((period, p) => {
     const steps = stepsOfPeriod(tables, p)
     if (steps.length === 0) return []
     const level = pick(steps)

@@ -30,7 +30,7 @@ function readConcentration(tables: IntakeTables, period: number, venue: number):
 
 function readMix(tables: IntakeTables, f: number): Speaking['mix'] {
   const { timeline, factors, cells } = tables
-  return timeline.periods.flatMap((period, p) => {
+  return timeline.periods.slice(0, timeline.current + 1).flatMap((period, p) => {
     const inPeriod = (c: number) => timeline.periodOf[cells.step[c]] === p
     const total = sumCells(tables, inPeriod).mentions
     if (total === 0) return []

@@ -4,7 +4,7 @@ import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 
 export const plainSpec: AnalysisSpec = {
   interval: 0.9, seed: 1, targetMix: {},
-  facts: { givenNotUsed: [], smallestGroup: 10, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
+  facts: { givenNotUsed: [], smallestGroup: 10, posterBounds: { occasional: 1, regular: 5 }, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
 }
 
 /** The whole analysis in this thread. */

@@ -29,7 +29,7 @@ export function tablesFromCells(csv: string, base: { readonly from: string; read
   const total = mentions.reduce((a, b) => a + b, 0)
   return {
     timeline: {
-      grid: 'week', stepDays: 7, steps, periods, periodOf,
+      grid: 'week', stepDays: 7, steps, lastMention: steps[count - 1], quietDays: 6, lastDays: steps.map((step) => iso(Date.parse(step) + 6 * day)), periods, periodOf,
       inBase: Uint8Array.from(middle, (date) => (date >= base.from && date <= base.to ? 1 : 0)),
       base, current: periods.length - 1, review: periods[periods.length - 1],
     },

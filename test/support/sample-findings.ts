@@ -155,7 +155,7 @@ export function sampleFindings(): Findings {
   return {
     schema: 'tareline-findings/1', account: 'skerrow-ferries', brand: 'Skerrow Ferries', locale: 'en-GB',
     period: { name: '2026-10', start: '2026-10-01', end: '2026-10-31' }, previous_period: { name: '2026-09', start: '2026-09-01', end: '2026-09-30' },
-    grid: 'week', interval: 0.9,
+    period_steps: { count: 5, from: '2026-09-28', to: '2026-10-31' }, grid: 'week', interval: 0.9,
     accounting: {
       received: modelled + 312 + 1204 + 2088, rejected: 312, duplicates: 1204, out_of_scope: 2088, modelled,
       reasons: { 'time-unreadable': 141, 'score-unreadable': 171, 'same-id': 380, repost: 824, 'other-brand': 2088, 'time-doubled': 9 },

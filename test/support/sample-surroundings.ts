@@ -40,6 +40,6 @@ export function sampleMethod(
     priors: { initial: 50, mu: 3, venue_drift: 2, fixed_factor: 30, tau: 20 },
     cells: 9104, steps: 130,
     venues: venues.map(({ venue, label }, at) => ({ venue, label, standard_deviation: 58 + 3 * at, intraclass: at === 4 ? null : 0.14 + 0.03 * at, mean_design_effect: 1.1 + 0.05 * at })),
-    smallest_group: 10, prepared_by: 'Ines Carrow', reviewed_by: null, time_zone: 'Europe/Lisbon', reporting: 'month',
+    smallest_group: 10, poster_bounds: { occasional: 1, regular: 5 }, prepared_by: 'Ines Carrow', reviewed_by: null, time_zone: 'Europe/Lisbon', reporting: 'month',
   }
 }

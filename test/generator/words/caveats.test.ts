@@ -12,7 +12,7 @@ const raised: Readonly<Record<string, Readonly<Record<string, string | number>>>
   'level-unseen-in-base': { factor: 'topic', level: 'Strike' }, 'values-unmapped': { factor: 'topic', values: 'harbour works', mentions: 118 },
   'given-not-used': { keys: 'events' }, 'coder-unaudited': {}, 'survey-absent': {}, 'benchmark-absent': {}, 'no-sampling-error': {}, 'level-conventional': {},
   'pooled-average-misleads': { raw_change: -2.27, change: 2.21 }, concentration: { share: 0.31 }, 'mix-moved': { factor: 'venue', level: 'Boards', from: 0.24, to: 0.41 },
-  'opinion-drift-entangled': { correlation: -0.87 }, 'fit-not-converged': { pareto_k: 0.83, ess: 212 }, 'model-misfit': { venue: 'Blogs' }, 'clock-times': { count: 9 },
+  'opinion-drift-entangled': { correlation: -0.87 }, 'fit-not-converged': { pareto_k: 0.83, ess: 212 }, 'model-misfit': { venue: 'Blogs' }, 'clock-times': { count: 9 }, 'period-unfinished': { last: '2026-10-20' }, 'many-rejected': { count: 549, share: 0.183 },
   'no-previous-period': {}, 'ready-made-authors': {}, 'sharp-move': { steps: 2 },
 }
 
@@ -26,10 +26,10 @@ test.each(Object.entries(raised))('caveat %s is worded whole: evidence, meaning,
 })
 
 test('figures are written by their kind', () => {
-  expect(wordCaveat(words, 'mix-moved', raised['mix-moved']!).evidence).toBe('The share of the venue Boards went from 24% to 41%.')
+  expect(wordCaveat(words, 'mix-moved', raised['mix-moved']!).evidence).toBe('Boards (venue) went from 24% to 41% of the mentions.')
   expect(wordCaveat(words, 'venue-vanished', raised['venue-vanished']!).evidence).toBe('The last mention of Blogs is of 30 March 2026.')
   expect(wordCaveat(words, 'pooled-average-misleads', raised['pooled-average-misleads']!).evidence)
-    .toBe('The raw average fell by 2.3 points; mix-adjusted opinion changed by an estimated +2.2 points.')
+    .toBe('At the same mix, opinion changed by an estimated +2.2 points. What was said in all changed by −2.3 points, because the raw average also follows who posts, where and about what.')
   expect(wordCaveat(words, 'empty-steps', { steps: 1 }).evidence).toBe('1 step of the time axis holds no mention.')
 })
 

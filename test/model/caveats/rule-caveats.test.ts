@@ -12,10 +12,12 @@ import type { Accounting } from '../../../model/intake/intake-tables.ts'
 import { analyseHere } from '../../support/analyse-reference.ts'
 import { simulateCells } from '../../support/simulate-cells.ts'
 
-const { tables } = simulateCells({
+const simulated = simulateCells({
   steps: 40, venues: 3, topics: 2, posters: 2, mentionsPerStep: 300,
   sigmas: { mu: 0.01, venueDrift: [0.005, 0.005, 0.005], venue: 0.1, topic: 0.1, poster: 0.1, tau: 0.03 },
-}, createGenerator(4, 0))
+}, createGenerator(4, 0)).tables
+// a period that is over
+const tables = { ...simulated, timeline: { ...simulated.timeline, quietDays: 0 } }
 
 let calm: CaveatGrounds
 beforeAll(async () => {
@@ -58,6 +60,8 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['empty-steps', withFindings((findings) => ({ opinion: { ...findings.opinion, series: findings.opinion.series.map((step, t) => (t === 5 ? { ...step, mentions: 0 } : step)) } }))],
   ['level-unseen-in-base', (grounds) => ({ ...grounds, reading: { ...grounds.reading, mix: { ...grounds.reading.mix, shares: grounds.reading.mix.shares.map((shares) => shares.map((share, i) => (i === 0 ? 0 : share))) } } })],
   ['values-unmapped', withAccounting({ unmapped: [{ factor: 'topic', value: 'other', mentions: 3 }] })],
+  ['period-unfinished', (grounds) => ({ ...grounds, reading: { ...grounds.reading, tables: { ...grounds.reading.tables, timeline: { ...grounds.reading.tables.timeline, quietDays: 20 } } } })],
+  ['many-rejected', withFindings(({ accounting }) => ({ accounting: { ...accounting, rejected: accounting.received / 10 } }))],
   ['clock-times', withAccounting({ reasons: { 'time-doubled': 2 } })],
   ['given-not-used', (grounds) => ({ ...grounds, givenNotUsed: ['events'] })],
   ['no-previous-period', opinion({ previous: null })],
