@@ -1,5 +1,8 @@
 import type { Estimate } from '../findings/schema.ts'
 
+/** What a sum of weights may lack for its rounding: a quantile that falls on a draw must not jump to the next. */
+const rounding = 1e-12
+
 /**
  * Summary of weighted draws: mean, bounds of the central interval, standard deviation.
  *
@@ -21,7 +24,7 @@ export function weightedEstimate(values: Float64Array, weights: Float64Array, in
     let cumulative = 0
     for (const i of order) {
       cumulative += weights[i]
-      if (cumulative >= p) return values[i]
+      if (cumulative >= p - rounding) return values[i]
     }
     return values[order[order.length - 1]]
   }
