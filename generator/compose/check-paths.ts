@@ -3,7 +3,7 @@ import { forms } from '../words/forms.ts'
 import type { Clause, Condition } from './condition.ts'
 import type { Placed, Reporter } from './faults.ts'
 import type { Path } from './path.ts'
-import { kindOf, typeAt, withoutNull } from './path-types.ts'
+import { isOfKind, kindOf, typeAt, withoutNull } from './path-types.ts'
 import type { TypeNode, TypeScope } from './path-types.ts'
 import type { Selection } from './selection.ts'
 
@@ -44,6 +44,7 @@ export function checkSelection(selection: Selection, scope: TypeScope, at: At, r
   const item = checkList(selection.of, scope, at, reporter)
   if (!item) return undefined
   if (selection.where) checkCondition(selection.where, { ...scope, item }, at, reporter)
+  if (selection.against) checkKind(selection.against, 'number', { ...scope, item }, at, reporter)
   if (selection.by) checkKind(selection.by, 'number', { ...scope, item }, at, reporter)
   return item
 }
@@ -63,7 +64,7 @@ export function checkForm(path: Path, form: FormName, scope: TypeScope, at: At, 
 
 function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter: Reporter): void {
   const type = checkPath(path, scope, at, reporter)
-  if (!type || kind === 'any' || kindOf(type) === kind) return
+  if (!type || kind === 'any' || isOfKind(type, kind)) return
   reporter.report(at, 'form-unfit', `${kindOf(type)} "${written(path)}"`, `a ${kind} for this form`, 'Name another path, or another form.')
 }
 

@@ -65,12 +65,20 @@ export function withoutNull(node: TypeNode): TypeNode {
   return node.anyOf?.find((option) => option.type !== 'null') ?? node
 }
 
+/** Whether a value of the type can be written by a form made from `kind`. */
+export function isOfKind(node: TypeNode, kind: string): boolean {
+  if (kind !== 'shift') return kindOf(node) === kind
+  const { properties = {} } = withoutNull(node)
+  return 'share_from' in properties && 'share_to' in properties
+}
+
 /** What a value of the type can be written as: see the forms of generator/words. */
 export function kindOf(node: TypeNode): string {
   const { type, properties, items } = withoutNull(node)
   if (items) return 'list'
   if (properties && 'low' in properties) return 'estimate'
   if (properties && 'label' in properties) return 'level'
+  if (properties && 'start' in properties && 'end' in properties) return 'span'
   const [named = 'nothing'] = [type ?? []].flat().filter((name) => name !== 'null')
   return named === 'integer' ? 'number' : named
 }

@@ -7,7 +7,7 @@ import type { Path } from './path.ts'
 import { orders } from './selection.ts'
 import type { Order, Selection } from './selection.ts'
 
-export const selectionKeys = ['of', 'where', 'by', 'order', 'most', 'last'] as const
+export const selectionKeys = ['of', 'where', 'by', 'against', 'order', 'most', 'last'] as const
 
 type Given = Readonly<Record<string, string | null | undefined>>
 
@@ -28,18 +28,20 @@ export function readCondition(text: string, at: Placed, reporter: Reporter): Con
   return condition
 }
 
-/** Read `of`, `where`, `by`, `order`, `most`, `last`; undefined, and reported, where one of them is wrong. */
+/** Read `of`, `where`, `by`, `against`, `order`, `most`, `last`; undefined, and reported, where one of them is wrong. */
 export function readSelection(given: Given, at: Placed, reporter: Reporter): Selection | undefined {
   const of = readPath(given['of'] ?? '', at, reporter)
   const by = optional(given['by'], (text) => readPath(text, at, reporter))
+  const against = optional(given['against'], (text) => readPath(text, at, reporter))
   const where = optional(given['where'], (text) => readCondition(text, at, reporter))
   const order = optional(given['order'], (text) => readOrder(text, at, reporter))
   const most = optional(given['most'], (text) => readMost('most', text, at, reporter))
   const last = optional(given['last'], (text) => readMost('last', text, at, reporter))
-  if (!of || [by, where, order, most, last].some((part) => part.wrong)) return undefined
+  if (!of || [by, against, where, order, most, last].some((part) => part.wrong)) return undefined
   return {
     of,
-    ...(by.value && { by: by.value }), ...(where.value && { where: where.value }),
+    ...(by.value && { by: by.value }), ...(against.value && { against: against.value }),
+    ...(where.value && { where: where.value }),
     ...(order.value && { order: order.value }), ...(most.value && { most: most.value }), ...(last.value && { last: last.value }),
   }
 }

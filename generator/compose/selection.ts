@@ -9,11 +9,13 @@ export interface Selection {
   readonly where?: Condition
   /** A number to sort by, largest first; items without one come last. */
   readonly by?: Path
+  /** Another number: sorted by how far `by` lies above it, so that what moved most comes first. */
+  readonly against?: Path
   /** `most` (default): largest first; `least`: smallest first; `size`: largest without regard to the sign first. */
   readonly order?: Order
   /** At most so many. */
   readonly most?: number
-  /** At most so many, from the end. */
+  /** Only so many from the end of the list as it stands, before it is sorted: the latest. */
   readonly last?: number
 }
 
@@ -24,10 +26,15 @@ export type Order = (typeof orders)[number]
 export function selected(selection: Selection, scope: Scope): readonly unknown[] {
   const list = lookUp(selection.of, scope)
   if (!Array.isArray(list)) return []
-  const { where, by, order = 'most', most = list.length, last = list.length } = selection
+  const { where, by, against, order = 'most', most = list.length, last = list.length } = selection
   const kept = where ? list.filter((item: unknown) => holds(where, { ...scope, item })) : list
-  const rank = (item: unknown) => by ? rankOf(lookUp(by, { ...scope, item }), order) : 0
-  return [...kept].sort((a, b) => rank(b) - rank(a) || 0).slice(0, most).slice(-last)
+  const valueOf = (item: unknown) => by && distance(lookUp(by, { ...scope, item }), against ? lookUp(against, { ...scope, item }) : 0)
+  const rank = (item: unknown) => by ? rankOf(valueOf(item), order) : 0
+  return kept.slice(-last).sort((a, b) => rank(b) - rank(a) || 0).slice(0, most)
+}
+
+function distance(value: unknown, from: unknown): number | undefined {
+  return typeof value === 'number' && typeof from === 'number' ? value - from : undefined
 }
 
 function rankOf(value: unknown, order: Order): number {

@@ -65,7 +65,7 @@ function readArgument(name: string, spec: Readonly<Record<string, string>>, posi
   const selection = readSelection(spec, { position }, reporter)
   const pick = spec['pick'] === undefined ? undefined : parsePath(spec['pick'])
   if (!selection || !isFormName(form) || !isFormName(itemForm) || wrong.length > 0) return undefined
-  const chooses = ['where', 'by', 'order', 'most', 'last', 'pick'].some((key) => key in spec)
+  const chooses = ['where', 'by', 'against', 'order', 'most', 'last', 'pick'].some((key) => key in spec)
   return { of: selection.of, as: form, position, ...(chooses && { selection }), ...(pick && { pick }), ...(spec['write'] !== undefined && { write: itemForm }) }
 }
 

@@ -4,14 +4,13 @@ import { isRowLabel, writeBounds, writeCell } from '../words/cells.ts'
 import type { Labels } from '../words/cells.ts'
 import type { Words } from '../words/words.ts'
 import type { Column, Row, Table } from '../tables/table.ts'
-import { columnHeader } from './table-columns.ts'
 import type { PrintedColumn } from './table-columns.ts'
 
 interface Surroundings {
   readonly caption: string
   readonly after: readonly ElementContent[]
-  /** The wording of a column's header, by its message. */
-  readonly header: (message: string) => string
+  /** The wording of each column's header. */
+  readonly headers: readonly string[]
   readonly labels: Labels
 }
 
@@ -20,7 +19,7 @@ interface Surroundings {
  * their column's kind (`kind-points`, `kind-interval`, ...), by which they are aligned.
  */
 export function tableTree(
-  table: Table, columns: readonly PrintedColumn[], { caption, after, header, labels }: Surroundings, words: Words,
+  table: Table, columns: readonly PrintedColumn[], { caption, after, headers, labels }: Surroundings, words: Words,
 ): Element {
   const rowHeader = columns.findIndex((column) => column.keys.length === 1 && isRowLabel(kindOf(table, column)))
   const cells = (row: Row) => columns.map((column, at) => {
@@ -31,7 +30,7 @@ export function tableTree(
   return h('div.table', { role: 'group', ariaLabel: caption, tabIndex: 0, dataTable: table.name }, [
     h('table', { className: [`table-${table.name}`] }, [
       h('caption', [caption, ...after]),
-      h('thead', [h('tr', columns.map((column) => h('th', { scope: 'col', className: [`kind-${kindOf(table, column)}`] }, header(columnHeader(column)))))]),
+      h('thead', [h('tr', columns.map((column, at) => h('th', { scope: 'col', className: [`kind-${kindOf(table, column)}`] }, headers[at])))]),
       h('tbody', table.rows.map((row) => h('tr', cells(row)))),
     ]),
   ])

@@ -18,7 +18,7 @@ export interface DrawingPlace {
 
 /**
  * Make compose's tree ready for the page: each chart's frame gets the place of its drawing; tables are
- * marked by their size; each line of the contents says whose page number it waits for.
+ * marked by their size; each place of a page number says whose it waits for.
  *
  * @returns a new tree, and the places to be drawn in, in order
  */
@@ -59,8 +59,10 @@ function markTable(region: Element, advances: AdvanceTable): void {
 
 function awaitPageNumber(link: Element): void {
   const { href } = link.properties
-  const place = link.children.find((child): child is Element => child.type === 'element' && hasClass(child, 'page'))
-  if (place !== undefined && typeof href === 'string') place.properties = { ...place.properties, dataPageOf: href.replace(/^#/, '') }
+  if (typeof href !== 'string') return
+  visit(link, 'element', (place) => {
+    if (hasClass(place, 'page')) place.properties = { ...place.properties, dataPageOf: href.replace(/^#/, '') }
+  })
 }
 
 function without(properties: Properties, names: readonly string[]): Properties {

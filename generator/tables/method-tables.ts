@@ -1,4 +1,5 @@
 import type { Estimate, Findings } from '../../model/findings/schema.ts'
+import { inOrder, levelOrder } from './level-order.ts'
 import { makeTable } from './make-table.ts'
 import type { Table } from './table.ts'
 
@@ -9,10 +10,11 @@ export function accountingTable({ accounting }: Findings): Table {
 }
 
 /** Posterior of the model's standard deviations, in points; one that the model does not have is left out. */
-export function scalesTable({ scales }: Findings): Table {
+export function scalesTable({ scales, ...findings }: Findings): Table {
+  const drifts = inOrder(Object.entries(scales.venue_drift), 'venue', levelOrder(findings), ([venue]) => venue)
   const named: readonly (readonly [string, Estimate | null])[] = [
     ['mu', scales.mu], ['tau', scales.tau],
-    ...Object.entries(scales.venue_drift).map(([venue, of]) => [`venue_drift.${venue}`, of] as const),
+    ...drifts.map(([venue, of]) => [`venue_drift.${venue}`, of] as const),
     ['venue', scales.venue], ['topic', scales.topic], ['poster', scales.poster],
     ...Object.entries(scales.factors),
   ]
@@ -20,17 +22,21 @@ export function scalesTable({ scales }: Findings): Table {
     named.flatMap(([scale, of]) => (of === null ? [] : [{ scale, mean: of.mean, low: of.low, high: of.high }])))
 }
 
-/** The mix at which opinion is stated. */
-export function targetMixTable({ method }: Findings): Table {
-  return makeTable('target-mix', { factor: 'text', level: 'text', label: 'text', share: 'share' },
-    method.target_mix.map(({ factor, level, label, share }) => ({ factor, level, label, share })))
+/** The fixed mix, at which opinion is stated. */
+export function targetMixTable({ method, ...findings }: Findings): Table {
+  const order = levelOrder(findings)
+  const factors = [...new Set(method.target_mix.map(({ factor }) => factor))]
+  const rows = factors.flatMap((factor) => inOrder(method.target_mix.filter((of) => of.factor === factor), factor, order, ({ level }) => level))
+  return makeTable('target-mix', { factor: 'text', level: 'text', label: 'text', target_share: 'share' },
+    rows.map(({ factor, level, label, share }) => ({ factor, level, label, target_share: share })))
 }
 
 /** Posterior predictive checks. */
-export function checksTable({ diagnostics }: Findings): Table {
+export function checksTable({ diagnostics, ...findings }: Findings): Table {
+  const checks = inOrder(diagnostics.checks, 'venue', levelOrder(findings), ({ venue }) => venue ?? '')
   return makeTable('checks', {
     name: 'text', venue: 'text', observed: 'number', predicted: 'number', low: 'number', high: 'number', p: 'probability', passed: 'text',
-  }, diagnostics.checks.map(({ name, venue, observed, predicted, p, passed }) => (
+  }, checks.map(({ name, venue, observed, predicted, p, passed }) => (
     { name, venue, observed, predicted: predicted.mean, low: predicted.low, high: predicted.high, p, passed }
   )))
 }

@@ -5,13 +5,13 @@ import type { Table } from './table.ts'
 /** One row per venue, the period under review. */
 export function venuesTable({ venues, method }: Findings): Table {
   return makeTable('venues', {
-    venue: 'text', label: 'text', mentions: 'count', authors: 'count', share: 'share', raw: 'points',
-    level: 'points', level_low: 'points', level_high: 'points', drift: 'change', drift_low: 'change', drift_high: 'change',
+    venue: 'text', label: 'text', mentions: 'count', authors: 'count', share: 'share', share_base: 'share', raw: 'points',
+    level_base: 'points', level_base_low: 'points', level_base_high: 'points', level: 'points', level_low: 'points', level_high: 'points', drift: 'change', drift_low: 'change', drift_high: 'change',
     slope: 'change', slope_low: 'change', slope_high: 'change', probability_drift_down: 'probability', spread: 'points',
   }, venues.map((of) => ({
-    venue: of.venue, label: of.label, mentions: of.mentions, authors: of.authors, share: of.share,
+    venue: of.venue, label: of.label, mentions: of.mentions, authors: of.authors, share: of.share, share_base: of.share_base,
     raw: withheldBelow(of.raw, of.authors, method.smallest_group),
-    ...estimateCells('level', of.level), ...estimateCells('drift', of.drift), ...estimateCells('slope', of.slope),
+    ...estimateCells('level_base', of.level_base), ...estimateCells('level', of.level), ...estimateCells('drift', of.drift), ...estimateCells('slope', of.slope),
     probability_drift_down: of.probability_drift_down,
     spread: withheldBelow(of.spread, of.authors, method.smallest_group),
   })))

@@ -5,7 +5,7 @@ import type { WordArgument, Words } from './words.ts'
 /** How each figure of a caveat is written, by its name. */
 const formOf: Readonly<Record<string, FormName>> = {
   share: 'share', from: 'share', to: 'share', correlation: 'number', pareto_k: 'number', ess: 'count',
-  raw_change: 'size', change: 'change', first: 'date', last: 'date', factor: 'factor',
+  raw_change: 'change', change: 'change', first: 'date', last: 'date', factor: 'factor',
   mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain',
 }
 

@@ -1,13 +1,13 @@
 import type { Cell, Column, ColumnKind, Row } from '../tables/table.ts'
 import type { FormName } from './forms.ts'
 import { write } from './forms.ts'
-import { levelLabel } from './labels.ts'
+import { levelLabel, partName } from './labels.ts'
 import { interval } from './numbers.ts'
 import * as numbers from './numbers.ts'
 import type { Words } from './words.ts'
 
 const formOf: Readonly<Record<ColumnKind, FormName>> = {
-  text: 'text', date: 'short-date', count: 'count', points: 'points', change: 'change', share: 'column-share', probability: 'probability-figure', number: 'number',
+  text: 'text', date: 'short-date', count: 'count', points: 'points', change: 'change', share: 'share', probability: 'probability-figure', number: 'number',
 }
 
 /** Whether a column of the kind can head a row. */
@@ -20,12 +20,12 @@ export type Labels = ReadonlyMap<string, string>
 
 /**
  * A value that the findings name by a code, in words: `part-venue_mix`. A value that the catalogue doesn't know is
- * the account's own and stays as it is; the mix of a factor that the account adds is worded by the factor's name.
+ * the account's own and stays as it is.
  */
 export function valueWord(words: Words, column: string, value: string): string {
+  if (column === 'part') return partName(value, words)
   const key = `${column}-${value}`
-  if (words.has(key)) return words.say(key)
-  return column === 'part' && value.endsWith('_mix') ? words.say('part-factor_mix', { factor: value.slice(0, -'_mix'.length) }) : value
+  return words.has(key) ? words.say(key) : value
 }
 
 /** A cell of a table as people read it. */
@@ -40,11 +40,15 @@ export function writeCell(column: Column, row: Row, words: Words, labels: Labels
 
 const driftScale = 'venue_drift.'
 
+/** So many characters tell two files apart where people compare them; the whole fingerprint is in the CSV and the findings. */
+const fingerprintShown = 12
+
 function writeText(key: string, value: string, row: Row, words: Words, labels: Labels): string {
   const level = row['venue'] ?? row['level']
   if (key === 'label' && typeof level === 'string') return levelLabel({ label: value, level }, words)
   if (key === 'period') return String(write(value, 'period', words))
   if (key === 'factor') return String(write(value, 'factor', words))
+  if (key === 'sha256') return value.slice(0, fingerprintShown)
   if (key === 'venue') return labels.get(value) ?? value
   if (key === 'scale' && value.startsWith(driftScale)) {
     const venue = value.slice(driftScale.length)

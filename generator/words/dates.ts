@@ -5,6 +5,13 @@ export function date(iso: string, locale: string): string {
   return calendar(iso, locale, { day: 'numeric', month: 'long', year: 'numeric' })
 }
 
+/** From one day to another, no part said twice: `1 – 31 October 2026`, as the locale writes it. */
+export function days({ start, end }: { readonly start: string, readonly end: string }, locale: string): string {
+  const format = new Intl.DateTimeFormat(locale, { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC', calendar: 'gregory' })
+  // Intl parts the dash by thin spaces, which the embedded font lacks
+  return format.formatRange(new Date(`${start}T00:00:00Z`), new Date(`${end}T00:00:00Z`)).replace(/\u2009/g, ' ')
+}
+
 /** A day for a column: `26 Oct 2026`. */
 export function shortDate(iso: string, locale: string): string {
   return calendar(iso, locale, { day: 'numeric', month: 'short', year: 'numeric' })

@@ -1,10 +1,10 @@
-import { date, period, shortDate } from './dates.ts'
-import { levelLabel } from './labels.ts'
-import { change, count, interval, number, points, probability, probabilityBand, probabilityFigure, share, shareInColumn, size, sizeInterval } from './numbers.ts'
+import { date, days, period, shortDate } from './dates.ts'
+import { factorName, levelLabel, partName } from './labels.ts'
+import { change, count, interval, number, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange } from './numbers.ts'
 import type { WordArgument, Words } from './words.ts'
 
 /** What a form is made from. */
-export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'any'
+export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'any'
 
 export interface Form {
   readonly from: Kind
@@ -18,6 +18,7 @@ const ofBounds = (write: (value: Bounds, words: Words) => WordArgument): Form =>
 const ofList = (write: (value: readonly unknown[], words: Words) => WordArgument): Form => ({ from: 'list', write })
 
 interface Bounds { readonly low: number, readonly high: number }
+interface Shift { readonly share_from: number, readonly share_to: number }
 
 /** Every form that a figure can take; a template names one by `as`. */
 export const forms = {
@@ -26,8 +27,7 @@ export const forms = {
   size: ofNumber(size),
   count: ofNumber((value, words) => count(value, words.locale)),
   number: ofNumber((value, words) => number(value, words.locale)),
-  share: ofNumber((value, words) => share(value, words.locale)),
-  'column-share': ofNumber((value, words) => shareInColumn(value, words.locale)),
+  share: ofNumber(share),
   probability: ofNumber(probability),
   'probability-words': ofNumber((value, words) => words.say('probability-words', { band: probabilityBand(value) })),
   'probability-figure': ofNumber(probabilityFigure),
@@ -41,17 +41,25 @@ export const forms = {
   date: ofString((value, words) => date(value, words.locale)),
   'short-date': ofString((value, words) => shortDate(value, words.locale)),
   period: ofString(period),
+  /** A stretch of days. */
+  days: { from: 'span', write: (value: Parameters<typeof days>[0], words: Words) => days(value, words.locale) } satisfies Form,
   /** A number that names something, ungrouped: a seed. */
   digits: ofNumber((value) => String(value)),
   text: ofString((value) => value),
   /** A factor's name: `venue` is worded, one that the account adds stays as it is. */
   factor: ofString(factorName),
+  /** A part of a decomposition, as tables and charts name it. */
+  part: ofString(partName),
   /** The factor that a part of a decomposition is the mix of: `segment_mix` is that of segment. */
   'mix-factor': ofString((value, words) => factorName(value.replace(/_mix$/, ''), words)),
   /** A value of the findings that chooses a case of a message: text, truth or nothing (`none`); ICU allows no hyphen there. */
   code: { from: 'any', write: (value: unknown) => value === null || value === undefined ? 'none' : String(value).replaceAll('-', '_') } satisfies Form,
   /** The label of a venue, topic, poster class or other level. */
   label: { from: 'level', write: (value: Parameters<typeof levelLabel>[0], words: Words) => levelLabel(value, words) } satisfies Form,
+  /** Of a level whose share moved: `up`, `down`, or `flat` where it did not. */
+  'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => from === to ? 'flat' : from < to ? 'up' : 'down' } satisfies Form,
+  /** Smallest to largest size in a list of numbers. */
+  'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words)),
   list: ofList((value, words) => new Intl.ListFormat(words.locale, { style: 'long', type: 'conjunction' }).format(value.map(String))),
   length: ofList((value) => value.length),
 } as const satisfies Readonly<Record<string, Form>>
@@ -61,10 +69,6 @@ export const formNames = Object.keys(forms) as readonly FormName[]
 
 export function isFormName(name: string): name is FormName {
   return Object.hasOwn(forms, name)
-}
-
-function factorName(factor: string, words: Words): string {
-  return words.has(`factor-${factor}`) ? words.say(`factor-${factor}`) : factor
 }
 
 /** What one decimal shows of a number's direction. */
@@ -83,10 +87,12 @@ export function write(value: unknown, form: FormName, words: Words): WordArgumen
   return fits(value, from) ? toWords(value as never, words) : words.say('not-known')
 }
 
+const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'] } as const
+
 function fits(value: unknown, kind: Kind): boolean {
   if (kind === 'any') return true
   if (kind === 'list') return Array.isArray(value)
   if (kind === 'number' || kind === 'string') return typeof value === kind
   if (typeof value !== 'object' || value === null) return false
-  return kind === 'estimate' ? 'low' in value && 'high' in value : 'label' in value
+  return keysOf[kind].every((key) => key in value)
 }

@@ -11,10 +11,28 @@ export interface NamedLevel {
 
 /**
  * The label of a level. The account's own label is kept; a level that has none but its name (the poster classes,
- * a mention without a topic) is worded by the catalogue, if it knows the name.
+ * a mention without a topic) is worded by the catalogue, if it knows the name, and else begins with a capital where the data have none.
  */
 export function levelLabel(level: NamedLevel, words: Words): string {
   const name = level.venue ?? level.topic ?? level.poster ?? level.level ?? level.label
   const key = `level-${name}`
-  return level.label === name && words.has(key) ? words.say(key) : level.label
+  if (level.label !== name) return level.label
+  return words.has(key) ? words.say(key) : capitalised(level.label, words.locale)
+}
+
+/** For display only: `lost property` reads `Lost property`; a name with capitals of its own (`iPhone`) stays. */
+function capitalised(label: string, locale: string): string {
+  const [first = '', ...rest] = label
+  return label === label.toLocaleLowerCase(locale) ? [first.toLocaleUpperCase(locale), ...rest].join('') : label
+}
+
+/** A factor's name: `venue` is worded, one that the account adds stays as it is. */
+export function factorName(factor: string, words: Words): string {
+  return words.has(`factor-${factor}`) ? words.say(`factor-${factor}`) : factor
+}
+
+/** A part of a decomposition in words; the mix of a factor that the account adds is worded by the factor's name. */
+export function partName(part: string, words: Words): string {
+  if (words.has(`part-${part}`)) return words.say(`part-${part}`)
+  return part.endsWith('_mix') ? words.say('part-factor_mix', { factor: factorName(part.slice(0, -'_mix'.length), words) }) : part
 }

@@ -39,14 +39,12 @@ export function number(value: number, locale: string): string {
   return figure(value, locale, { minimumFractionDigits: 2, maximumFractionDigits: 2 })
 }
 
-/** A share as a percentage for running text: whole from 10 % on, else one decimal. */
-export function share(value: number, locale: string): string {
-  return figure(value, locale, { style: 'percent', maximumFractionDigits: Math.abs(value) < 0.0995 ? 1 : 0 })
-}
-
-/** A share as a percentage for a column: always one decimal, so that decimals stand below each other. */
-export function shareInColumn(value: number, locale: string): string {
-  return figure(value, locale, { style: 'percent', ...oneDecimal })
+/** A share as a whole percentage, alike in text, tables and charts: `41%`; what rounds to nothing, or to all, but is not is `under 1%`, `over 99%`. */
+export function share(value: number, words: Words): string {
+  const percent = (of: number) => figure(of, words.locale, { style: 'percent', maximumFractionDigits: 0 })
+  if (value > 0 && value < 0.005) return words.say('probability-under', { figure: percent(0.01) })
+  if (value < 1 && value >= 0.995) return words.say('probability-over', { figure: percent(0.99) })
+  return percent(value)
 }
 
 /** A probability as a percentage, never rounded to certainty: `87%`, `over 99%`, `under 1%`. */
@@ -75,6 +73,13 @@ export function probabilityBand(value: number): string {
 /** In words and figure: `very likely (94%)`. */
 export function probability(value: number, words: Words): string {
   return words.say('probability', { words: words.say('probability-words', { band: probabilityBand(value) }), figure: probabilityFigure(value, words) })
+}
+
+/** Smallest to largest size of several movements, without signs: `2.1 to 2.3`, or `2.2` where they round to the same. */
+export function sizeRange(values: readonly number[], words: Words): string {
+  const sizes = values.map(Math.abs)
+  const [low, high] = [Math.min(...sizes), Math.max(...sizes)]
+  return points(low, words.locale) === points(high, words.locale) ? size(low, words) : interval({ low, high }, points, words)
 }
 
 /** Two bounds as `1.2 to 5.0`, both formatted alike. */

@@ -1,7 +1,7 @@
 import type { Column, Row, Table } from '../../tables/table.ts'
 import { valueWord } from '../../words/cells.ts'
 import { levelLabel } from '../../words/labels.ts'
-import { change, count, points, shareInColumn } from '../../words/numbers.ts'
+import { change, count, points, share } from '../../words/numbers.ts'
 import type { Words } from '../../words/words.ts'
 import type { DrawingSize, Theme } from '../theme.ts'
 import { wrapLabel } from './text-metrics.ts'
@@ -33,7 +33,7 @@ function cells(table: Table, row: Row, { key, kind }: Column, options: DataOptio
   if (kind === 'date') return [[key, typeof cell === 'string' ? Date.parse(`${cell}T00:00:00Z`) : null]]
   if (key === 'label') return [[key, wrapped(levelLabel({ label: String(cell), ...levelName(row) }, words), options)]]
   if (typeof cell === 'string') return uses(`${key}_said`) ? [[key, cell], [`${key}_said`, wrapped(valueWord(words, key, cell), options)]] : [[key, cell]]
-  if (typeof cell === 'number' && uses(`${key}_shown`)) return [[key, cell], [`${key}_shown`, shown(cell, kind, words.locale)]]
+  if (typeof cell === 'number' && uses(`${key}_shown`)) return [[key, cell], [`${key}_shown`, shown(cell, kind, words)]]
   return [[key, cell]]
 }
 
@@ -42,10 +42,10 @@ function levelName(row: Row): { readonly level?: string } {
   return typeof name === 'string' ? { level: name } : {}
 }
 
-function shown(value: number, kind: Column['kind'], locale: string): string {
-  if (kind === 'change') return change(value, locale)
-  if (kind === 'count') return count(value, locale)
-  return kind === 'share' || kind === 'probability' ? shareInColumn(value, locale) : points(value, locale)
+function shown(value: number, kind: Column['kind'], words: Words): string {
+  if (kind === 'change') return change(value, words.locale)
+  if (kind === 'count') return count(value, words.locale)
+  return kind === 'share' || kind === 'probability' ? share(value, words) : points(value, words.locale)
 }
 
 function wrapped(label: string, { theme, size }: DataOptions): string {

@@ -22,16 +22,20 @@ const months = movements.flatMap((movement) => [2, -2, 0.01, null].flatMap((rawC
 test.each(months)('what is said of opinion is what its interval supports: %s', (_name, findings) => {
   const { movement, mentions, raw_change: rawChange } = findings.opinion
   const headline = say('opinion-headline', findings)
+  const raw = rawChange === null ? '' : `${say('raw-headline', findings)} ${say('two-facts', findings)}`
   expect(/Opinion of Skerrow Ferries rose by 3\.0 points/.test(headline)).toBe(movement === 'up')
   expect(/Opinion of Skerrow Ferries fell by 3\.0 points/.test(headline)).toBe(movement === 'down')
   expect(headline.includes('No change in opinion of Skerrow Ferries can be established')).toBe(movement === 'not-established')
   expect(headline.includes('there is no earlier period')).toBe(movement === null)
   expect(headline.startsWith('No mention of Skerrow Ferries was posted')).toBe(mentions === 0)
   const against = movement === 'up' ? rawChange === -2 : movement === 'down' && rawChange === 2
-  expect(headline.includes('although the raw average')).toBe(against)
+  expect(raw.startsWith('Yet the raw average')).toBe(against)
+  expect(/^(The|Yet the) raw average of all mentions (rose|fell) by 2\.0 points/.test(raw)).toBe(Math.abs(rawChange ?? 0) === 2)
+  expect(raw.includes('says nothing about opinion')).toBe(movement === 'not-established' && Math.abs(rawChange ?? 0) === 2)
   expect(headline).toContain('90% interval')
+  expect(/people were (kinder|less kind)/.test(say('two-facts', findings))).toBe(movement === 'up' || movement === 'down')
   const since = say('opinion-finding', findings)
   expect(/has (risen|fallen)/.test(since)).toBe(movement === 'up' || movement === 'down')
   expect(/ (rose|fell) by/.test(say('chart-opinion-title', findings))).toBe(movement === 'up' || movement === 'down')
-  expect(`${headline} ${since}`).not.toMatch(/not known|undefined|NaN|[{}]| {2}| \./)
+  expect([headline, raw, since].filter(Boolean).join(' ')).not.toMatch(/not known|undefined|NaN|[{}]| {2}| \./)
 })

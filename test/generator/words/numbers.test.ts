@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { expect, test } from 'vitest'
-import { change, count, interval, number, points, probability, probabilityBand, probabilityFigure, share, shareInColumn, size, sizeInterval } from '../../../generator/words/numbers.ts'
+import { change, count, interval, number, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval } from '../../../generator/words/numbers.ts'
 import { houseWords } from '../../support/house-words.ts'
 
 const words = await houseWords()
@@ -15,7 +15,7 @@ test('a change has its sign, and none where it rounds to zero', () => {
   expect([2.71, -0.3, 0.04, -0.04, 0].map((value) => change(value, 'en-GB'))).toEqual(['+2.7', '\u22120.3', '0.0', '0.0', '0.0'])
 })
 
-test.each([points, change, number, count, share, shareInColumn])('%o never shows a negative zero nor a hyphen for a minus', (format) => {
+test.each([points, change, number, count, (value: number) => share(value, words)])('%o never shows a negative zero nor a hyphen for a minus', (format) => {
   fc.assert(fc.property(fc.double({ min: -100, max: 100, noNaN: true }), (value) => {
     const text = format(value, 'en-GB')
     return !text.includes('-') && !/^\u22120(\.0+)?%?$/.test(text)
@@ -31,10 +31,9 @@ test('halves round away from zero, on both sides alike', () => {
   expect([2.25, -2.25].map((value) => points(value, 'en-GB'))).toEqual(['2.3', '\u22122.3'])
 })
 
-test('shares: whole from ten per cent on, one decimal below and in columns', () => {
-  expect([0.412, 0.0961, 0.0996, 0.1].map((value) => share(value, 'en-GB'))).toEqual(['41%', '9.6%', '10%', '10%'])
-  expect(shareInColumn(0.4, 'en-GB')).toBe('40.0%')
-  expect(share(0.41, 'de-DE')).toBe('41\u00a0%')
+test('shares: whole percentages, never nothing where there is something nor all where there is not', () => {
+  expect([0.412, 0.0961, 0.005, 0.0049, 0, 0.994, 0.995, 1].map((value) => share(value, words))).toEqual(['41%', '10%', '1%', 'under 1%', '0%', '99%', 'over 99%', '100%'])
+  expect(share(0.41, { ...words, locale: 'de-DE' })).toBe('41\u00a0%')
 })
 
 test('a probability is never rounded to certainty', () => {
