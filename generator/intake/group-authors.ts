@@ -1,5 +1,6 @@
 import type { Database } from './database.ts'
-import type { MentionNames } from './mention-table.ts'
+import { periodSql, type MentionNames } from './mention-table.ts'
+import { solitude } from './poster-classes.ts'
 
 /** Counts of authors by number of step, period, factor and level, as in `MentionNames`. */
 export interface AuthorGroups {
@@ -24,8 +25,8 @@ export async function groupAuthors(database: Database, names: MentionNames): Pro
   const masks = names.levels.flatMap((levels, factor) => (factor === 0 ? [] : chunks(levels.length).map((chunk) => ({ factor, chunk, column: `mask_${factor}_${chunk}` }))))
   const columns = masks.map(({ factor, chunk, column }) =>
     `bit_or(CASE WHEN factor_${factor} // ${bits} = ${chunk} THEN 1::BIGINT << (factor_${factor} % ${bits})::BIGINT ELSE 0 END) AS ${column}`)
-  await database.run(`CREATE TEMP TABLE active AS SELECT period, min(factor_0) AS venue, count(*) AS posts${columns.map((column) => `, ${column}`).join('')}
-    FROM classified WHERE NOT alone_in_period GROUP BY author, period`)
+  await database.run(`CREATE TEMP TABLE active AS SELECT ${periodSql} AS period, min(factor_0) AS venue, count(*) AS posts${columns.map((column) => `, ${column}`).join('')}
+    FROM classified WHERE solitude < ${solitude.aloneInPeriod} GROUP BY author, ${periodSql}`)
   const concentration = await counted(database, `SELECT a, b, c, sum(n)::BIGINT AS n FROM (
     SELECT period AS a, venue AS b, posts AS c, count(*) AS n FROM active GROUP BY ALL
     UNION ALL SELECT period, factor_0, 1, known_alone_in_period FROM cell_sum WHERE known_alone_in_period > 0) GROUP BY ALL ORDER BY ALL`)

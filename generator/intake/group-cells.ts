@@ -1,6 +1,7 @@
 import type { CellPart } from './cell-part.ts'
 import type { Database } from './database.ts'
-import type { MentionNames } from './mention-table.ts'
+import { periodSql, stepSql, type MentionNames } from './mention-table.ts'
+import { solitude } from './poster-classes.ts'
 import { scorePart } from './score-sql.ts'
 
 interface CellSums {
@@ -21,10 +22,11 @@ interface CellSums {
  */
 export async function sumCells(database: Database, factors: readonly string[]): Promise<void> {
   const keys = cellKeys(factors)
-  await database.run(`CREATE TEMP TABLE cell_sum AS SELECT ${keys}, period, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares,
-    count(author) AS known, coalesce(sum(score) FILTER (author IS NOT NULL), 0)::HUGEINT AS known_score, count(*) FILTER (author IS NOT NULL AND alone_in_step) AS single,
-    count(*) FILTER (first_in_step) AS first_in_step, count(*) FILTER (alone_in_period) AS alone_in_period, count(author) FILTER (alone_in_period) AS known_alone_in_period
-    FROM classified GROUP BY ${keys}, period`)
+  await database.run(`CREATE TEMP TABLE cell_sum AS SELECT ${keys}, ${stepSql} AS step, ${periodSql} AS period, count(*) AS mentions, sum(score)::HUGEINT AS score, sum(score::BIGINT * score)::HUGEINT AS squares,
+    count(author) AS known, coalesce(sum(score) FILTER (author IS NOT NULL), 0)::HUGEINT AS known_score, count(author) FILTER (solitude >= ${solitude.aloneInStep}) AS single,
+    count(*) FILTER (solitude >= ${solitude.firstInStep}) AS first_in_step, count(*) FILTER (solitude >= ${solitude.aloneInPeriod}) AS alone_in_period,
+    count(author) FILTER (solitude >= ${solitude.aloneInPeriod}) AS known_alone_in_period
+    FROM classified GROUP BY ${keys}`)
 }
 
 /** The cells of `classified`, ordered by step and levels. */
@@ -32,10 +34,10 @@ export async function groupCells(database: Database, factors: readonly string[],
   const keys = cellKeys(factors)
   // An author with one mention in the step needs no grouping: only the others are grouped by author.
   const rows = await database.rows<CellSums>(`
-    SELECT ${keys}, mentions, score, squares, single + coalesce(authors, 0) AS authors, known, single + coalesce(clusters, 0) AS clusters
+    SELECT step, ${keys}, mentions, score, squares, single + coalesce(authors, 0) AS authors, known, single + coalesce(clusters, 0) AS clusters
     FROM cell_sum LEFT JOIN (SELECT ${keys}, count(*) AS authors, sum(posts * posts)::BIGINT AS clusters FROM (
-      SELECT author, ${keys}, count(*) AS posts FROM classified WHERE NOT alone_in_step GROUP BY author, ${keys}) GROUP BY ${keys}) USING (${keys})
-    ORDER BY ${keys}`)
+      SELECT author, ${keys}, count(*) AS posts FROM classified WHERE solitude < ${solitude.aloneInStep} GROUP BY author, ${keys}) GROUP BY ${keys}) USING (${keys})
+    ORDER BY step, ${keys}`)
   return rows.map((row) => cellOf(row, factors, names))
 }
 
@@ -56,5 +58,5 @@ function cellOf(row: CellSums, factors: readonly string[], names: MentionNames):
 }
 
 function cellKeys(factors: readonly string[]): string {
-  return ['step', ...factors.map((_, index) => `factor_${index}`)].join(', ')
+  return ['slot', ...factors.map((_, index) => `factor_${index}`)].join(', ')
 }

@@ -1,5 +1,6 @@
 import type { AuthorVariation } from '../../model/intake/intake-tables.ts'
 import type { Database } from './database.ts'
+import { solitude } from './poster-classes.ts'
 import { scorePart } from './score-sql.ts'
 
 interface VariationSums {
@@ -19,14 +20,14 @@ interface VariationSums {
  * @returns by number of the venue
  */
 export async function groupVariation(database: Database): Promise<ReadonlyMap<number, AuthorVariation>> {
-  await database.run(`CREATE TEMP TABLE centre AS SELECT factor_0, step, CAST(round(sum(known_score)::DOUBLE / sum(known)) AS BIGINT) AS centre
+  await database.run(`CREATE TEMP TABLE centre AS SELECT factor_0, slot, CAST(round(sum(known_score)::DOUBLE / sum(known)) AS BIGINT) AS centre
     FROM cell_sum WHERE known > 0 GROUP BY ALL`)
-  const centred = 'SELECT author, alone, factor_0, score - centre AS score FROM classified JOIN centre USING (factor_0, step) WHERE author IS NOT NULL'
+  const centred = 'SELECT author, solitude, factor_0, score - centre AS score FROM classified JOIN centre USING (factor_0, slot) WHERE author IS NOT NULL'
   const rows = await database.rows<VariationSums>(`
     SELECT venue, posts, count(*) AS authors, sum(total)::HUGEINT AS sum, sum(total::HUGEINT * total)::HUGEINT AS sum_squares, sum(squares)::HUGEINT AS squares FROM (
-      SELECT min(factor_0) AS venue, count(*) AS posts, sum(score)::BIGINT AS total, sum(score * score)::HUGEINT AS squares FROM (${centred}) WHERE NOT alone GROUP BY author)
+      SELECT min(factor_0) AS venue, count(*) AS posts, sum(score)::BIGINT AS total, sum(score * score)::HUGEINT AS squares FROM (${centred}) WHERE solitude < ${solitude.alone} GROUP BY author)
     GROUP BY venue, posts
-    UNION ALL SELECT factor_0, 1, count(*), sum(score)::HUGEINT, sum(score * score)::HUGEINT, sum(score * score)::HUGEINT FROM (${centred}) WHERE alone GROUP BY factor_0
+    UNION ALL SELECT factor_0, 1, count(*), sum(score)::HUGEINT, sum(score * score)::HUGEINT, sum(score * score)::HUGEINT FROM (${centred}) WHERE solitude = ${solitude.alone} GROUP BY factor_0
     ORDER BY venue, posts`)
   const venues = new Map<number, VariationSums[]>()
   for (const row of rows) venues.set(row.venue, [...(venues.get(row.venue) ?? []), row])

@@ -33,6 +33,9 @@ export const momentBits = 30
 
 /** `slot` is the period's number above this many bits of the step's. */
 export const slotBits = 16
+/** SQL of the two. */
+export const stepSql = `(slot & ${2 ** slotBits - 1})::USMALLINT`
+export const periodSql = `(slot >> ${slotBits})::USMALLINT`
 
 const secondsTo1970 = -Date.UTC(1900, 0, 1) / 1000
 

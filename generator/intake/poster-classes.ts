@@ -9,6 +9,19 @@ const window = 90 * 86_400
 const clockMargin = 2 * 86_400 * 1_000_000
 
 /**
+ * How far a mention is its author's only one. Each includes those before it, since a step lies in one period; a mention
+ * without an author is alone.
+ */
+export const solitude = {
+  /** Its author has an earlier one in the step. */
+  further: 0,
+  firstInStep: 1,
+  aloneInStep: 2,
+  aloneInPeriod: 3,
+  alone: 4,
+} as const
+
+/**
  * Make `classified` of `mention`, sorted by author and moment: every mention with its poster class, and with what
  * its neighbours say, so that later counts need not group by author where an author has but one mention.
  *
@@ -16,8 +29,7 @@ const clockMargin = 2 * 86_400 * 1_000_000
  * before it in the files); for mentions in the first 90 days of a source the window is those 90 days whole, or everyone
  * would look occasional at the start of history.
  *
- * Added columns, each true for mentions without an author: `first_in_step`: none of its author's before it in the step;
- * `alone_in_step`, `alone_in_period`, `alone`: the only one of its author in the step, the period, at all.
+ * Added besides: `solitude`, below.
  */
 export async function classifyPosters(database: Database, account: Account, zone: ZoneSql): Promise<void> {
   const poster = account.factors.indexOf('poster')
@@ -31,14 +43,14 @@ export async function classifyPosters(database: Database, account: Account, zone
   ]
   // Only the mentions of an opening are looked up: a key that is NULL meets nothing, and costs nothing.
   const opening = openings.length === 0 ? 'NULL' : `CASE ${openings.map(({ source, until }) => `WHEN source = ${source} AND moment < ${until} THEN author`).join(' ')} END`
-  const before = 'author_1 IS DISTINCT FROM author'
-  const after = 'author_after IS DISTINCT FROM author'
+  const before = 'author_1 IS NOT DISTINCT FROM author'
+  const after = 'author_after IS NOT DISTINCT FROM author'
   const period = (column: string): string => `(${column} >> ${slotBits})`
-  await database.run(`CREATE TEMP TABLE classified AS SELECT author, (slot & ${2 ** slotBits - 1})::USMALLINT AS step, ${period('slot')}::USMALLINT AS period, score, ${others.join(', ')}${classed},
-      author IS NULL OR ${before} OR slot_before <> slot AS first_in_step,
-      author IS NULL OR ((${before} OR slot_before <> slot) AND (${after} OR slot_after <> slot)) AS alone_in_step,
-      author IS NULL OR ((${before} OR ${period('slot_before')} <> ${period('slot')}) AND (${after} OR ${period('slot_after')} <> ${period('slot')})) AS alone_in_period,
-      author IS NULL OR (${before} AND ${after}) AS alone
+  await database.run(`CREATE TEMP TABLE classified AS SELECT author, slot, score, ${others.join(', ')}${classed},
+      CAST(CASE WHEN author IS NULL OR NOT (${before} OR ${after}) THEN ${solitude.alone}
+        WHEN NOT ((${before} AND ${period('slot_before')} = ${period('slot')}) OR (${after} AND ${period('slot_after')} = ${period('slot')})) THEN ${solitude.aloneInPeriod}
+        WHEN ${before} AND slot_before = slot THEN ${solitude.further}
+        WHEN ${after} AND slot_after = slot THEN ${solitude.firstInStep} ELSE ${solitude.aloneInStep} END AS UTINYINT) AS solitude
     FROM (SELECT *, ${opening} AS early_author, ${neighbours.join(', ')} FROM (SELECT * FROM mention ORDER BY author, moment))
     ${poster < 0 ? '' : 'LEFT JOIN early ON early.author_early = early_author AND early.source_early = source'}`)
 }
@@ -59,7 +71,7 @@ async function createEarly(database: Database, zone: ZoneSql): Promise<readonly 
 /** More than N mentions stand in the window if the N-th before this one does. */
 function classOf(account: Account): string {
   const { occasional, regular } = account.posters
-  const within = (back: number): string => `(author_${back} = author AND (moment >> ${momentBits}) - (moment_${back} >> ${momentBits}) < ${window})`
+  const within = (back: number): string => `(author_${back} = author AND (moment >> ${momentBits}) < (moment_${back} >> ${momentBits}) + ${window})`
   return `CASE WHEN early_author IS NOT NULL THEN CASE WHEN early_posts > ${regular} THEN 1 WHEN early_posts > ${occasional} THEN 2 ELSE 0 END
     WHEN ${within(regular)} THEN 1 WHEN ${within(occasional)} THEN 2 ELSE 0 END`
 }
