@@ -6,7 +6,7 @@ import { sampleFindings } from './sample-findings.ts'
 
 /** A catalogue of a dozen messages, so that a fixture changes only when the language does. */
 const catalogue = {
-  range: '{low} to {high}', 'not-known': 'not known', 'cell-empty': '–', 'how-made': 'How made', 'how-made-page': '(page {page})', contents: 'Contents',
+  range: '{low} to {high}', 'not-known': 'not known', 'cell-empty': '–', 'how-made': 'How made', 'how-made-page': ', page {page}', contents: 'Contents',
   probability: '{words} ({figure})', 'probability-words': '{band, select, virtually_certain {virtually certain} other {other}}', 'probability-over': 'over {figure}', 'probability-under': 'under {figure}',
   'level-prolific': 'Prolific posters', 'document-title': 'Review of {brand}',
   plain: 'Plain words', 'heading-words': 'A heading', 'heading-plain': 'Another heading', named: 'called {label}',

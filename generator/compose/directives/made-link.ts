@@ -17,7 +17,7 @@ const pageMark = '⟨page⟩'
 /** A link to the paragraph that says how figures are made; on paper with the page on which it stands, which the printer fills in. */
 export function madeAnchor(made: string, words: Words): Element {
   const [before, after] = words.say('how-made-page', { page: pageMark }).split(pageMark)
-  return h('a.made', { href: `#${made}` }, [words.say('how-made'), h('span.on-paper', [' ', before, h('span.page'), after])])
+  return h('a.made', { href: `#${made}` }, [words.say('how-made'), h('span.on-paper', [before, h('span.page'), after])])
 }
 
 /** The link after a caption. */

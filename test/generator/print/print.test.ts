@@ -109,6 +109,12 @@ test('the contents name the page on which each heading stands', async () => {
   }
 })
 
+test('a link in the text names its page too', async () => {
+  const texts = await pageTexts(pdf)
+  const stated = texts.map((text) => /Where tables stand ?, page (\d+)/.exec(text)?.[1]).find((page) => page !== undefined)
+  expect(texts[Number(stated) - 1]).toContain('Figures of opinion')
+})
+
 test('running head from the second page on, page x of y on every page', async () => {
   const texts = await pageTexts(pdf)
   texts.forEach((text, index) => { expect(text).toContain(`Page ${index + 1} of ${texts.length}`) })

@@ -48,6 +48,7 @@ export function sampleDocument(tables: readonly Table[] = tablesOf(sampleFinding
       h('p', ['As the ', h('a', { href: 'https://example.org/method' }, 'method'), ` says. ${'A sentence that fills the page and says nothing else. '.repeat(6)}`]),
       chart(chartNames[index], 'again'),
     ]),
+    h('p', [h('a.made', { href: '#tables' }, ['Where tables stand', h('span.on-paper', [', page ', h('span.page')])])]),
     h('h2', { id: 'tables' }, 'Tables'),
     tableOf(tables, 'opinion', ['step', 'adjusted', 'low', 'high', 'raw', 'mentions']),
     tableOf(tables, 'venues', ['label', 'mentions', 'authors', 'share', 'raw', 'level', 'level_low', 'level_high', 'drift', 'drift_low', 'drift_high', 'slope', 'slope_low', 'slope_high', 'probability_drift_down', 'spread', 'venue', 'label', 'level']),
