@@ -91,6 +91,15 @@ describe('forms of files', () => {
     expect(tables.accounting.inputs.map(({ path, rows: count, sha256 }) => [path, count, sha256.length])).toEqual([['a.csv', 3, 64], ['b.csv', 3, 64]])
   })
 
+  test('ids whose hashes agree in their upper half alone are two', async () => {
+    const connection = await (await DuckDBInstance.create(':memory:')).connect()
+    const pairs = await connection.runAndReadAll("SELECT min(id), max(id) FROM (SELECT 'p' || i AS id FROM range(200000) AS t(i)) GROUP BY hash(id) >> 32 HAVING count(DISTINCT hash(id)) > 1 ORDER BY ALL LIMIT 1")
+    const [one, other] = pairs.getRows()[0] as [string, string]
+    const text = [one, other, one].map((id) => `${id},2025-03-03,forum,positive,\n`).join('')
+    expect(one).not.toBe(other)
+    expect((await intake({ 'account.yaml': account('a.csv'), 'a.csv': `ref,published,source,tone,theme\n${text}` })).accounting).toMatchObject({ modelled: 2, reasons: { 'same-id': 1 } })
+  })
+
   test('time_format reads other forms of time', async () => {
     const yaml = account('a.csv').replace('    columns', '    time_format: "%b %d %Y"\n    columns')
     const tables = await intake({ 'account.yaml': yaml, 'a.csv': 'ref,published,source,tone,theme\n1,Jun 12 2025,forum,positive,\n2,2025-06-12,forum,positive,\n3,infinity,forum,positive,\n' })

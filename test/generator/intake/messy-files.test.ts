@@ -71,10 +71,11 @@ describe('messy files', () => {
     }), { numRuns: 60 })
   })
 
-  test('give the same tables on one thread and on two', async () => {
+  test('give the same tables on one, two and four threads', async () => {
     await fc.assert(fc.asyncProperty(fc.array(row, { minLength: 30, maxLength: 70 }), async (rows) => {
       fc.pre(readPlainly(rows.map(meant), '2025-12').modelled.length > 0)
-      expect(await intake(rows, '2025-12', 1)).toEqual(await intake(rows, '2025-12', 2))
+      const alone = await intake(rows, '2025-12', 1)
+      for (const threads of [2, 4]) expect(await intake(rows, '2025-12', threads)).toEqual(alone)
     }), { numRuns: 6 })
   })
 })
