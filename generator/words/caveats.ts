@@ -1,5 +1,6 @@
 import type { FormName } from './forms.ts'
 import { write } from './forms.ts'
+import { levelLabel } from './labels.ts'
 import type { WordArgument, Words } from './words.ts'
 
 /** How each figure of a caveat is written, by its name. */
@@ -20,10 +21,11 @@ export function caveatArguments(figures: Readonly<Record<string, string | number
   }))
 }
 
-/** Dates are written by the form of dates, numbers by the form of their name, all else as it stands. */
+/** Dates are written by the form of dates, numbers by the form of their name, a level as tables name it, all else as it stands. */
 function writeFigure(name: string, value: string | number, words: Words): WordArgument {
   const form = formOf[name]
   if (typeof value === 'number') return write(value, form === undefined || form === 'factor' || form === 'date' ? 'number' : form, words)
+  if (name === 'level') return levelLabel({ label: value, level: value }, words)
   if (form === 'date' && /^\d{4}-\d{2}-\d{2}$/.test(value)) return write(value, 'date', words)
   return form === 'factor' ? write(value, 'factor', words) : value
 }

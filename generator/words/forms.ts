@@ -56,8 +56,8 @@ export const forms = {
   code: { from: 'any', write: (value: unknown) => value === null || value === undefined ? 'none' : String(value).replaceAll('-', '_') } satisfies Form,
   /** The label of a venue, topic, poster class or other level. */
   label: { from: 'level', write: (value: Parameters<typeof levelLabel>[0], words: Words) => levelLabel(value, words) } satisfies Form,
-  /** Of a level whose share moved: `up`, `down`, or `flat` where it did not. */
-  'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => from === to ? 'flat' : from < to ? 'up' : 'down' } satisfies Form,
+  /** Of a level whose share moved: `up`, `down`, or `flat` where whole percentages show nothing. */
+  'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => shareDirection(from, to) } satisfies Form,
   /** Smallest to largest size in a list of numbers. */
   'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words)),
   list: ofList((value, words) => new Intl.ListFormat(words.locale, { style: 'long', type: 'conjunction' }).format(value.map(String))),
@@ -69,6 +69,11 @@ export const formNames = Object.keys(forms) as readonly FormName[]
 
 export function isFormName(name: string): name is FormName {
   return Object.hasOwn(forms, name)
+}
+
+function shareDirection(from: number, to: number): 'up' | 'down' | 'flat' {
+  if (Math.round(100 * from) === Math.round(100 * to)) return 'flat'
+  return to > from ? 'up' : 'down'
 }
 
 /** What one decimal shows of a number's direction. */

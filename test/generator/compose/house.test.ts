@@ -47,6 +47,7 @@ test('what moved is named: the venue, the topic, the poster class', () => {
 test('of a level whose interval supports no kindness none is told; where nothing is named the part is', () => {
   expect(withLargest('topic_mix', { estimate: estimate(-0.4, -1, 0.2) })).toContain('mentions of Discussion boards went from 33% to 40% of all')
   expect(withLargest('venue_drift', null)).toContain('The main reason: some venues drifted down, away from the rest.')
+  expect(withLargest('topic_mix', { share_from: 0.401, share_to: 0.404 })).toContain('The main reason: the mix of topic shifted towards less kind mentions.')
 })
 
 test('a part that rounds to nothing is told as such, once, and as no bullet', () => {

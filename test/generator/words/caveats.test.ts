@@ -27,6 +27,7 @@ test.each(Object.entries(raised))('caveat %s is worded whole: evidence, meaning,
 
 test('figures are written by their kind', () => {
   expect(wordCaveat(words, 'mix-moved', raised['mix-moved']!).evidence).toBe('Boards (venue) went from 24% to 41% of the mentions.')
+  expect(wordCaveat(words, 'mix-moved', { factor: 'poster', level: 'prolific', from: 0.3, to: 0.4 }).evidence).toBe('Prolific posters (poster class) went from 30% to 40% of the mentions.')
   expect(wordCaveat(words, 'venue-vanished', raised['venue-vanished']!).evidence).toBe('The last mention of Blogs is of 30 March 2026.')
   expect(wordCaveat(words, 'pooled-average-misleads', raised['pooled-average-misleads']!).evidence)
     .toBe('At the same mix, opinion changed by an estimated +2.2 points. What was said in all changed by −2.3 points, because the raw average also follows who posts, where and about what.')

@@ -13,7 +13,7 @@ test('a form writes what it is made from', () => {
   expect(write([-2.11, 2.34, 2.2], 'size-range', words)).toBe('2.1 to 2.3')
   expect(write([2.21, 2.19], 'size-range', words)).toBe('2.2')
   expect(write({ start: '2026-10-01', end: '2026-10-31' }, 'days', words)).toBe('1 – 31 October 2026')
-  expect([[0.2, 0.3], [0.3, 0.2], [0.3, 0.3]].map(([share_from, share_to]) => write({ share_from, share_to }, 'share-direction', words))).toEqual(['up', 'down', 'flat'])
+  expect([[0.2, 0.3], [0.3, 0.2], [0.301, 0.304]].map(([share_from, share_to]) => write({ share_from, share_to }, 'share-direction', words))).toEqual(['up', 'down', 'flat'])
   expect(write('not-established', 'code', words)).toBe('not_established')
   expect([0.04, -0.06, 3].map((value) => write(value, 'sign', words))).toEqual(['flat', 'down', 'up'])
 })
