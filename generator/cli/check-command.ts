@@ -27,11 +27,11 @@ export async function runCheck(program: Program, folder: string, flags: CheckFla
   }
 }
 
-function accountingResult({ received, rejected, duplicates, outOfScope, modelled, reasons, unmapped }: Accounting) {
-  return { received, rejected, duplicates, out_of_scope: outOfScope, modelled, reasons, unmapped }
+function accountingResult({ received, rejected, duplicates, outOfScope, modelled, reasons, unread, unmapped }: Accounting) {
+  return { received, rejected, duplicates, out_of_scope: outOfScope, modelled, reasons, unread, unmapped }
 }
 
-function describeAccounting({ received, rejected, duplicates, outOfScope, modelled, reasons, unmapped }: Accounting): string {
+function describeAccounting({ received, rejected, duplicates, outOfScope, modelled, reasons, unread, unmapped }: Accounting): string {
   const rows: readonly (readonly [string, number])[] = [
     ['received', received], ['rejected', rejected], ['duplicates', duplicates], ['out of scope', outOfScope], ['modelled', modelled],
   ]
@@ -39,10 +39,12 @@ function describeAccounting({ received, rejected, duplicates, outOfScope, modell
   const names = Math.max(...[...rows, ...because].map(([name]) => name.length)) + 2
   const counts = String(received).length
   const line = ([name, count]: readonly [string, number]) => `${name.padEnd(names)}${String(count).padStart(counts)}`
+  const unreadable = unread.map(({ column, value, rows: count }) => `  ${column} "${value}": ${count}`)
   const kept = unmapped.map(({ factor, value, mentions }) => `  ${factor} "${value}": ${mentions}`)
   return [
     ...rows.map(line),
     ...(because.length > 0 ? ['reasons', ...because.map(line)] : []),
+    ...(unreadable.length > 0 ? ['values that could not be read, the most frequent ones', ...unreadable] : []),
     ...(kept.length > 0 ? ['values the account does not map, kept under their own name', ...kept] : []),
   ].join('\n')
 }

@@ -40,7 +40,7 @@ export const expectations = {
 export const accountWordings = {
   'account-missing': (_: object): Wording => ({
     unexpected: 'absence of account.yaml', expected: 'a folder with an account.yaml',
-    mend: 'Name the folder of an account, or lay a new one out with `tareline start FOLDER`.',
+    mend: 'Name the folder of an account; the README shows how to begin one.',
   }),
   'account-unreadable': (details: { readonly reason: string }): Wording => ({
     unexpected: `text that is no UTF-8 YAML (${details.reason})`, expected: 'YAML in UTF-8',

@@ -14,9 +14,13 @@ export const intakeWordings = {
     unexpected: `content (${details.reason})`, expected: 'a file of the kind that its name says',
     mend: 'Export the file again, or leave it out of the account.',
   }),
-  'no-mentions': (details: { readonly accounting: string }): Wording => ({
+  'no-mentions': (details: { readonly accounting: string; readonly unread: Unread }): Wording => ({
     unexpected: `absence of mentions to model (${details.accounting})`, expected: 'at least one',
-    mend: 'Look at the reasons: the mapping of time, score, venue or brand, or the period asked for.',
+    mend: unreadMend(details.unread) ?? 'Look at the reasons: the mapping of time, score, venue or brand, or the period asked for.',
+  }),
+  'mostly-rejected': (details: { readonly rejected: number; readonly received: number; readonly unread: Unread }): Wording => ({
+    unexpected: `number of rows that can't be read, ${details.rejected} of ${details.received}`, expected: 'half of them at the most',
+    mend: unreadMend(details.unread) ?? 'Look at the rejected rows (`check --rejects DIR`) and mend the mapping of columns.',
   }),
   'no-whole-period': (details: { readonly first: string; readonly last: string; readonly kind: string }): Wording => ({
     unexpected: `mentions from ${details.first} to ${details.last} only`, expected: `a whole ${details.kind}`,
@@ -47,3 +51,15 @@ export const intakeWordings = {
     mend: 'Mend the row: look for a stray delimiter or quote.',
   }),
 } as const
+
+type Unread = readonly { readonly column: 'posted_at' | 'score'; readonly value: string; readonly rows: number }[]
+
+/** The mend that unread values suggest; null where there are none to show. */
+function unreadMend(unread: Unread): string | null {
+  const [worst] = unread
+  if (worst === undefined) return null
+  const values = unread.filter(({ column }) => column === worst.column).map(({ value, rows }) => `\`${value}\` (${rows})`).join(', ')
+  return worst.column === 'score'
+    ? `Scores that no label or range of the account reads: ${values}. Mend \`score\` or the column mapped to it.`
+    : `Times that can't be read: ${values}. Give \`time_format\` beside \`columns\`, such as '%d.%m.%Y %H:%M', or map another column to \`posted_at\`.`
+}

@@ -5,6 +5,7 @@ import { malformedRows, type MalformedRow } from './malformed-rows.ts'
 import { relationOf, type Relation } from './relation.ts'
 import { scoreSql } from './score-sql.ts'
 import { codeSql, sampleSpellings, spellingSql, type Spellings } from './spellings.ts'
+import { unreadValues, type UnreadValue } from './unread-values.ts'
 import { withoutUnclosedQuote } from './unclosed-quotes.ts'
 import { timeSql, timeText } from './time-sql.ts'
 
@@ -25,6 +26,8 @@ export interface ScannedFile {
   readonly sound: number
   readonly malformed: readonly MalformedRow[]
   readonly cut: Relation['cut']
+  /** The most frequent values that could not be read, where they are more than a few. */
+  readonly unread: readonly UnreadValue[]
 }
 
 /**
@@ -76,7 +79,16 @@ export async function scanFile(place: ScanPlace, sourceIndex: number, file: Inpu
     await database.run(`DELETE FROM scanned WHERE rowid >= ${first}`)
     return scanFile(place, sourceIndex, closed, spellings, attempt + 1)
   }
-  return { file, first, sound: after.rows - before.rows, malformed, cut: relation.cut }
+  const sound = after.rows - before.rows
+  return { file, first, sound, malformed, cut: relation.cut, unread: await manyUnread(database, first, sound) ? await unreadValues(database, source, relation) : [] }
+}
+
+/** Share of a file's rows without a readable time or score above which their values are looked at, in a second reading. */
+const worthALook = 0.01
+
+async function manyUnread(database: Database, first: number, rows: number): Promise<boolean> {
+  const [unread] = await database.rows<{ rows: bigint }>(`SELECT count(*) AS rows FROM scanned WHERE rowid >= ${first} AND fate BETWEEN 2 AND 4`)
+  return Number(unread!.rows) > worthALook * rows
 }
 
 /** How many rows `scanned` has, and the number of the next: rows that were deleted leave a gap. */

@@ -1,6 +1,7 @@
 import type { Accounting, Factor, IntakeTables, Period } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
+import { joinUnread } from './unread-values.ts'
 import { timeline } from '../calendar/timeline.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
@@ -31,10 +32,15 @@ export interface Material {
   readonly inputs: Accounting['inputs']
 }
 
+/** A source of which more than this share can't be read is mapped wrongly: what is left would stand for nothing. */
+const mostRejected = 0.5
+/** Of fewer rows than this a share says nothing. */
+const manyRows = 200
+
 /**
  * The intake tables from what was gathered.
  *
- * @throws {InputFault} `no-mentions`, `too-many-levels`, `target-mix-level`
+ * @throws {InputFault} `no-mentions`, `mostly-rejected`, `too-many-levels`, `target-mix-level`
  */
 export function tablesOf(account: Account, material: Material): IntakeTables {
   const { review, settled, ready } = material
@@ -43,7 +49,10 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
   const accounting = accountingOf(material)
   if (review === null || parts.length === 0) {
     const reasons = Object.entries(accounting.reasons).map(([reason, rows]) => `${reason} ${rows}`)
-    throw new InputFault([faultOf('no-mentions', 'mentions', { accounting: [`rows ${accounting.received}`, ...reasons].join(', ') })])
+    throw new InputFault([faultOf('no-mentions', 'mentions', { accounting: [`rows ${accounting.received}`, ...reasons].join(', '), unread: accounting.unread })])
+  }
+  if (accounting.received >= manyRows && accounting.rejected > mostRejected * accounting.received) {
+    throw new InputFault([faultOf('mostly-rejected', 'mentions', { rejected: accounting.rejected, received: accounting.received, unread: accounting.unread })])
   }
   const factors = account.factors.map((name, index) => factorOf(account, name, parts.map((part) => part.levels[index]!)))
   checkLevels(factors)
@@ -82,7 +91,7 @@ function accountingOf({ scanned, rejected, dated, settled, unmapped, ready, read
     ...rejected, ...outOfScope, 'same-id': duplicates.sameId, 'repost': duplicates.repost,
     'time-nonexistent': dated.nonexistent, 'time-doubled': dated.doubled,
   }
-  return { received, ...counts, reasons: Object.fromEntries(Object.entries(reasons).filter(([, rows]) => rows > 0)), unmapped, inputs }
+  return { received, ...counts, unread: joinUnread(scanned.map((file) => file.unread)), reasons: Object.fromEntries(Object.entries(reasons).filter(([, rows]) => rows > 0)), unmapped, inputs }
 }
 
 function checkLevels(factors: readonly Factor[]): void {

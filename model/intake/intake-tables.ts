@@ -120,6 +120,8 @@ export interface Accounting {
   readonly modelled: number
   /** Rows by reason: of rejection, of duplication, of being out of scope; and times read by a rule. */
   readonly reasons: Readonly<Record<string, number>>
+  /** The most frequent values of time and score that could not be read; empty where they are few. */
+  readonly unread: readonly { readonly column: 'posted_at' | 'score'; readonly value: string; readonly rows: number }[]
   /** Values that the account maps to no level of its own, kept under their own name. */
   readonly unmapped: readonly { readonly factor: string; readonly value: string; readonly mentions: number }[]
   readonly inputs: readonly { readonly path: string; readonly sha256: string; readonly rows: number }[]

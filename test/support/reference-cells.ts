@@ -48,7 +48,7 @@ export function tablesFromCells(csv: string, base: { readonly from: string; read
       byPeriodLevel: factors.map(({ levels }) => new Float64Array(periods.length * levels.length)),
     },
     accounting: {
-      received: rows.length, rejected: 0, duplicates: 0, outOfScope: 0, modelled: rows.length, reasons: {}, unmapped: [],
+      received: rows.length, rejected: 0, duplicates: 0, outOfScope: 0, modelled: rows.length, reasons: {}, unread: [], unmapped: [],
       inputs: [], withAuthor: new Float64Array(venues).fill(total), readyMade: true,
     },
   }

@@ -12,7 +12,7 @@ export function tablesOfCells(sizes: Sizes, timeline: Timeline, cells: readonly 
     concentration: concentrationOf(cells, timeline, sizes.venues),
     authors: authorsOf(cells, timeline, factors),
     accounting: {
-      received: total, rejected: 0, duplicates: 0, outOfScope: 0, modelled: total, reasons: {}, unmapped: [], inputs: [],
+      received: total, rejected: 0, duplicates: 0, outOfScope: 0, modelled: total, reasons: {}, unread: [], unmapped: [], inputs: [],
       withAuthor: Float64Array.from(factors[0].levels, (_, v) => cells.reduce((sum, cell) => sum + (cell.levels[0] === v ? cell.mentions : 0), 0)),
       readyMade: false,
     },
