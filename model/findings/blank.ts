@@ -6,10 +6,10 @@ const zero: Estimate = { mean: 0, low: 0, high: 0, sd: 0 }
 export const blankFindings: Findings = {
   schema: 'tareline-findings/1', account: '', brand: '', locale: 'en-GB',
   period: { name: '2000-01', start: '2000-01-01', end: '2000-01-31' }, previous_period: null,
-  period_steps: { count: 0, from: '2000-01-03', to: '2000-01-30' }, grid: 'week', interval: 0.9,
+  period_steps: { count: 0, start: '2000-01-03', end: '2000-01-30' }, grid: 'week', interval: 0.9,
   accounting: {
     received: 0, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 0, reasons: {}, unmapped: [], given_not_used: [], in_period: 0,
-    first_step: '2000-01-03', last_step: '2000-01-31',
+    first_step: '2000-01-03', last_step: '2000-01-31', last_day: '2000-01-31',
   },
   opinion: {
     series: [], periods: [], period: zero, previous: null, change: null, probability_up: null, movement: null,

@@ -27,6 +27,8 @@ const accounting = z.strictObject({
   /** Mentions in the period under review. */
   in_period: count,
   first_step: isoDate, last_step: isoDate,
+  /** Last day that the review reads: of the last step, or of the period under review. */
+  last_day: isoDate,
 })
 
 const opinion = z.strictObject({
@@ -160,7 +162,7 @@ export const findingsSchema = z.strictObject({
   account: z.string(), brand: z.string(), locale: z.string(),
   period, previous_period: period.nullable(),
   /** The steps that count as the period, those whose middle lies in it: how many, first and last day. */
-  period_steps: z.strictObject({ count, from: isoDate, to: isoDate }),
+  period_steps: z.strictObject({ count, start: isoDate, end: isoDate }),
   grid: z.enum(['day', 'week', 'month']), interval: z.number().min(0.5).max(0.99),
   accounting, opinion,
   /** null where there is no period before, or one of the two holds no mention. */

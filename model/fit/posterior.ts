@@ -73,6 +73,12 @@ const leastFitted = 40
 /** Effective draws below which another round is made, as large as all before it together. */
 const leastEffective = 1000
 const mostRounds = 5
+/** Pareto k above which another round is made too, though weights are relied on up to 0.7. */
+const goodK = 0.6
+
+function goodEnough({ effectiveSize, paretoK }: SmoothedWeights): boolean {
+  return effectiveSize >= leastEffective && (paretoK.value ?? 0) <= goodK
+}
 
 export async function samplePosterior(problem: FitProblem, executor: FitExecutor, options: PosteriorOptions): Promise<Posterior> {
   const generator = createGenerator(options.seed, streams.rounds)
@@ -80,7 +86,7 @@ export async function samplePosterior(problem: FitProblem, executor: FitExecutor
   let pool = emptyPool
   let weighted: SmoothedWeights | null = null
   const sizes = roundShares.map((share) => Math.round(share * options.proposals))
-  while (sizes.length > 0 || (weighted !== null && weighted.effectiveSize < leastEffective && pool.rounds.length < mostRounds)) {
+  while (sizes.length > 0 || (weighted !== null && !goodEnough(weighted) && pool.rounds.length < mostRounds)) {
     const proposal = pool.rounds.length === 0 ? await firstProposal(problem, executor) : nextProposal(pool, generator)
     progress(0.1 + 0.5 * pool.logWeights.length / options.proposals)
     pool = await addRound(problem, executor, pool, proposal, sizes.shift() ?? pool.logWeights.length, generator)

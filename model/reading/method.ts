@@ -26,13 +26,14 @@ export function readAccounting(tables: IntakeTables, facts: AccountFacts): Findi
     reasons: { ...accounting.reasons }, unmapped: accounting.unmapped.map((row) => ({ ...row })),
     given_not_used: [...facts.givenNotUsed], in_period: inPeriod,
     first_step: timeline.steps[0], last_step: timeline.steps[timeline.steps.length - 1],
+    last_day: timeline.lastDays[timeline.steps.length - 1],
   }
 }
 
 /** Which days the period's figures are about: whole steps, cut at the end of what the review reads. */
 export function readPeriodSteps({ tables: { timeline }, periodSteps }: Reading): Findings['period_steps'] {
   const last = periodSteps[periodSteps.length - 1]
-  return { count: periodSteps.length, from: timeline.steps[periodSteps[0]], to: timeline.lastDays[last] }
+  return { count: periodSteps.length, start: timeline.steps[periodSteps[0]], end: timeline.lastDays[last] }
 }
 
 /** What a colleague needs to make the figures again: base, target mix, priors, sizes, design effects. */

@@ -155,12 +155,12 @@ export function sampleFindings(): Findings {
   return {
     schema: 'tareline-findings/1', account: 'skerrow-ferries', brand: 'Skerrow Ferries', locale: 'en-GB',
     period: { name: '2026-10', start: '2026-10-01', end: '2026-10-31' }, previous_period: { name: '2026-09', start: '2026-09-01', end: '2026-09-30' },
-    period_steps: { count: 5, from: '2026-09-28', to: '2026-10-31' }, grid: 'week', interval: 0.9,
+    period_steps: { count: 5, start: '2026-09-28', end: '2026-10-31' }, grid: 'week', interval: 0.9,
     accounting: {
       received: modelled + 312 + 1204 + 2088, rejected: 312, duplicates: 1204, out_of_scope: 2088, modelled,
       reasons: { 'time-unreadable': 141, 'score-unreadable': 171, 'same-id': 380, repost: 824, 'other-brand': 2088, 'time-doubled': 9 },
       unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['events', 'competitors'],
-      in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1),
+      in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1), last_day: '2026-10-31',
     },
     opinion: opinion(), decomposition: decomposition(), venues: venues(),
     topics: topicsGiven.map((topic) => ({ topic: topic.level, ...levelFinding(topic) })),
