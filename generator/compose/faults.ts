@@ -1,4 +1,4 @@
-import { closest } from 'fastest-levenshtein'
+import { closest, distance } from 'fastest-levenshtein'
 import type { Fault } from '../faults/fault.ts'
 
 /** Anything that may know where in its file it stands: a node of a tree, an entry of sentences.yaml. */
@@ -24,8 +24,14 @@ export function createReporter(place: string, faults: Fault[]): Reporter {
   }
 }
 
+/** Names told in a mend: all where they are few, else the nearest ones. */
+const mostTold = 12
+const nearestTold = 5
+
 /** The mend for a misspelt name: the nearest of those known. */
 export function nearest(name: string, known: readonly string[]): string {
   if (known.length === 0) return `Remove "${name}": none is known.`
-  return `Write "${closest(name, known)}", if that is meant; known are ${known.join(', ')}.`
+  if (known.length <= mostTold) return `Write "${closest(name, known)}", if that is meant; known are ${known.join(', ')}.`
+  const near = [...known].sort((a, b) => distance(name, a) - distance(name, b)).slice(0, nearestTold)
+  return `Write "${near[0]}", if that is meant; near are ${near.slice(1).join(', ')}, and ${known.length - nearestTold} more are known.`
 }
