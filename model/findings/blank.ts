@@ -8,7 +8,7 @@ export const blankFindings: Findings = {
   period: { name: '2000-01', start: '2000-01-01', end: '2000-01-31' }, previous_period: null,
   period_steps: { count: 0, start: '2000-01-03', end: '2000-01-30' }, grid: 'week', interval: 0.9,
   accounting: {
-    received: 0, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 0, reasons: {}, unmapped: [], given_not_used: [], in_period: 0,
+    received: 0, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 0, reasons: {}, unmapped: [], given_not_used: [], authors: 'known', in_period: 0,
     first_step: '2000-01-03', last_step: '2000-01-31', last_day: '2000-01-31',
   },
   opinion: {

@@ -24,6 +24,8 @@ const accounting = z.strictObject({
   reasons: z.record(z.string(), count),
   unmapped: z.array(z.strictObject({ factor: z.string(), value: z.string(), mentions: count })),
   given_not_used: z.array(z.string()),
+  /** How authors are counted: known by handle (those without one count each), summed over ready-made cells, or not known at all. */
+  authors: z.enum(['known', 'summed', 'unknown']),
   /** Mentions in the period under review. */
   in_period: count,
   first_step: isoDate, last_step: isoDate,

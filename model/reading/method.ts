@@ -24,10 +24,15 @@ export function readAccounting(tables: IntakeTables, facts: AccountFacts): Findi
     received: accounting.received, rejected: accounting.rejected, duplicates: accounting.duplicates,
     out_of_scope: accounting.outOfScope, modelled: accounting.modelled,
     reasons: { ...accounting.reasons }, unmapped: accounting.unmapped.map((row) => ({ ...row })),
-    given_not_used: [...facts.givenNotUsed], in_period: inPeriod,
+    given_not_used: [...facts.givenNotUsed], authors: authorsAre(tables), in_period: inPeriod,
     first_step: timeline.steps[0], last_step: timeline.steps[timeline.steps.length - 1],
     last_day: timeline.lastDays[timeline.steps.length - 1],
   }
+}
+
+function authorsAre({ accounting, authors }: IntakeTables): Findings['accounting']['authors'] {
+  if (accounting.withAuthor.every((mentions) => mentions === 0)) return 'unknown'
+  return authors.exact ? 'known' : 'summed'
 }
 
 /** Which days the period's figures are about: whole steps, cut at the end of what the review reads. */

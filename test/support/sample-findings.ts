@@ -159,7 +159,7 @@ export function sampleFindings(): Findings {
     accounting: {
       received: modelled + 312 + 1204 + 2088, rejected: 312, duplicates: 1204, out_of_scope: 2088, modelled,
       reasons: { 'time-unreadable': 141, 'score-unreadable': 171, 'same-id': 380, repost: 824, 'other-brand': 2088, 'time-doubled': 9 },
-      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['events', 'competitors'],
+      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['events', 'competitors'], authors: 'known',
       in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1), last_day: '2026-10-31',
     },
     opinion: opinion(), decomposition: decomposition(), venues: venues(),
