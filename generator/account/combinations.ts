@@ -10,7 +10,7 @@ type Places = Readonly<Record<string, string>>
 export type SoundEntries = { readonly [K in keyof Entries]?: Entries[K] | undefined }
 
 /** Columns that the program knows by name; a factor of the account may be mapped besides. */
-export const knownColumns = ['id', 'posted_at', 'venue', 'author', 'score', 'topic', 'thread', 'reply_to', 'thread_position', 'brand', 'segment', 'text'] as const
+const knownColumns = ['id', 'posted_at', 'venue', 'author', 'score', 'topic', 'thread', 'reply_to', 'thread_position', 'brand', 'segment', 'text'] as const
 
 const cellColumns: readonly string[] = ['step', 'mentions', 'authors', 'mean', 'variance', 'deff', 'score', 'posted_at']
 const posterClasses: readonly string[] = ['occasional', 'regular', 'prolific', 'unknown']

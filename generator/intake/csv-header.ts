@@ -30,7 +30,7 @@ export function csvForm(start: string, wanted: readonly string[], stated: Stated
 }
 
 /** The fields of the first record of a text. @example firstRecord('a;"b;c"\n1;2', ';', '"') // => ['a', 'b;c'] */
-export function firstRecord(text: string, delimiter: string, quote: string): readonly string[] {
+function firstRecord(text: string, delimiter: string, quote: string): readonly string[] {
   const fields: string[] = []
   let field = ''
   let quoted = false

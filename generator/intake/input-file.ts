@@ -28,7 +28,7 @@ type Encoding = 'utf-8' | 'utf-16le' | 'windows-1252'
 const startLength = 1 << 16
 
 /** The kind of a file by its name. */
-export function fileKind(name: string): FileKind {
+function fileKind(name: string): FileKind {
   return name.endsWith('.parquet') ? 'parquet' : name.endsWith('.ndjson') ? 'ndjson' : 'csv'
 }
 

@@ -26,7 +26,7 @@ export interface Naming {
 }
 
 /** Poster classes, in the order of their numbers. */
-export const posterClasses = ['occasional', 'prolific', 'regular', 'unknown'] as const
+const posterClasses = ['occasional', 'prolific', 'regular', 'unknown'] as const
 
 /** `moment` is seconds since 1900 above this many bits of the row's number: it orders mentions by time, then as they stand in the files. */
 export const momentBits = 30

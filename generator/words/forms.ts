@@ -77,7 +77,7 @@ function shareDirection(from: number, to: number): 'up' | 'down' | 'flat' {
 }
 
 /** What one decimal shows of a number's direction. */
-export function signOf(value: number): 'up' | 'down' | 'flat' {
+function signOf(value: number): 'up' | 'down' | 'flat' {
   if (Math.abs(value) < 0.05) return 'flat'
   return value > 0 ? 'up' : 'down'
 }

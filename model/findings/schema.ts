@@ -14,7 +14,7 @@ const count = z.number().int().min(0)
 const isoDate = z.string().regex(/^\d{4}-\d{2}-\d{2}$/)
 
 /** Whether an interval supports saying that something moved: it lies wholly above or below zero, or it does not. */
-export const movement = z.enum(['up', 'down', 'not-established'])
+const movement = z.enum(['up', 'down', 'not-established'])
 export type Movement = z.infer<typeof movement>
 
 const period = z.strictObject({ name: z.string(), start: isoDate, end: isoDate })

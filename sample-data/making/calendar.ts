@@ -3,7 +3,7 @@
  * so that days and weeks can be counted by division.
  */
 export const day = 86_400_000
-export const week = 7 * day
+const week = 7 * day
 
 /** The first Monday of the grid: the week that holds 1 May 2024. */
 export const firstMonday = Date.UTC(2024, 3, 29)

@@ -10,7 +10,7 @@ import { followThreads } from './threads.ts'
 import { sentence } from './wording.ts'
 
 export const brand = 'Skerrow Ferries'
-export const rival = 'Tarrin Line'
+const rival = 'Tarrin Line'
 
 export interface Post {
   readonly ref: string

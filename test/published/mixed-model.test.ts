@@ -12,7 +12,7 @@ const dyestuff = [
 ]
 const batches = 6
 const grandMean = 1527.5
-/** A standard deviation of the movement of opinion is not needed with one step: any value. */
+/** With one step nothing moves: this standard deviation plays no part. */
 const unused = 1
 
 function batchProblem(initialSd: number) {

@@ -2,7 +2,7 @@ import { analyse, type Analysis, type AnalysisSpec } from '../../model/analyse.t
 import { localExecutor } from '../../model/fit/executor.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 
-export const plainSpec: AnalysisSpec = {
+const plainSpec: AnalysisSpec = {
   interval: 0.9, seed: 1, targetMix: {},
   facts: { givenNotUsed: [], smallestGroup: 10, posterBounds: { occasional: 1, regular: 5 }, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
 }

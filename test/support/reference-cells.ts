@@ -5,7 +5,7 @@ const day = 86_400_000
 const iso = (time: number) => new Date(time).toISOString().slice(0, 10)
 
 /** A weekly cell table (contract's `cells` columns, venue x topic x poster) as intake tables, without the intake. */
-export function tablesFromCells(csv: string, base: { readonly from: string; readonly to: string }): IntakeTables {
+function tablesFromCells(csv: string, base: { readonly from: string; readonly to: string }): IntakeTables {
   const [head, ...lines] = csv.trim().split('\n')
   const names = head.split(',')
   const rows = lines.map((line) => {

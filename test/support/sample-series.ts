@@ -1,7 +1,7 @@
 import type { Estimate } from '../../model/findings/schema.ts'
 
 /** The invented course of opinion behind `sampleFindings`: smooth functions of the step, so that a figure can be told in advance. */
-export const stepCount = 130
+const stepCount = 130
 
 /** ISO date of a step: weeks from Monday 6 May 2024 to Monday 26 October 2026. */
 export function stepDate(step: number): string {

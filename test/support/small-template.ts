@@ -36,7 +36,7 @@ const small: Table = {
   ],
 }
 
-export const hostileLabels = ['<script>alert(1)</script>', '[x](javascript:alert(1)) :figure{of="brand" as="text"}', '<img src=x onerror=alert(1)> {n, plural, other {#}} &amp; **b**']
+const hostileLabels = ['<script>alert(1)</script>', '[x](javascript:alert(1)) :figure{of="brand" as="text"}', '<img src=x onerror=alert(1)> {n, plural, other {#}} &amp; **b**']
 
 const hostile: Table = { name: 'hostile', columns: [{ key: 'label', kind: 'text' }, { key: 'mentions', kind: 'count' }], rows: hostileLabels.map((label, mentions) => ({ label, mentions })) }
 

@@ -13,7 +13,7 @@ import { table } from './table.ts'
 import { when } from './when.ts'
 
 /** The template language: every word it has. */
-export const directives: readonly Directive[] = [section, figure, say, made, caveat, chart, table, contents, glossary, when, each, ...blocks]
+const directives: readonly Directive[] = [section, figure, say, made, caveat, chart, table, contents, glossary, when, each, ...blocks]
 
 export function directiveOf(node: DirectiveNode): Directive | undefined {
   return directives.find(({ type, name }) => type === node.type && name === node.name)

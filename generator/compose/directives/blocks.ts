@@ -5,7 +5,7 @@ import type { Directive } from './directive.ts'
 import { wrapped } from './elements.ts'
 
 /** Blocks that only give their content a place in the design: `:::keyfigures` becomes `<div class="keyfigures">`. */
-export const blockNames = ['overline', 'lead', 'reading', 'keyfigures', 'keyfigure', 'note', 'method', 'caveat', 'item'] as const
+const blockNames = ['overline', 'lead', 'reading', 'keyfigures', 'keyfigure', 'note', 'method', 'caveat', 'item'] as const
 
 /** `is="caveat.severity"` adds a class from the findings: `<div class="caveat is-serious">`. */
 export const blocks: readonly Directive[] = blockNames.map((name) => ({

@@ -1,9 +1,8 @@
 import { createHash } from 'node:crypto'
 import { readdir, readFile, writeFile } from 'node:fs/promises'
 import { join } from 'node:path'
-import { Writable } from 'node:stream'
 import { describe, expect, test } from 'vitest'
-import { runCommandLine } from '../../../generator/cli/command-line.ts'
+import { runCommand as run } from '../../support/run-command.ts'
 import type { Fault } from '../../../generator/faults/fault.ts'
 import { withAccount } from '../intake/temporary-account.ts'
 
@@ -83,16 +82,6 @@ const wrongInputs: readonly Wrong[] = [
   cells('a cell twice', '2025-03-03,a,2,2,0\n', 'cell-twice', 'c.csv:3', /c\.csv:2/),
   cells('a row of a cell table that cannot be cut', '2025-03-03,a\n', 'cell-row', 'c.csv:3', /as many fields as the header/),
 ]
-
-async function run(...args: string[]): Promise<{ readonly code: number; readonly out: string; readonly err: string }> {
-  const collect = () => {
-    const chunks: string[] = []
-    return { chunks, stream: new Writable({ write: (chunk: Buffer, _, done) => { chunks.push(String(chunk)); done() } }) }
-  }
-  const [out, err] = [collect(), collect()]
-  const code = await runCommandLine(args, { out: out.stream, err: err.stream })
-  return { code, out: out.chunks.join(''), err: err.chunks.join('') }
-}
 
 /** One hash of every name and byte below a folder. */
 async function hashOfFolder(folder: string): Promise<string> {

@@ -1,24 +1,13 @@
 import { mkdtemp, readFile, readdir, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
-import { Writable } from 'node:stream'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
-import { runCommandLine } from '../../../generator/cli/command-line.ts'
+import { runCommand as run } from '../../support/run-command.ts'
 
 const account = join(import.meta.dirname, '../intake/fixtures/open-cells')
 let scratch: string
 beforeAll(async () => { scratch = await mkdtemp(join(tmpdir(), 'command-')) })
 afterAll(() => rm(scratch, { recursive: true, force: true }))
-
-async function run(...args: string[]): Promise<{ readonly code: number; readonly out: string; readonly err: string }> {
-  const collect = () => {
-    const chunks: string[] = []
-    return { chunks, stream: new Writable({ write: (chunk: Buffer, _, done) => { chunks.push(String(chunk)); done() } }) }
-  }
-  const [out, err] = [collect(), collect()]
-  const code = await runCommandLine(args, { out: out.stream, err: err.stream })
-  return { code, out: out.chunks.join(''), err: err.chunks.join('') }
-}
 
 describe('check', () => {
   test('prints the accounting, exit code 0', async () => {

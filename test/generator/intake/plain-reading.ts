@@ -33,7 +33,7 @@ export interface PlainReading {
 
 const hours = { day: 24, week: 7 * 24, ninety: 90 * 24 }
 const month = (hour: number): string => new Date(hour * 3_600_000).toISOString().slice(0, 7)
-export const monday = (hour: number): number => Math.floor((Math.floor(hour / 24) + 3) / 7) * 7 - 3
+const monday = (hour: number): number => Math.floor((Math.floor(hour / 24) + 3) / 7) * 7 - 3
 
 export function readPlainly(rows: readonly PlainRow[], lastMonth: string): PlainReading {
   const readable = rows.filter((row) => !Number.isNaN(row.hour) && !Number.isNaN(row.score) && row.venue !== '')
