@@ -1,4 +1,4 @@
-import type { Wording } from './catalogue.ts'
+import type { Wording } from './wording.ts'
 
 /** What a value of account.yaml must be: the `Y` of "expected Y". */
 export const expectations = {

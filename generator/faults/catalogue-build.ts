@@ -1,4 +1,4 @@
-import type { Wording } from './catalogue.ts'
+import type { Wording } from './wording.ts'
 
 /** Faults of what a build is asked for. */
 export const buildWordings = {

@@ -1,4 +1,4 @@
-import type { Wording } from './catalogue.ts'
+import type { Wording } from './wording.ts'
 
 /** Faults of the data files. */
 export const intakeWordings = {

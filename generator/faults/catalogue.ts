@@ -2,13 +2,7 @@ import { accountWordings } from './catalogue-account.ts'
 import { buildWordings } from './catalogue-build.ts'
 import { intakeWordings } from './catalogue-intake.ts'
 import type { Fault } from './fault.ts'
-
-/** What a wording says: the two halves of "Unexpected X at PLACE, expected Y", and the mend. */
-export interface Wording {
-  readonly unexpected: string
-  readonly expected: string
-  readonly mend: string
-}
+import type { Wording } from './wording.ts'
 
 const wordings = { ...accountWordings, ...intakeWordings, ...buildWordings }
 
