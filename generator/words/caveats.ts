@@ -7,7 +7,7 @@ import type { WordArgument, Words } from './words.ts'
 const formOf: Readonly<Record<string, FormName>> = {
   share: 'share', from: 'share', to: 'share', correlation: 'number', pareto_k: 'number', ess: 'count',
   raw_change: 'change', change: 'change', first: 'date', last: 'date', factor: 'factor',
-  mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain',
+  mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain', least: 'plain', most: 'count',
 }
 
 export const caveatParts = ['title', 'evidence', 'meaning', 'remedy'] as const

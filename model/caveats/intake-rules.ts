@@ -8,6 +8,8 @@ const fewAuthors = 30
 const fewMentions = 300
 /** A venue that starts or ends this many days inside the history has an uneven one. */
 const unevenDays = 28
+/** The busiest period holds so many times the quietest one's mentions a step, or more: volumes are uneven. */
+const unevenVolume = 3
 /** A venue not seen in this last stretch has vanished; first seen in it, appeared. In days. */
 const recentDays = 91
 
@@ -43,6 +45,13 @@ export const intakeRules: readonly CaveatRule[] = [
       if (days(at(venue.first_step), steps.length - 1) < recentDays && late > unevenDays) return [caveat('caution', 'venue-appeared', { venue: venue.label, first: venue.first_step })]
       return late > unevenDays || early > unevenDays ? [caveat('note', 'uneven-history', { venue: venue.label, first: venue.first_step, last: venue.last_step })] : []
     })
+  },
+  ({ findings, reading }) => {
+    // per step: the first and the last period may not be whole
+    const { periodOf } = reading.tables.timeline
+    const volumes = findings.opinion.periods.map(({ mentions }, p) => mentions / periodOf.filter((period) => period === p).length)
+    const [least, most] = [Math.min(...volumes), Math.max(...volumes)]
+    return most >= unevenVolume * least ? [caveat('note', 'uneven-volume', { least: Math.round(least), most: Math.round(most) })] : []
   },
   ({ findings }) => findings.venues.filter((venue) => venue.authors < fewAuthors).map((venue) => caveat('note', 'venue-thin', { venue: venue.label, authors: venue.authors })),
   ({ findings }) => (findings.opinion.mentions < fewMentions ? [caveat('caution', 'thin-data', { mentions: findings.opinion.mentions })] : []),

@@ -71,8 +71,8 @@ describe('critics against audience', () => {
 })
 
 describe('what the data lack shows as caveats', () => {
-  test('no authors at all', () => {
-    expect(analysis.caveats.map(({ code }) => code)).toContain('authors-unknown')
+  test('no authors at all, volumes that go up and down, genres that the base does not know', () => {
+    expect(analysis.caveats.map(({ code }) => code)).toEqual(expect.arrayContaining(['authors-unknown', 'uneven-volume', 'thin-data', 'level-unseen-in-base']))
   })
 
   test('months, quarters, and no crash on an uneven history', () => {

@@ -12,7 +12,7 @@ const raised: Readonly<Record<string, Readonly<Record<string, string | number>>>
   'level-unseen-in-base': { factor: 'topic', level: 'Strike' }, 'values-unmapped': { factor: 'topic', values: 'harbour works', mentions: 118 },
   'given-not-used': { keys: 'events' }, 'coder-unaudited': {}, 'survey-absent': {}, 'benchmark-absent': {}, 'no-sampling-error': {}, 'level-conventional': {},
   'pooled-average-misleads': { raw_change: -2.27, change: 2.21 }, concentration: { share: 0.31 }, 'mix-moved': { factor: 'venue', level: 'Boards', from: 0.24, to: 0.41 },
-  'opinion-drift-entangled': { correlation: -0.87 }, 'fit-not-converged': { pareto_k: 0.83, ess: 212 }, 'model-misfit': { venue: 'Blogs' }, 'clock-times': { count: 9 }, 'period-unfinished': { last: '2026-10-20' }, 'many-rejected': { count: 549, share: 0.183 },
+  'opinion-drift-entangled': { correlation: -0.87 }, 'fit-not-converged': { pareto_k: 0.83, ess: 212 }, 'model-misfit': { venue: 'Blogs' }, 'clock-times': { count: 9 }, 'uneven-volume': { least: 1543, most: 5676 }, 'period-unfinished': { last: '2026-10-20' }, 'many-rejected': { count: 549, share: 0.183 },
   'no-previous-period': {}, 'ready-made-authors': {}, 'sharp-move': { steps: 2 },
 }
 

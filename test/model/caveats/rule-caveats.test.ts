@@ -55,6 +55,7 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['venue-vanished', firstVenue({ last_step: steps[10] })],
   ['venue-appeared', firstVenue({ first_step: steps[steps.length - 3] })],
   ['uneven-history', firstVenue({ first_step: steps[10] })],
+  ['uneven-volume', withFindings((findings) => ({ opinion: { ...findings.opinion, periods: findings.opinion.periods.map((period, p) => (p === 3 ? { ...period, mentions: 12_000 } : period)) } }))],
   ['venue-thin', firstVenue({ authors: 12 })],
   ['thin-data', opinion({ mentions: 40 })],
   ['empty-steps', withFindings((findings) => ({ opinion: { ...findings.opinion, series: findings.opinion.series.map((step, t) => (t === 5 ? { ...step, mentions: 0 } : step)) } }))],
