@@ -42,7 +42,7 @@ const source = z.strictObject({
   score: score.optional(),
   delimiter: oneCharacter.optional(),
   quote: oneCharacter.optional(),
-  time_format: text.optional(),
+  time_format: text.refine((form) => form.includes('%'), expected.timeFormat).optional(),
 })
 
 const level = z.strictObject({ label: text.optional(), values: z.array(value).optional() })

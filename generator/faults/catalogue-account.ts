@@ -21,6 +21,7 @@ export const expectations = {
   range: 'two different numbers: the score that counts as -1, then the one that counts as 1',
   columnNeeded: 'the name of a column: `posted_at`, `venue` and `score` are needed',
   delimiter: 'one character',
+  timeFormat: "a strptime form such as '%d.%m.%Y %H:%M'",
   posters: 'whole numbers of at least 1, `regular` above `occasional`',
   share: 'a share from 0 to 1',
   shareSum: 'shares that sum to 1',

@@ -42,6 +42,7 @@ const wrongAccounts: readonly Wrong[] = [
   inAccount('an unknown key', `${account}brnad: x\n`, 'account-key-unknown', 'account.yaml:7:1 brnad', /key `brnad`.*Did you mean `brand`/s),
   inAccount('an unknown key deep inside', account.replace('columns:', 'colums:'), 'account-key-unknown', 'account.yaml:5:5 mentions.0.colums', /Did you mean `columns`/),
   inAccount('an unknown column', account.replace('venue:', 'vanue:'), 'account-key-unknown', 'account.yaml:5:38 mentions.0.columns.vanue', /Did you mean `venue`/),
+  inAccount('a time format without a sign of one', account.replace('    score:', '    time_format: dd.MM.yyyy\n    score:'), 'account-value', 'account.yaml:6:5 mentions.0.time_format', /expected a strptime form such as '%d\.%m\.%Y/),
   inAccount('a wrong type', `${account}interval: wide\n`, 'account-value', 'account.yaml:7:1 interval', /`"wide"`.*expected a number/s),
   inAccount('a wrong choice', `${account}grid: fortnight\n`, 'account-value', 'account.yaml:7:1 grid', /expected day, week or month/),
   inAccount('an unknown time zone', `${account}time_zone: Europe/Skerrow\n`, 'account-value', 'account.yaml:7:1 time_zone', /expected a time zone/),
