@@ -32,8 +32,6 @@ export interface Posterior {
   readonly paretoK: number | null
   /** Kish's effective number of the weighted proposals. */
   readonly effective: number
-  /** Log evidence of the model, all standard deviations integrated out. */
-  readonly logEvidence: number
 }
 
 export interface WeightedSigmas {
@@ -102,7 +100,7 @@ export async function samplePosterior(problem: FitProblem, executor: FitExecutor
     problem, draws,
     sigmas: { count: weighted.weights.length, values, weights: weighted.weights },
     paretoK: k ?? ('reason' in undecided && undecided.reason === 'flat-tail' ? 0 : null),
-    effective: weighted.effectiveSize, logEvidence: logMeanExp(pool.logWeights),
+    effective: weighted.effectiveSize,
   }
 }
 
@@ -198,9 +196,4 @@ function normalise(logWeights: Float64Array): Float64Array {
   const weights = logWeights.map((x) => Math.exp(x - top))
   const sum = weights.reduce((a, b) => a + b, 0)
   return weights.map((w) => w / sum)
-}
-
-function logMeanExp(values: Float64Array): number {
-  const top = values.reduce((a, b) => Math.max(a, b), -Infinity)
-  return top + Math.log(values.reduce((sum, x) => sum + Math.exp(x - top), 0) / values.length)
 }
