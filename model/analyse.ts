@@ -18,10 +18,15 @@ import { readOpinion } from './reading/opinion.ts'
 import { readScales } from './reading/scales.ts'
 import { readSpeaking } from './reading/speaking.ts'
 import { readVenues } from './reading/venues.ts'
+import type { SmallInputs, SurveyInput } from './inputs/small-inputs.ts'
+import { readOutcome } from './outcome/read-outcome.ts'
+import { readSurvey } from './survey/read-survey.ts'
+import type { Refit } from './survey/rolling-forecast.ts'
 
 /*
  *   intake tables ──▶ sampling variance ──▶ problem ──▶ posterior ──▶ reading ──▶ opinion, decomposition, venues, ...
- *                └──▶ target mix ─────────────────────────────────────────┘                  └──▶ caveats
+ *                └──▶ target mix ─────────────────────────────────────────┘ └──▶ survey, outcome ──▶ caveats
+ *   small inputs ───────────────────────────────────────────────────────────────────┘
  */
 
 /** What an analysis is asked for, besides the tables. */
@@ -32,22 +37,34 @@ export interface AnalysisSpec {
   readonly facts: AccountFacts
 }
 
+/** Who does the heavy work: this thread or others. What it yields does not depend on that. */
+export interface Workers {
+  readonly executorFor: (problem: FitProblem) => FitExecutor
+  /** `meanPath`: for every forecast of a survey wave one. */
+  readonly refit: Refit
+}
+
+/** Called as the work goes on, 0 to 1: the draws of the fit, then the forecasts of survey waves. */
+export interface AnalysisProgress {
+  readonly draws?: ((share: number) => void) | undefined
+  readonly forecasts?: ((share: number) => void) | undefined
+}
+
 /** Everything of the findings that is computed; the caveats not yet worded. */
 export type Analysis = Unruled & { readonly caveats: readonly RuledCaveat[] }
 
 /**
- * From intake tables to findings, pure: same tables, spec and seed, same result to the last bit, whoever executes.
+ * From intake tables and small inputs to findings, pure: same tables, inputs, spec and seed, same result to the last bit, whoever works.
  *
- * @param executorFor - who does the heavy work of the fit
  * @throws {ModelError} `base-empty`, `period-empty`, `cells-empty`
  */
 export async function analyse(
-  tables: IntakeTables, spec: AnalysisSpec, executorFor: (problem: FitProblem) => FitExecutor, progress: (share: number) => void = () => undefined,
+  tables: IntakeTables, inputs: SmallInputs, spec: AnalysisSpec, workers: Workers, progress: AnalysisProgress = {},
 ): Promise<Analysis> {
   const sampling = samplingVariance(tables)
   const mix = targetMix(tables, spec.targetMix)
   const problem = buildProblem(tables, sampling.variance)
-  const posterior = await samplePosterior(problem, executorFor(problem), { seed: spec.seed, ...effortFor(problem), progress })
+  const posterior = await samplePosterior(problem, workers.executorFor(problem), { seed: spec.seed, ...effortFor(problem), ...(progress.draws && { progress: progress.draws }) })
   const reading = createReading(tables, mix, sampling, posterior, spec.interval)
   const { timeline } = tables
   const findings: Unruled = {
@@ -64,9 +81,22 @@ export async function analyse(
     factors: tables.factors.filter(({ name }) => !['venue', 'topic', 'poster'].includes(name))
       .map(({ name }) => ({ factor: name, levels: readLevels(reading, name).map(({ name: level, ...rest }) => ({ level, ...rest })) })),
     scales: readScales(posterior, spec.interval),
-    survey: null, speaking: readSpeaking(tables), benchmark: null, advice: [],
+    survey: inputs.survey === null ? null : await readSurvey(reading, inputs.survey, inputs.events ?? [], counted(workers.refit, inputs.survey, progress.forecasts), spec),
+    events: inputs.events?.map(({ date, label, kind }) => ({ date, label, kind })) ?? null,
+    outcome: inputs.outcome === null || inputs.outcome.spans.length === 0 ? null : readOutcome(reading, inputs.outcome, spec.interval),
+    speaking: readSpeaking(tables), benchmark: null, advice: [],
     diagnostics: readDiagnostics(reading, spec.seed, spec.interval),
     method: readMethod(reading, spec.facts),
   }
   return { ...findings, caveats: ruleCaveats({ findings, reading, givenNotUsed: spec.facts.givenNotUsed }) }
+}
+
+/** The same refits, told as they are done. */
+function counted(refit: Refit, { waves }: SurveyInput, progress: (share: number) => void = () => undefined): Refit {
+  let done = 0
+  return async (problem, seed) => {
+    const path = await refit(problem, seed)
+    progress(Math.min(1, ++done / waves.length))
+    return path
+  }
 }

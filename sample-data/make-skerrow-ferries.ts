@@ -2,6 +2,7 @@
  * Makes the data of the demo account:
  *
  *   story ──▶ posts ──▶ blemished rows ──▶ posts/*.csv.gz, reviews/*.ndjson
+ *     ├──────────────────────────────────▶ survey/tracker.csv, outcome/passengers.csv
  *     └──────────────────────────────────▶ truth.csv
  *
  *   npx tsx sample-data/make-skerrow-ferries.ts [FOLDER] [--summary]
@@ -16,11 +17,13 @@ import { blemish } from './making/blemishes.ts'
 import type { Row } from './making/blemishes.ts'
 import { exportFiles, text } from './making/export-files.ts'
 import type { ExportFile } from './making/export-files.ts'
+import { outcomeLines } from './making/outcome.ts'
 import { brand, writePosts } from './making/posts.ts'
 import type { Post } from './making/posts.ts'
 import { seededDraws } from './making/seeded-draws.ts'
 import { tellStory, venues } from './making/story.ts'
 import type { Week } from './making/story.ts'
+import { surveyLines } from './making/survey.ts'
 import { intraclass, summarise } from './making/summary.ts'
 
 export interface Demo {
@@ -33,13 +36,21 @@ export interface Demo {
   readonly files: readonly ExportFile[]
 }
 
-/** The whole demo in memory; the same on every run. */
-export function makeDemo(storySeed = 2070, postSeed = 4): Demo {
+/** The whole demo in memory; the same on every run. Posts, survey and outcome have a stream of draws each. */
+export function makeDemo(storySeed = 2070, postSeed = 4, surveySeed = 7, outcomeSeed = 1): Demo {
   const story = tellStory(seededDraws(storySeed))
   const draws = seededDraws(postSeed)
   const posts = writePosts(story, draws)
   const rows = blemish(posts, draws)
-  return { story, posts, rows, files: [...exportFiles(rows, draws), { path: 'truth.csv', bytes: truthTable(story) }] }
+  return {
+    story, posts, rows,
+    files: [
+      ...exportFiles(rows, draws),
+      { path: 'survey/tracker.csv', bytes: text(surveyLines(story, seededDraws(surveySeed))) },
+      { path: 'outcome/passengers.csv', bytes: text(outcomeLines(story, seededDraws(outcomeSeed))) },
+      { path: 'truth.csv', bytes: truthTable(story) },
+    ],
+  }
 }
 
 /** In points: opinion itself, and each venue's drift, for every week. */

@@ -51,8 +51,14 @@ export interface FileSet {
 }
 
 export interface SurveySource extends FileSet {
+  /** The metric compared with opinion; null: the only one that the files have. */
   readonly headline: string | null
-  readonly lags: readonly [number, number] | null
+  /** Smallest and largest lag looked at, in steps; above 0 the posts lead. */
+  readonly lags: readonly [number, number]
+  /** What a metric is called in the review, by its name in the files. */
+  readonly labels: Readonly<Record<string, string>>
+  /** null: one usual spacing after the last wave. */
+  readonly nextFieldwork: DateRange | null
 }
 
 export type Source = MentionSource | CellSource

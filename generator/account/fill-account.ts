@@ -1,9 +1,13 @@
+import type { Grid } from '../calendar/grid.ts'
 import type { Account, FileSet, LevelEntry, ScoreReading, Source } from './account.ts'
 import { laterKeys, type Entries, type SourceEntry } from './schema.ts'
 import { dotted, type KeyPath } from './yaml-places.ts'
 
 type Found = ReadonlyMap<string, readonly string[]>
 type Level = Entries['venues'][string]
+
+/** From about two months behind the survey to four months ahead of it. */
+const usualLags: Readonly<Record<Grid, readonly [number, number]>> = { day: [-56, 112], week: [-8, 16], month: [-2, 4] }
 
 /** The account from entries that are sound, each and together, and the files found for them. */
 export function accountOf(folder: string, entries: Entries, found: Found, given: readonly string[], places: Readonly<Record<string, string>>): Account {
@@ -21,7 +25,9 @@ export function accountOf(folder: string, entries: Entries, found: Found, given:
       factor, shares: Object.entries(shares).map(([level, share]) => ({ level, share })),
     })),
     survey: entries.survey === undefined ? null : {
-      ...fileSet(['survey', 'files'], entries.survey.files, found), headline: entries.survey.headline ?? null, lags: entries.survey.lags ?? null,
+      ...fileSet(['survey', 'files'], entries.survey.files, found),
+      headline: entries.survey.headline ?? null, lags: entries.survey.lags ?? usualLags[entries.grid],
+      labels: entries.survey.labels, nextFieldwork: entries.survey.next_fieldwork ?? null,
     },
     benchmark: table('benchmark'), codingAudit: table('coding_audit'), importance: table('importance'),
     events: table('events'), outcome: table('outcome'),

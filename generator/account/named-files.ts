@@ -6,6 +6,9 @@ import { dotted, placeOf, type KeyPath } from './yaml-places.ts'
 
 const mentionKinds = ['.csv', '.csv.gz', '.parquet', '.ndjson'] as const
 const tableKinds = ['.csv', '.csv.gz', '.parquet'] as const
+/** Of tables that people write: a fault in one is told by its line. */
+const lineKinds = ['.csv', '.csv.gz'] as const
+const byLine: readonly string[] = ['survey', 'events', 'outcome']
 
 interface Named {
   readonly path: KeyPath
@@ -45,7 +48,7 @@ function namedBy(entries: SoundEntries): readonly Named[] {
   ])
   const tables = (['survey', 'benchmark', 'coding_audit', 'importance', 'events', 'outcome'] as const).flatMap((key): readonly Named[] => {
     const entry = entries[key]
-    return entry === undefined ? [] : [{ path: [key, 'files'], pattern: entry.files, kinds: tableKinds, what: 'file' as const }]
+    return entry === undefined ? [] : [{ path: [key, 'files'], pattern: entry.files, kinds: byLine.includes(key) ? lineKinds : tableKinds, what: 'file' as const }]
   })
   const single = (['template', 'theme', 'notes'] as const).flatMap((key): readonly Named[] => {
     const pattern = entries[key]

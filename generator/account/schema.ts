@@ -7,6 +7,7 @@ import { expectations as expected } from '../faults/catalogue-account.ts'
 const noNul = (given: string): boolean => !given.includes('\0')
 const text = z.string().trim().min(1, expected.text).refine(noNul, expected.text)
 const date = z.string().refine(isDate, expected.date)
+const dateRange = z.strictObject({ from: date, to: date }).refine(({ from, to }) => from <= to, expected.dateOrder)
 const number = z.number()
 const oneCharacter = z.string().length(1, expected.delimiter).refine(noNul, expected.delimiter)
 /** Data values may look like numbers or truth values in YAML: they are compared as text. */
@@ -48,6 +49,8 @@ const source = z.strictObject({
 const level = z.strictObject({ label: text.optional(), values: z.array(value).optional() })
 const venue = level.extend({ cost_per_author: number.gt(0, expected.cost).optional(), drift: z.literal('none').optional() })
 const whole = z.number().int(expected.lags)
+/** More would be looking until something is found. */
+const mostLags = 200
 
 export const accountShape = {
   account: z.string().regex(/^[A-Za-z0-9][A-Za-z0-9-]*$/, expected.accountName),
@@ -57,7 +60,7 @@ export const accountShape = {
   time_zone: z.string().refine(isTimeZone, expected.timeZone).default('UTC'),
   grid: z.enum(['day', 'week', 'month']).default('week'),
   reporting: z.enum(['month', 'quarter', 'week']).default('month'),
-  base: z.strictObject({ from: date, to: date }).refine(({ from, to }) => from <= to, expected.dateOrder).optional(),
+  base: dateRange.optional(),
   interval: number.min(0.5, expected.interval).max(0.99, expected.interval).default(0.9),
   mentions: z.array(source).min(1, expected.someMentions),
   factors: z.array(text).default(['venue', 'topic', 'poster']),
@@ -68,7 +71,10 @@ export const accountShape = {
   target_mix: z.record(z.string(), z.record(z.string(), number.min(0, expected.share).max(1, expected.share))).default({}),
   survey: files.extend({
     headline: text.optional(),
-    lags: z.tuple([whole, whole], expected.lags).refine(([low, high]) => low <= high, expected.lags).optional(),
+    lags: z.tuple([whole, whole], expected.lags).refine(([low, high]) => low <= high, expected.lags)
+      .refine(([low, high]) => high - low < mostLags, expected.mostLags(mostLags)).optional(),
+    labels: z.record(z.string(), text).default({}),
+    next_fieldwork: dateRange.optional(),
   }).optional(),
   benchmark: files.optional(),
   coding_audit: files.optional(),
@@ -87,5 +93,5 @@ export type Entries = { readonly [K in keyof typeof accountShape]: z.output<(typ
 export type SourceEntry = z.output<typeof source>
 
 /** Keys that this version checks but does not use. */
-export const laterKeys = ['competitors', 'survey', 'benchmark', 'coding_audit', 'importance', 'events', 'outcome', 'theme', 'notes'] as const
+export const laterKeys = ['competitors', 'benchmark', 'coding_audit', 'importance', 'theme', 'notes'] as const
 export type AccountKey = keyof typeof accountShape

@@ -14,7 +14,8 @@ const knownKeys: Readonly<Record<string, readonly string[]>> = {
   'venues.*': ['label', 'values', 'cost_per_author', 'drift'],
   'topics.*': ['label', 'values'],
   'posters': ['occasional', 'regular'],
-  'survey': ['files', 'headline', 'lags'],
+  'survey': ['files', 'headline', 'lags', 'labels', 'next_fieldwork'],
+  'survey.*': ['from', 'to'],
 }
 
 /** The faults of one zod issue: what zod found, said in the words of the catalogue and placed in the file. */

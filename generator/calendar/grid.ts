@@ -35,3 +35,11 @@ export function stepsBetween(grid: Grid, first: number, last: number): readonly 
   for (let start = stepStart(grid, first); start <= last; start = nextStep(grid, start)) steps.push(start)
   return steps
 }
+
+/** Which step holds a day, counted from the one that begins on `first`: below 0 before it. @example stepIndex('month', 0, 59) // => 2 */
+export function stepIndex(grid: Grid, first: number, day: number): number {
+  if (grid === 'day') return day - first
+  if (grid === 'week') return (mondayOf(day) - first) / 7
+  const [from, to] = [monthOf(first), monthOf(day)]
+  return (to.year - from.year) * 12 + to.month - from.month
+}

@@ -20,16 +20,19 @@ export function showProgress(speaker: Speaker, terminal: boolean, what: string):
 }
 
 function showLines(speaker: Speaker, what: string): ShownProgress {
-  let told = 0
+  const inQuarters = (name: string) => {
+    let told = 0
+    return (share: number) => {
+      const quarter = Math.floor(share * 4)
+      if (quarter > told) speaker.note(`${what}:   ${name} ${25 * quarter} %`)
+      told = quarter
+    }
+  }
   return {
     progress: {
       stage: (stage) => { speaker.note(`${what}: ${titles[stage]}`) },
       detail: (text) => { speaker.note(`${what}:   ${text}`) },
-      draws: (share) => {
-        const quarter = Math.floor(share * 4)
-        if (quarter > told) speaker.note(`${what}:   draws ${25 * quarter} %`)
-        told = quarter
-      },
+      draws: inQuarters('draws'), forecasts: inQuarters('forecasts of the survey'),
     },
     end: () => Promise.resolve(),
   }
@@ -55,6 +58,7 @@ function showLive(what: string): ShownProgress {
       stage: settleBefore,
       detail: (text) => { if (current !== undefined) current.output = text },
       draws: (share) => { if (current !== undefined) current.output = `draws ${Math.round(100 * share)} %` },
+      forecasts: (share) => { if (current !== undefined) current.output = `forecasts of the survey ${Math.round(100 * share)} %` },
     },
     end: async (failure) => {
       for (const mark of marks.values()) {

@@ -1,4 +1,4 @@
-import { checkForm, checkSelection } from './check-paths.ts'
+import { checkForm, checkItem, checkSelection, checkUnit } from './check-paths.ts'
 import type { CheckContext } from './directives/directive.ts'
 import { nearest } from './faults.ts'
 import type { Placed, Reporter } from './faults.ts'
@@ -22,12 +22,15 @@ export function checkMessage(message: string, scope: TypeScope, context: Pick<Ch
 
 function checkArgument(argument: Argument, scope: TypeScope, at: Placed | undefined, reporter: Reporter): void {
   if (!argument.selection) {
+    checkUnit([argument.as], argument.unit, scope, at, reporter)
     checkForm(argument.of, argument.as, scope, at, reporter)
     return
   }
   const item = checkSelection(argument.selection, scope, at, reporter)
   if (!item) return
+  checkUnit([argument.as, argument.write ?? argument.as], argument.unit, { ...scope, item }, at, reporter)
   if (argument.pick) checkForm(argument.pick, argument.write ?? 'code', { ...scope, item }, at, reporter)
+  else if (argument.write) checkItem(item, argument.write, at, reporter)
   if (forms[argument.as].from !== 'list') {
     reporter.report(at, 'form-unfit', `form "${argument.as}" of a selection`, 'list or length', `Write as: list, or name one ${kindOf(item)} by its path.`)
   }

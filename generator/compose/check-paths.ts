@@ -1,5 +1,5 @@
 import type { FormName } from '../words/forms.ts'
-import { forms } from '../words/forms.ts'
+import { forms, needsUnit } from '../words/forms.ts'
 import type { Clause, Condition } from './condition.ts'
 import type { Placed, Reporter } from './faults.ts'
 import type { Path } from './path.ts'
@@ -62,6 +62,19 @@ export function checkForm(path: Path, form: FormName, scope: TypeScope, at: At, 
   checkKind(path, forms[form].from, scope, at, reporter)
 }
 
+/** Check that an item of a list can itself be written in a form. */
+export function checkItem(item: TypeNode, form: FormName, at: At, reporter: Reporter): void {
+  if (isOfKind(item, forms[form].from)) return
+  reporter.report(at, 'form-unfit', `${kindOf(item)} of the list`, `a ${forms[form].from} for this form`, 'Pick a part of it, or name another form.')
+}
+
+/** Check that a form which asks what its figure is counted in is told, by a path that there is. */
+export function checkUnit(named: readonly FormName[], unit: Path | undefined, scope: TypeScope, at: At, reporter: Reporter): void {
+  if (unit) checkKind(unit, 'string', scope, at, reporter)
+  const asking = named.find(needsUnit)
+  if (asking && !unit) reporter.report(at, 'unit-missing', `form "${asking}" without a unit`, 'the path to what it is counted in', 'Add unit: the kind of the metric, or grid.')
+}
+
 function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter: Reporter): void {
   const type = checkPath(path, scope, at, reporter)
   if (!type || kind === 'any' || isOfKind(type, kind)) return
@@ -69,5 +82,5 @@ function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter:
 }
 
 function written(path: Path): string {
-  return path.map((step) => step.pick ? `${step.key}[${step.pick.field}=...]` : step.key).join('.')
+  return path.map((step) => step.end ? `${step.key}[${step.end}]` : step.pick ? `${step.key}[${step.pick.field}=...]` : step.key).join('.')
 }

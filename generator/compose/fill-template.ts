@@ -3,6 +3,7 @@ import { attributesOf, isDirective } from './check-template.ts'
 import { directiveOf } from './directives/all.ts'
 import type { FillContext } from './directives/directive.ts'
 import { messageOfHeading } from './headings.ts'
+import { joinLists } from './directives/join-lists.ts'
 import type { Scope } from './path.ts'
 
 /** The tree with every directive replaced by what it stands for; the tree given stays as it is. */
@@ -10,9 +11,9 @@ export function fillTree(tree: Root, scope: Scope, context: FillContext): Root {
   return { ...tree, children: [...fillNodes(tree.children, scope, context)] }
 }
 
-/** Fill nodes that stand beside each other. */
+/** Fill nodes that stand beside each other; lists that then do are one. */
 export function fillNodes(nodes: readonly RootContent[], scope: Scope, context: FillContext): readonly RootContent[] {
-  return nodes.flatMap((node) => fillNode(node, scope, context))
+  return joinLists(nodes.flatMap((node) => fillNode(node, scope, context)))
 }
 
 function fillNode(node: RootContent, scope: Scope, context: FillContext): readonly RootContent[] {

@@ -41,9 +41,10 @@ export function typeAt(path: Path, scope: TypeScope): PathType {
 function follow(node: TypeNode, step: Step, scope: TypeScope): PathType {
   const next = child(node, step.key)
   if (!next) return unknown(step.key, node)
-  if (!step.pick) return { known: true, type: next }
+  if (!step.pick && !step.end) return { known: true, type: next }
   const item = withoutNull(next).items
-  if (!item) return unknown(`${step.key}[${step.pick.field}=]`, node)
+  if (!item) return unknown(`${step.key}[${step.end ?? `${step.pick?.field}=`}]`, node)
+  if (!step.pick) return { known: true, type: withoutNull(item) }
   if (!child(item, step.pick.field)) return unknown(step.pick.field, item)
   const wanted = typeof step.pick.value === 'string' ? undefined : typeAt(step.pick.value, scope)
   return wanted && !wanted.known ? wanted : { known: true, type: withoutNull(item) }
@@ -67,9 +68,10 @@ export function withoutNull(node: TypeNode): TypeNode {
 
 /** Whether a value of the type can be written by a form made from `kind`. */
 export function isOfKind(node: TypeNode, kind: string): boolean {
-  if (kind !== 'shift') return kindOf(node) === kind
   const { properties = {} } = withoutNull(node)
-  return 'share_from' in properties && 'share_to' in properties
+  if (kind === 'shift') return 'share_from' in properties && 'share_to' in properties
+  if (kind === 'fieldwork') return 'field_start' in properties && 'field_end' in properties
+  return kind === 'event' ? 'label' in properties && 'date' in properties : kindOf(node) === kind
 }
 
 /** What a value of the type can be written as: see the forms of generator/words. */

@@ -1,13 +1,14 @@
 /**
  * Paths into the findings: `opinion.change.mean`, `venue.label` inside a block repeated as `venue`, and
  * `decomposition.parts[part=venue_mix].estimate`, the item of a list that a field picks out; with `@` the wanted value
- * is itself looked up: `decomposition.parts[part=@decomposition.largest].estimate`.
+ * is itself looked up: `decomposition.parts[part=@decomposition.largest].estimate`. `waves[first]` and `waves[last]` are the two ends of a list.
  */
 export type Path = readonly Step[]
 
 export interface Step {
   readonly key: string
   readonly pick?: { readonly field: string, readonly value: string | Path }
+  readonly end?: 'first' | 'last'
 }
 
 /** Where paths start: the item at hand (inside `where`, `by`), the names given by `each`, the findings. First found wins. */
@@ -17,7 +18,7 @@ export interface Scope {
   readonly item?: unknown
 }
 
-const stepForm = /^([\p{L}\p{N}_-]+)(?:\[([\w-]+)=(@?)([^\]@][^\]]*)\])?$/u
+const stepForm = /^([\p{L}\p{N}_-]+)(?:\[(?:([\w-]+)=(@?)([^\]@][^\]]*)|(first|last))\])?$/u
 
 /** Read a path; undefined where the text is none. */
 export function parsePath(text: string): Path | undefined {
@@ -31,8 +32,9 @@ function split(text: string): readonly string[] {
 }
 
 function parseStep(text: string): Step | undefined {
-  const [, key, field, reference, value] = stepForm.exec(text) ?? []
+  const [, key, field, reference, value, end] = stepForm.exec(text) ?? []
   if (key === undefined) return undefined
+  if (end === 'first' || end === 'last') return { key, end }
   if (field === undefined || value === undefined) return { key }
   const wanted = reference === '@' ? parsePath(value) : value
   return wanted === undefined ? undefined : { key, pick: { field, value: wanted } }
@@ -52,6 +54,7 @@ function startOf(key: string, scope: Scope): unknown {
 
 function follow(value: unknown, step: Step, scope: Scope): unknown {
   const next = hasOwn(value, step.key) ? value[step.key] : undefined
+  if (step.end) return Array.isArray(next) ? next.at(step.end === 'last' ? -1 : 0) : undefined
   if (!step.pick) return next
   const { field, value: wanted } = step.pick
   const sought = typeof wanted === 'string' ? wanted : lookUp(wanted, scope)

@@ -33,6 +33,8 @@ export interface Argument {
   readonly pick?: Path
   /** The form of each item picked; without one it is taken as it stands, a label by its catalogue. */
   readonly write?: FormName
+  /** What the figure is counted in, where its form asks: the kind of a metric, or the grid. */
+  readonly unit?: Path
   readonly position: Position
 }
 
@@ -55,7 +57,7 @@ export function parseSentences(text: string, reporter: Reporter): Sentences {
 }
 
 function readArgument(name: string, spec: Readonly<Record<string, string>>, position: Position, reporter: Reporter): Argument | undefined {
-  const known = [...selectionKeys, 'as', 'pick', 'write']
+  const known = [...selectionKeys, 'as', 'pick', 'write', 'unit']
   const wrong = Object.keys(spec).filter((key) => !known.includes(key))
   for (const key of wrong) reporter.report({ position }, 'argument-key-unknown', `key "${key}" of argument "${name}"`, 'a known key', nearest(key, known))
   const [form = '', itemForm = 'text'] = [spec['as'], spec['write']]
@@ -63,26 +65,31 @@ function readArgument(name: string, spec: Readonly<Record<string, string>>, posi
     reporter.report({ position }, 'form-unknown', `form "${given}" of argument "${name}"`, 'a known form', nearest(given, formNames))
   }
   const selection = readSelection(spec, { position }, reporter)
-  const pick = spec['pick'] === undefined ? undefined : parsePath(spec['pick'])
+  const [pick, unit] = [spec['pick'], spec['unit']].map((text) => (text === undefined ? undefined : parsePath(text)))
   if (!selection || !isFormName(form) || !isFormName(itemForm) || wrong.length > 0) return undefined
-  const chooses = ['where', 'by', 'against', 'order', 'most', 'last', 'pick'].some((key) => key in spec)
-  return { of: selection.of, as: form, position, ...(chooses && { selection }), ...(pick && { pick }), ...(spec['write'] !== undefined && { write: itemForm }) }
+  const chooses = ['where', 'by', 'against', 'order', 'most', 'last', 'pick', 'write'].some((key) => key in spec)
+  return { of: selection.of, as: form, position, ...(chooses && { selection }), ...(pick && { pick }), ...(unit && { unit }), ...(spec['write'] !== undefined && { write: itemForm }) }
 }
 
 /** The arguments of a sentence, written from the findings. */
 export function argumentsFor(sentence: Sentence | undefined, scope: Scope, words: Words): WordArguments {
-  return Object.fromEntries(Object.entries(sentence?.arguments ?? {}).map(([name, argument]) => [name, write(valueOf(argument, scope, words), argument.as, words)]))
+  return Object.fromEntries(Object.entries(sentence?.arguments ?? {}).map(([name, argument]) => [name, write(valueOf(argument, scope, words), argument.as, words, unitOf(argument, scope))]))
 }
 
 function valueOf(argument: Argument, scope: Scope, words: Words): unknown {
   if (!argument.selection) return lookUp(argument.of, scope)
   const { pick, write: form } = argument
   return selected(argument.selection, scope).map((item) => {
-    if (!pick) return item
+    if (!pick) return form ? write(item, form, words) : item
     if (pick.length === 1 && pick[0]?.key === 'label') return write(item, 'label', words)
     const value = lookUp(pick, { ...scope, item })
-    return form ? write(value, form, words) : value
+    return form ? write(value, form, words, unitOf(argument, { ...scope, item })) : value
   })
+}
+
+function unitOf({ unit }: Argument, scope: Scope): string {
+  const value = unit && lookUp(unit, scope)
+  return typeof value === 'string' ? value : ''
 }
 
 /** What the names of a file (`&name`) stand for, found in one walk. */

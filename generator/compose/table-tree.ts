@@ -38,7 +38,7 @@ export function tableTree(
 
 function written(table: Table, { keys }: PrintedColumn, row: Row, labels: Labels, words: Words): string {
   const [first, second] = keys
-  if (second !== undefined) return writeBounds(row[first] ?? null, row[second] ?? null, columnOf(table, first).kind, words)
+  if (second !== undefined) return writeBounds(row[first] ?? null, row[second] ?? null, columnOf(table, first).kind, words, row)
   return writeCell(columnOf(table, first), row, words, labels)
 }
 

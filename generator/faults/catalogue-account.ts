@@ -10,6 +10,7 @@ export const expectations = {
   timeZone: 'a time zone such as Europe/Lisbon',
   interval: 'a number from 0.5 to 0.99',
   lags: 'two whole numbers of steps, the smaller first',
+  mostLags: (most: number) => `at most ${most} lags from the first to the last`,
   oneMode: 'either `files` with `columns` and `score`, or `cells` alone',
   needsFiles: '`files` or `cells`',
   needsColumns: '`columns` beside `files`',

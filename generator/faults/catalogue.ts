@@ -1,10 +1,11 @@
 import { accountWordings } from './catalogue-account.ts'
 import { buildWordings } from './catalogue-build.ts'
+import { inputWordings } from './catalogue-inputs.ts'
 import { intakeWordings } from './catalogue-intake.ts'
 import type { Fault } from './fault.ts'
 import type { Wording } from './wording.ts'
 
-const wordings = { ...accountWordings, ...intakeWordings, ...buildWordings }
+const wordings = { ...accountWordings, ...intakeWordings, ...inputWordings, ...buildWordings }
 
 type Wordings = typeof wordings
 export type FaultCode = keyof Wordings

@@ -23,13 +23,15 @@ export interface IntakeOptions {
   readonly rejects?: string | undefined
   readonly progress?: ((message: string) => void) | undefined
   readonly threads?: number | undefined
+  /** ISO date of the first day as of which a forecast is to be made; null or absent: none is. */
+  readonly hindsightFrom?: string | null | undefined
 }
 
 /**
  * From the account's files to the intake tables:
  *
  *   files ──look over──▶ UTF-8 ──scan──▶ `scanned`, one narrow row a mention ──date──▶ the period under review
- *     ──settle──▶ out of scope, duplicates, `classified` ──group──▶ cells and counts ──▶ tables, with ready-made cells
+ *     ──settle──▶ out of scope, duplicates ──class and group──▶ cells and counts ──▶ tables, with ready-made cells
  *
  * Mentions stay inside the database, which can reach the account's files and nothing else. The tables do not depend on
  * the number of threads: whole numbers are summed, everything is ordered.

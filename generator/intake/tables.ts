@@ -70,6 +70,7 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
     factors,
     cells: cellColumns(parts, steps, factors),
     variation: grouped === null ? factors[0]!.levels.map(() => null) : variationRows(grouped, indices!, factors[0]!.levels.length),
+    hindsight: null,
     concentration: grouped === null ? [] : concentrationRows(grouped, indices!),
     authors: grouped === null ? summed : addAuthors(summed, grouped, indices!, factors, ready.length === 0),
     accounting: { ...accounting, withAuthor: authoredMentions(grouped, indices, readyCells, factors), readyMade: ready.length > 0 },

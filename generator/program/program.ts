@@ -1,4 +1,5 @@
-import { existsSync, readFileSync } from 'node:fs'
+import { createHash } from 'node:crypto'
+import { existsSync, readdirSync, readFileSync } from 'node:fs'
 import { dirname, join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { z } from 'zod'
@@ -7,14 +8,24 @@ import { z } from 'zod'
 export interface Program {
   readonly root: string
   readonly version: string
+  /** SHA-256 of the model's code: two programs that compute alike have the same. */
+  readonly model: string
   /** Folder of the house template, words, charts and theme. */
   readonly templates: string
 }
 
 /** Found from this file upwards, so that source and build find the same root. */
 export function thisProgram(): Program {
-  let root = dirname(fileURLToPath(import.meta.url))
+  const here = dirname(fileURLToPath(import.meta.url))
+  let root = here
   while (!existsSync(join(root, 'package.json'))) root = dirname(root)
   const { version } = z.object({ version: z.string() }).parse(JSON.parse(readFileSync(join(root, 'package.json'), 'utf8')))
-  return { root, version, templates: join(root, 'templates') }
+  return { root, version, model: digestOf(join(here, '..', '..', 'model')), templates: join(root, 'templates') }
+}
+
+function digestOf(folder: string): string {
+  const hash = createHash('sha256')
+  const files = readdirSync(folder, { recursive: true, withFileTypes: true }).filter((entry) => entry.isFile()).map((entry) => join(entry.parentPath, entry.name)).sort()
+  for (const file of files) hash.update(readFileSync(file))
+  return hash.digest('hex')
 }

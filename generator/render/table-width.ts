@@ -6,8 +6,9 @@ import type { AdvanceTable } from './theme.ts'
 
 /** Of paper.css: the text's width on A4 between its margins, the size of a table's type, the room before a column; px. */
 const portrait = { width: 642, fontSize: 11.33, padding: 12 } as const
-/** Columns of text may break between words; below this they look broken. */
+/** Columns of text may break between words; below this they look broken, and tables.css lets none get below the least. */
 const narrowestText = 100
+const leastText = 75
 
 /**
  * Whether a table fits between the margins of a portrait page without breaking a figure.
@@ -34,5 +35,5 @@ function needed(cell: Element, advances: AdvanceTable): number {
   if (isHeader) return Math.max(...text.split(/\s+/).map(width))
   const { className } = cell.properties
   const breaks = Array.isArray(className) && className.includes('kind-text')
-  return breaks ? Math.min(width(text), narrowestText) : width(text)
+  return breaks ? Math.max(leastText, Math.min(width(text), narrowestText)) : width(text)
 }

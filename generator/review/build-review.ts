@@ -2,7 +2,10 @@ import { dirname, join } from 'node:path'
 import type { Browser } from 'puppeteer'
 import type { Findings } from '../../model/findings/schema.ts'
 import type { Account } from '../account/account.ts'
+import { openCache } from '../cache/cache.ts'
 import { compose } from '../compose/compose.ts'
+import { firstForecast, placeInputs } from '../inputs/place-inputs.ts'
+import { readSmallInputs } from '../inputs/read-small-inputs.ts'
 import { readIntake } from '../intake/read-intake.ts'
 import { print } from '../print/print.ts'
 import type { Program } from '../program/program.ts'
@@ -15,7 +18,9 @@ import { openDraft, requireDraft } from './write-draft.ts'
 
 /*
  *   account ──▶ intake tables ──▶ findings ──▶ document ──▶ review.html ──▶ review.pdf
- *               (readIntake)    (makeFindings)  (compose)     (render)        (print)
+ *          │    (readIntake)    (makeFindings)  (compose)     (render)        (print)
+ *          └──▶ small inputs ──────▲
+ *               (readSmallInputs)
  */
 
 export interface BuildOptions {
@@ -45,10 +50,16 @@ export async function buildReview(program: Program, account: Account, options: B
   const draft = await openDraft(options.out === undefined ? join(account.folder, 'drafts') : dirname(options.out))
   try {
     progress.stage('intake')
-    const tables = await readIntake(account, { period: options.period, threads: options.threads, rejects: draft.rejects, progress: progress.detail })
+    const inputs = await readSmallInputs(account)
+    const tables = await readIntake(account, {
+      period: options.period, threads: options.threads, rejects: draft.rejects, hindsightFrom: firstForecast(inputs), progress: progress.detail,
+    })
     requireSteps(account, tables)
+    const small = placeInputs(inputs, account, tables.timeline)
     progress.stage('fit')
-    const findings = await makeFindings(account, tables, house.words, { seed: options.seed, version: program.version, threads: options.threads, draws: progress.draws })
+    const findings = await makeFindings(account, { tables, small, files: inputs.files }, house.words, {
+      seed: options.seed, version: program.version, threads: options.threads, cache: openCache(join(account.folder, 'cache'), program.model), progress,
+    })
     progress.stage('document')
     const figures = tablesOf(findings)
     const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })

@@ -1,53 +1,90 @@
 import { availableParallelism } from 'node:os'
-import { analyse, type Analysis } from '../../model/analyse.ts'
+import { analyse, type Analysis, type AnalysisSpec } from '../../model/analyse.ts'
+import type { FitProblem } from '../../model/fit/problem.ts'
 import { findingsSchema, type Findings } from '../../model/findings/schema.ts'
+import type { SmallInputs } from '../../model/inputs/small-inputs.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
+import type { Refit } from '../../model/survey/rolling-forecast.ts'
 import type { Account } from '../account/account.ts'
+import type { Cache } from '../cache/cache.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
+import { startFitThreads, type FitThreads } from '../threads/fit-threads.ts'
+import { startRefitThreads } from '../threads/refit-threads.ts'
 import { wordCaveat } from '../words/caveats.ts'
 import type { Words } from '../words/words.ts'
-import { startFitThreads, type FitThreads } from './threads.ts'
+import type { Progress } from './stages.ts'
+
+/** All that the figures rest on. */
+export interface ReviewInputs {
+  readonly tables: IntakeTables
+  readonly small: SmallInputs
+  /** The files that the small inputs were read from. */
+  readonly files: readonly Findings['inputs'][number][]
+}
 
 export interface FitOptions {
   readonly seed: number
   readonly version: string
   /** Threads of the fit; the findings do not depend on it. Default: the machine's. */
   readonly threads?: number | undefined
-  readonly draws?: (share: number) => void
+  readonly cache: Cache
+  readonly progress: Progress
 }
 
-/** Intake tables ──model──▶ analysis ──worded──▶ findings, checked against their schema. */
-export async function makeFindings(account: Account, tables: IntakeTables, words: Words, options: FitOptions): Promise<Findings> {
-  const analysis = await fit(account, tables, options)
+/** Tables and inputs ──model──▶ analysis ──worded──▶ findings, checked against their schema. */
+export async function makeFindings(account: Account, inputs: ReviewInputs, words: Words, options: FitOptions): Promise<Findings> {
+  const spec = specOf(account, options.seed)
+  // whatever template, words and theme say, the figures are the same
+  const analysis = await options.cache.remember('analyses', [inputs, spec], () => compute(inputs, spec, options), analysisOf)
   const { caveats, ...computed } = analysis
   return findingsSchema.parse({
     ...computed,
     account: account.account, brand: account.brand, locale: account.locale,
     caveats: caveats.map((caveat) => ({ ...caveat, ...wordCaveat(words, caveat.code, caveat.figures) })),
-    inputs: tables.accounting.inputs.map((input) => ({ ...input })),
+    inputs: [...inputs.tables.accounting.inputs, ...inputs.files].map((input) => ({ ...input })),
     program: { version: options.version, seed: options.seed },
   })
 }
 
-async function fit(account: Account, tables: IntakeTables, options: FitOptions): Promise<Analysis> {
-  const open: FitThreads[] = []
-  try {
-    return await analyse(tables, {
-      interval: account.interval, seed: options.seed,
-      targetMix: Object.fromEntries(account.targetMix.map(({ factor, shares }) => [factor, Object.fromEntries(shares.map(({ level, share }) => [level, share]))])),
-      facts: {
-        givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, posterBounds: account.posters, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
-        timeZone: account.timeZone, reporting: account.reporting,
-      },
-    }, (problem) => {
-      const threads = startFitThreads(problem, options.threads ?? Math.min(8, availableParallelism()))
-      open.push(threads)
-      return threads.executor
-    }, options.draws)
-  } finally {
-    await Promise.all(open.map((threads) => threads.close()))
+const analysisShape = findingsSchema.omit({ account: true, brand: true, locale: true, inputs: true, program: true, caveats: true })
+  .extend({ caveats: findingsSchema.shape.caveats.element.pick({ code: true, severity: true, figures: true }).array() })
+
+/** An analysis that was written down, if it has the shape of one. */
+function analysisOf(written: unknown): Analysis | null {
+  return analysisShape.safeParse(written).data ?? null
+}
+
+function specOf(account: Account, seed: number): AnalysisSpec {
+  return {
+    interval: account.interval, seed,
+    targetMix: Object.fromEntries(account.targetMix.map(({ factor, shares }) => [factor, Object.fromEntries(shares.map(({ level, share }) => [level, share]))])),
+    facts: {
+      givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, posterBounds: account.posters, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
+      timeZone: account.timeZone, reporting: account.reporting,
+    },
   }
+}
+
+async function compute({ tables, small }: ReviewInputs, spec: AnalysisSpec, { threads = Math.min(8, availableParallelism()), cache, progress }: FitOptions): Promise<Analysis> {
+  const fits: FitThreads[] = []
+  const refits = startRefitThreads(threads)
+  const executorFor = (problem: FitProblem) => {
+    const started = startFitThreads(problem, threads)
+    fits.push(started)
+    return started.executor
+  }
+  const refit: Refit = (problem, seed) => cache.remember('forecasts', [problem, seed], () => refits.refit(problem, seed), pathOf(problem.steps))
+  try {
+    return await analyse(tables, small, spec, { executorFor, refit }, { draws: progress.draws, forecasts: progress.forecasts })
+  } finally {
+    await Promise.all([...fits, refits].map((started) => started.close()))
+  }
+}
+
+/** A path that was written down: as many finite numbers as there are steps, or it is not used. */
+function pathOf(steps: number): (written: unknown) => Float64Array | null {
+  return (written) => (Array.isArray(written) && written.length === steps && written.every((value) => typeof value === 'number' && Number.isFinite(value)) ? Float64Array.from(written as number[]) : null)
 }
 
 /**

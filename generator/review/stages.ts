@@ -7,7 +7,9 @@ export interface Progress {
   /** Something within the stage: a file, or how far the draws are, 0 to 1. */
   detail(text: string): void
   draws(share: number): void
+  /** How far the forecasts of survey waves are, 0 to 1. */
+  forecasts(share: number): void
 }
 
 /** Tells nobody. */
-export const silent: Progress = { stage: () => undefined, detail: () => undefined, draws: () => undefined }
+export const silent: Progress = { stage: () => undefined, detail: () => undefined, draws: () => undefined, forecasts: () => undefined }

@@ -14,8 +14,8 @@ export interface Column {
   readonly kind: ColumnKind
 }
 
-/** How a column is to be formatted where people read it; a CSV always holds the plain value. */
-export type ColumnKind = 'text' | 'date' | 'count' | 'points' | 'change' | 'share' | 'probability' | 'number'
+/** How a column is to be formatted where people read it; a CSV always holds the plain value. A measure is a survey's, and the row's `kind` says of which kind; steps are counted in those of the row's `grid`. A word is text so short that it is not broken. */
+export type ColumnKind = 'text' | 'word' | 'date' | 'count' | 'points' | 'change' | 'share' | 'probability' | 'number' | 'p-value' | 'measure' | 'measure-change' | 'measure-size' | 'steps'
 
 export type Cell = string | number | boolean | null
 export type Row = Readonly<Record<string, Cell>>

@@ -2,6 +2,8 @@ import type { Findings } from '../../model/findings/schema.ts'
 import { accountingTable, checksTable, inputsTable, scalesTable, targetMixTable } from './method-tables.ts'
 import { decompositionTable, opinionTable, periodsTable, spansTable } from './opinion-tables.ts'
 import { concentrationTable, mixTable, offsetsTable } from './speaking-tables.ts'
+import { departuresTable, eventsTable, lagWeightsTable, outcomeLagsTable, surveyForecastsTable, surveyRivalsTable } from './survey-forecast-tables.ts'
+import { agreementTable, surveyCandidatesTable, surveyLagsTable, surveyWavesTable, trackerTable } from './survey-tables.ts'
 import { inOrder, levelOrder } from './level-order.ts'
 import type { Table } from './table.ts'
 import { venueSeriesTable, venuesBeforeTable, venuesTable } from './venue-tables.ts'
@@ -9,13 +11,20 @@ import { venueSeriesTable, venuesBeforeTable, venuesTable } from './venue-tables
 const makers = [
   opinionTable, periodsTable, spansTable, decompositionTable, venuesTable, venueSeriesTable, venuesBeforeTable, mixTable, offsetsTable, concentrationTable,
   accountingTable, scalesTable, targetMixTable, checksTable, inputsTable,
+  trackerTable, surveyWavesTable, agreementTable, surveyLagsTable, surveyCandidatesTable, surveyForecastsTable, surveyRivalsTable, lagWeightsTable, departuresTable,
+  outcomeLagsTable, eventsTable,
 ] as const
 
 /** Tables list venues as they find them: in the one order of the document. */
 function withVenuesInOrder(findings: Findings): Findings {
   const order = levelOrder(findings)
   const sorted = <T extends { readonly venue: string }>(list: readonly T[]) => [...inOrder(list, 'venue', order, ({ venue }) => venue)]
-  return { ...findings, venues: sorted(findings.venues), speaking: { ...findings.speaking, venues: sorted(findings.speaking.venues) } }
+  const candidates = findings.survey === null ? [] : [...inOrder(findings.survey.candidates, 'venue', order, ({ venue }) => venue ?? '')]
+  const first = (series: string) => candidates.filter((of) => of.series === series)
+  return {
+    ...findings, venues: sorted(findings.venues), speaking: { ...findings.speaking, venues: sorted(findings.speaking.venues) },
+    survey: findings.survey && { ...findings.survey, candidates: [...first('adjusted'), ...first('raw'), ...first('venue')] },
+  }
 }
 
 /**

@@ -8,6 +8,7 @@ const formOf: Readonly<Record<string, FormName>> = {
   share: 'share', from: 'share', to: 'share', correlation: 'number', pareto_k: 'number', ess: 'count',
   raw_change: 'change', change: 'change', first: 'date', last: 'date', factor: 'factor',
   mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain', least: 'plain', most: 'count',
+  pairs: 'plain', needed: 'plain', waves: 'plain', hidden: 'plain', flagged: 'plain', observed: 'measure', expected: 'measure',
 }
 
 export const caveatParts = ['title', 'evidence', 'meaning', 'remedy'] as const
@@ -16,15 +17,15 @@ export type CaveatPart = (typeof caveatParts)[number]
 /** A caveat's figures as arguments of its messages; the sign of a change (`raw_change_sign`) chooses cases. */
 export function caveatArguments(figures: Readonly<Record<string, string | number>>, words: Words): Record<string, WordArgument> {
   return Object.fromEntries(Object.entries(figures).flatMap(([name, value]) => {
-    const written = [name, writeFigure(name, value, words)] as const
+    const written = [name, writeFigure(name, value, words, String(figures['kind'] ?? ''))] as const
     return name.endsWith('change') && typeof value === 'number' ? [written, [`${name}_sign`, write(value, 'sign', words)] as const] : [written]
   }))
 }
 
-/** Dates are written by the form of dates, numbers by the form of their name, a level as tables name it, all else as it stands. */
-function writeFigure(name: string, value: string | number, words: Words): WordArgument {
+/** Dates are written by the form of dates, numbers by the form of their name, a survey's by its `kind`, a level as tables name it, all else as it stands. */
+function writeFigure(name: string, value: string | number, words: Words, kind: string): WordArgument {
   const form = formOf[name]
-  if (typeof value === 'number') return write(value, form === undefined || form === 'factor' || form === 'date' ? 'number' : form, words)
+  if (typeof value === 'number') return write(value, form === undefined || form === 'factor' || form === 'date' ? 'number' : form, words, kind)
   if (name === 'level') return levelLabel({ label: value, level: value }, words)
   if (form === 'date' && /^\d{4}-\d{2}-\d{2}$/.test(value)) return write(value, 'date', words)
   return form === 'factor' ? write(value, 'factor', words) : value

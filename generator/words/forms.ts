@@ -1,20 +1,25 @@
 import { date, days, period, shortDate } from './dates.ts'
 import { factorName, levelLabel, partName } from './labels.ts'
-import { change, count, interval, number, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange } from './numbers.ts'
+import { measure, measureChange, measureInterval, measureSize, steps } from './measures.ts'
+import { change, count, countRange, interval, number, pValue, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange } from './numbers.ts'
 import type { WordArgument, Words } from './words.ts'
 
 /** What a form is made from. */
-export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'any'
+export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'fieldwork' | 'event' | 'any'
 
 export interface Form {
   readonly from: Kind
-  /** The value has been found to be of the kind `from`, or is null. */
-  readonly write: (value: never, words: Words) => WordArgument
+  /** Whether its figure is counted in a unit that another one names. */
+  readonly needsUnit?: true
+  /** The value has been found to be of the kind `from`, or is null; `unit` is what another figure says it is counted in, else empty. */
+  readonly write: (value: never, words: Words, unit: string) => WordArgument
 }
 
 const ofNumber = (write: (value: number, words: Words) => WordArgument): Form => ({ from: 'number', write })
 const ofString = (write: (value: string, words: Words) => WordArgument): Form => ({ from: 'string', write })
 const ofBounds = (write: (value: Bounds, words: Words) => WordArgument): Form => ({ from: 'estimate', write })
+const ofMeasure = (write: (value: number, unit: string, words: Words) => WordArgument): Form => ({ from: 'number', needsUnit: true, write: (value: number, words: Words, unit: string) => write(value, unit, words) })
+const ofMeasures = (format: typeof measure): Form => ({ from: 'estimate', needsUnit: true, write: (value: Bounds, words: Words, unit: string) => measureInterval(value, unit, format, words) })
 const ofList = (write: (value: readonly unknown[], words: Words) => WordArgument): Form => ({ from: 'list', write })
 
 interface Bounds { readonly low: number, readonly high: number }
@@ -38,11 +43,29 @@ export const forms = {
   interval: ofBounds((value, words) => interval(value, points, words)),
   'change-interval': ofBounds((value, words) => interval(value, change, words)),
   'size-interval': ofBounds(sizeInterval),
+  /** A metric of the survey; needs `unit`, the path to its kind: a share in percent or a mean. */
+  measure: ofMeasure((value, unit, words) => measure(value, unit, words.locale)),
+  'measure-change': ofMeasure((value, unit, words) => measureChange(value, unit, words.locale)),
+  'measure-size': ofMeasure((value, unit, words) => measureSize(value, unit, words.locale)),
+  'measure-interval': ofMeasures(measure),
+  'measure-change-interval': ofMeasures(measureChange),
+  /** Steps of the grid, without sign; needs `unit`, the path to the grid. */
+  steps: ofMeasure(steps),
+  'number-interval': ofBounds((value, words) => interval(value, number, words)),
+  'p-value': ofNumber(pValue),
+  /** How far a ratio lies from 1, as a percentage: 0.69 and 1.31 are both `31%`. */
+  'ratio-size': ofNumber((value, words) => share(Math.abs(1 - value), words)),
+  /** For choosing a case: whether a ratio lies above 1 (`up`), below (`down`) or is 1 (`flat`); exact, since a verdict rests on it. */
+  'ratio-sign': ofNumber((value) => (value === 1 ? 'flat' : value > 1 ? 'up' : 'down')),
   date: ofString((value, words) => date(value, words.locale)),
   'short-date': ofString((value, words) => shortDate(value, words.locale)),
   period: ofString(period),
   /** A stretch of days. */
   days: { from: 'span', write: (value: Parameters<typeof days>[0], words: Words) => days(value, words.locale) } satisfies Form,
+  /** Days of a wave's fieldwork. */
+  fieldwork: { from: 'fieldwork', write: (value: { readonly field_start: string, readonly field_end: string }, words: Words) => days({ start: value.field_start, end: value.field_end }, words.locale) } satisfies Form,
+  /** Something that happened, with its day. */
+  event: { from: 'event', write: (value: { readonly label: string, readonly date: string }, words: Words) => words.say('event', { label: value.label, date: date(value.date, words.locale) }) } satisfies Form,
   /** A number that names something, ungrouped: a seed. */
   digits: ofNumber((value) => String(value)),
   text: ofString((value) => value),
@@ -60,12 +83,20 @@ export const forms = {
   'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => shareDirection(from, to) } satisfies Form,
   /** Smallest to largest size in a list of numbers. */
   'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words)),
+  /** Smallest to largest of a list of counts: `382 to 417`. */
+  'count-range': ofList((value, words) => countRange(value.filter((item) => typeof item === 'number'), words)),
   list: ofList((value, words) => new Intl.ListFormat(words.locale, { style: 'long', type: 'conjunction' }).format(value.map(String))),
   length: ofList((value) => value.length),
 } as const satisfies Readonly<Record<string, Form>>
 
 export type FormName = keyof typeof forms
 export const formNames = Object.keys(forms) as readonly FormName[]
+
+/** Whether a form asks what its figure is counted in. */
+export function needsUnit(name: FormName): boolean {
+  const form: Form = forms[name]
+  return form.needsUnit === true
+}
 
 export function isFormName(name: string): name is FormName {
   return Object.hasOwn(forms, name)
@@ -85,19 +116,21 @@ function signOf(value: number): 'up' | 'down' | 'flat' {
 /**
  * Write a value of the findings in a form.
  *
+ * @param unit - what the value is counted in, where its form asks for that
  * @returns the wording of "not known" where the value is null or not of the form's kind; so it is total
  */
-export function write(value: unknown, form: FormName, words: Words): WordArgument {
-  const { from, write: toWords } = forms[form]
-  return fits(value, from) ? toWords(value as never, words) : words.say('not-known')
+export function write(value: unknown, form: FormName, words: Words, unit = ''): WordArgument {
+  const { from, write: toWords }: Form = forms[form]
+  return fits(value, from) ? toWords(value as never, words, unit) : words.say('not-known')
 }
 
-const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'] } as const
+const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'], fieldwork: ['field_start', 'field_end'], event: ['label', 'date'] } as const
 
 function fits(value: unknown, kind: Kind): boolean {
   if (kind === 'any') return true
   if (kind === 'list') return Array.isArray(value)
   if (kind === 'number' || kind === 'string') return typeof value === kind
   if (typeof value !== 'object' || value === null) return false
-  return keysOf[kind].every((key) => key in value)
+  const parts = value as Readonly<Record<string, unknown>>
+  return keysOf[kind].every((key) => key in parts && parts[key] !== null)
 }

@@ -7,6 +7,8 @@ export interface NamedLevel {
   readonly topic?: string
   readonly poster?: string
   readonly level?: string
+  /** A series compared with the survey; of a venue's own the label tells which. */
+  readonly series?: string
 }
 
 /**
@@ -14,6 +16,7 @@ export interface NamedLevel {
  * a mention without a topic) is worded by the catalogue, if it knows the name, and else begins with a capital where the data have none.
  */
 export function levelLabel(level: NamedLevel, words: Words): string {
+  if (level.series !== undefined && words.has(`series-${level.series}`)) return words.say(`series-${level.series}`)
   const name = level.venue ?? level.topic ?? level.poster ?? level.level ?? level.label
   const key = `level-${name}`
   if (level.label !== name) return level.label

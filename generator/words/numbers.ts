@@ -6,7 +6,8 @@ import type { Words } from './words.ts'
  */
 type Style = Pick<Intl.NumberFormatOptions, 'style' | 'signDisplay' | 'minimumFractionDigits' | 'maximumFractionDigits' | 'maximumSignificantDigits' | 'roundingPriority'>
 
-function figure(value: number, locale: string, style: Style): string {
+/** A figure in a style of Intl's. */
+export function figure(value: number, locale: string, style: Style): string {
   const parts = new Intl.NumberFormat(locale, { signDisplay: 'negative', ...style }).formatToParts(value)
   return parts.map((part) => part.type === 'minusSign' ? '\u2212' : part.value).join('')
 }
@@ -47,6 +48,13 @@ export function share(value: number, words: Words): string {
   return percent(value)
 }
 
+/** A p-value: `0.031`, two decimals from 0.1 on; `under 0.001`. */
+export function pValue(value: number, words: Words): string {
+  if (value < 0.001) return words.say('probability-under', { figure: figure(0.001, words.locale, { maximumFractionDigits: 3 }) })
+  const decimals = value < 0.0995 ? 3 : 2
+  return figure(value, words.locale, { minimumFractionDigits: decimals, maximumFractionDigits: decimals })
+}
+
 /** A probability as a percentage, never rounded to certainty: `87%`, `over 99%`, `under 1%`. */
 export function probabilityFigure(value: number, words: Words): string {
   const percent = (p: number) => figure(p, words.locale, { style: 'percent', maximumFractionDigits: 0 })
@@ -80,6 +88,13 @@ export function sizeRange(values: readonly number[], words: Words): string {
   const sizes = values.map(Math.abs)
   const [low, high] = [Math.min(...sizes), Math.max(...sizes)]
   return points(low, words.locale) === points(high, words.locale) ? size(low, words) : interval({ low, high }, points, words)
+}
+
+/** Smallest to largest of several counts: `382 to 417`, or `400` where they are one. */
+export function countRange(values: readonly number[], words: Words): string {
+  if (values.length === 0) return words.say('not-known')
+  const [low, high] = [Math.min(...values), Math.max(...values)]
+  return count(low, words.locale) === count(high, words.locale) ? count(low, words.locale) : interval({ low, high }, count, words)
 }
 
 /** Two bounds as `1.2 to 5.0`, both formatted alike. */

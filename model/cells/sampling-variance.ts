@@ -1,4 +1,4 @@
-import type { IntakeTables } from '../intake/intake-tables.ts'
+import type { FitTables } from '../intake/intake-tables.ts'
 import { clusterDesignEffect } from '../statistics/kish.ts'
 import { intraclassCorrelation } from '../statistics/intraclass.ts'
 
@@ -22,7 +22,7 @@ const leastFreedom = 5
  * deff_c = 1 + (b_c - 1) rho_v (Kish 1965, section 5.4), rho_v the one-way ANOVA intraclass correlation by author.
  * A design effect given ready-made is taken as it is.
  */
-export function samplingVariance(tables: IntakeTables): SamplingVariance {
+export function samplingVariance(tables: FitTables): SamplingVariance {
   const { cells, factors, variation } = tables
   const venues = factors[0].levels.length
   const venueOf = cells.levels[0]

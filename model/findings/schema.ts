@@ -1,21 +1,13 @@
 import { z } from 'zod'
+import { count, estimate, isoDate, movement, share } from './parts-schema.ts'
+import { event, outcome, survey } from './survey-schema.ts'
+
+export type { Estimate, Movement } from './parts-schema.ts'
 
 /**
  * The findings: the one thing that templates, charts and tables may read. Declared here once; the type and the
  * shipped JSON Schema are both made from it. Figures are in points (score x 100) unless said otherwise.
  */
-
-/** A posterior summary: mean, bounds of the central interval (the account's `interval`), standard deviation. */
-export const estimate = z.strictObject({ mean: z.number(), low: z.number(), high: z.number(), sd: z.number().min(0) })
-export type Estimate = z.infer<typeof estimate>
-
-const share = z.number().min(0).max(1)
-const count = z.number().int().min(0)
-const isoDate = z.string().regex(/^\d{4}-\d{2}-\d{2}$/)
-
-/** Whether an interval supports saying that something moved: it lies wholly above or below zero, or it does not. */
-const movement = z.enum(['up', 'down', 'not-established'])
-export type Movement = z.infer<typeof movement>
 
 const period = z.strictObject({ name: z.string(), start: isoDate, end: isoDate })
 
@@ -179,7 +171,9 @@ export const findingsSchema = z.strictObject({
     venue: estimate.nullable(), topic: estimate.nullable(), poster: estimate.nullable(),
     factors: z.record(z.string(), estimate),
   }),
-  survey: z.null(), speaking, benchmark: z.null(),
+  /** null where the account gives none; so with events and the outcome. */
+  survey: survey.nullable(), events: z.array(event).nullable(), outcome: outcome.nullable(),
+  speaking, benchmark: z.null(),
   caveats: z.array(caveat), advice: z.array(advice),
   diagnostics, method,
   inputs: z.array(z.strictObject({ path: z.string(), sha256: z.string(), rows: count })),

@@ -1,4 +1,4 @@
-import type { IntakeTables } from '../intake/intake-tables.ts'
+import type { FitTables } from '../intake/intake-tables.ts'
 import { priors, walkFactor } from './priors.ts'
 import type { EffectRuns, FitCells, FitProblem, FixedGroup, Scale, ScalePositions } from './problem.ts'
 
@@ -8,7 +8,7 @@ import type { EffectRuns, FitCells, FitProblem, FixedGroup, Scale, ScalePosition
  *
  * @param variance - shape (cells), V_c of every cell
  */
-export function buildProblem(tables: IntakeTables, variance: Float64Array): FitProblem {
+export function buildProblem(tables: FitTables, variance: Float64Array): FitProblem {
   const steps = tables.timeline.steps.length
   const venueLevels = tables.factors[0].levels
   const several = venueLevels.length > 1
@@ -56,7 +56,7 @@ interface FactorColumns {
   readonly from: number
 }
 
-function layCells(tables: IntakeTables, factors: readonly FactorColumns[], border: number, variance: Float64Array): FitCells {
+function layCells(tables: FitTables, factors: readonly FactorColumns[], border: number, variance: Float64Array): FitCells {
   const { cells } = tables
   const columns = factors.map(({ factor, from }) => cells.levels[factor].map((level) => from + level))
   const still = new Int32Array(cells.count)

@@ -1,45 +1,18 @@
-import { paretoSmooth, type SmoothedWeights } from '../diagnostics/pareto-k.ts'
-import { createGenerator, type Generator } from '../random/generator.ts'
-import { latinHypercube } from '../random/latin-hypercube.ts'
+import { createGenerator } from '../random/generator.ts'
 import type { FitExecutor } from './executor.ts'
-import { findMode } from './mode.ts'
-import { sigmaOf } from './prior-scale.ts'
 import type { FitProblem } from './problem.ts'
-import { kishEffectiveSize } from '../statistics/kish.ts'
-import { fitProposal, normalProposal, placePoints, proposalLogDensity, type Proposal } from './proposal.ts'
 import { resample } from './resample.ts'
+import { sampleScales, type SampledScales, type WeightedSigmas } from './scales.ts'
 
 /*
- * The posterior over the standard deviations, by adaptive importance sampling with every state integrated out:
+ * The posterior of everything:
  *
- *   mode in z ──▶ normal proposal ──▶ round ──▶ proposal fitted to all rounds ──▶ round ──▶ ... ──▶ all rounds, weighted
- *                                                                                                      │ resampled
- *                                                                                                      ▼
- *                                                                            an exact draw of all states for each
- *
- * z makes the prior standard normal (prior-scale.ts). All rounds count: every point is weighed against the mixture of all
- * proposals (Cornuet, Marin, Mira and Robert 2012, Scand. J. Statist. 39:798). The proposals' tails outlast a normal's, so
- * weights are bounded whatever the data (the evidence is). Independent draws need no burn-in, and the Pareto k of the
- * weights says whether they can be trusted (Vehtari, Simpson, Gelman, Yao and Gabry 2024).
+ *   standard deviations, weighted (scales.ts) ──resampled──▶ an exact draw of all states for each
  */
-export interface Posterior {
+export interface Posterior extends SampledScales {
   readonly problem: FitProblem
-  /** All proposals, weighted: what is said about the standard deviations comes from these. */
-  readonly sigmas: WeightedSigmas
-  /** Equally weighted joint draws: what is said about states comes from these. */
+  /** Equally weighted joint draws: what is said about states comes from these; about the standard deviations, from `sigmas`. */
   readonly draws: StateDraws
-  /** Of the largest weights; 0 where they all agree, null where so few outweigh the rest that there is no tail to fit. */
-  readonly paretoK: number | null
-  /** Kish's effective number of the weighted proposals. */
-  readonly effective: number
-}
-
-export interface WeightedSigmas {
-  readonly count: number
-  /** Shape (count, scales), on the score's own scale. */
-  readonly values: Float64Array
-  /** Shape (count), summing to 1. */
-  readonly weights: Float64Array
 }
 
 export interface StateDraws {
@@ -62,138 +35,25 @@ export interface PosteriorOptions {
 
 /** Streams of the seed: one per purpose, the draws of the states from the last one on. */
 const streams = { rounds: 0, resampling: 1, states: 16 } as const
-/** Shares of the proposals in each round: small ones first, to learn where to look. */
-const roundShares = [0.1, 0.25, 0.65] as const
-/** Variance of the first round's proposal over the curvature's: too wide costs draws, too narrow hides what lies outside. */
-const firstWidening = 1.3
-/** Effective draws that a proposal is fitted to, at least: with fewer the weights are tempered. */
-const leastFitted = 40
-/** Effective draws below which another round is made, as large as all before it together. */
+/** Effective draws of the standard deviations below which more are made. */
 const leastEffective = 1000
-const mostRounds = 5
-/** Pareto k above which another round is made too, though weights are relied on up to 0.7. */
-const goodK = 0.6
-
-function goodEnough({ effectiveSize, paretoK }: SmoothedWeights): boolean {
-  return effectiveSize >= leastEffective && (paretoK.value ?? 0) <= goodK
-}
 
 export async function samplePosterior(problem: FitProblem, executor: FitExecutor, options: PosteriorOptions): Promise<Posterior> {
-  const generator = createGenerator(options.seed, streams.rounds)
   const progress = options.progress ?? (() => undefined)
-  let pool = emptyPool
-  let weighted: SmoothedWeights | null = null
-  const sizes = roundShares.map((share) => Math.round(share * options.proposals))
-  while (sizes.length > 0 || (weighted !== null && !goodEnough(weighted) && pool.rounds.length < mostRounds)) {
-    const proposal = pool.rounds.length === 0 ? await firstProposal(problem, executor) : nextProposal(pool, generator)
-    progress(0.1 + 0.5 * pool.logWeights.length / options.proposals)
-    pool = await addRound(problem, executor, pool, proposal, sizes.shift() ?? pool.logWeights.length, generator)
-    if (sizes.length === 0) weighted = paretoSmooth(pool.logWeights)
-  }
-  if (weighted === null) throw new Error('there is at least one round')
+  const scales = await sampleScales(problem, executor, createGenerator(options.seed, streams.rounds), {
+    proposals: options.proposals, leastEffective, progress: (share) => { progress(0.1 + 0.5 * share) },
+  })
   progress(0.6)
-  const values = toSigmas(problem, pool.points)
-  const draws = await drawJointly(problem, executor, values, weighted.weights, options)
+  const draws = await drawJointly(problem, executor, scales.sigmas, options)
   progress(1)
-  const { value: k, ...undecided } = weighted.paretoK
-  return {
-    problem, draws,
-    sigmas: { count: weighted.weights.length, values, weights: weighted.weights },
-    paretoK: k ?? ('reason' in undecided && undecided.reason === 'flat-tail' ? 0 : null),
-    effective: weighted.effectiveSize,
-  }
-}
-
-/** Fitted to all points so far; the last one again where they are too poor to fit. */
-function nextProposal({ rounds, points, logWeights }: Pool, generator: Generator): Proposal {
-  const { proposal } = rounds[rounds.length - 1]
-  return fitProposal(points, temper(logWeights), proposal.dimension, generator) ?? proposal
-}
-
-/** The normal at the mode. */
-async function firstProposal(problem: FitProblem, executor: FitExecutor): Promise<Proposal> {
-  const mode = await findMode((points) => logTarget(problem, executor, points), new Float64Array(problem.scales.length))
-  const proposal = normalProposal(mode.point, mode.covariance.map((x) => firstWidening * x))
-  if (proposal === null) throw new Error('the curvature was made positive definite, so its inverse has a factor')
-  return proposal
-}
-
-/** All points so far, weighed against the mixture of the proposals they came from. */
-interface Pool {
-  readonly rounds: readonly { readonly proposal: Proposal; readonly count: number }[]
-  /** Shape (n, d), in z. */
-  readonly points: Float64Array
-  /** Shape (n): log of evidence times prior. */
-  readonly target: Float64Array
-  readonly logWeights: Float64Array
-}
-
-const emptyPool: Pool = { rounds: [], points: new Float64Array(0), target: new Float64Array(0), logWeights: new Float64Array(0) }
-
-async function addRound(problem: FitProblem, executor: FitExecutor, pool: Pool, proposal: Proposal, count: number, generator: Generator): Promise<Pool> {
-  const fresh = latinHypercube(count, proposal.dimension, generator)
-  placePoints(proposal, fresh)
-  const rounds = [...pool.rounds, { proposal, count }]
-  const points = join(pool.points, fresh)
-  const target = join(pool.target, await logTarget(problem, executor, fresh))
-  const mixture = mixtureLogDensity(rounds, points)
-  return { rounds, points, target, logWeights: target.map((x, i) => x - mixture[i]) }
-}
-
-/** Log of sum_r (n_r / n) q_r at every point. */
-function mixtureLogDensity(rounds: Pool['rounds'], points: Float64Array): Float64Array {
-  const all = rounds.reduce((total, { count }) => total + count, 0)
-  const each = rounds.map(({ proposal, count }) => proposalLogDensity(proposal, points).map((x) => x + Math.log(count / all)))
-  return each[0].map((_, i) => logSumExp(each.map((density) => density[i])))
-}
-
-function logSumExp(values: readonly number[]): number {
-  const top = Math.max(...values)
-  return top + Math.log(values.reduce((sum, x) => sum + Math.exp(x - top), 0))
-}
-
-function join(a: Float64Array, b: Float64Array): Float64Array {
-  const out = new Float64Array(a.length + b.length)
-  out.set(a)
-  out.set(b, a.length)
-  return out
-}
-
-/** Log of evidence times prior, as a density over z: shape (n, d) in, (n) out. */
-async function logTarget(problem: FitProblem, executor: FitExecutor, points: Float64Array): Promise<Float64Array> {
-  const d = problem.scales.length
-  const target = await executor.evidence(toSigmas(problem, points))
-  for (let i = 0; i < target.length; i++) {
-    for (let j = 0; j < d; j++) target[i] -= 0.5 * (points[i * d + j] ** 2 + Math.log(2 * Math.PI))
-  }
-  return target
-}
-
-function toSigmas(problem: FitProblem, points: Float64Array): Float64Array {
-  return points.map((z, i) => sigmaOf(z, problem.scales[i % problem.scales.length].prior))
+  return { problem, draws, ...scales }
 }
 
 /** Equally weighted rows, and one exact draw of all states for each. */
-async function drawJointly(problem: FitProblem, executor: FitExecutor, from: Float64Array, weights: Float64Array, options: PosteriorOptions): Promise<StateDraws> {
+async function drawJointly(problem: FitProblem, executor: FitExecutor, from: WeightedSigmas, options: PosteriorOptions): Promise<StateDraws> {
   const d = problem.scales.length
-  const chosen = resample(weights, options.draws, createGenerator(options.seed, streams.resampling))
+  const chosen = resample(from.weights, options.draws, createGenerator(options.seed, streams.resampling))
   const sigmas = new Float64Array(options.draws * d)
-  chosen.forEach((row, i) => { sigmas.set(from.subarray(row * d, (row + 1) * d), i * d) })
+  chosen.forEach((row, i) => { sigmas.set(from.values.subarray(row * d, (row + 1) * d), i * d) })
   return { count: options.draws, sigmas, states: await executor.states(sigmas, options.seed, streams.states) }
-}
-
-/** Weights for matching moments: raised to a power below 1 where a few would decide everything. */
-function temper(logWeights: Float64Array): Float64Array {
-  const least = Math.min(leastFitted, 0.25 * logWeights.length)
-  for (let power = 1; ; power *= 0.8) {
-    const weights = normalise(logWeights.map((x) => power * x))
-    if (kishEffectiveSize(weights) >= least || power < 0.01) return weights
-  }
-}
-
-function normalise(logWeights: Float64Array): Float64Array {
-  const top = logWeights.reduce((a, b) => Math.max(a, b), -Infinity)
-  const weights = logWeights.map((x) => Math.exp(x - top))
-  const sum = weights.reduce((a, b) => a + b, 0)
-  return weights.map((w) => w / sum)
 }

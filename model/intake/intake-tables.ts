@@ -131,6 +131,18 @@ export interface Accounting {
   readonly readyMade: boolean
 }
 
+/** What the tables know that was not known earlier: for forecasts that are made as of an earlier day. */
+export interface Hindsight {
+  /** Shape (venues): the sums over the mentions before the step `before` alone; null as in `variation`. */
+  readonly variation: readonly (AuthorVariation | null)[]
+  readonly before: number
+  /**
+   * Steps `from` to `to` (inclusive) of a venue lie in the first 90 days of a source, whose poster classes look at those days whole:
+   * as they stand they are known from the step `settled` on.
+   */
+  readonly settling: readonly { readonly venue: number; readonly from: number; readonly to: number; readonly settled: number }[]
+}
+
 export interface IntakeTables {
   readonly timeline: Timeline
   /** `venue` first, then the account's other factors in its order. */
@@ -138,7 +150,12 @@ export interface IntakeTables {
   readonly cells: CellColumns
   /** Shape (venues); null where no author of the venue is known or cells came ready-made. */
   readonly variation: readonly (AuthorVariation | null)[]
+  /** null where no survey asks for it, and where cells came ready-made. */
+  readonly hindsight: Hindsight | null
   readonly concentration: readonly ConcentrationRow[]
   readonly authors: AuthorCounts
   readonly accounting: Accounting
 }
+
+/** What a fit needs of them. */
+export type FitTables = Pick<IntakeTables, 'factors' | 'cells' | 'variation'> & { readonly timeline: Pick<Timeline, 'steps' | 'stepDays'> }

@@ -43,6 +43,12 @@ describe('the committed files', () => {
     }
   })
 
+  test('posts, survey and outcome have a stream of draws each: another seed of one changes nothing of the others', () => {
+    const changed = (other: ReturnType<typeof makeDemo>) => other.files.filter(({ path, bytes }, i) => !contents(path, bytes).equals(contents(path, demo.files[i].bytes))).map(({ path }) => path)
+    expect(changed(makeDemo(undefined, undefined, 99, undefined))).toEqual(['survey/tracker.csv'])
+    expect(changed(makeDemo(undefined, undefined, undefined, 99))).toEqual(['outcome/passengers.csv'])
+  })
+
   test('stay small', () => {
     const sizes = readdirSync(folder, { recursive: true, encoding: 'utf8' }).map((path) => statSync(join(folder, path))).filter((stat) => stat.isFile()).map((stat) => stat.size)
     expect(sizes.reduce((sum, size) => sum + size, 0)).toBeLessThan(4_000_000)

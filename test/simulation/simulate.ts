@@ -1,9 +1,11 @@
 import { againstTheMix, drawn, mixOnly, runScenario, type Run } from './study.ts'
+import { runSurveyScenario, trueLead, type SurveyRun, type SurveyScenario } from './survey-study.ts'
 
 /*
  * Simulated truth: does adjusted opinion follow it where the raw average does not, do intervals cover, is silence kept where only the mix moves?
+ * And of a survey: is a true lead found, is none found where there is none, do forecasts cover?
  *
- *   npm run simulate [-- RUNS [SEED [against|drawn|still]]]
+ *   npm run simulate [-- RUNS [SEED [against|drawn|still|leading|unrelated]]]
  */
 const runs = Number(process.argv[2] ?? 200)
 const seed = Number(process.argv[3] ?? 11)
@@ -34,3 +36,15 @@ if (only === undefined || only === 'still') {
   process.stdout.write(`only the mix moves, ${runs} runs\n`)
   process.stdout.write(`  a change is announced in ${share(still, (run) => run.announced)} %; the interval covers in ${share(still, (run) => run.covered)} %\n`)
 }
+
+async function surveyStudy(scenario: SurveyScenario): Promise<void> {
+  const found: SurveyRun[] = []
+  for (let run = 0; run < runs; run++) found.push(await runSurveyScenario(scenario, seed, run))
+  const per = (holds: (run: SurveyRun) => boolean) => (100 * found.filter(holds).length / found.length).toFixed(1)
+  const verdicts = [...new Set(found.map(({ verdict }) => verdict))].sort().map((verdict) => `${verdict} ${per((run) => run.verdict === verdict)} %`)
+  process.stdout.write(`a survey ${scenario === 'leading' ? 'that follows opinion four weeks later' : 'unrelated to opinion'}, ${runs} runs\n  ${verdicts.join(', ')}\n`)
+  process.stdout.write(`  best lag within a week of the true one in ${per(({ bestLag }) => bestLag !== null && Math.abs(bestLag - trueLead) <= 1)} %\n`)
+  process.stdout.write(`  90 % forecast intervals cover ${(100 * found.reduce((sum, { coverage }) => sum + coverage, 0) / found.length).toFixed(1)} % of waves\n`)
+}
+
+for (const scenario of ['leading', 'unrelated'] as const) if (only === undefined || only === scenario) await surveyStudy(scenario)

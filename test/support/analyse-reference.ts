@@ -1,5 +1,7 @@
 import { analyse, type Analysis, type AnalysisSpec } from '../../model/analyse.ts'
 import { localExecutor } from '../../model/fit/executor.ts'
+import { meanPath } from '../../model/fit/mean-path.ts'
+import type { SmallInputs } from '../../model/inputs/small-inputs.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 
 const plainSpec: AnalysisSpec = {
@@ -7,7 +9,9 @@ const plainSpec: AnalysisSpec = {
   facts: { givenNotUsed: [], smallestGroup: 10, posterBounds: { occasional: 1, regular: 5 }, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
 }
 
+export const noInputs: SmallInputs = { survey: null, events: null, outcome: null }
+
 /** The whole analysis in this thread. */
-export function analyseHere(tables: IntakeTables, spec: Partial<AnalysisSpec> = {}): Promise<Analysis> {
-  return analyse(tables, { ...plainSpec, ...spec }, localExecutor)
+export function analyseHere(tables: IntakeTables, spec: Partial<AnalysisSpec> = {}, inputs: SmallInputs = noInputs): Promise<Analysis> {
+  return analyse(tables, inputs, { ...plainSpec, ...spec }, { executorFor: localExecutor, refit: meanPath })
 }

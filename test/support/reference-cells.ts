@@ -42,6 +42,7 @@ function tablesFromCells(csv: string, base: { readonly from: string; readonly to
       clustering: new Float64Array(rows.length).fill(1), deff: number('deff'),
     },
     variation: Array.from({ length: venues }, () => null),
+    hindsight: null,
     concentration: [],
     authors: {
       exact: false, byStep: new Float64Array(count), byPeriod: new Float64Array(periods.length),

@@ -1,5 +1,7 @@
 import type { Findings } from '../../model/findings/schema.ts'
 import { around, average, baseSteps, opinionAt, periodNames, periodOf, ripple, stepDate, steps, stepsOf } from './sample-series.ts'
+import { sampleEvents, sampleOutcome, sampleSurvey } from './sample-survey.ts'
+import type { Verdict } from './sample-survey.ts'
 import { sampleCaveats, sampleDiagnostics, sampleMethod } from './sample-surroundings.ts'
 
 interface SampleVenue { readonly venue: string, readonly label: string, readonly offset: number, readonly drift: number, readonly from: number, readonly to: number }
@@ -159,7 +161,7 @@ export function sampleFindings(): Findings {
     accounting: {
       received: modelled + 312 + 1204 + 2088, rejected: 312, duplicates: 1204, out_of_scope: 2088, modelled,
       reasons: { 'time-unreadable': 141, 'score-unreadable': 171, 'same-id': 380, repost: 824, 'other-brand': 2088, 'time-doubled': 9 },
-      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['events', 'competitors'], authors: 'known',
+      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['competitors'], authors: 'known',
       in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1), last_day: '2026-10-31',
     },
     opinion: opinion(), decomposition: decomposition(), venues: venues(),
@@ -171,7 +173,7 @@ export function sampleFindings(): Findings {
       venue_drift: Object.fromEntries(venuesGiven.map((venue, at) => [venue.venue, around(at === 0 ? 1.1 : 0.4, 0.3)])),
       venue: around(9.2, 4.1), topic: around(10.4, 4.4), poster: around(6, 3.9), factors: {},
     },
-    survey: null, speaking: speaking(), benchmark: null,
+    survey: sampleSurvey(), events: sampleEvents(), outcome: sampleOutcome(), speaking: speaking(), benchmark: null,
     caveats: sampleCaveats(), advice: [], diagnostics: sampleDiagnostics(venuesGiven.map((venue) => venue.venue)),
     method: sampleMethod([
       ...venuesGiven.map((venue) => ({ factor: 'venue', level: venue.venue, label: venue.label, share: meanOf(baseSteps, venue) })),
@@ -184,4 +186,16 @@ export function sampleFindings(): Findings {
     ],
     program: { version: '0.1.0', seed: 20261101 },
   }
+}
+
+/** The sample with another verdict on its survey. */
+export function withVerdict(verdict: Verdict): Findings {
+  return { ...sampleFindings(), survey: sampleSurvey(verdict) }
+}
+
+/** The sample of an account that gives posts alone. */
+export function postsAlone(): Findings {
+  const findings = sampleFindings()
+  const absent = { code: 'survey-absent', severity: 'caution' as const, figures: {}, evidence: '', meaning: '', remedy: '' }
+  return { ...findings, survey: null, events: null, outcome: null, caveats: [...findings.caveats, absent] }
 }

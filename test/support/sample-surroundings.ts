@@ -12,9 +12,9 @@ export function sampleCaveats(): Caveat[] {
     raise('authors-partly-unknown', 'caution', { venue: 'Video comments', share: 0.29 }),
     raise('empty-steps', 'caution', { steps: 1 }),
     raise('values-unmapped', 'note', { factor: 'topic', values: 'harbour works', mentions: 118 }),
-    raise('given-not-used', 'note', { keys: 'events, competitors' }),
+    raise('given-not-used', 'note', { keys: 'competitors' }),
     raise('no-sampling-error', 'note'),
-    raise('survey-absent', 'note'),
+    raise('survey-bases-small', 'note', { hidden: 1, flagged: 26 }),
     raise('benchmark-absent', 'note'),
   ]
 }

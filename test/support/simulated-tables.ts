@@ -9,6 +9,7 @@ export function tablesOfCells(sizes: Sizes, timeline: Timeline, cells: readonly 
   return {
     timeline, factors, cells: columnsOf(cells, factors.length),
     variation: factors[0].levels.map((_, v) => variationOf(cells.filter((cell) => cell.levels[0] === v))),
+    hindsight: null,
     concentration: concentrationOf(cells, timeline, sizes.venues),
     authors: authorsOf(cells, timeline, factors),
     accounting: {

@@ -3,7 +3,6 @@ import { readSelection, selectionKeys } from '../read-selection.ts'
 import { selected } from '../selection.ts'
 import { createReporter } from '../faults.ts'
 import type { Directive } from './directive.ts'
-import { joinLists } from './join-lists.ts'
 
 /** `:::each{of="venues" as="venue" where="movement is down" by="mentions" most=3}`: its block once per item. */
 export const each: Directive = {
@@ -20,7 +19,7 @@ export const each: Directive = {
   fill: ({ node, attributes }, scope, _context, children) => {
     const selection = readSelection(attributes, node, createReporter('', []))
     const items = selection ? selected(selection, scope) : []
-    return joinLists(items.flatMap((item) => children({ ...scope, names: { ...scope.names, [attributes['as'] ?? '']: item } })))
+    return items.flatMap((item) => children({ ...scope, names: { ...scope.names, [attributes['as'] ?? '']: item } }))
   },
 }
 

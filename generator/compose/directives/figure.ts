@@ -1,5 +1,5 @@
 import { formNames, isFormName, write } from '../../words/forms.ts'
-import { checkForm } from '../check-paths.ts'
+import { checkForm, checkUnit } from '../check-paths.ts'
 import { nearest } from '../faults.ts'
 import { lookUp, parsePath } from '../path.ts'
 import { readPath } from '../read-selection.ts'
@@ -13,7 +13,10 @@ export const figure: Directive = {
     const form = attributes['as'] ?? ''
     const path = readPath(attributes['of'] ?? '', node, reporter)
     if (!isFormName(form)) reporter.report(node, 'form-unknown', `form "${form}"`, 'a known form', nearest(form, formNames))
-    else if (path) checkForm(path, form, scope, node, reporter)
+    else {
+      if (path) checkForm(path, form, scope, node, reporter)
+      checkUnit([form], undefined, scope, node, reporter)
+    }
     return scope
   },
   fill: ({ attributes }, scope, { words }) => {

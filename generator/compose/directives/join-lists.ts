@@ -1,6 +1,6 @@
 import type { RootContent } from 'mdast'
 
-/** Lists that follow each other become one: an item repeated by `each` yields one list, not many of one item. */
+/** Lists that follow each other become one: items that `each` repeats, or that `when` lets through, make one list, not many of one item. */
 export function joinLists(nodes: readonly RootContent[]): readonly RootContent[] {
   return nodes.reduce<readonly RootContent[]>((joined, node) => {
     const last = joined.at(-1)

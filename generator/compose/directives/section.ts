@@ -2,7 +2,7 @@ import { nearest } from '../faults.ts'
 import type { Directive } from './directive.ts'
 import { wrapped } from './elements.ts'
 
-/** `::section{name="opinion"}`: a file of the folder `sections`. Only the review itself lists sections. */
+/** `::section{name="opinion"}`: a file of the folder `sections`. Only the review itself lists sections; one in which nothing applies this time is left out. */
 export const section: Directive = {
   type: 'leafDirective', name: 'section', needs: ['name'], may: [],
   check: ({ node, attributes }, scope, context, reporter) => {
@@ -16,6 +16,7 @@ export const section: Directive = {
   },
   fill: ({ attributes }, _scope, context) => {
     const name = attributes['name'] ?? ''
-    return [wrapped('section', { id: name, className: ['section', `section-${name}`] }, context.section(name))]
+    const content = context.section(name)
+    return content.length === 0 ? [] : [wrapped('section', { id: name, className: ['section', `section-${name}`] }, content)]
   },
 }

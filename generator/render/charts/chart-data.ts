@@ -1,7 +1,5 @@
 import type { Column, Row, Table } from '../../tables/table.ts'
-import { valueWord } from '../../words/cells.ts'
-import { levelLabel } from '../../words/labels.ts'
-import { change, count, points, share } from '../../words/numbers.ts'
+import { rowLabel, valueWord, writeCell } from '../../words/cells.ts'
 import type { Words } from '../../words/words.ts'
 import type { DrawingSize, Theme } from '../theme.ts'
 import { wrapLabel } from './text-metrics.ts'
@@ -24,28 +22,21 @@ export interface DataOptions {
  * - `rank`: the row's place in the table, from 0.
  */
 export function chartData(table: Table, options: DataOptions): readonly Datum[] {
-  return table.rows.map((row, rank) => ({ rank, ...Object.fromEntries(table.columns.flatMap((column) => cells(table, row, column, options))) }))
+  return table.rows.map((row, rank) => ({ rank, ...Object.fromEntries(table.columns.flatMap((column) => cells(row, column, options))) }))
 }
 
-function cells(table: Table, row: Row, { key, kind }: Column, options: DataOptions): [string, Datum[string]][] {
+/** Charts name venues by their own label. */
+const noLabels = new Map<string, string>()
+
+function cells(row: Row, column: Column, options: DataOptions): [string, Datum[string]][] {
+  const { key, kind } = column
   const { words, uses } = options
   const cell = row[key] ?? null
   if (kind === 'date') return [[key, typeof cell === 'string' ? Date.parse(`${cell}T00:00:00Z`) : null]]
-  if (key === 'label') return [[key, wrapped(levelLabel({ label: String(cell), ...levelName(row) }, words), options)]]
+  if (key === 'label') return [[key, wrapped(rowLabel(row, words) ?? String(cell), options)]]
   if (typeof cell === 'string') return uses(`${key}_said`) ? [[key, cell], [`${key}_said`, wrapped(valueWord(words, key, cell), options)]] : [[key, cell]]
-  if (typeof cell === 'number' && uses(`${key}_shown`)) return [[key, cell], [`${key}_shown`, shown(cell, kind, words)]]
+  if (typeof cell === 'number' && uses(`${key}_shown`)) return [[key, cell], [`${key}_shown`, writeCell(column, row, words, noLabels)]]
   return [[key, cell]]
-}
-
-function levelName(row: Row): { readonly level?: string } {
-  const name = row.level ?? row.venue
-  return typeof name === 'string' ? { level: name } : {}
-}
-
-function shown(value: number, kind: Column['kind'], words: Words): string {
-  if (kind === 'change') return change(value, words.locale)
-  if (kind === 'count') return count(value, words.locale)
-  return kind === 'share' || kind === 'probability' ? share(value, words) : points(value, words.locale)
 }
 
 function wrapped(label: string, { theme, size }: DataOptions): string {

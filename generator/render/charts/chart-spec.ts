@@ -11,6 +11,8 @@ export type JsonObject = Readonly<Record<string, Json>>
  * `usermeta` it may say how it is laid out:
  * - `narrow`: what differs on a phone (RFC 7396, JSON merge patch);
  * - `panels`: small multiples, one per value of `by` in `table`, at most `columns` beside each other;
+ * - `stacked`: panels below each other on one axis of time, of which one without rows is left out; `axis` and `labels` say what room the axis
+ *   on the left and the longest label on the right need, `alone` how high a panel is that is left alone;
  * - `ends`: labels at the right end of a stack of shares of `factor`.
  */
 export interface ChartSpec {
@@ -19,11 +21,13 @@ export interface ChartSpec {
 }
 
 export interface Panels { readonly table: string, readonly by: string, readonly columns: number, readonly gap: number, readonly axis: number }
+export interface Stacked { readonly axis: number, readonly gap: number, readonly labels: readonly string[], readonly alone?: number | undefined }
 export interface Ends { readonly factor: string, readonly height: number }
 
 const layout = z.strictObject({
   narrow: z.record(z.string(), z.json()).optional(),
   panels: z.strictObject({ table: z.string(), by: z.string(), columns: z.number().int(), gap: z.number(), axis: z.number() }).optional(),
+  stacked: z.strictObject({ axis: z.number(), gap: z.number(), labels: z.array(z.string()), alone: z.number().optional() }).optional(),
   ends: z.strictObject({ factor: z.string(), height: z.number() }).optional(),
 })
 export type Layout = z.infer<typeof layout>
@@ -72,6 +76,7 @@ export function asVegaLite(spec: ChartSpec): TopLevelSpec {
   return spec as unknown as TopLevelSpec
 }
 
-function isObject(value: Json | undefined): value is JsonObject {
+/** Whether a part of a specification has parts of its own by name. */
+export function isObject(value: Json | undefined): value is JsonObject {
   return typeof value === 'object' && value !== null && !Array.isArray(value)
 }

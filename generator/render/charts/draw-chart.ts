@@ -9,6 +9,7 @@ import { vegaLocale } from './chart-locale.ts'
 import { asVegaLite, atSize, type ChartSpec, type Json, layoutOf, type Panels, tablesIn, worded } from './chart-spec.ts'
 import { cleanSvg } from './clean-svg.ts'
 import { stackedShares } from './stack-ends.ts'
+import { withStacked } from './stacked-panels.ts'
 import { measureBy } from './text-metrics.ts'
 
 /**
@@ -25,7 +26,7 @@ import { measureBy } from './text-metrics.ts'
 export async function drawChart(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize = 'wide'): Promise<string> {
   const sized = worded(atSize(spec, size), words) as unknown as ChartSpec
   const read = readTables(sized, tables, words, theme, size)
-  const { spec: roomy, datasets } = withStack(withRoom(withPanels(sized, read, theme.chart.widths[size]), read), read)
+  const { spec: roomy, datasets } = withStack(withRoom(laidOut(sized, read, theme, size), read), read)
   const warnings: string[] = []
   const config = { ...chartConfig(theme.chart), locale: vegaLocale(words.locale) }
   measureBy(theme.advances)
@@ -54,6 +55,11 @@ function readTables(spec: ChartSpec, tables: readonly Table[], words: Words, the
     if (table === undefined) throw new Error(`Unexpected table "${name}" in chart ${spec.name}, expected one of ${tables.map((known) => known.name).join(', ')}`)
     return [name, chartData(table, { words, theme, size, uses })]
   }))
+}
+
+function laidOut(spec: ChartSpec, datasets: Datasets, theme: Theme, size: DrawingSize): ChartSpec {
+  const width = theme.chart.widths[size]
+  return layoutOf(spec).stacked === undefined ? withPanels(spec, datasets, width) : withStacked(spec, datasets, width, theme)
 }
 
 /** A stack of shares gets its data, and the height that its labels need. */

@@ -52,7 +52,7 @@ venues:
 topics: { punctuality: }
 posters: { occasional: 2, regular: 9 }
 target_mix: { venue: { boards: 0.25, panel: 0.75 } }
-survey: { files: survey/*.csv, headline: favourability, lags: [-8, 16] }
+survey: { files: survey/*.csv, headline: favourability, lags: [-8, 16], labels: { favourability: Warmth }, next_fieldwork: { from: 2026-11-16, to: 2026-11-27 } }
 benchmark: { files: survey/w.csv }
 coding_audit: { files: survey/w.csv }
 importance: { files: survey/w.csv }
@@ -70,9 +70,16 @@ smallest_group: 12
       { name: 'panel', label: 'panel', values: [], anchor: true, costPerAuthor: null },
     ])
     expect(account.topics[0]).toMatchObject({ name: 'punctuality', label: 'punctuality' })
-    expect(account.survey).toEqual({ pattern: 'survey/*.csv', files: ['survey/w.csv'], headline: 'favourability', lags: [-8, 16] })
+    expect(account.survey).toEqual({
+      pattern: 'survey/*.csv', files: ['survey/w.csv'], headline: 'favourability', lags: [-8, 16],
+      labels: { favourability: 'Warmth' }, nextFieldwork: { from: '2026-11-16', to: '2026-11-27' },
+    })
     expect(account.targetMix).toEqual([{ factor: 'venue', shares: [{ level: 'boards', share: 0.25 }, { level: 'panel', share: 0.75 }] }])
-    expect(account.givenNotUsed).toEqual(['competitors', 'survey', 'benchmark', 'coding_audit', 'importance', 'events', 'outcome', 'theme', 'notes'])
+    expect(account.givenNotUsed).toEqual(['competitors', 'benchmark', 'coding_audit', 'importance', 'theme', 'notes'])
+  })
+
+  test.each([['day', [-56, 112]], ['week', [-8, 16]], ['month', [-2, 4]]])('looks at lags from two months behind to four ahead on a grid by the %s', async (grid, lags) => {
+    expect((await read(`${sound}grid: ${grid}\nsurvey: { files: survey/w.csv }\n`)).survey).toMatchObject({ headline: null, lags, labels: {}, nextFieldwork: null })
   })
 
   test('finds files by pattern, in order', async () => {
@@ -99,6 +106,12 @@ const wrongs: readonly (readonly [string, string, string, string, RegExp])[] = [
   ['a date that does not exist', `${sound}base: { from: 2024-02-30, to: 2024-12-31 }\n`, 'account-value', 'account.yaml:7:9 base.from', /date that exists/],
   ['posters that do not rise', `${sound}posters: { occasional: 5, regular: 5 }\n`, 'account-value', 'account.yaml:7:1 posters', /`regular` above/],
   ['lags the wrong way round', `${sound}survey: { files: survey/w.csv, lags: [16, -8] }\n`, 'account-value', 'account.yaml:7:32 survey.lags', /smaller first/],
+  ['more lags than may be looked at', `${sound}survey: { files: survey/w.csv, lags: [-100, 100] }\n`, 'account-value', 'account.yaml:7:32 survey.lags', /at most 200 lags/],
+  ['an unknown key of the survey', `${sound}survey: { files: survey/w.csv, headlines: x }\n`, 'account-key-unknown', 'account.yaml:7:32 survey.headlines', /Did you mean `headline`/],
+  ['a next fieldwork that ends before it begins', `${sound}survey: { files: survey/w.csv, next_fieldwork: { from: 2026-02-02, to: 2026-02-01 } }\n`, 'account-value', 'account.yaml:7:32 survey.next_fieldwork', /`to` on or after `from`/],
+  ['an unknown key of the next fieldwork', `${sound}survey: { files: survey/w.csv, next_fieldwork: { from: 2026-02-02, till: 2026-02-09 } }\n`, 'account-key-unknown', 'account.yaml:7:68 survey.next_fieldwork.till', /one of from, to/],
+  ['a label of nothing', `${sound}survey: { files: survey/w.csv, labels: { favourability: } }\n`, 'account-value', 'account.yaml:7:42 survey.labels.favourability', /expected text/],
+  ['a survey that is no CSV', `${sound}survey: { files: theme.yaml }\n`, 'account-file-kind', 'account.yaml:7:11 survey.files', /\.csv, \.csv\.gz/],
   ['a drift that is not none', `${sound}venues:\n  boards: { drift: slow }\n`, 'account-value', 'account.yaml:8:13 venues.boards.drift', /none/],
   ['a smallest group too small', `${sound}smallest_group: 3\n`, 'account-value', 'account.yaml:7:1 smallest_group', /at least 10/],
   ['cells and files in one source', sound.replace('- files: posts/*.csv', '- files: posts/*.csv\n    cells: posts/*.csv'), 'account-combination', 'account.yaml:4:5 mentions.0.files', /beside `cells`/],

@@ -1,7 +1,8 @@
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
+import { dayWindow } from '../../../generator/calendar/day-window.ts'
 import { dayNumber, isDate, isoDate, mondayOf } from '../../../generator/calendar/days.ts'
-import { midpointDay, nextStep, stepsBetween, stepStart } from '../../../generator/calendar/grid.ts'
+import { midpointDay, nextStep, stepIndex, stepsBetween, stepStart } from '../../../generator/calendar/grid.ts'
 import { lastWholePeriod, periodAfter, periodBefore, periodHolding, periodNamed } from '../../../generator/calendar/periods.ts'
 import { timeline } from '../../../generator/calendar/timeline.ts'
 
@@ -40,6 +41,46 @@ describe('steps', () => {
         expect(stepStart(width, start)).toBe(start)
         if (index > 0) expect(nextStep(width, steps[index - 1]!)).toBe(start)
       }
+    }))
+  })
+})
+
+describe('windows of days', () => {
+  const length = fc.integer({ min: 1, max: 400 })
+  const windowOf = (width: 'day' | 'week' | 'month', first: number, start: number, days: number) => dayWindow(width, stepStart(width, first), isoDate(start), isoDate(start + days - 1))
+
+  test('by hand: a fortnight about the end of a month', () => {
+    const first = { day: '2026-08-31', week: '2026-08-31', month: '2026-08-01' } as const
+    const found = (['day', 'week', 'month'] as const).map((width) => dayWindow(width, dayNumber(first[width]), '2026-09-24', '2026-10-06'))
+    expect(found.map(({ startStep, days }) => [startStep, [...days]])).toEqual([[24, Array(13).fill(1)], [3, [4, 7, 2]], [1, [7, 6]]])
+    expect(found[0]).toMatchObject({ start: '2026-09-24', end: '2026-10-06' })
+  })
+
+  test('days sum to the length of the window, and each step has at least one and no more than it holds', () => {
+    fc.assert(fc.property(grid, day, day, length, (width, first, start, days) => {
+      const window = windowOf(width, first, start, days)
+      expect(window.days.reduce((sum, each) => sum + each, 0)).toBe(days)
+      let step = stepStart(width, start)
+      for (const each of window.days) {
+        expect(each).toBeGreaterThan(0)
+        expect(each).toBeLessThanOrEqual(nextStep(width, step) - step)
+        step = nextStep(width, step)
+      }
+    }))
+  })
+
+  test('the first step holds the first day: counting steps from the grid leads there, and back', () => {
+    fc.assert(fc.property(grid, day, fc.integer({ min: 0, max: 900 }), (width, first, ahead) => {
+      const steps = stepsBetween(width, first, first + ahead)
+      expect(stepIndex(width, steps[0]!, first + ahead)).toBe(steps.length - 1)
+      expect(stepIndex(width, steps.at(-1)!, first)).toBe(0 - (steps.length - 1))
+    }))
+  })
+
+  test('a grid that begins a step earlier moves the window a step, and its days stay', () => {
+    fc.assert(fc.property(grid, day, day, length, (width, first, start, days) => {
+      const [here, before] = [windowOf(width, first, start, days), windowOf(width, stepStart(width, first) - 1, start, days)]
+      expect([before.startStep - here.startStep, before.days]).toEqual([1, here.days])
     }))
   })
 })

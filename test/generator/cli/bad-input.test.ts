@@ -84,6 +84,22 @@ const wrongInputs: readonly Wrong[] = [
   cells('a row of a cell table that cannot be cut', '2025-03-03,a\n', 'cell-row', 'c.csv:3', /as many fields as the header/),
 ]
 
+const surveyKeys = `${account}survey: { files: s.csv }\n`
+const surveyRows = 'wave,field_start,field_end,metric,base,value,kind,sd\nw1,2025-01-06,2025-01-17,favourability,400,0.43,share,\n'
+const inSurvey = (what: string, rows: string, code: string, place: string, says: RegExp, yaml = surveyKeys): Wrong =>
+  ({ what, files: { 'account.yaml': yaml, 's.csv': rows }, code, place, says })
+
+const wrongSurveys: readonly Wrong[] = [
+  inSurvey('a survey without a column', surveyRows.replace('metric', 'metrik'), 'input-columns', 's.csv:1', /columns `metric`.*nearest: `metrik`/s),
+  inSurvey('a share in percent', `${surveyRows}w2,2025-02-03,2025-02-14,favourability,400,43,share,\n`, 'input-value', 's.csv:3 value', /`43`.*written 0\.43, not 43/s),
+  inSurvey('a fieldwork that ends before it begins', surveyRows.replace('2025-01-17', '2025-01-05'), 'input-value', 's.csv:2 field_end', /on or after field_start/),
+  inSurvey('a figure twice', surveyRows + surveyRows.split('\n')[1]!, 'survey-twice', 's.csv:3', /s\.csv:2/),
+  inSurvey('a headline that is no metric', surveyRows, 'survey-headline-unknown', 'account.yaml:7:25 survey.headline', /Did you mean `favourability`/, surveyKeys.replace('s.csv }', 's.csv, headline: favour }')),
+  inSurvey('a survey of a kind that is not read', surveyRows, 'account-file-kind', 'account.yaml:7:11 survey.files', /\.csv/, surveyKeys.replace(' s.csv', ' account.yaml')),
+  { what: 'an outcome twice a day', files: { 'account.yaml': `${account}outcome: { files: o.csv }\n`, 'o.csv': 'date,value\n2025-01-01,5\n2025-01-01,6\n' }, code: 'outcome-twice', place: 'o.csv:3 date', says: /o\.csv:2/ },
+  { what: 'an event on no day', files: { 'account.yaml': `${account}events: { files: e.csv }\n`, 'e.csv': 'date,label\n2025-02-30,storm\n' }, code: 'input-value', place: 'e.csv:2 date', says: /a date that exists/ },
+]
+
 /** One hash of every name and byte below a folder. */
 async function hashOfFolder(folder: string): Promise<string> {
   const entries = await readdir(folder, { recursive: true, withFileTypes: true })
@@ -124,6 +140,15 @@ describe('bad input: exit code 1, the fault with its place, earlier output untou
 
   test.each(cases(wrongInputs))('intake: %s', async (_, wrong) => { await expectFault(wrong, 'build') })
 
+  test.each(cases(wrongSurveys))('survey, events, outcome: %s', async (_, wrong) => { await expectFault(wrong, 'check') })
+
+  test('faults of the survey and of the mentions are told together', async () => {
+    await withAccount({ ...sound, 'account.yaml': surveyKeys, 's.csv': surveyRows.replace('0.43', '43'), 'posts.csv': `publshed,source,tone,about\n${row}` }, async (folder) => {
+      const { code, out } = await commands.check(folder)
+      expect([code, (JSON.parse(out) as { faults: Fault[] }).faults.map((fault) => fault.code)]).toEqual([1, ['input-value', 'columns-absent']])
+    })
+  })
+
   test('a folder without account.yaml', async () => {
     await withAccount(draft, async (folder) => {
       const before = await hashOfFolder(folder)
@@ -150,6 +175,9 @@ describe('these checks can fail', () => {
     await withAccount(sound, async (folder) => {
       const { code, out } = await commands.check(folder)
       expect([code, JSON.parse(out)]).toMatchObject([0, { ok: true, faults: [], accounting: { received: 2 } }])
+    })
+    await withAccount({ ...sound, 'account.yaml': surveyKeys, 's.csv': surveyRows }, async (folder) => {
+      expect(JSON.parse((await commands.check(folder)).out)).toMatchObject({ ok: true, faults: [], survey: { waves: 1, metrics: 1 } })
     })
     await expect(expectFault({ what: '', files: {}, code: 'no-mentions', place: 'mentions', says: /./ }, 'check')).rejects.toThrow()
   })

@@ -23,6 +23,15 @@ describe('check', () => {
     expect(JSON.parse(out)).toMatchObject({ ok: true, faults: [], accounting: { received: 424, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 424 } })
   })
 
+  test('tells what the survey, the events and the outcome hold', async () => {
+    const demo = join(import.meta.dirname, '../../../sample-data/skerrow-ferries')
+    const { code, out } = await run('check', demo)
+    expect(code).toBe(0)
+    expect(out).toContain('survey: 30 waves, 4 metrics, 2024-05-16 to 2026-10-29\nevents: 9, 2024-06-10 to 2026-10-13\noutcome: 30 values, 2024-05-01 to 2026-10-01\n')
+    expect(JSON.parse((await run('check', demo, '--json')).out)).toMatchObject({ ok: true, survey: { waves: 30, metrics: 4 } })
+    expect(JSON.parse((await run('check', account, '--json')).out)).toMatchObject({ ok: true, survey: null })
+  })
+
   test('a folder without an account file: exit code 1, the fault as data and in words', async () => {
     const { code, out, err } = await run('check', scratch, '--json')
     expect(code).toBe(1)

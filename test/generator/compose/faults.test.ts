@@ -29,6 +29,7 @@ test.each([
   ['path-not-a-caveat', ':caveat{of="opinion.change" part="title"}', 'review.md:1:1', 'caveats'],
   ['form-unknown', ':figure{of="opinion.change.mean" as="chnge"}', 'review.md:1:1', '"change"'],
   ['form-unfit', ':figure{of="opinion.change" as="change"}', 'review.md:1:1', 'form'],
+  ['unit-missing', ':figure{of="survey.next_wave.last" as="measure"}', 'review.md:1:1', 'unit'],
   ['message-unknown', 'b\n\n## :say{message="headin-words"}', 'review.md:3:4', '"heading-words"'],
   ['path-unknown', ':say{message="named"}', 'review.md:1:1', ''],
   ['chart-unknown', '::chart{name="bar"}', 'review.md:1:1', '"bars"'],
@@ -64,7 +65,7 @@ test('it can fail: a right template has no fault', () => {
 })
 
 test('all faults are told at once, also those inside a block that does not appear', () => {
-  const faults = faultsOf(':::when{that="survey exists"}\n:figure{of="bran" as="text"}\n\n::chart{name="pie"}\n:::\n\n:say{message="absent"}')
+  const faults = faultsOf(':::when{that="benchmark exists"}\n:figure{of="bran" as="text"}\n\n::chart{name="pie"}\n:::\n\n:say{message="absent"}')
   expect(faults.map(({ code, place }) => [code, place])).toEqual([['path-unknown', 'review.md:2:1'], ['chart-unknown', 'review.md:4:1'], ['message-unknown', 'review.md:7:1']])
 })
 

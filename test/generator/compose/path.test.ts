@@ -26,7 +26,17 @@ test('no prototype is reached', () => {
   for (const text of ['constructor', 'list.length.constructor', '__proto__.x', 'which.length']) expect(at(text), text).toBeUndefined()
 })
 
-test.each(['', '.', 'a.', 'a[b]', 'a[b=]', 'a b', 'a[b=@]'])('no path: "%s"', (text) => {
+test('the two ends of a list', () => {
+  const scope = { findings: { waves: [{ name: 'first', parts: [1, 2] }, { name: 'second', parts: [] }], none: [], one: 1 }, names: {} }
+  const found = (text: string) => lookUp(parsePath(text)!, scope)
+  expect(['waves[first].name', 'waves[last].name', 'waves[first].parts[last]'].map(found)).toEqual(['first', 'second', 2])
+  for (const text of ['none[last]', 'none[first].name', 'waves[last].parts[last]', 'one[last]', 'absent[first]']) expect(found(text), text).toBeUndefined()
+  expect(typeAt(parsePath('survey.waves[last].change.movement')!, findingsScope)).toMatchObject({ known: true })
+  expect(typeAt(parsePath('survey.waves[last].chnge')!, findingsScope)).toEqual({ known: false, unknown: 'chnge', nearest: 'change' })
+  expect(typeAt(parsePath('brand[last]')!, findingsScope)).toMatchObject({ known: false, unknown: 'brand[last]' })
+})
+
+test.each(['', '.', 'a.', 'a[b]', 'a[middle]', 'a[b=]', 'a b', 'a[b=@]'])('no path: "%s"', (text) => {
   expect(parsePath(text)).toBeUndefined()
 })
 

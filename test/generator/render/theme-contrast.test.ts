@@ -31,7 +31,7 @@ test('every label has a contrast of 4.5 on paper', () => {
 })
 
 describe('marks that carry meaning have a contrast of 3 on paper', () => {
-  test.each(['adjusted', 'raw', 'bar', 'base-interval', 'bar-opinion', 'bar-total', 'bar-lost', 'whisker', 'interval', 'dot', 'base-dot', 'zero'])('%s', (style) => {
+  test.each(['adjusted', 'raw', 'bar', 'base-interval', 'bar-opinion', 'bar-total', 'bar-lost', 'whisker', 'interval', 'dot', 'base-dot', 'zero', 'survey-interval', 'survey-dot', 'survey-line', 'raw-line', 'best-lag'])('%s', (style) => {
     expect(contrast(colourOf(style), theme.chart.paper)).toBeGreaterThanOrEqual(3)
   })
   test('shares, from dark to light', () => {

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { cp, mkdir, mkdtemp, readFile, readdir, rm, writeFile } from 'node:fs/promises'
+import { appendFile, cp, mkdir, mkdtemp, readFile, readdir, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import axe from 'axe-core'
@@ -14,12 +14,20 @@ import { InputFault } from '../../../generator/faults/fault.ts'
 import { openBrowser } from '../../../generator/print/open-browser.ts'
 import { thisProgram } from '../../../generator/program/program.ts'
 
-const account = join(import.meta.dirname, '../intake/fixtures/open-cells')
+const openCells = join(import.meta.dirname, '../intake/fixtures/open-cells')
 let scratch: string
+let account: string
 let browser: Browser
+
+/** A fortnightly survey beside the cells: twelve waves, of which the last four can be forecast. */
+const waves = Array.from({ length: 12 }, (_, w) => {
+  const day = (add: number) => new Date(Date.UTC(2025, 2, 10 + 14 * w + add)).toISOString().slice(0, 10)
+  return `w${w + 1},${day(0)},${day(6)},favourability,,400,360,${(0.5 + 0.03 * Math.sin(w)).toFixed(3)},share,`
+})
 
 beforeAll(async () => {
   scratch = await mkdtemp(join(tmpdir(), 'build-'))
+  account = await copyAccount('account')
   browser = await openBrowser()
 })
 afterAll(async () => {
@@ -27,8 +35,18 @@ afterAll(async () => {
   await rm(scratch, { recursive: true, force: true })
 })
 
-async function build(out: string, options: { readonly threads?: number; readonly seed?: number } = {}) {
-  return buildReview(thisProgram(), await readAccount(account), {
+/** A copy of the account with its survey, and a cache of its own. */
+async function copyAccount(name: string): Promise<string> {
+  const folder = join(scratch, 'accounts', name)
+  await cp(openCells, folder, { recursive: true })
+  await mkdir(join(folder, 'survey'))
+  await writeFile(join(folder, 'survey/waves.csv'), `wave,field_start,field_end,metric,segment,base,effective_base,value,kind,sd\n${waves.join('\n')}\n`)
+  await appendFile(join(folder, 'account.yaml'), 'survey: { files: survey/*.csv, lags: [-2, 6] }\n')
+  return folder
+}
+
+async function build(out: string, options: { readonly threads?: number; readonly seed?: number; readonly from?: string } = {}) {
+  return buildReview(thisProgram(), await readAccount(options.from ?? account), {
     out: join(scratch, out), seed: options.seed ?? 1, threads: options.threads, browser: () => Promise.resolve(browser), progress: silent,
   })
 }
@@ -46,10 +64,27 @@ async function hashes(folder: string): Promise<Record<string, string>> {
 describe('a build', () => {
   test('with the same inputs and seed gives the same bytes, with one thread and with two', async () => {
     await build('one', { threads: 1 })
-    await build('two', { threads: 2 })
+    await build('two', { threads: 2, from: await copyAccount('twin') })
     const one = await hashes(join(scratch, 'one'))
     expect(Object.keys(one)).toEqual(expect.arrayContaining(['/findings.json', '/review.html', '/review.pdf', '/tables/opinion.csv']))
     expect(await hashes(join(scratch, 'two'))).toEqual(one)
+  })
+
+  test('from what it remembers, is the same to the byte, and takes no fit', async () => {
+    const remembered = await readdir(join(account, 'cache/forecasts'))
+    // four waves and the next one
+    expect(remembered).toHaveLength(5)
+    await rm(join(account, 'cache/forecasts'), { recursive: true })
+    await build('again', { threads: 1 })
+    expect(await hashes(join(scratch, 'again'))).toEqual(await hashes(join(scratch, 'one')))
+    await expect(readdir(join(account, 'cache/forecasts'))).rejects.toThrow('ENOENT')
+  })
+
+  test('does not mind a cache that was spoilt', async () => {
+    const analyses = join(account, 'cache/analyses')
+    for (const file of await readdir(analyses)) await writeFile(join(analyses, file), '{"survey":')
+    await build('mended', { threads: 2 })
+    expect(await hashes(join(scratch, 'mended'))).toEqual(await hashes(join(scratch, 'one')))
   })
 
   test('it can fail: another seed gives other bytes', async () => {
@@ -94,7 +129,7 @@ describe('a build', () => {
 describe('an account’s own template', () => {
   test('is used, and its fault is told at its line', async () => {
     const own = join(scratch, 'own')
-    await cp(account, own, { recursive: true })
+    await cp(openCells, own, { recursive: true })
     const yaml = await readFile(join(own, 'account.yaml'), 'utf8')
     await writeFile(join(own, 'account.yaml'), `${yaml}template: template.md\n`)
     const run = async () => buildReview(thisProgram(), await readAccount(own), { out: join(scratch, 'own-draft'), seed: 1, browser: null, progress: silent })

@@ -13,6 +13,7 @@ describe('tablesOf', () => {
     expect(tablesOf(findings).map((table) => table.name)).toEqual([
       'opinion', 'periods', 'spans', 'decomposition', 'venues', 'venue-series', 'venues-before', 'mix', 'offsets', 'concentration',
       'accounting', 'scales', 'target-mix', 'checks', 'inputs',
+      'tracker', 'survey-waves', 'agreement', 'survey-lags', 'survey-candidates', 'survey-forecasts', 'survey-rivals', 'lag-weights', 'departures', 'outcome-lags', 'events',
     ])
   })
 

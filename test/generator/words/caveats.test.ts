@@ -13,6 +13,9 @@ const raised: Readonly<Record<string, Readonly<Record<string, string | number>>>
   'given-not-used': { keys: 'events' }, 'coder-unaudited': {}, 'survey-absent': {}, 'benchmark-absent': {}, 'no-sampling-error': {}, 'level-conventional': {},
   'pooled-average-misleads': { raw_change: -2.27, change: 2.21 }, concentration: { share: 0.31 }, 'mix-moved': { factor: 'venue', level: 'Boards', from: 0.24, to: 0.41 },
   'opinion-drift-entangled': { correlation: -0.87 }, 'fit-not-converged': { pareto_k: 0.83, ess: 212 }, 'model-misfit': { venue: 'Blogs' }, 'clock-times': { count: 9 }, 'uneven-volume': { least: 1543, most: 5676 }, 'period-unfinished': { last: '2026-10-20' }, 'many-rejected': { count: 549, share: 0.183 },
+  'survey-too-few': { pairs: 3, needed: 8 }, 'survey-contradicts': { label: 'Favourability', correlation: -0.62, pairs: 30 }, 'survey-not-established': { label: 'Favourability', pairs: 12 },
+  'survey-waves-overlap': { waves: 2, names: 'June, July' }, 'survey-waves-later': { waves: 1, names: 'November' }, 'survey-metric-missing': { label: 'Favourability', waves: 1, names: 'August' },
+  'survey-bases-small': { hidden: 1, flagged: 26 }, 'survey-departs': { label: 'Favourability', kind: 'share', observed: 38.14, expected: 44.02 },
   'no-previous-period': {}, 'ready-made-authors': {}, 'sharp-move': { steps: 2 },
 }
 
@@ -20,7 +23,7 @@ test.each(Object.entries(raised))('caveat %s is worded whole: evidence, meaning,
   const worded = wordCaveat(words, code, figures)
   for (const sentence of Object.values(worded)) expect(sentence).toMatch(/^(?!.*(NaN|undefined))[A-Z0-9“].*\.$/)
   for (const [name, figure] of Object.entries(figures)) {
-    if (typeof figure === 'string' && name !== 'factor' && !/^\d/.test(figure)) expect(JSON.stringify([worded, words.say(`caveat-${code}-title`, { ...figures })])).toContain(figure)
+    if (typeof figure === 'string' && name !== 'factor' && name !== 'kind' && !/^\d/.test(figure)) expect(JSON.stringify([worded, words.say(`caveat-${code}-title`, { ...figures })])).toContain(figure)
   }
   expect(words.has(`caveat-${code}-title`)).toBe(true)
 })
@@ -32,6 +35,15 @@ test('figures are written by their kind', () => {
   expect(wordCaveat(words, 'pooled-average-misleads', raised['pooled-average-misleads']!).evidence)
     .toBe('At the same mix, opinion changed by an estimated +2.2 points. What was said in all changed by −2.3 points, because the raw average also follows who posts, where and about what.')
   expect(wordCaveat(words, 'empty-steps', { steps: 1 }).evidence).toBe('1 step of the time axis holds no mention.')
+})
+
+test('a survey’s figures are written by its kind, its bases counted in words', () => {
+  expect(wordCaveat(words, 'survey-departs', raised['survey-departs']!).evidence)
+    .toBe('Favourability came out at 38.1%, where the posts had led to expect 44.0%; this is outside the 95% interval of the forecast.')
+  expect(wordCaveat(words, 'survey-departs', { label: 'Satisfaction', kind: 'mean', observed: 6.814, expected: 7.1 }).evidence).toContain('came out at 6.81, where the posts had led to expect 7.10;')
+  expect(wordCaveat(words, 'survey-bases-small', { hidden: 0, flagged: 1 }).evidence).toBe('1 base of 30 to 74 interviews is marked.')
+  expect(wordCaveat(words, 'survey-bases-small', { hidden: 2, flagged: 0 }).evidence).toBe('2 bases of fewer than 30 interviews are not shown.')
+  expect(wordCaveat(words, 'survey-too-few', { pairs: 0, needed: 8 }).evidence).toBe('No wave can be compared with the posts; at least 8 are needed.')
 })
 
 test('the catalogue words no caveat that is not raised', () => {

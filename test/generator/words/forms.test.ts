@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
 import { writeBounds, writeCell } from '../../../generator/words/cells.ts'
-import { formNames, write } from '../../../generator/words/forms.ts'
+import { formNames, needsUnit, write } from '../../../generator/words/forms.ts'
 import { levelLabel } from '../../../generator/words/labels.ts'
 import { houseWords } from '../../support/house-words.ts'
 
@@ -27,6 +27,31 @@ test('null, and what a form is not made for, is "not known" in every form', () =
   expect(write('text', 'points', words)).toBe('not known')
 })
 
+test('a form that is counted in something is told in what', () => {
+  const bounds = { low: 40.06, high: 46.34 }
+  expect(write(43.24, 'measure', words, 'share')).toBe('43.2%')
+  expect(write(7.238, 'measure', words, 'mean')).toBe('7.24')
+  expect(write(bounds, 'measure-interval', words, 'share')).toBe('40.1% to 46.3%')
+  expect(write({ low: -0.314, high: 0.2 }, 'measure-change-interval', words, 'mean')).toBe('\u22120.31 to +0.20')
+  expect(write(-2.06, 'measure-change', words, 'share')).toBe('\u22122.1')
+  expect(write(-2.06, 'measure-size', words, 'share')).toBe('2.1')
+  expect([[1, 'week'], [-4, 'week'], [0, 'day'], [2, 'month']].map(([value, unit]) => write(value, 'steps', words, String(unit)))).toEqual(['1 week', '4 weeks', '0 days', '2 months'])
+  expect(formNames.filter(needsUnit)).toEqual(['measure', 'measure-change', 'measure-size', 'measure-interval', 'measure-change-interval', 'steps'])
+})
+
+test('an interval that lacks a bound is not known', () => {
+  expect(write({ low: null, high: null, r: 0.3 }, 'number-interval', words)).toBe('not known')
+  expect(write({ low: -0.214, high: 0.5 }, 'number-interval', words)).toBe('\u22120.21 to 0.50')
+})
+
+test('ratios, p-values, fieldwork, events, counts', () => {
+  expect([0.69, 1.31, 0.998, 1].map((ratio) => [write(ratio, 'ratio-sign', words), write(ratio, 'ratio-size', words)])).toEqual([['down', '31%'], ['up', '31%'], ['down', 'under 1%'], ['flat', '0%']])
+  expect([0.0004, 0.0031, 0.0316, 0.0996, 0.443, 1].map((p) => write(p, 'p-value', words))).toEqual(['under 0.001', '0.003', '0.032', '0.10', '0.44', '1.00'])
+  expect(write({ wave: 'W1', field_start: '2026-09-28', field_end: '2026-10-09' }, 'fieldwork', words)).toBe('28 September – 9 October 2026')
+  expect(write({ label: 'Storm', date: '2026-10-05', kind: '' }, 'event', words)).toBe('Storm (5 October 2026)')
+  expect([[1204, 380, 410], [400, 400], []].map((list) => write(list, 'count-range', words))).toEqual(['380 to 1,204', '400', 'not known'])
+})
+
 test('a level without a label of its own is worded, one with a label is not', () => {
   expect(levelLabel({ label: 'prolific', poster: 'prolific' }, words)).toBe('Prolific posters')
   expect(levelLabel({ label: 'Heavy', poster: 'prolific' }, words)).toBe('Heavy')
@@ -44,4 +69,13 @@ test('cells of tables', () => {
   expect(writeCell({ key: 'scale', kind: 'text' }, { scale: 'venue_drift.boards' }, words, new Map([['boards', 'Discussion boards']]))).toBe('Drift, step to step: Discussion boards')
   expect(writeBounds(-0.44, 2, 'change', words)).toBe('\u22120.4 to +2.0')
   expect(writeBounds(null, 2, 'change', words)).toBe('–')
+  expect(writeBounds(40.06, 46.34, 'measure', words, { kind: 'share' })).toBe('40.1% to 46.3%')
+  expect(writeBounds(6.6, 7, 'measure', words, { kind: 'mean' })).toBe('6.60 to 7.00')
+  expect(writeCell({ key: 'value', kind: 'measure' }, { value: 43.24, kind: 'share', shown: 'shown' }, words, none)).toBe('43.2%')
+  expect(writeCell({ key: 'value', kind: 'measure' }, { value: 43.24, kind: 'share', shown: 'flagged' }, words, none)).toBe('43.2%*')
+  expect(writeCell({ key: 'moved_by', kind: 'steps' }, { moved_by: 4, grid: 'week' }, words, none)).toBe('4 weeks')
+  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'raw', series: 'raw', venue: null }, words, none)).toBe('Raw average')
+  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'Blogs', series: 'venue', venue: 'blogs' }, words, none)).toBe('Blogs')
+  // a metric's own label is never taken for a word of the catalogue
+  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'raw', metric: 'raw' }, words, none)).toBe('raw')
 })

@@ -10,6 +10,7 @@ import { createGenerator } from '../../../model/random/generator.ts'
 import { createReading } from '../../../model/reading/context.ts'
 import type { Accounting } from '../../../model/intake/intake-tables.ts'
 import { analyseHere } from '../../support/analyse-reference.ts'
+import { sampleSurvey, type Survey } from '../../support/sample-survey.ts'
 import { simulateCells } from '../../support/simulate-cells.ts'
 
 const simulated = simulateCells({
@@ -31,6 +32,10 @@ beforeAll(async () => {
 
 const codesOf = (grounds: CaveatGrounds) => ruleCaveats(grounds).map(({ code }) => code)
 
+/** A survey that gives no ground for a caveat. */
+const leading = sampleSurvey('leads')
+const calmSurvey: Survey = { ...leading, metrics: leading.metrics.filter(({ segment }) => segment === null) }
+
 type Change = (grounds: CaveatGrounds) => CaveatGrounds
 
 const withFindings = (change: (findings: CaveatGrounds['findings']) => Partial<CaveatGrounds['findings']>): Change => (grounds) => ({ ...grounds, findings: { ...grounds.findings, ...change(grounds.findings) } })
@@ -38,6 +43,7 @@ const withAccounting = (change: Partial<Accounting>): Change => (grounds) => ({
   ...grounds, reading: { ...grounds.reading, tables: { ...grounds.reading.tables, accounting: { ...grounds.reading.tables.accounting, ...change } } },
 })
 const firstVenue = (change: Partial<CaveatGrounds['findings']['venues'][number]>): Change => withFindings(({ venues }) => ({ venues: venues.map((venue, v) => (v === 0 ? { ...venue, ...change } : venue)) }))
+const survey = (change: (survey: Survey) => Partial<Survey>): Change => withFindings(() => ({ survey: { ...calmSurvey, ...change(calmSurvey) } }))
 const opinion = (change: Partial<CaveatGrounds['findings']['opinion']>): Change => withFindings((findings) => ({ opinion: { ...findings.opinion, ...change } }))
 const steps = tables.timeline.steps
 
@@ -66,6 +72,14 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['clock-times', withAccounting({ reasons: { 'time-doubled': 2 } })],
   ['given-not-used', (grounds) => ({ ...grounds, givenNotUsed: ['events'] })],
   ['no-previous-period', opinion({ previous: null })],
+  ['survey-contradicts', survey(() => ({ verdict: 'contradicts' }))],
+  ['survey-too-few', survey(() => ({ verdict: 'too-few-waves' }))],
+  ['survey-not-established', survey(() => ({ verdict: 'not-established' }))],
+  ['survey-departs', survey(({ waves, departures }) => ({ departures: departures.map((departure) => ({ ...departure, wave: waves.at(-1)!.wave })) }))],
+  ['survey-waves-overlap', survey(() => ({ overlapping_waves: ['2026-03'] }))],
+  ['survey-waves-later', survey(() => ({ later_waves: ['2026-11'] }))],
+  ['survey-metric-missing', survey(({ metrics }) => ({ metrics: metrics.map((of, m) => (m === 0 ? { ...of, missing: ['2025-08'] } : of)) }))],
+  ['survey-bases-small', survey(() => ({ metrics: leading.metrics }))],
   ['opinion-drift-entangled', (grounds) => {
     const { columns } = grounds.reading
     // drifts that mirror opinion draw by draw: the posts can't tell one from the other
@@ -82,6 +96,33 @@ describe('every rule has an occasion, and keeps silent without it', () => {
 
 test.each(['no-sampling-error', 'level-conventional', 'coder-unaudited', 'survey-absent', 'benchmark-absent'])('%s stands in every review that lacks the input', (code) => {
   expect(codesOf(calm)).toContain(code)
+})
+
+describe('the survey', () => {
+  const ofSurvey = (change: (survey: Survey) => Partial<Survey>) => ruleCaveats(survey(change)(calm)).filter(({ code }) => code.startsWith('survey'))
+  test('one that leaves nothing to say has no caveat of its own; without one, its absence is told', () => {
+    expect(ofSurvey(() => ({}))).toEqual([])
+    expect(codesOf(calm).filter((code) => code.startsWith('survey'))).toEqual(['survey-absent'])
+  })
+  test('only a contradiction is serious', () => {
+    expect(ofSurvey(() => sampleSurvey('contradicts')).map(({ code, severity }) => [code, severity])).toEqual([['survey-contradicts', 'serious'], ['survey-bases-small', 'note']])
+    expect(ofSurvey(() => sampleSurvey('too-few-waves'))).toContainEqual({ code: 'survey-too-few', severity: 'caution', figures: { pairs: 3, needed: 8 } })
+  })
+  test('a departure before the latest wave is not the latest', () => {
+    expect(calmSurvey.departures).toHaveLength(1)
+    expect(ofSurvey(() => ({})).map(({ code }) => code)).not.toContain('survey-departs')
+  })
+  test('a base counts once, however many metrics rest on it', () => {
+    const bases = ofSurvey(() => ({ metrics: leading.metrics }))[0]
+    const visitors = leading.metrics.find(({ segment }) => segment === 'visitor')!
+    const islanders = leading.metrics.find(({ segment }) => segment === 'islander')!
+    expect(islanders.waves.every(({ shown }) => shown === 'shown')).toBe(true)
+    expect(bases?.figures).toEqual({ hidden: 1, flagged: visitors.waves.filter(({ shown }) => shown === 'flagged').length })
+  })
+  test('many waves are counted, the first few named', () => {
+    const [later] = ofSurvey(() => ({ later_waves: ['a', 'b', 'c', 'd', 'e', 'f', 'g'] }))
+    expect(later?.figures).toEqual({ waves: 7, names: 'a, b, c, d, e, …' })
+  })
 })
 
 test('serious caveats come first', () => {

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest'
-import { estimate } from '../../../model/findings/schema.ts'
+import { estimate } from '../../../model/findings/parts-schema.ts'
 import { createGenerator } from '../../../model/random/generator.ts'
 import { estimateOf } from '../../../model/statistics/estimate.ts'
 import { mean, standardDeviation } from '../../../model/statistics/moments.ts'

@@ -3,6 +3,8 @@ import type { ChartSpec } from '../../../../generator/render/charts/chart-spec.t
 import { drawChart } from '../../../../generator/render/charts/draw-chart.ts'
 import type { Rendering } from '../../../../generator/render/render.ts'
 import type { DrawingSize } from '../../../../generator/render/theme.ts'
+import type { Findings } from '../../../../model/findings/schema.ts'
+import { postsAlone, sampleFindings, withVerdict } from '../../../support/sample-findings.ts'
 import { chartNames, sampleRendering } from '../sample-document.ts'
 import { stretchedFindings } from '../stretched-findings.ts'
 
@@ -44,6 +46,34 @@ test('a gap in the raw average is a gap, not a zero', async () => {
   const gapped = await draw(await sampleRendering(stretchedFindings({ venues: 1, topics: 1, steps: 26, grid: 'week' })), 'opinion')
   const linePieces = (svg: string): number => Math.max(...[...svg.matchAll(/ d="([^"]+)"/g)].map((match) => (match[1].match(/M/g) ?? []).length))
   expect(linePieces(gapped)).toBeGreaterThan(linePieces(gapless))
+})
+
+describe('the survey', () => {
+  const withSurvey = async (findings: Findings) => sampleRendering(findings)
+  test('stands below opinion where there is one, named by its metric', async () => {
+    const [with_, without] = [await draw(await withSurvey(sampleFindings()), 'opinion'), await draw(await withSurvey(postsAlone()), 'opinion')]
+    expect(textsOf(with_)).toContain('Survey: Favourability, %')
+    expect(textsOf(without).join(' ')).not.toContain('Survey')
+    const dates = (svg: string) => textsOf(svg).filter((text) => text === '2025').length
+    expect([dates(with_), dates(without)]).toEqual([1, 1])
+  })
+  test.each(['tracks', 'contradicts', 'not-established', 'too-few-waves'] as const)('its charts can be drawn with the verdict %s', async (verdict) => {
+    const rendering = await withSurvey(withVerdict(verdict))
+    const names = verdict === 'too-few-waves' ? ['tracker', 'agreement'] : ['tracker', 'agreement', 'survey-lags', 'survey-forecasts', 'lag-weights']
+    for (const name of names) expect(await draw(rendering, name), name).not.toMatch(/NaN|undefined|Infinity/)
+  })
+  test('the best lag is written with its correlation, the posts with how far they are moved', async () => {
+    const rendering = await sampleRendering()
+    expect(textsOf(await draw(rendering, 'survey-lags'))).toEqual(expect.arrayContaining(['0.84', '0.22', '0.5']))
+    expect(textsOf(await draw(rendering, 'agreement'))).toContain('Posts, moved 4 week later')
+    expect(textsOf(await draw(rendering, 'lag-weights'))).toContain('28%')
+  })
+  test('hidden waves leave a gap: no point is drawn for them', async () => {
+    const findings = sampleFindings()
+    const points = (svg: string) => svg.match(/<path[^>]*transform="translate/g)?.length ?? 0
+    const hidden = { ...findings, survey: { ...findings.survey!, waves: findings.survey!.waves.map((wave, at) => (at < 10 ? { ...wave, shown: 'hidden' as const } : wave)) } }
+    expect(points(await draw(await withSurvey(findings), 'agreement')) - points(await draw(await withSurvey(hidden), 'agreement'))).toBe(10)
+  })
 })
 
 describe('what is written', () => {

@@ -3,7 +3,7 @@ import { samplingVariance } from '../../../model/cells/sampling-variance.ts'
 import { buildProblem } from '../../../model/fit/build-problem.ts'
 import { localExecutor } from '../../../model/fit/executor.ts'
 import { createGenerator } from '../../../model/random/generator.ts'
-import { startFitThreads, type FitThreads } from '../../../generator/review/threads.ts'
+import { startFitThreads, type FitThreads } from '../../../generator/threads/fit-threads.ts'
 import { referenceTables } from '../../support/reference-cells.ts'
 
 const tables = referenceTables()
