@@ -1,4 +1,4 @@
-import type { AuthorCounts, AuthorVariation, CellColumns, ConcentrationRow, Factor, Timeline } from '../../model/intake/intake-tables.ts'
+import type { AuthorCounts, AuthorVariation, CellColumns, ConcentrationRow, Factor, Hindsight, Timeline } from '../../model/intake/intake-tables.ts'
 import { isoDate } from '../calendar/days.ts'
 import type { GroupedMentions } from './read-mentions.ts'
 
@@ -46,10 +46,24 @@ export function concentrationRows({ authors }: GroupedMentions, indices: Indices
 }
 
 /** Author variation in the order of the venues. */
-export function variationRows({ variation }: GroupedMentions, indices: Indices, venues: number): readonly (AuthorVariation | null)[] {
+export function variationRows(variation: GroupedMentions['variation'], indices: Indices, venues: number): readonly (AuthorVariation | null)[] {
   const rows: (AuthorVariation | null)[] = Array.from({ length: venues }, () => null)
   for (const [venue, sums] of variation) rows[indices.level(0, venue)] = sums
   return rows
+}
+
+/** What was not known yet earlier, by indices of the tables; a step that no mention left in them is counted on from the last. */
+export function hindsightOf({ hindsight }: GroupedMentions, indices: Indices, axis: Timeline, venues: number): Hindsight | null {
+  if (hindsight === null) return null
+  const stepAt = (step: number): number => {
+    const found = indices.step(step)
+    return found >= 0 ? found : axis.steps.length
+  }
+  return {
+    before: stepAt(hindsight.before),
+    variation: variationRows(hindsight.variation, indices, venues),
+    settling: hindsight.settling.map(({ venue, from, to, settled }) => ({ venue: indices.level(0, venue), from: indices.step(from), to: indices.step(to), settled: stepAt(settled) })),
+  }
 }
 
 /** Mentions with a known author by venue; a ready-made cell has one unless its poster class is `unknown`. */

@@ -1,5 +1,6 @@
 import type { AuthorVariation } from '../../model/intake/intake-tables.ts'
 import type { Database } from './database.ts'
+import { stepSql } from './mention-table.ts'
 import { solitude } from './poster-classes.ts'
 import { scorePart } from './score-sql.ts'
 
@@ -17,12 +18,14 @@ interface VariationSums {
  * those in the venue and step. Authors with equally many mentions are summed together, so that what comes out of the
  * database is whole numbers and the one division is done here.
  *
+ * @param before - number of a step: of the mentions before it alone; all of them if absent
  * @returns by number of the venue
  */
-export async function groupVariation(database: Database): Promise<ReadonlyMap<number, AuthorVariation>> {
-  await database.run(`CREATE TEMP TABLE centre AS SELECT factor_0, slot, CAST(round(sum(known_score)::DOUBLE / sum(known)) AS BIGINT) AS centre
+export async function groupVariation(database: Database, before?: number): Promise<ReadonlyMap<number, AuthorVariation>> {
+  await database.run(`CREATE OR REPLACE TEMP TABLE centre AS SELECT factor_0, slot, CAST(round(sum(known_score)::DOUBLE / sum(known)) AS BIGINT) AS centre
     FROM cell_sum WHERE known > 0 GROUP BY ALL`)
   const centred = 'SELECT author, solitude, factor_0, score - centre AS score FROM classified JOIN centre USING (factor_0, slot) WHERE author IS NOT NULL'
+    + (before === undefined ? '' : ` AND ${stepSql} < ${before}`)
   const rows = await database.rows<VariationSums>(`
     SELECT venue, posts, count(*) AS authors, sum(total)::HUGEINT AS sum, sum(total::HUGEINT * total)::HUGEINT AS sum_squares, sum(squares)::HUGEINT AS squares FROM (
       SELECT min(factor_0) AS venue, count(*) AS posts, sum(score)::BIGINT AS total, sum(score * score)::HUGEINT AS squares FROM (${centred}) WHERE solitude < ${solitude.alone} GROUP BY author)

@@ -1,12 +1,7 @@
 import type { Account } from '../account/account.ts'
 import type { Database } from './database.ts'
-import { momentBits, secondsSql, slotBits } from './mention-table.ts'
-import type { ZoneSql } from './time-sql.ts'
-
-/** Ninety days in seconds. */
-const window = 90 * 86_400
-/** A clock without offset is less than this many microseconds from its instant. */
-const clockMargin = 2 * 86_400 * 1_000_000
+import { momentBits, slotBits } from './mention-table.ts'
+import { classWindow, inOpening, type Opening } from './openings.ts'
 
 /**
  * How far a mention is its author's only one. Each includes those before it, since a step lies in one period; a mention
@@ -31,10 +26,10 @@ export const solitude = {
  *
  * Added besides: `solitude`, below.
  */
-export async function classifyPosters(database: Database, account: Account, zone: ZoneSql): Promise<void> {
+export async function classifyPosters(database: Database, account: Account, openings: readonly Opening[]): Promise<void> {
   const poster = account.factors.indexOf('poster')
   const others = account.factors.map((_, index) => `factor_${index}`).filter((_, index) => index !== poster)
-  const openings = poster < 0 ? [] : await createEarly(database, zone)
+  if (poster >= 0) await createEarly(database, openings)
   const classed = poster < 0 ? '' : `, CAST(CASE WHEN author IS NULL THEN 3 ELSE ${classOf(account)} END AS UTINYINT) AS factor_${poster}`
   const backs = poster < 0 ? [] : [account.posters.occasional, account.posters.regular]
   const neighbours = [
@@ -55,23 +50,17 @@ export async function classifyPosters(database: Database, account: Account, zone
     ${poster < 0 ? '' : 'LEFT JOIN early ON early.author_early = early_author AND early.source_early = source'}`)
 }
 
-/** `early (author_early, source_early, early_posts)`: how often each author posted in the first 90 days of each source; returns the moments at which those end. */
-async function createEarly(database: Database, zone: ZoneSql): Promise<readonly { readonly source: number; readonly until: bigint }[]> {
-  // The earliest clock has the earliest instant, among those with and those without an offset: only these few are converted.
-  const openings = await database.rows<{ source: number; until: bigint; clock: bigint }>(`
-    SELECT source, (min(${secondsSql(zone.instant)}) + ${window}) << ${momentBits} AS until, min(${zone.instant}) + ${window * 1_000_000 + clockMargin} AS clock
-    FROM (SELECT source, zoned, min(clock) AS clock FROM kept GROUP BY source, zoned) GROUP BY source ORDER BY source`)
-  const counts = openings.map(({ source, until, clock }) =>
-    `SELECT author, source, count(*) FROM mention WHERE author IS NOT NULL AND source = ${source} AND clock < ${clock} AND moment < ${until} GROUP BY author, source HAVING count(*) > 1`)
+/** `early (author_early, source_early, early_posts)`: how often each author posted in the first 90 days of each source. */
+async function createEarly(database: Database, openings: readonly Opening[]): Promise<void> {
+  const counts = openings.map((opening) => `SELECT author, source, count(*) FROM mention WHERE author IS NOT NULL AND ${inOpening(opening)} GROUP BY author, source HAVING count(*) > 1`)
   await database.run('CREATE TEMP TABLE early (author_early UBIGINT, source_early USMALLINT, early_posts BIGINT)')
   if (counts.length > 0) await database.run(`INSERT INTO early ${counts.join(' UNION ALL ')}`)
-  return openings
 }
 
 /** More than N mentions stand in the window if the N-th before this one does. */
 function classOf(account: Account): string {
   const { occasional, regular } = account.posters
-  const within = (back: number): string => `(author_${back} = author AND (moment >> ${momentBits}) < (moment_${back} >> ${momentBits}) + ${window})`
+  const within = (back: number): string => `(author_${back} = author AND (moment >> ${momentBits}) < (moment_${back} >> ${momentBits}) + ${classWindow})`
   return `CASE WHEN early_author IS NOT NULL THEN CASE WHEN early_posts > ${regular} THEN 1 WHEN early_posts > ${occasional} THEN 2 ELSE 0 END
     WHEN ${within(regular)} THEN 1 WHEN ${within(occasional)} THEN 2 ELSE 0 END`
 }

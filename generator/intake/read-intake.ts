@@ -77,6 +77,7 @@ async function hashAll(account: Account, files: Iterable<string>): Promise<Reado
 async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Gathered> {
   const { database, account } = place
   const progress = options.progress ?? ((): void => undefined)
+  const hindsightFrom = options.hindsightFrom == null ? null : dayNumber(options.hindsightFrom)
   const asked = options.period === undefined ? null : namedPeriod(account, options.period)
   const names = levelNames(account)
   const ready = await readReadyMade(database, account, files, names.levelOf)
@@ -87,7 +88,7 @@ async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, o
   const spans = [dated.span, daysOf(ready.parts, account.grid)].filter((span) => span !== null)
   const review = asked ?? (spans.length === 0 ? null
     : coveredPeriod(account, Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))))
-  const settled = review === null ? null : await settleMentions(database, account, dated, dayNumber(review.end), { spellings, levelOf: names.levelOf }, progress)
+  const settled = review === null ? null : await settleMentions(database, account, dated, dayNumber(review.end), hindsightFrom, { spellings, levelOf: names.levelOf }, progress)
   return {
     review, scanned, rejected, dated, settled, unmapped: names.unmapped(),
     ready: review === null ? [] : cellsWithin(ready.parts, account.grid, review),

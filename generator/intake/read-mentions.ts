@@ -6,8 +6,10 @@ import { keptSpan, type Dated, type Span } from './dated-mentions.ts'
 import { findDuplicates, type Duplicates } from './duplicates.ts'
 import { groupAuthors, type AuthorGroups } from './group-authors.ts'
 import { groupCells, sumCells } from './group-cells.ts'
+import { groupHindsight, type GroupedHindsight } from './group-hindsight.ts'
 import { groupVariation } from './group-variation.ts'
 import { viewMentions, type MentionNames, type Naming } from './mention-table.ts'
+import { findOpenings } from './openings.ts'
 import { classifyPosters } from './poster-classes.ts'
 import { filledColumns, lastReject, otherBrandReasons } from './scan-mentions.ts'
 
@@ -19,6 +21,8 @@ export interface GroupedMentions {
   readonly parts: readonly CellPart[]
   readonly variation: ReadonlyMap<number, AuthorVariation>
   readonly authors: AuthorGroups
+  /** null where no forecast as of an earlier day is asked for. */
+  readonly hindsight: GroupedHindsight | null
 }
 
 export interface SettledMentions {
@@ -33,9 +37,10 @@ export interface SettledMentions {
  * Decide about every row of `scanned` and group what is left.
  *
  * @param end - day number of the last day of the period under review
+ * @param hindsightFrom - day number of the first day as of which a forecast is to be made; null where none is
  */
 export async function settleMentions(
-  database: Database, account: Account, { zone, span }: Dated, end: number, naming: Naming, progress: (message: string) => void,
+  database: Database, account: Account, { zone, span }: Dated, end: number, hindsightFrom: number | null, naming: Naming, progress: (message: string) => void,
 ): Promise<SettledMentions> {
   const eligible = `fate = 0 AND ${zone.until(end)}`
   progress('Looking for duplicates')
@@ -44,12 +49,17 @@ export async function settleMentions(
   if (span === null || span.first > end) return { duplicates, outOfScope, grouped: null }
   progress('Naming and classing mentions')
   const names = await viewMentions(database, account, zone, eligible, { first: span.first, last: Math.min(span.last, end) }, naming)
-  await classifyPosters(database, account, zone)
+  const openings = account.factors.includes('poster') ? await findOpenings(database, zone) : []
+  await classifyPosters(database, account, openings)
   progress('Grouping cells')
   await sumCells(database, account.factors)
   const parts = await groupCells(database, account.factors, names)
   progress('Counting authors')
-  return { duplicates, outOfScope, grouped: { names, span: await keptSpan(database, zone), parts, variation: await groupVariation(database), authors: await groupAuthors(database, names) } }
+  const grouped = {
+    names, parts, span: await keptSpan(database, zone), variation: await groupVariation(database), authors: await groupAuthors(database, names),
+    hindsight: hindsightFrom === null ? null : await groupHindsight(database, names, openings, hindsightFrom),
+  }
+  return { duplicates, outOfScope, grouped }
 }
 
 async function countOutOfScope(database: Database, after: string): Promise<Readonly<Record<string, number>>> {

@@ -6,7 +6,7 @@ import { timeline } from '../calendar/timeline.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
 import { placeOf } from '../account/yaml-places.ts'
-import { addAuthors, authoredMentions, concentrationRows, indicesOf, variationRows } from './assemble.ts'
+import { addAuthors, authoredMentions, concentrationRows, hindsightOf, indicesOf, variationRows } from './assemble.ts'
 import { summedAuthors } from './author-counts.ts'
 import { cellColumns } from './cell-columns.ts'
 import type { CellPart } from './cell-part.ts'
@@ -69,8 +69,8 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
     timeline: axis,
     factors,
     cells: cellColumns(parts, steps, factors),
-    variation: grouped === null ? factors[0]!.levels.map(() => null) : variationRows(grouped, indices!, factors[0]!.levels.length),
-    hindsight: null,
+    variation: grouped === null ? factors[0]!.levels.map(() => null) : variationRows(grouped.variation, indices!, factors[0]!.levels.length),
+    hindsight: grouped === null ? null : hindsightOf(grouped, indices!, axis, factors[0]!.levels.length),
     concentration: grouped === null ? [] : concentrationRows(grouped, indices!),
     authors: grouped === null ? summed : addAuthors(summed, grouped, indices!, factors, ready.length === 0),
     accounting: { ...accounting, withAuthor: authoredMentions(grouped, indices, readyCells, factors), readyMade: ready.length > 0 },

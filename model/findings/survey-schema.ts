@@ -15,6 +15,7 @@ const waveChange = z.strictObject({
   difference: z.number(), low: z.number(), high: z.number(),
   /** Two-sided, on effective bases; for everyone adjusted over the metrics of the wave (Holm 1979), null for a segment. */
   p: share, adjusted_p: share.nullable(),
+  /** For everyone by the adjusted p, against 1 less the account's interval; for a segment by the interval. */
   movement,
 })
 
@@ -85,7 +86,7 @@ const forecast = forecastScore.extend({
   waves: z.array(forecastWave),
 })
 
-export const verdicts = ['too-few-waves', 'contradicts', 'leads', 'tracks', 'not-established'] as const
+const verdicts = ['too-few-waves', 'contradicts', 'leads', 'tracks', 'not-established'] as const
 
 export const survey = z.strictObject({
   /** The metric compared with opinion. */

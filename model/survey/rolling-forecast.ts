@@ -22,7 +22,7 @@ export interface WaveForecast {
 }
 
 /** Earlier waves whose fieldwork was over when this one's began. */
-export function knownBefore(waves: readonly HeadlineWave[], window: DayWindow): readonly HeadlineWave[] {
+function knownBefore(waves: readonly HeadlineWave[], window: DayWindow): readonly HeadlineWave[] {
   return waves.filter((wave) => wave.end < window.start)
 }
 

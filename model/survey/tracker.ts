@@ -23,7 +23,7 @@ const flaggedBelow = 75
 export function readTracker(survey: SurveyInput, interval: number): readonly MetricFinding[] {
   const plain = [-1, ...survey.segments.keys()].flatMap((segment) => survey.metrics.map((_, metric) => readMetric(survey, metric, segment, interval)))
   const everyone = plain.filter(({ segment }) => segment === null)
-  return plain.map((finding) => (finding.segment === null ? adjustOverMetrics(finding, everyone) : finding))
+  return plain.map((finding) => (finding.segment === null ? adjustOverMetrics(finding, everyone, 1 - interval) : finding))
     .filter(({ waves }) => waves.length > 0)
 }
 
@@ -86,15 +86,17 @@ function changeOf(unit: number, before: WaveReading, now: SurveyReading, interva
   }
 }
 
-/** Give every change its p-value for as many metrics as the wave tests. */
-function adjustOverMetrics(finding: MetricFinding, everyone: readonly MetricFinding[]): MetricFinding {
+/** Give every change its p-value for as many metrics as the wave tests; by that one it is established or not. */
+function adjustOverMetrics(finding: MetricFinding, everyone: readonly MetricFinding[], alpha: number): MetricFinding {
   return {
     ...finding,
     waves: finding.waves.map((reading) => {
       if (reading.change === null) return reading
       const tested = everyone.flatMap(({ metric, waves }) => waves.filter(({ wave, change }) => wave === reading.wave && change !== null).map(({ change }) => ({ metric, p: change?.p ?? 1 })))
-      const adjusted = holmAdjusted(tested.map(({ p }) => p))
-      return { ...reading, change: { ...reading.change, adjusted_p: adjusted[tested.findIndex(({ metric }) => metric === finding.metric)] } }
+      const adjusted = holmAdjusted(tested.map(({ p }) => p))[tested.findIndex(({ metric }) => metric === finding.metric)]
+      const { difference } = reading.change
+      const movement = adjusted > alpha || difference === 0 ? 'not-established' : difference > 0 ? 'up' : 'down'
+      return { ...reading, change: { ...reading.change, adjusted_p: adjusted, movement } }
     }),
   }
 }

@@ -142,7 +142,7 @@ describe('what the survey says', () => {
     expect(survey(documents.leads)).toMatch(/Favourability visitor 2026-10 74 few 40\.8%\* 30\.6% to 51\.0%/)
     expect(survey(documents.leads)).toMatch(/Favourability islander 2026-10 172 yes 47\.8% /)
     const hidden = withSurvey(({ metrics }) => ({ metrics: metrics.map((of) => (of.segment === 'visitor' ? { ...of, waves: of.waves.map((wave) => ({ ...wave, base: 21, shown: 'hidden' as const })) } : of)) }))
-    expect(survey(hidden)).toContain('Favourability visitor 2026-10 21 too few – – – –')
+    expect(survey(hidden)).toContain('Favourability visitor 2026-10 21 too few – – –')
     const headline = withSurvey(({ waves }) => ({ waves: waves.map((wave) => ({ ...wave, base: 21, shown: 'hidden' as const, value: null, low: null, high: null })) }))
     expect(survey(headline)).toContain('The latest wave (10 – 21 October 2026) rests on 21 interviews, too few to show its figures.')
   })

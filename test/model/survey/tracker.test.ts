@@ -33,6 +33,15 @@ describe('wave on wave', () => {
     expect(small.adjusted_p).toBeCloseTo(2 * small.p, 12)
     expect(large.adjusted_p).toBeCloseTo(large.p, 12)
   })
+  test('a change that its own interval supports is not established if it is one of several looked at', () => {
+    const both = (satisfaction: readonly SurveyReading[]) => figures(survey(
+      wave('1', '2026-01-01', '2026-01-10', share(0, 0.50, 400), ...satisfaction),
+      wave('2', '2026-02-01', '2026-02-10', share(0, 0.572, 400), ...satisfaction),
+    ))[0].waves[1].change!
+    expect(both([])).toMatchObject({ movement: 'up' })
+    expect(both([{ ...share(1, 7, 400), sd: 2 }])).toMatchObject({ movement: 'not-established' })
+    expect(both([{ ...share(1, 7, 400), sd: 2 }]).low).toBeGreaterThan(0)
+  })
   test('the wave compared with shares no day of fieldwork and has the metric', () => {
     const [favourability, satisfaction] = figures(survey(
       wave('1', '2026-01-01', '2026-01-10', share(0, 0.5, 400), { ...share(1, 7, 400), sd: 2 }),
