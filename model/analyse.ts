@@ -84,7 +84,10 @@ export async function analyse(
     survey: inputs.survey === null ? null : await readSurvey(reading, inputs.survey, inputs.events ?? [], counted(workers.refit, inputs.survey, progress.forecasts), spec),
     events: inputs.events?.map(({ date, label, kind }) => ({ date, label, kind })) ?? null,
     outcome: inputs.outcome === null || inputs.outcome.spans.length === 0 ? null : readOutcome(reading, inputs.outcome, spec.interval),
-    speaking: readSpeaking(tables), benchmark: null, advice: [],
+    speaking: readSpeaking(tables),
+    benchmark: null, importance: null, volume: null, tipping: null,
+    coder: { status: 'absent', reason: null, venues: [], correction: null, movement: null, audit_size: null },
+    sensitivity: { scales: [], shift: 0, reliable: true }, hearing: null, advice: [],
     diagnostics: readDiagnostics(reading, spec.seed, spec.interval),
     method: readMethod(reading, spec.facts),
   }

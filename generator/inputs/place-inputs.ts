@@ -14,6 +14,7 @@ export function placeInputs(raw: RawInputs, account: Account, timeline: Timeline
     survey: raw.survey === null || account.survey === null ? null : placeSurvey(raw.survey, account.survey, timeline),
     events: raw.events === null ? null : placeEvents(raw.events, timeline),
     outcome: raw.outcome === null ? null : placeOutcome(raw.outcome, timeline),
+    benchmark: null, audit: null, importance: null, customers: null,
   }
 }
 

@@ -31,7 +31,7 @@ export function addAuthors(counts: AuthorCounts, { authors }: GroupedMentions, i
     if (row.factor === 0) byPeriod[period]! += row.authors
     byPeriodLevel[row.factor]![period * factors[row.factor]!.levels.length + indices.level(row.factor, row.level)]! += row.authors
   }
-  return { exact, byStep, byPeriod, byPeriodLevel }
+  return { exact, byStep, byStepVenue: counts.byStepVenue, byPeriod, byPeriodLevel }
 }
 
 /** The counts of counts by period: of every venue, and of all together as venue -1. */

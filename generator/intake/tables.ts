@@ -71,6 +71,7 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
     cells: cellColumns(parts, steps, factors),
     variation: grouped === null ? factors[0]!.levels.map(() => null) : variationRows(grouped.variation, indices!, factors[0]!.levels.length),
     hindsight: grouped === null ? null : hindsightOf(grouped, indices!, axis, factors[0]!.levels.length),
+    labels: null, noLabels: null, staying: [], extremes: [], pull: [], segments: null,
     concentration: grouped === null ? [] : concentrationRows(grouped, indices!),
     authors: grouped === null ? summed : addAuthors(summed, grouped, indices!, factors, ready.length === 0),
     accounting: { ...accounting, withAuthor: authoredMentions(grouped, indices, readyCells, factors), readyMade: ready.length > 0 },

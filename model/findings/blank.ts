@@ -18,7 +18,10 @@ export const blankFindings: Findings = {
   },
   decomposition: null, venues: [], topics: [], posters: [], factors: [],
   scales: { mu: zero, tau: zero, venue_drift: {}, venue: null, topic: null, poster: null, factors: {} },
-  survey: null, events: null, outcome: null, speaking: { concentration: { period: null, previous: null }, venues: [], mix: [] }, benchmark: null, caveats: [], advice: [],
+  survey: null, events: null, outcome: null, speaking: { concentration: { period: null, previous: null }, venues: [], mix: [], staying: null, spread: [], pull: [] },
+  benchmark: null, importance: null, volume: null, tipping: null,
+  coder: { status: 'absent', reason: null, venues: [], correction: null, movement: null, audit_size: null },
+  sensitivity: { scales: [], shift: 0, reliable: true }, hearing: null, caveats: [], advice: [],
   diagnostics: { method: '', pareto_k: 0, rhat: null, ess: 0, draws: 0, proposals: 0, converged: true, passed: true, checks: [] },
   method: {
     base: { from: '2000-01-01', to: '2000-12-31' }, target_mix: [], target_source: {}, priors: {}, cells: 0, steps: 0, venues: [],

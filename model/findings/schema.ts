@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { count, estimate, isoDate, movement, share } from './parts-schema.ts'
+import { advice, benchmark, coder, hearing, importance, sensitivity, speaking, tipping, volume } from './listening-schema.ts'
 import { event, outcome, survey } from './survey-schema.ts'
 
 export type { Estimate, Movement } from './parts-schema.ts'
@@ -88,23 +89,6 @@ const levelFinding = {
   share, share_previous: share.nullable(), share_base: share, authors: count, raw: z.number().nullable(), raw_previous: z.number().nullable(),
 }
 
-const concentration = z.strictObject({
-  /** Known authors and their mentions. */
-  authors: count, mentions: count,
-  /** Share of mentions by the most prolific 1 % of authors (at least one author). */
-  top_share: share,
-  gini: share,
-  /** Inverse Simpson: how many equally active authors would be as concentrated. */
-  effective_authors: z.number().min(0),
-})
-
-const speaking = z.strictObject({
-  concentration: z.strictObject({ period: concentration.nullable(), previous: concentration.nullable() }),
-  venues: z.array(z.strictObject({ venue: z.string(), concentration: concentration.nullable() })),
-  /** Share of each level among the mentions of each period, for every factor. */
-  mix: z.array(z.strictObject({ factor: z.string(), level: z.string(), label: z.string(), period: z.string(), mentions: count, share })),
-})
-
 const check = z.strictObject({ name: z.string(), venue: z.string().nullable(), observed: z.number(), predicted: estimate, p: share, passed: z.boolean() })
 
 const diagnostics = z.strictObject({
@@ -130,10 +114,6 @@ const caveat = z.strictObject({
   figures: z.record(z.string(), z.union([z.number(), z.string()])),
 })
 export type Caveat = z.infer<typeof caveat>
-
-const advice = z.strictObject({
-  code: z.string(), action: z.string(), where: z.string(), how_many: count, gain: estimate, evidence: z.string(), success: z.string(),
-})
 
 const method = z.strictObject({
   base: z.strictObject({ from: isoDate, to: isoDate }),
@@ -173,7 +153,12 @@ export const findingsSchema = z.strictObject({
   }),
   /** null where the account gives none; so with events and the outcome. */
   survey: survey.nullable(), events: z.array(event).nullable(), outcome: outcome.nullable(),
-  speaking, benchmark: z.null(),
+  speaking,
+  /** null where the account gives none; so with importance. */
+  benchmark: benchmark.nullable(), importance: importance.nullable(),
+  /** null without a survey of shares or without known authors; without a period before. */
+  volume: volume.nullable(), tipping: tipping.nullable(),
+  coder, sensitivity, hearing: hearing.nullable(),
   caveats: z.array(caveat), advice: z.array(advice),
   diagnostics, method,
   inputs: z.array(z.strictObject({ path: z.string(), sha256: z.string(), rows: count })),

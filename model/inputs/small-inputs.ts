@@ -7,7 +7,35 @@ export interface SmallInputs {
   /** In order of time; null where the account has none. */
   readonly events: readonly AccountEvent[] | null
   readonly outcome: OutcomeInput | null
+  readonly benchmark: readonly BenchmarkMargin[] | null
+  readonly audit: readonly AuditCount[] | null
+  readonly importance: ImportanceInput | null
+  /** Number of the brand's customers, where the account says. */
+  readonly customers: number | null
 }
+
+/** Customers by one trait; shares sum to 1. */
+export interface BenchmarkMargin {
+  readonly margin: string
+  readonly levels: readonly { readonly level: string; readonly share: number }[]
+}
+
+/** Hand-coded posts of a venue by what people and what the coder called them. */
+export interface AuditCount {
+  /** Name of the venue in the account. */
+  readonly venue: string
+  /** Labels as the account writes them. */
+  readonly trueLabel: string
+  readonly codedLabel: string
+  readonly count: number
+}
+
+/** How much each topic matters to customers. */
+export type ImportanceInput =
+  /** Weights sum to 1. */
+  | { readonly kind: 'stated'; readonly topics: readonly { readonly topic: string; readonly weight: number }[] }
+  /** One answer a respondent: overall opinion, and one of each topic. */
+  | { readonly kind: 'respondents'; readonly topics: readonly string[]; readonly overall: Float64Array; readonly ratings: readonly Float64Array[] }
 
 /** A stretch of days on the grid: fieldwork of a wave, or the span of an outcome. */
 export interface DayWindow {

@@ -107,8 +107,73 @@ export interface AuthorCounts {
   readonly byStep: Float64Array
   /** Shape (periods). */
   readonly byPeriod: Float64Array
+  /** Row-major of shape (steps x venues). */
+  readonly byStepVenue: Float64Array
   /** One entry per factor, each row-major of shape (periods x levels). */
   readonly byPeriodLevel: readonly Float64Array[]
+}
+
+/** Coded labels of the mentions of every cell: for correcting the coder. */
+export interface CellLabels {
+  /** As the account writes them, in the order of their scores. */
+  readonly names: readonly string[]
+  /** Shape (labels), in [-1, 1]. */
+  readonly scores: Float64Array
+  /** Row-major of shape (cells x labels): mentions; each row sums to the cell's mentions. */
+  readonly counts: Float64Array
+}
+
+/** Why cells have no labels: scores come from a range in some source, sources label differently, or cells came ready-made. */
+export type NoLabels = 'ranges' | 'labels-differ' | 'ready-made'
+
+/** Known authors of a period by stance, and how many of them posted in the period after it as well. */
+export interface StayingRow {
+  /** Index into `timeline.periods`, of every period up to the one under review. */
+  readonly period: number
+  /** Third of [-1, 1] that holds the author's mean score in the period: 0 below -1/3, 1 to 1/3, 2 above. */
+  readonly stance: 0 | 1 | 2
+  readonly authors: number
+  /** 0 for the period under review, which has none after it. */
+  readonly stayed: number
+}
+
+/** Mentions whose score lies at either end, -1 or 1. */
+export interface ExtremeRow {
+  readonly period: number
+  /** Index into the levels of `venue`. */
+  readonly venue: number
+  readonly mentions: number
+  readonly extremes: number
+}
+
+/**
+ * Regression, through the origin, of a reply's score on the mean of the thread before it, in one venue and poster class: both less the mean of their venue,
+ * topic and period; the author's own posts left out of the thread. Standard errors are clustered by author.
+ */
+export interface PullRow {
+  readonly venue: number
+  /** Index into the levels of `poster`; -1 for all of them together. */
+  readonly poster: number
+  readonly replies: number
+  readonly authors: number
+  readonly slope: number
+  readonly standardError: number
+}
+
+/** Authors of the period under review by the margins of the benchmark. */
+export interface SegmentTable {
+  readonly margins: readonly string[]
+  /** One row per combination that holds an author, in any order; -1 where the level of a margin is not known. */
+  readonly rows: readonly {
+    /** Index into `levels` of each margin. */
+    readonly levels: readonly number[]
+    readonly authors: number
+    /** Sum and sum of squares over authors of their mean score, on [-1, 1]. */
+    readonly sum: number
+    readonly squares: number
+  }[]
+  /** Names of the levels seen, by margin, sorted. */
+  readonly levels: readonly (readonly string[])[]
 }
 
 /** received = rejected + duplicates + outOfScope + modelled, of all data rows of all sources. */
@@ -152,6 +217,16 @@ export interface IntakeTables {
   readonly variation: readonly (AuthorVariation | null)[]
   /** null where no survey asks for it, and where cells came ready-made. */
   readonly hindsight: Hindsight | null
+  /** null, with the reason, where no coding audit asks for it or it can't be had. */
+  readonly labels: CellLabels | null
+  readonly noLabels: NoLabels | null
+  /** Of known authors; empty where cells came ready-made. So with the three after it. */
+  readonly staying: readonly StayingRow[]
+  readonly extremes: readonly ExtremeRow[]
+  /** Empty where no thread is mapped. */
+  readonly pull: readonly PullRow[]
+  /** null where no benchmark asks for it. */
+  readonly segments: SegmentTable | null
   readonly concentration: readonly ConcentrationRow[]
   readonly authors: AuthorCounts
   readonly accounting: Accounting

@@ -18,6 +18,7 @@ export function readSpeaking(tables: IntakeTables): Speaking {
     },
     venues: factors[0].levels.map(({ name }, v) => ({ venue: name, concentration: readConcentration(tables, timeline.current, v) })),
     mix: factors.flatMap((_, f) => readMix(tables, f)),
+    staying: null, spread: [], pull: [],
   }
 }
 

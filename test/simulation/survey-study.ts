@@ -1,7 +1,7 @@
 import type { DayWindow, SurveyInput, SurveyWave } from '../../model/inputs/small-inputs.ts'
 import { createGenerator, type Generator } from '../../model/random/generator.ts'
 import type { Findings } from '../../model/findings/schema.ts'
-import { analyseHere } from '../support/analyse-reference.ts'
+import { analyseHere, noInputs } from '../support/analyse-reference.ts'
 import { simulateCells, type SimulationOptions } from '../support/simulate-cells.ts'
 
 /** Four weeks a month, thirty months, and four weeks of posts before the first wave. */
@@ -39,7 +39,7 @@ export async function runSurveyScenario(scenario: SurveyScenario, seed: number, 
   const { tables, truth } = simulateCells(posts, generator)
   const walk = scenario === 'leading' ? truth.mu : walkLike(generator)
   const survey = surveyOf(walk, scenario === 'leading' ? trueLead : 0, generator)
-  const { survey: found } = await analyseHere(tables, { seed: run }, { survey, events: null, outcome: null })
+  const { survey: found } = await analyseHere(tables, { seed: run }, { ...noInputs, survey })
   if (found === null) throw new Error('a survey was given')
   const [adjusted] = found.candidates
   return {

@@ -9,7 +9,7 @@ const plainSpec: AnalysisSpec = {
   facts: { givenNotUsed: [], smallestGroup: 10, posterBounds: { occasional: 1, regular: 5 }, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
 }
 
-const noInputs: SmallInputs = { survey: null, events: null, outcome: null }
+export const noInputs: SmallInputs = { survey: null, events: null, outcome: null, benchmark: null, audit: null, importance: null, customers: null }
 
 /** The whole analysis in this thread. */
 export function analyseHere(tables: IntakeTables, spec: Partial<AnalysisSpec> = {}, inputs: SmallInputs = noInputs): Promise<Analysis> {

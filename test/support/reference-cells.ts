@@ -42,10 +42,10 @@ function tablesFromCells(csv: string, base: { readonly from: string; readonly to
       clustering: new Float64Array(rows.length).fill(1), deff: number('deff'),
     },
     variation: Array.from({ length: venues }, () => null),
-    hindsight: null,
+    hindsight: null, labels: null, noLabels: null, staying: [], extremes: [], pull: [], segments: null,
     concentration: [],
     authors: {
-      exact: false, byStep: new Float64Array(count), byPeriod: new Float64Array(periods.length),
+      exact: false, byStep: new Float64Array(count), byStepVenue: new Float64Array(count * venues), byPeriod: new Float64Array(periods.length),
       byPeriodLevel: factors.map(({ levels }) => new Float64Array(periods.length * levels.length)),
     },
     accounting: {

@@ -148,6 +148,7 @@ function speaking(): Findings['speaking'] {
       ...mixOf('venue', venuesGiven.map((venue) => ({ ...venue, name: venue.venue }))),
       ...mixOf('topic', topicsGiven.map(named)), ...mixOf('poster', postersGiven.map(named)),
     ],
+    staying: null, spread: [], pull: [],
   }
 }
 
@@ -173,7 +174,10 @@ export function sampleFindings(): Findings {
       venue_drift: Object.fromEntries(venuesGiven.map((venue, at) => [venue.venue, around(at === 0 ? 1.1 : 0.4, 0.3)])),
       venue: around(9.2, 4.1), topic: around(10.4, 4.4), poster: around(6, 3.9), factors: {},
     },
-    survey: sampleSurvey(), events: sampleEvents(), outcome: sampleOutcome(), speaking: speaking(), benchmark: null,
+    survey: sampleSurvey(), events: sampleEvents(), outcome: sampleOutcome(), speaking: speaking(),
+    benchmark: null, importance: null, volume: null, tipping: null,
+    coder: { status: 'absent', reason: null, venues: [], correction: null, movement: null, audit_size: null },
+    sensitivity: { scales: [], shift: 0, reliable: true }, hearing: null,
     caveats: sampleCaveats(), advice: [], diagnostics: sampleDiagnostics(venuesGiven.map((venue) => venue.venue)),
     method: sampleMethod([
       ...venuesGiven.map((venue) => ({ factor: 'venue', level: venue.venue, label: venue.label, share: meanOf(baseSteps, venue) })),

@@ -9,7 +9,7 @@ export function tablesOfCells(sizes: Sizes, timeline: Timeline, cells: readonly 
   return {
     timeline, factors, cells: columnsOf(cells, factors.length),
     variation: factors[0].levels.map((_, v) => variationOf(cells.filter((cell) => cell.levels[0] === v))),
-    hindsight: null,
+    hindsight: null, labels: null, noLabels: null, staying: [], extremes: [], pull: [], segments: null,
     concentration: concentrationOf(cells, timeline, sizes.venues),
     authors: authorsOf(cells, timeline, factors),
     accounting: {
@@ -65,13 +65,15 @@ function concentrationOf(cells: readonly SimulatedCell[], timeline: Timeline, ve
 
 function authorsOf(cells: readonly SimulatedCell[], timeline: Timeline, factors: readonly Factor[]): AuthorCounts {
   const byStep = new Float64Array(timeline.steps.length)
+  const byStepVenue = new Float64Array(timeline.steps.length * factors[0].levels.length)
   const byPeriod = new Float64Array(timeline.periods.length)
   const byPeriodLevel = factors.map(({ levels }) => new Float64Array(timeline.periods.length * levels.length))
   for (const { step, levels, mentions } of cells) {
     const period = timeline.periodOf[step]
     byStep[step] += mentions
+    byStepVenue[step * factors[0].levels.length + levels[0]] += mentions
     byPeriod[period] += mentions
     levels.forEach((level, f) => { byPeriodLevel[f][period * factors[f].levels.length + level] += mentions })
   }
-  return { exact: true, byStep, byPeriod, byPeriodLevel }
+  return { exact: true, byStep, byStepVenue, byPeriod, byPeriodLevel }
 }

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest'
 import { createGenerator } from '../../../model/random/generator.ts'
 import type { OutcomeInput } from '../../../model/inputs/small-inputs.ts'
-import { analyseHere } from '../../support/analyse-reference.ts'
+import { analyseHere, noInputs } from '../../support/analyse-reference.ts'
 import { simulateCells } from '../../support/simulate-cells.ts'
 
 const steps = 100
@@ -27,7 +27,7 @@ function spansOf(options: { readonly market?: boolean; readonly marketFrom?: num
   })
 }
 
-const outcomeOf = async (spans: OutcomeInput['spans']) => (await analyseHere(tables, { seed: 1 }, { survey: null, events: null, outcome: { spans } })).outcome
+const outcomeOf = async (spans: OutcomeInput['spans']) => (await analyseHere(tables, { seed: 1 }, { ...noInputs, outcome: { spans } })).outcome
 
 describe('growth beside opinion', () => {
   test('the lag and the effects that were built in are found', async () => {
