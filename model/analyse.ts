@@ -3,6 +3,10 @@ import { targetMix } from './cells/target-mix.ts'
 import { samplingVariance } from './cells/sampling-variance.ts'
 import { ruleCaveats } from './caveats/rule-caveats.ts'
 import type { RuledCaveat, Unruled } from './caveats/rule.ts'
+import { createOutlook, readHearing } from './advice/hearing.ts'
+import { readAdvice } from './advice/read-advice.ts'
+import { readAudit } from './coder/audit.ts'
+import { rescoredTables } from './coder/rescore.ts'
 import { buildProblem } from './fit/build-problem.ts'
 import { effortFor } from './fit/effort.ts'
 import type { FitExecutor } from './fit/executor.ts'
@@ -10,15 +14,22 @@ import { samplePosterior } from './fit/posterior.ts'
 import type { FitProblem } from './fit/problem.ts'
 import type { IntakeTables } from './intake/intake-tables.ts'
 import { createReading } from './reading/context.ts'
+import { readCoder } from './reading/coder.ts'
 import { readDecomposition } from './reading/decomposition.ts'
 import { readDiagnostics } from './reading/diagnostics.ts'
 import { readLevels } from './reading/levels.ts'
 import { readAccounting, readMethod, readPeriodSteps, type AccountFacts } from './reading/method.ts'
 import { readOpinion } from './reading/opinion.ts'
 import { readScales } from './reading/scales.ts'
+import { readSensitivity } from './reading/sensitivity.ts'
 import { readSpeaking } from './reading/speaking.ts'
 import { readVenues } from './reading/venues.ts'
 import type { SmallInputs, SurveyInput } from './inputs/small-inputs.ts'
+import { heardBy, readBenchmark } from './customers/benchmark.ts'
+import { readImportance } from './customers/importance.ts'
+import { readTipping } from './customers/tipping.ts'
+import { readVolume } from './customers/volume.ts'
+import { maskSmallGroups } from './findings/mask.ts'
 import { readOutcome } from './outcome/read-outcome.ts'
 import { readSurvey } from './survey/read-survey.ts'
 import type { Refit } from './survey/rolling-forecast.ts'
@@ -61,13 +72,18 @@ export type Analysis = Unruled & { readonly caveats: readonly RuledCaveat[] }
 export async function analyse(
   tables: IntakeTables, inputs: SmallInputs, spec: AnalysisSpec, workers: Workers, progress: AnalysisProgress = {},
 ): Promise<Analysis> {
-  const sampling = samplingVariance(tables)
+  const audited = inputs.audit === null ? null : readAudit(tables, inputs.audit)
+  const fitted = audited === null ? tables : rescoredTables(tables, audited)
+  const sampling = samplingVariance(fitted)
   const mix = targetMix(tables, spec.targetMix)
-  const problem = buildProblem(tables, sampling.variance)
+  const problem = buildProblem(fitted, sampling.variance, audited)
   const posterior = await samplePosterior(problem, workers.executorFor(problem), { seed: spec.seed, ...effortFor(problem), ...(progress.draws && { progress: progress.draws }) })
-  const reading = createReading(tables, mix, sampling, posterior, spec.interval)
+  const reading = createReading(tables, fitted, mix, sampling, posterior, spec.interval)
   const { timeline } = tables
-  const findings: Unruled = {
+  const survey = inputs.survey === null ? null : await readSurvey(reading, inputs.survey, inputs.events ?? [], counted(workers.refit, inputs.survey, progress.forecasts), spec)
+  const outlook = createOutlook(reading, spec.interval)
+  const { smallestGroup } = spec.facts
+  const findings: Omit<Unruled, 'advice'> = {
     schema: 'tareline-findings/1',
     period: timeline.review, previous_period: reading.previousSteps === null ? null : timeline.periods[timeline.current - 1],
     period_steps: readPeriodSteps(reading),
@@ -81,17 +97,22 @@ export async function analyse(
     factors: tables.factors.filter(({ name }) => !['venue', 'topic', 'poster'].includes(name))
       .map(({ name }) => ({ factor: name, levels: readLevels(reading, name).map(({ name: level, ...rest }) => ({ level, ...rest })) })),
     scales: readScales(posterior, spec.interval),
-    survey: inputs.survey === null ? null : await readSurvey(reading, inputs.survey, inputs.events ?? [], counted(workers.refit, inputs.survey, progress.forecasts), spec),
+    survey,
     events: inputs.events?.map(({ date, label, kind }) => ({ date, label, kind })) ?? null,
     outcome: inputs.outcome === null || inputs.outcome.spans.length === 0 ? null : readOutcome(reading, inputs.outcome, spec.interval),
-    speaking: readSpeaking(tables),
-    benchmark: null, importance: null, volume: null, tipping: null,
-    coder: { status: 'absent', reason: null, venues: [], correction: null, movement: null, audit_size: null },
-    sensitivity: { scales: [], shift: 0, reliable: true }, hearing: null, advice: [],
+    speaking: readSpeaking(tables, spec.interval, smallestGroup),
+    benchmark: inputs.benchmark === null || tables.segments === null ? null : readBenchmark(heardBy(tables.segments, inputs.benchmark), spec.interval, smallestGroup),
+    importance: inputs.importance === null ? null : readImportance(reading, inputs.importance, smallestGroup),
+    volume: readVolume(tables, survey, inputs.customers, smallestGroup),
+    tipping: readTipping(reading, spec.interval),
+    coder: readCoder(reading, audited, inputs.audit !== null, spec.facts.labelScores, spec.interval),
+    sensitivity: readSensitivity(reading), hearing: readHearing(outlook),
     diagnostics: readDiagnostics(reading, spec.seed, spec.interval),
     method: readMethod(reading, spec.facts),
   }
-  return { ...findings, caveats: ruleCaveats({ findings, reading, givenNotUsed: spec.facts.givenNotUsed }) }
+  const advice = readAdvice(outlook, findings, inputs.benchmark)
+  const unruled: Unruled = maskSmallGroups({ ...findings, advice }, tables, smallestGroup)
+  return { ...unruled, caveats: ruleCaveats({ findings: unruled, reading, givenNotUsed: spec.facts.givenNotUsed }) }
 }
 
 /** The same refits, told as they are done. */

@@ -127,6 +127,8 @@ export const coder = z.strictObject({
     /** Share of the hand-coded posts that the coder labelled alike. */
     agreement: share,
     smallest_singular_value: z.number().min(0),
+    /** Why the venue's scores stay as coded; null where they are corrected. */
+    refused: z.enum(['too-few', 'too-poor', 'ranges', 'ready-made', 'no-audit']).nullable(),
     /** What correcting does to the venue's mean score in the period, in points. */
     correction: estimate.nullable(),
   })),
@@ -178,7 +180,7 @@ export const advice = z.strictObject({
   where: z.string(), where_kind: z.enum(['venue', 'segment', 'topic', 'survey', 'coder', 'all']),
   how_many: count,
   /** Fall of the standard deviation that the advice is ranked by, in points; of what is said in `gain_of`. */
-  gain: estimate.nullable(), gain_of: z.enum(['next-change', 'importance-change', 'customer-mean', 'verdict', 'coding', 'none']),
+  gain: estimate.nullable(), gain_of: z.enum(['next-change', 'importance-level', 'customer-mean', 'none']),
   cost: z.number().min(0).nullable(),
   /** Whether the account gave the cost of an author; 1 each if not. */
   cost_given: z.boolean(),

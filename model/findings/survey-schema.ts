@@ -64,7 +64,8 @@ const forecastScore = z.strictObject({
 })
 
 const rival = forecastScore.extend({
-  rival: z.enum(['carry-forward', 'past-mean']),
+  /** `waves-alone`: the model of the forecast without opinion, so that what the posts add is seen by itself. */
+  rival: z.enum(['carry-forward', 'past-mean', 'waves-alone']),
   /** Of the forecast from the posts over the rival's: below 1 the posts do better. */
   rmse_ratio: z.number().min(0).nullable(), crps_ratio: z.number().min(0).nullable(),
   /** Two-sided (Diebold and Mariano 1995, corrected by Harvey, Leybourne and Newbold 1997); null where losses do not vary. */
@@ -108,8 +109,8 @@ export const survey = z.strictObject({
   candidates: z.array(candidate),
   pairs: count, pairs_needed: count,
   forecast: forecast.nullable(),
-  /** Posterior weights of the lags a forecast may use, 0 standing for no lead; they sum to 1. Empty where there are too few waves. */
-  lag_weights: z.array(z.strictObject({ lag: z.number().int().min(0), weight: share })),
+  /** Posterior weights of the lags in the forecast of the next wave (of the last one where there is none), 1 standing for the last step before the fieldwork; they sum to 1. */
+  lag_weights: z.array(z.strictObject({ lag: z.number().int().min(1), weight: share })),
   next_wave: z.strictObject({
     field_start: isoDate, field_end: isoDate, dates: z.enum(['given', 'usual-spacing']),
     forecast: estimate,

@@ -1,3 +1,4 @@
+import type { CoderCorrection } from '../coder/audit.ts'
 import type { FitTables } from '../intake/intake-tables.ts'
 import { priors, walkFactor } from './priors.ts'
 import type { EffectRuns, FitCells, FitProblem, FixedGroup, Scale, ScalePositions } from './problem.ts'
@@ -7,8 +8,9 @@ import type { EffectRuns, FitCells, FitProblem, FixedGroup, Scale, ScalePosition
  * standard deviation sits. A factor with one level has no effect term; one venue alone has no drift.
  *
  * @param variance - shape (cells), V_c of every cell
+ * @param coder - what the cells' means were corrected by
  */
-export function buildProblem(tables: FitTables, variance: Float64Array): FitProblem {
+export function buildProblem(tables: FitTables, variance: Float64Array, coder: CoderCorrection | null = null): FitProblem {
   const steps = tables.timeline.steps.length
   const venueLevels = tables.factors[0].levels
   const several = venueLevels.length > 1
@@ -44,7 +46,7 @@ export function buildProblem(tables: FitTables, variance: Float64Array): FitProb
   const position: ScalePositions = { mu: 0, drift, venue: venueScale, tau }
   return {
     steps, walks: walking.length, venueWalk, venueFixed, groups, border,
-    cells: layCells(tables, columns, border, variance),
+    cells: layCells(tables, columns, border, variance), coder,
     movementMultiplier: new Float64Array(steps).fill(1),
     scales, position, initialSd: priors.initial,
   }
@@ -62,7 +64,7 @@ function layCells(tables: FitTables, factors: readonly FactorColumns[], border: 
   const still = new Int32Array(cells.count)
   const venues = tables.factors[0].levels.length
   return {
-    count: cells.count, mean: cells.mean, variance,
+    count: cells.count, mean: cells.mean, mentions: cells.mentions, levels: cells.levels, variance,
     venues: groupCells(cells.step, cells.levels[0], still, venues, 1),
     effects: columns.map((column) => groupCells(cells.step, cells.levels[0], column, venues, border)),
     // a later factor's columns lie further right: its row holds the pair in the lower triangle

@@ -1,3 +1,4 @@
+import { drawWeights, type VenueWeights } from '../coder/rescore.ts'
 import { createGenerator } from '../random/generator.ts'
 import type { FitExecutor } from './executor.ts'
 import type { FitProblem } from './problem.ts'
@@ -13,6 +14,8 @@ export interface Posterior extends SampledScales {
   readonly problem: FitProblem
   /** Equally weighted joint draws: what is said about states comes from these; about the standard deviations, from `sigmas`. */
   readonly draws: StateDraws
+  /** Shape (draws): what each coded label is worth in the draw; null where nothing is corrected. */
+  readonly weights: readonly VenueWeights[] | null
 }
 
 export interface StateDraws {
@@ -46,7 +49,12 @@ export async function samplePosterior(problem: FitProblem, executor: FitExecutor
   progress(0.6)
   const draws = await drawJointly(problem, executor, scales.sigmas, options)
   progress(1)
-  return { problem, draws, ...scales }
+  return { problem, draws, ...scales, weights: weightsOfDraws(problem, options) }
+}
+
+/** As the draws of the states made them: from the beginning of the same streams. */
+function weightsOfDraws({ coder }: FitProblem, { draws, seed }: PosteriorOptions): readonly VenueWeights[] | null {
+  return coder === null ? null : Array.from({ length: draws }, (_, row) => drawWeights(coder, createGenerator(seed, streams.states + row)))
 }
 
 /** Equally weighted rows, and one exact draw of all states for each. */

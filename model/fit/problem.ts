@@ -1,3 +1,5 @@
+import type { CoderCorrection } from '../coder/audit.ts'
+
 /**
  * The linking model of one brand, as arrays:
  *
@@ -21,6 +23,8 @@ export interface FitProblem {
   /** s, all border columns. */
   readonly border: number
   readonly cells: FitCells
+  /** Where the coder's errors are undone: each draw of the states then has a draw of its own of what they are. null: cells are as they stand. */
+  readonly coder: CoderCorrection | null
   /** Shape (steps): multiplier of sigma_mu^2 for the movement into the step; the first is not read. */
   readonly movementMultiplier: Float64Array
   /** The standard deviations, in the order of every `sigma` vector: mu, drift per walking venue, groups, tau. */
@@ -56,6 +60,9 @@ export interface ScalePositions {
 export interface FitCells {
   readonly count: number
   readonly mean: Float64Array
+  /** As in the cells: for means that change with the coder's errors. */
+  readonly mentions: Float64Array
+  readonly levels: readonly Int32Array[]
   /** V_c. */
   readonly variance: Float64Array
   /** Cells of one step and venue. */

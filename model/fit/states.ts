@@ -1,5 +1,6 @@
 import { createBorderedVector, solveBackward, solveForward, type BorderedVector } from '../linear/bordered-precision.ts'
 import type { Generator } from '../random/generator.ts'
+import { drawWeights, fillMeans } from '../coder/rescore.ts'
 import type { FitProblem } from './problem.ts'
 import { createWorkspace, logEvidence, type Workspace } from './evidence.ts'
 
@@ -37,7 +38,7 @@ export function conditionalMean(problem: FitProblem, sigma: Float64Array, work: 
 /**
  * Joint draws of all states given the standard deviations, exactly: L'^-1 (u + z), z standard normal
  * (Rue and Held 2005, Gaussian Markov Random Fields, algorithm 2.4). Rows with the same standard deviations side by side
- * share one factor.
+ * share one factor. Where the coder's errors are undone, each row first draws what they are from its stream (`drawWeights`).
  *
  * @param sigmas - shape (n, scales)
  * @param generatorOf - the random stream of a row
@@ -51,9 +52,12 @@ export function drawStates(problem: FitProblem, sigmas: Float64Array, generatorO
   const n = sigmas.length / d
   const out = new Float64Array(n * width)
   const disturbed = createBorderedVector(problem.steps, 1 + problem.walks, problem.border)
+  const mean = problem.cells.mean.slice()
+  const ofRow: FitProblem = { ...problem, cells: { ...problem.cells, mean } }
   for (let row = 0; row < n; row++) {
-    if (row === 0 || !sameRow(sigmas, row, d)) logEvidence(problem, sigmas.subarray(row * d, (row + 1) * d), work.evidence)
     const generator = generatorOf(row)
+    if (problem.coder !== null) fillMeans(problem.coder, problem.cells, drawWeights(problem.coder, generator), mean)
+    if (row === 0 || problem.coder !== null || !sameRow(sigmas, row, d)) logEvidence(ofRow, sigmas.subarray(row * d, (row + 1) * d), work.evidence)
     for (let i = 0; i < vector.walk.length; i++) disturbed.walk[i] = vector.walk[i] + generator.normal()
     for (let i = 0; i < vector.fixed.length; i++) disturbed.fixed[i] = vector.fixed[i] + generator.normal()
     solveBackward(precision, disturbed, work.solution)

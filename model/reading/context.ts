@@ -8,7 +8,10 @@ import { createSummariser, type Summariser } from './summarise.ts'
 
 /** What every reading of the posterior reads from. */
 export interface Reading {
+  /** As coded: what is counted and averaged raw. */
   readonly tables: IntakeTables
+  /** As the fit takes them: the coder's errors undone, where an audit allows it. */
+  readonly fitted: IntakeTables
   readonly mix: TargetMix
   readonly sampling: SamplingVariance
   readonly posterior: Posterior
@@ -29,7 +32,7 @@ export interface Reading {
  * @param interval - probability inside every interval
  * @throws {ModelError} `base-empty`, `period-empty`: no step's midpoint lies in the base, or in the period
  */
-export function createReading(tables: IntakeTables, mix: TargetMix, sampling: SamplingVariance, posterior: Posterior, interval: number): Reading {
+export function createReading(tables: IntakeTables, fitted: IntakeTables, mix: TargetMix, sampling: SamplingVariance, posterior: Posterior, interval: number): Reading {
   const { timeline } = tables
   const columns = drawColumns(tables, posterior)
   const centre = mix.shares.map((shares, f) => combine(columns.offset[f], shares, columns.count))
@@ -39,7 +42,7 @@ export function createReading(tables: IntakeTables, mix: TargetMix, sampling: Sa
   if (baseSteps.length === 0) throw new ModelError('base-empty', `Unexpected base ${timeline.base.from} to ${timeline.base.to}, expected it to hold the midpoint of a step`)
   if (periodSteps.length === 0) throw new ModelError('period-empty', `Unexpected period ${timeline.review.name}, expected it to hold the midpoint of a step`)
   return {
-    tables, mix, sampling, posterior, columns, centre,
+    tables, fitted, mix, sampling, posterior, columns, centre,
     summary: createSummariser(interval, columns.count),
     adjusted: columns.mu.map((mu) => sum(mu, common)),
     baseSteps, periodSteps,

@@ -1,6 +1,7 @@
 import type { Findings } from '../findings/schema.ts'
 import { midpointSplit } from '../statistics/kitagawa.ts'
 import { average, combine, difference, sum } from './draw-columns.ts'
+import { periodCorrection } from './coder.ts'
 import { stepsOfPeriod, type Reading } from './context.ts'
 import { movementOf } from './movement.ts'
 import { points } from './summarise.ts'
@@ -15,6 +16,7 @@ import { points } from './summarise.ts'
  *   venue_mix     shares of venues, at the mean of before and after of alpha[v] + d[v]   } midpoint rule (Kitagawa 1955)
  *   venue_drift   drift of venues, at the mean of the shares before and after            }
  *   FACTOR_mix    shares of topics, poster classes, further factors, at their offsets
+ *   coding        what the coder's errors did to the raw average, where an audit undoes them
  *   unexplained   raw less fitted
  *
  * @returns null where there is no period before or one of the two holds no mention
@@ -79,8 +81,17 @@ export function decompose(reading: Reading): Decomposition | null {
     { part: 'venue_mix', column: venue.mix, mix: mixOf(0, venueRates) }, { part: 'venue_drift', column: venue.drift, mix: null }, ...others,
   ]
   const rawChange = after.raw - before.raw
-  const fitted = explained.reduce<Float64Array>((total, { column }) => sum(total, column), new Float64Array(count))
-  return { rawChange, columns: [...explained, { part: 'unexplained', column: fitted.map((x) => rawChange - x), mix: null }] }
+  const coding = codingChange(reading)
+  const told: readonly DecompositionPart[] = coding === null ? explained : [...explained, { part: 'coding', column: coding, mix: null }]
+  const fitted = told.reduce<Float64Array>((total, { column }) => sum(total, column), new Float64Array(count))
+  return { rawChange, columns: [...told, { part: 'unexplained', column: fitted.map((x) => rawChange - x), mix: null }] }
+}
+
+/** Change of the raw average that correcting the coder takes away, by draw; null where nothing is corrected. */
+function codingChange(reading: Reading): Float64Array | null {
+  const { current } = reading.tables.timeline
+  const [before, after] = [periodCorrection(reading, current - 1), periodCorrection(reading, current)]
+  return before === null || after === null ? null : difference(before, after)
 }
 
 /**

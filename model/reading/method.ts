@@ -8,6 +8,8 @@ import { points } from './summarise.ts'
 export interface AccountFacts {
   readonly givenNotUsed: readonly string[]
   readonly smallestGroup: number
+  /** Scores of the labels that mentions are coded by; null where none are. */
+  readonly labelScores: readonly number[] | null
   readonly posterBounds: { readonly occasional: number; readonly regular: number }
   readonly preparedBy: string | null
   readonly reviewedBy: string | null

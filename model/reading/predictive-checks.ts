@@ -50,19 +50,32 @@ interface VenueCells {
   readonly step: Int32Array
   /** Per factor other than venue, the cell's level. */
   readonly levels: readonly Int32Array[]
+  /** As the fit took them. */
   readonly mean: Float64Array
   readonly variance: Float64Array
+  /** Means as one draw of the coder's errors has them; the same array where nothing is corrected. */
+  meanOf(draw: number): Float64Array
 }
 
-function venueCells({ tables: { cells }, sampling }: Reading, venue: number): VenueCells {
+function venueCells({ tables: { cells }, sampling, posterior }: Reading, venue: number): VenueCells {
   const own = Int32Array.from({ length: cells.count }, (_, c) => c).filter((c) => cells.levels[0][c] === venue)
+  const mean = Float64Array.from(own, (c) => posterior.problem.cells.mean[c])
   return {
     count: own.length,
     step: own.map((c) => cells.step[c]),
     levels: cells.levels.slice(1).map((level) => own.map((c) => level[c])),
-    mean: Float64Array.from(own, (c) => cells.mean[c]),
+    mean,
     variance: Float64Array.from(own, (c) => sampling.variance[c]),
+    meanOf: (draw) => rescoredMeans(posterior, venue, own, draw) ?? mean,
   }
+}
+
+/** null where the venue's scores stand as coded. */
+function rescoredMeans({ problem: { coder, cells }, weights }: Reading['posterior'], venue: number, own: Int32Array, draw: number): Float64Array | null {
+  const scores = weights?.[draw][venue] ?? null
+  if (coder === null || scores === null) return null
+  const k = scores.length
+  return Float64Array.from(own, (c) => scores.reduce((sum, score, l) => sum + score * coder.labels.counts[c * k + l], 0) / cells.mentions[c])
 }
 
 /** (y_c - fitted) / sqrt(V_c + tau^2) with the states and tau of one draw. */
@@ -71,10 +84,11 @@ function fillResiduals({ columns, posterior }: Reading, venue: number, cells: Ve
   const tau = posterior.draws.sigmas[draw * scales + posterior.problem.position.tau]
   const level = Float64Array.from(columns.mu, (mu, t) => mu[draw] + columns.drift[venue][t][draw] + columns.offset[0][venue][draw])
   const offsets = columns.offset.slice(1).map((levels) => Float64Array.from(levels, (column) => column[draw]))
+  const mean = cells.meanOf(draw)
   for (let i = 0; i < cells.count; i++) {
     let fitted = level[cells.step[i]]
     for (let f = 0; f < offsets.length; f++) fitted += offsets[f][cells.levels[f][i]]
-    target[i] = (cells.mean[i] - fitted) / Math.sqrt(cells.variance[i] + tau * tau)
+    target[i] = (mean[i] - fitted) / Math.sqrt(cells.variance[i] + tau * tau)
   }
 }
 

@@ -1,5 +1,8 @@
 import type { Findings } from '../findings/schema.ts'
 import type { IntakeTables } from '../intake/intake-tables.ts'
+import { readPull } from '../speaking/pull.ts'
+import { readSpread } from '../speaking/spread.ts'
+import { readStaying } from '../speaking/staying.ts'
 import { concentrationOf } from '../statistics/concentration.ts'
 import { sumCells } from './cell-sums.ts'
 import { shareOf } from './venues.ts'
@@ -8,7 +11,7 @@ type Speaking = Findings['speaking']
 type Concentration = NonNullable<Speaking['concentration']['period']>
 
 /** Who is speaking: how concentrated mentions are in few authors, and the mix of every factor over the periods. */
-export function readSpeaking(tables: IntakeTables): Speaking {
+export function readSpeaking(tables: IntakeTables, interval: number, smallestGroup: number): Speaking {
   const { timeline, factors } = tables
   const all = -1
   return {
@@ -18,7 +21,7 @@ export function readSpeaking(tables: IntakeTables): Speaking {
     },
     venues: factors[0].levels.map(({ name }, v) => ({ venue: name, concentration: readConcentration(tables, timeline.current, v) })),
     mix: factors.flatMap((_, f) => readMix(tables, f)),
-    staying: null, spread: [], pull: [],
+    staying: readStaying(tables, interval, smallestGroup), spread: readSpread(tables, interval, smallestGroup), pull: readPull(tables, interval, smallestGroup),
   }
 }
 

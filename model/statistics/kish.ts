@@ -4,19 +4,22 @@ import { ModelError } from '../model-error.ts'
  * How many equally weighted respondents a weighted sample is worth: (sum w)^2 / sum w^2.
  *
  * @param weights - shape (n), one per respondent, n >= 1; finite, >= 0, any scale
+ * @param counts - shape (n), >= 0: respondents of each weight; one each if left out
  * @returns respondents, in [1, n] up to rounding; n when all weights agree
- * @throws {ModelError} `weights-invalid` (names the index) or `weights-empty` (none positive)
+ * @throws {ModelError} `weights-invalid` (names the index), `weights-empty` (none positive), `counts-invalid` (names the index)
  * @see Kish (1965), Survey Sampling, section 11.7
  * @example kishEffectiveSize([1, 1, 2]) // => 2.6666666666666665
  */
-export function kishEffectiveSize(weights: ArrayLike<number>): number {
+export function kishEffectiveSize(weights: ArrayLike<number>, counts?: ArrayLike<number>): number {
   const largest = largestWeight(weights)
   let sum = 0
   let squares = 0
   for (let i = 0; i < weights.length; i += 1) {
     const weight = weights[i] / largest
-    sum += weight
-    squares += weight * weight
+    const count = counts === undefined ? 1 : counts[i]
+    if (!(count >= 0 && count < Infinity)) throw new ModelError('counts-invalid', `Unexpected counts[${i}] ${count}, expected a finite number of at least 0`)
+    sum += count * weight
+    squares += count * weight * weight
   }
   return (sum * sum) / squares
 }

@@ -21,8 +21,8 @@ interface Method {
 }
 
 /**
- * How the forecasts did against what the waves said, and against two rivals that read no post: the last wave carried forward, and the mean of
- * past waves. Scores are in the metric's unit.
+ * How the forecasts did against what the waves said, and against rivals that read no post: the last wave carried forward, the mean of
+ * past waves, and the same model of the waves without opinion. Scores are in the metric's unit.
  *
  * @param interval - probability inside the intervals whose coverage is told
  * @returns null where no wave could be forecast
@@ -32,6 +32,7 @@ export function evaluateForecasts(waves: readonly ForecastWave[], interval: numb
   const observed = waves.map(({ wave }) => wave.value)
   const posts = methodOf(waves.map(({ forecast }) => forecast.components), interval)
   const carried = methodOf(waves.map(({ forecast }) => [carryForward(valuesOf(forecast.known))]), interval)
+  const alone = methodOf(waves.map(({ forecast }) => forecast.wavesAlone), interval)
   const past = methodOf(waves.map(({ forecast }) => [pastMean(valuesOf(forecast.known))]), interval)
   const own = scoreOf(posts, observed, interval)
   const errors = errorsOf(posts, observed)
@@ -42,7 +43,7 @@ export function evaluateForecasts(waves: readonly ForecastWave[], interval: numb
       dm_p: dieboldMariano(errors, errorsOf(method, observed), 1).p.value,
     }
   }
-  const rivals = [rivalOf('carry-forward', carried), rivalOf('past-mean', past)]
+  const rivals = [rivalOf('carry-forward', carried), rivalOf('past-mean', past), rivalOf('waves-alone', alone)]
   return {
     origins: waves.length, ...own, rmse_ratio: rivals[0].rmse_ratio, dm_p: rivals[0].dm_p, rivals,
     waves: waves.map(({ wave, forecast }, i) => {

@@ -66,7 +66,7 @@ function fitLag({ lag, x, y }: LagPairs): readonly Fitted[] {
   const shrink = n / (1 + n)
   const whitened = rhos.map((rho) => ({ rho, ...regress(whiten(new Float64Array(n).fill(1), rho), whiten(x, rho), whiten(y, rho)) }))
   if (whitened.some(({ squaresX, squaresY }) => !(squaresX > 0) || !(squaresY > 0))) return []
-  const logNull = whitened.map(({ rho, squaresOne, squaresY }) => 0.5 * Math.log((1 - rho * rho) / squaresOne) - (n - 1) / 2 * Math.log(squaresY))
+  const logNull = whitened.map(({ rho, squaresOne, squaresY }) => logNoSlope(rho, squaresOne, squaresY, n))
   const top = Math.max(...logNull)
   const noSlope = top + Math.log(logNull.reduce((sum, value) => sum + Math.exp(value - top), 0))
   return whitened.map(({ rho, squaresOne, squaresX, squaresY, products, constant, constantPerSlope }, i) => {
@@ -84,13 +84,23 @@ function whiten(values: Float64Array, rho: number): Float64Array {
   return values.map((value, w) => (w === 0 ? Math.sqrt(1 - rho * rho) * value : value - rho * values[w - 1]))
 }
 
+/** Log marginal likelihood without opinion, up to what all rho share. */
+function logNoSlope(rho: number, squaresOne: number, squares: number, n: number): number {
+  return 0.5 * Math.log((1 - rho * rho) / squaresOne) - (n - 1) / 2 * Math.log(squares)
+}
+
+/** Mean of whitened values against the whitened constant, and what they deviate from it by. */
+function centred(one: Float64Array, values: Float64Array) {
+  const squaresOne = dot(one, one)
+  const mean = dot(one, values) / squaresOne
+  const beside = values.map((value, i) => value - mean * one[i])
+  return { squaresOne, mean, beside, squares: dot(beside, beside) }
+}
+
 /** Squares and products of x and y beside the constant. */
 function regress(one: Float64Array, x: Float64Array, y: Float64Array) {
-  const squaresOne = dot(one, one)
-  const [constantPerSlope, constant] = [dot(one, x) / squaresOne, dot(one, y) / squaresOne]
-  const besideX = x.map((value, i) => value - constantPerSlope * one[i])
-  const besideY = y.map((value, i) => value - constant * one[i])
-  return { squaresOne, constant, constantPerSlope, squaresX: dot(besideX, besideX), squaresY: dot(besideY, besideY), products: dot(besideX, besideY) }
+  const [ofX, ofY] = [centred(one, x), centred(one, y)]
+  return { squaresOne: ofX.squaresOne, constantPerSlope: ofX.mean, constant: ofY.mean, squaresX: ofX.squares, squaresY: ofY.squares, products: dot(ofX.beside, ofY.beside) }
 }
 
 function dot(a: Float64Array, b: Float64Array): number {
@@ -124,6 +134,23 @@ function componentOf({ rho, weight, pairs, constant, constantPerSlope, slope, va
     centre: rho * last.y + constant * one + slope * besideX,
     scale: Math.sqrt(variance * (1 + one * one / squaresOne + shrink * besideX * besideX / squaresX)),
   }
+}
+
+/**
+ * The next wave from the waves alone: the same model without opinion, a mixture over rho.
+ *
+ * @param y - shape (waves), at least five that vary
+ */
+export function forecastAlone(y: Float64Array): readonly MixtureComponent[] {
+  const n = y.length
+  const fits = rhos.map((rho) => ({ rho, ...centred(whiten(new Float64Array(n).fill(1), rho), whiten(y, rho)) }))
+  const logWeights = fits.map(({ rho, squaresOne, squares }) => logNoSlope(rho, squaresOne, squares, n))
+  const top = Math.max(...logWeights)
+  const total = logWeights.reduce((sum, value) => sum + Math.exp(value - top), 0)
+  return fits.map(({ rho, squaresOne, mean, squares }, i) => {
+    const one = 1 - rho
+    return { weight: Math.exp(logWeights[i] - top) / total, freedom: n - 1, centre: rho * y[n - 1] + mean * one, scale: Math.sqrt(squares / (n - 1) * (1 + one * one / squaresOne)) }
+  })
 }
 
 /** Weights of the lags, whatever rho; shape (lags that have a model), in order. */

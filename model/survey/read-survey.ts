@@ -34,14 +34,14 @@ export interface SurveySpec {
 
 /** What the survey says, whether opinion in the posts agrees with it, and whether it comes first (model.md 5). The survey is held out: no fit knows it. */
 export async function readSurvey(reading: Reading, survey: SurveyInput, events: readonly AccountEvent[], refit: Refit, { interval, seed }: SurveySpec): Promise<Survey> {
-  const { tables } = reading
+  const { tables, fitted } = reading
   const waves = headlineWaves(survey)
   const lags = lagsBetween(survey.lags)
   const metrics = readTracker(survey, interval)
   const { name, label, kind } = survey.metrics[survey.headline]
   const candidates = candidatesOf(reading).map((candidate, i) => correlateCandidate(candidate, waves, lags, interval, createGenerator(seed, surrogateStream + i)))
 
-  const forecasts = await forecastWaves(tables, waves, [...waves, ...(survey.next === null ? [] : [survey.next])], lags, refit, seed)
+  const forecasts = await forecastWaves(fitted, waves, [...waves, ...(survey.next === null ? [] : [survey.next])], lags, refit, seed)
   const scored = waves.flatMap((wave, w): ForecastWave[] => {
     const forecast = forecasts[w]
     return forecast === null ? [] : [{ wave, forecast }]

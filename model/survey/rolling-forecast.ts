@@ -6,7 +6,7 @@ import type { FitTables, IntakeTables } from '../intake/intake-tables.ts'
 import type { MixtureComponent } from '../statistics/mixture-forecast.ts'
 import { tablesBefore } from './as-of.ts'
 import type { HeadlineWave } from './headline.ts'
-import { fitLagModels, forecastFrom, type LagModel } from './lag-models.ts'
+import { fitLagModels, forecastAlone, forecastFrom, type LagModel } from './lag-models.ts'
 import { pairsNeeded } from './verdict.ts'
 import { knownPartnerOf } from './windows.ts'
 
@@ -17,6 +17,8 @@ export type Refit = (problem: FitProblem, seed: number) => Promise<Float64Array>
 export interface WaveForecast {
   readonly components: readonly MixtureComponent[]
   readonly models: readonly LagModel[]
+  /** The same without opinion: the waves' own mean and persistence. */
+  readonly wavesAlone: readonly MixtureComponent[]
   /** The waves that were known by then, oldest first: at least `pairsNeeded`. */
   readonly known: readonly HeadlineWave[]
 }
@@ -32,13 +34,13 @@ function knownBefore(waves: readonly HeadlineWave[], window: DayWindow): readonl
  * later day comes in.
  *
  * @param windows - the fieldwork of the waves to be forecast
- * @param lags - the lags looked at; those below 1 count as one, no lead: the last step before the fieldwork
+ * @param lags - the lags looked at; those below 1 count as 1, the last step before the fieldwork
  * @returns shape (windows): null where fewer than 8 waves, or no posts, were known
  */
 export function forecastWaves(
   tables: IntakeTables, waves: readonly HeadlineWave[], windows: readonly DayWindow[], lags: readonly number[], refit: Refit, seed: number,
 ): Promise<readonly (WaveForecast | null)[]> {
-  const leads = [...new Set(lags.map((lag) => Math.max(0, lag)))]
+  const leads = [...new Set(lags.map((lag) => Math.max(1, lag)))]
   return Promise.all(windows.map(async (window) => {
     const known = knownBefore(waves, window)
     const before = tablesBefore(tables, Math.max(0, Math.min(window.startStep, tables.timeline.steps.length)))
@@ -46,7 +48,7 @@ export function forecastWaves(
     const path = await refit(problemOf(before), seed)
     const models = fitLagModels(leads.map((lag) => pairsAt(path, known, lag)))
     const components = forecastFrom(models, (lag) => knownPartnerOf(path, window, lag))
-    return components.length === 0 ? null : { components, models, known }
+    return components.length === 0 ? null : { components, models, known, wavesAlone: forecastAlone(Float64Array.from(known, ({ value }) => value)) }
   }))
 }
 

@@ -31,7 +31,7 @@ async function quantitiesOf({ tables, truth }: Simulation, replicate: number): P
   const sampling = samplingVariance(tables)
   const problem = buildProblem(tables, sampling.variance)
   const posterior = await samplePosterior(problem, localExecutor(problem), { seed: replicate, proposals: 4000, draws: 1980 })
-  const reading = createReading(tables, targetMix(tables), sampling, posterior, 0.9)
+  const reading = createReading(tables, tables, targetMix(tables), sampling, posterior, 0.9)
   const { adjusted, columns, periodSteps, previousSteps } = reading
   const last = tables.timeline.steps.length - 1
   const meanOf = (values: ArrayLike<number>, steps: readonly number[]) => steps.reduce((total, t) => total + values[t], 0) / steps.length

@@ -1,11 +1,12 @@
+import { runCoderScenario, type CoderRun } from './coder-study.ts'
 import { againstTheMix, drawn, mixOnly, runScenario, type Run } from './study.ts'
 import { runSurveyScenario, trueLead, type SurveyRun, type SurveyScenario } from './survey-study.ts'
 
 /*
  * Simulated truth: does adjusted opinion follow it where the raw average does not, do intervals cover, is silence kept where only the mix moves?
- * And of a survey: is a true lead found, is none found where there is none, do forecasts cover?
+ * And of a survey: is a true lead found, is none found where there is none, do forecasts cover? Of a coder that errs: does an audit undo it?
  *
- *   npm run simulate [-- RUNS [SEED [against|drawn|still|leading|unrelated]]]
+ *   npm run simulate [-- RUNS [SEED [against|drawn|still|leading|unrelated|coder]]]
  */
 const runs = Number(process.argv[2] ?? 200)
 const seed = Number(process.argv[3] ?? 11)
@@ -48,3 +49,17 @@ async function surveyStudy(scenario: SurveyScenario): Promise<void> {
 }
 
 for (const scenario of ['leading', 'unrelated'] as const) if (only === undefined || only === scenario) await surveyStudy(scenario)
+
+async function coderStudy(): Promise<void> {
+  process.stdout.write(`a coder that errs, ${runs} runs: the 90 % interval of the period's opinion\n`)
+  for (const labels of [2, 3] as const) {
+    for (const [what, codings, perfect] of [['with an audit of 200 a venue', 200, false], ['without an audit', 0, false], ['without one, of a coder that never errs', 0, true]] as const) {
+      const found: CoderRun[] = []
+      for (let run = 0; run < runs; run++) found.push(await runCoderScenario(labels, codings, perfect, seed, run))
+      const bias = found.reduce((sum, { error }) => sum + error, 0) / found.length
+      process.stdout.write(`  ${labels} labels, ${what}: covers in ${(100 * found.filter(({ covered }) => covered).length / found.length).toFixed(1)} %, off by ${bias.toFixed(1)} points on average\n`)
+    }
+  }
+}
+
+if (only === undefined || only === 'coder') await coderStudy()

@@ -27,7 +27,7 @@ beforeAll(async () => {
   const posterior = await samplePosterior(problem, localExecutor(problem), { seed: 1, proposals: 2000, draws: 1000 })
   const { caveats, ...findings } = await analyseHere(tables)
   expect(caveats.length).toBeGreaterThan(0)
-  calm = { findings, reading: createReading(tables, targetMix(tables), sampling, posterior, 0.9), givenNotUsed: [] }
+  calm = { findings, reading: createReading(tables, tables, targetMix(tables), sampling, posterior, 0.9), givenNotUsed: [] }
 })
 
 const codesOf = (grounds: CaveatGrounds) => ruleCaveats(grounds).map(({ code }) => code)

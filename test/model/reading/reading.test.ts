@@ -20,7 +20,7 @@ async function readingOf(of: IntakeTables, given = {}): Promise<Reading> {
   const sampling = samplingVariance(of)
   const problem = buildProblem(of, sampling.variance)
   const posterior = await samplePosterior(problem, localExecutor(problem), { seed: 1, proposals: 4000, draws: 2000 })
-  return createReading(of, targetMix(of, given), sampling, posterior, 0.9)
+  return createReading(of, of, targetMix(of, given), sampling, posterior, 0.9)
 }
 
 let reading: Reading

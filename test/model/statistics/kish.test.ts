@@ -20,6 +20,12 @@ test('equal weights lose nothing, one weight is one voice', () => {
   expect(kishEffectiveSize([0, 0, 5])).toBe(1)
 })
 
+test('weights with counts are so many respondents of each', () => {
+  expect(kishEffectiveSize([1, 4], [3, 2])).toBeCloseTo(kishEffectiveSize([1, 1, 1, 4, 4]), 12)
+  expect(() => kishEffectiveSize([1, 4], [3, -2])).toThrow('counts[1] -2')
+  expect(() => kishEffectiveSize([1, 4], [3])).toThrow('counts[1] undefined')
+})
+
 // b = sum m^2 / sum m makes 1 + (b - 1) rho the variance of a mean of clustered values exactly: sum over pairs, by hand.
 test('the cluster design effect with b = sum m^2 / sum m is the exact variance ratio', () => {
   const [sizes, rho] = [[1, 2, 5], 0.3]

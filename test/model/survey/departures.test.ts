@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest'
 import { readDepartures } from '../../../model/survey/departures.ts'
 
-const forecast = { components: [{ weight: 1, centre: 50, scale: 2, freedom: 20 }], models: [], known: [] }
+const forecast = { components: [{ weight: 1, centre: 50, scale: 2, freedom: 20 }], models: [], known: [], wavesAlone: [] }
 const wave = (value: number) => ({ forecast, wave: { name: 'May', start: '2026-05-04', end: '2026-05-17', startStep: 40, days: Float64Array.of(7, 7), value, standardError: 2.5 } })
 const event = (step: number, date: string) => ({ step, date, label: date, kind: '' })
 

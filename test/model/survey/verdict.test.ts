@@ -2,8 +2,8 @@ import { describe, expect, test } from 'vitest'
 import { verdictOf } from '../../../model/survey/verdict.ts'
 
 const lag = (r: number, at: number, pairs = 30) => ({ lag: at, r, low: r - 0.1, high: r + 0.1, pairs, effective_pairs: 10, corrected: null })
-const candidate = (r: number | null, at: number, p: number | null) => ({
-  series: 'adjusted' as const, venue: null, label: 'adjusted', lags: [], best_lag: r === null ? null : at, best: r === null ? null : lag(r, at), adjusted_p: p,
+const candidate = (r: number | null, at: number, p: number | null, pairs = 30) => ({
+  series: 'adjusted' as const, venue: null, label: 'adjusted', lags: [{ ...lag(0, at, pairs), r }], best_lag: r === null ? null : at, best: r === null ? null : lag(r, at), adjusted_p: p,
 })
 const score = { rmse: 2, crps: 1, coverage: 0.9 }
 const forecast = (carried: number, mean: number) => ({
@@ -16,7 +16,8 @@ const forecast = (carried: number, mean: number) => ({
 
 describe('the first rule that holds decides', () => {
   test.each([
-    ['too-few-waves', candidate(null, 0, null), null],
+    ['too-few-waves', candidate(null, 0, null, 7), null],
+    ['not-established', candidate(null, 0, null, 8), null],
     ['contradicts', candidate(-0.6, 4, 0.05), forecast(3, 3)],
     ['leads', candidate(0.6, 4, 0.05), forecast(3, 3)],
     ['tracks', candidate(0.6, 4, 0.051), forecast(3, 3)],

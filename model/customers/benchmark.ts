@@ -1,0 +1,103 @@
+import type { Estimate, Findings } from '../findings/schema.ts'
+import type { BenchmarkMargin } from '../inputs/small-inputs.ts'
+import type { SegmentTable } from '../intake/intake-tables.ts'
+import { points } from '../reading/summarise.ts'
+import { dissimilarityIndex } from '../statistics/dissimilarity.ts'
+import { rake, type Raking } from '../statistics/raking.ts'
+import { twoSidedQuantile } from '../statistics/wilson.ts'
+
+type Benchmark = NonNullable<Findings['benchmark']>
+type Margin = Benchmark['margins'][number]
+
+/** No author counts for more than five, or less than a fifth, of the usual one. */
+const bounds = { lower: 0.2, upper: 5 } as const
+const percent = 100
+
+/** Authors by the levels of the benchmark's margins: the table that is weighted. */
+export interface Heard {
+  readonly margins: readonly BenchmarkMargin[]
+  /** Shape (rows): of each margin the index of the level among the benchmark's; -1 where it is none of them. */
+  readonly levels: readonly (readonly number[])[]
+  readonly authors: readonly number[]
+  readonly sums: readonly number[]
+  readonly squares: readonly number[]
+}
+
+/** The authors of the period by the benchmark's levels; values that it does not know count as not known. */
+export function heardBy(segments: SegmentTable, margins: readonly BenchmarkMargin[]): Heard {
+  const placed = margins.map(({ margin, levels }) => {
+    const at = segments.margins.indexOf(margin)
+    return { at, place: segments.levels[at].map((name) => levels.findIndex(({ level }) => level === name)) }
+  })
+  return {
+    margins,
+    levels: segments.rows.map((row) => placed.map(({ at, place }) => (row.levels[at] < 0 ? -1 : place[row.levels[at]]))),
+    authors: segments.rows.map(({ authors }) => authors), sums: segments.rows.map(({ sum }) => sum), squares: segments.rows.map(({ squares }) => squares),
+  }
+}
+
+/** Weights for the authors of whom every margin is known; null where there is none. */
+export function rakeHeard({ margins, levels, authors }: Heard): Raking | null {
+  const known = authors.map((count, i) => (levels[i].some((level) => level < 0) ? 0 : count))
+  const counted = known.some((count) => count > 0)
+  const columns = margins.map((_, m) => levels.map((row) => Math.max(0, row[m])))
+  return counted ? rake({ levels: columns, counts: known }, margins.map((margin) => margin.levels.map(({ share }) => share)), bounds) : null
+}
+
+/** Whom the posts stand for: authors of the period beside customers, and what weighting them to the customers would do (model.md 6). */
+export function readBenchmark(heard: Heard, interval: number, smallestGroup: number): Benchmark {
+  const raking = rakeHeard(heard)
+  const all = heard.authors.reduce((sum, count) => sum + count, 0)
+  const sum = heard.sums.reduce((total, value) => total + value, 0)
+  return {
+    margins: heard.margins.map((margin, m) => readMargin(heard, margin, m, smallestGroup)),
+    raking: raking === null ? null : tellRaking(raking),
+    unreachable: heard.margins.flatMap(({ margin, levels }, m) => levels.flatMap(({ level, share }, l) => (share > 0 && authorsAt(heard, m, l) === 0 ? [{ margin, level, customers: share }] : []))),
+    as_heard: all < smallestGroup ? null : points * sum / all,
+    weighted: raking === null || all < smallestGroup ? null : weightedMean(raking, heard, interval),
+  }
+}
+
+function authorsAt({ levels, authors }: Heard, margin: number, level: number): number {
+  return authors.reduce((sum, count, i) => sum + (levels[i][margin] === level ? count : 0), 0)
+}
+
+function readMargin(heard: Heard, { margin, levels }: BenchmarkMargin, m: number, smallestGroup: number): Margin {
+  const counts = levels.map((_, l) => authorsAt(heard, m, l))
+  const known = counts.reduce((sum, count) => sum + count, 0)
+  return {
+    margin, authors: known, all_authors: heard.authors.reduce((sum, count) => sum + count, 0),
+    dissimilarity: known < smallestGroup ? null : dissimilarityIndex(counts.map((count) => count / known), levels.map(({ share }) => share)),
+    levels: levels.map(({ level, share }, l) => {
+      const shown = known >= smallestGroup && (counts[l] === 0 || counts[l] >= smallestGroup)
+      return {
+        level, customers: share, heard: shown ? counts[l] / known : null, authors: shown ? counts[l] : null,
+        gap: shown ? percent * (counts[l] / known - share) : null, needed: neededAt(counts[l], known, share),
+      }
+    }),
+  }
+}
+
+/** Authors of a level besides, for its share to be that of customers: (a + x) / (n + x) = share. */
+export function neededAt(authors: number, known: number, share: number): number {
+  return share >= 1 ? 0 : Math.max(0, Math.ceil((share * known - authors) / (1 - share)))
+}
+
+function tellRaking({ converged, cycles, lowest, highest, bounded, size, effectiveSize }: Raking): Benchmark['raking'] {
+  return { converged, cycles, lowest, highest, bounded, design_effect: Math.max(1, size / effectiveSize), authors: size, effective_authors: effectiveSize }
+}
+
+/** Weighted mean over authors of their mean scores, in points; its standard error by linearisation, authors independent. */
+function weightedMean({ weights }: Raking, { authors, sums, squares }: Heard, interval: number): Estimate {
+  let [total, sum] = [0, 0]
+  weights.forEach((weight, i) => {
+    total += weight * authors[i]
+    sum += weight * sums[i]
+  })
+  const mean = sum / total
+  let variance = 0
+  weights.forEach((weight, i) => { variance += weight * weight * (squares[i] - 2 * mean * sums[i] + mean * mean * authors[i]) })
+  const sd = points * Math.sqrt(Math.max(0, variance)) / total
+  const reach = twoSidedQuantile(interval) * sd
+  return { mean: points * mean, low: points * mean - reach, high: points * mean + reach, sd }
+}
