@@ -32,7 +32,7 @@ import { readVolume } from './customers/volume.ts'
 import { maskSmallGroups } from './findings/mask.ts'
 import { readOutcome } from './outcome/read-outcome.ts'
 import { readSurvey } from './survey/read-survey.ts'
-import type { Refit } from './survey/rolling-forecast.ts'
+import { mostForecasts, type Refit } from './survey/rolling-forecast.ts'
 
 /*
  *   intake tables ──▶ sampling variance ──▶ problem ──▶ posterior ──▶ reading ──▶ opinion, decomposition, venues, ...
@@ -81,6 +81,7 @@ export async function analyse(
   const reading = createReading(tables, fitted, mix, sampling, posterior, spec.interval)
   const { timeline } = tables
   const survey = inputs.survey === null ? null : await readSurvey(reading, inputs.survey, inputs.events ?? [], counted(workers.refit, inputs.survey, progress.forecasts), spec)
+  const opinion = readOpinion(reading)
   const outlook = createOutlook(reading, spec.interval)
   const { smallestGroup } = spec.facts
   const findings: Omit<Unruled, 'advice'> = {
@@ -89,7 +90,7 @@ export async function analyse(
     period_steps: readPeriodSteps(reading),
     grid: timeline.grid, interval: spec.interval,
     accounting: readAccounting(tables, spec.facts),
-    opinion: readOpinion(reading),
+    opinion,
     decomposition: readDecomposition(reading),
     venues: readVenues(reading),
     topics: readLevels(reading, 'topic').map(({ name, ...rest }) => ({ topic: name, ...rest })),
@@ -103,7 +104,7 @@ export async function analyse(
     speaking: readSpeaking(tables, spec.interval, smallestGroup),
     benchmark: inputs.benchmark === null || tables.segments === null ? null : readBenchmark(heardBy(tables.segments, inputs.benchmark), spec.interval, smallestGroup),
     importance: inputs.importance === null ? null : readImportance(reading, inputs.importance, smallestGroup),
-    volume: readVolume(tables, survey, inputs.customers, smallestGroup),
+    volume: readVolume(opinion, survey, inputs.customers, smallestGroup),
     tipping: readTipping(reading, spec.interval),
     coder: readCoder(reading, audited, inputs.audit !== null, spec.facts.labelScores, spec.interval),
     sensitivity: readSensitivity(reading), hearing: readHearing(outlook),
@@ -117,10 +118,12 @@ export async function analyse(
 
 /** The same refits, told as they are done. */
 function counted(refit: Refit, { waves }: SurveyInput, progress: (share: number) => void = () => undefined): Refit {
+  // waves that begin in the same step share a refit
+  const expected = Math.min(mostForecasts, new Set(waves.map(({ startStep }) => startStep)).size)
   let done = 0
   return async (problem, seed) => {
     const path = await refit(problem, seed)
-    progress(Math.min(1, ++done / waves.length))
+    progress(Math.min(1, ++done / expected))
     return path
   }
 }

@@ -2,8 +2,10 @@
  * Makes the data of the demo account:
  *
  *   story ──▶ posts ──▶ blemished rows ──▶ posts/*.csv.gz, reviews/*.ndjson
+ *     │       └──────────────────────────▶ audit/coding.csv
  *     ├──────────────────────────────────▶ survey/tracker.csv, outcome/passengers.csv
  *     └──────────────────────────────────▶ truth.csv
+ *   drivers ─────────────────────────────▶ importance/drivers.csv
  *
  *   npx tsx sample-data/make-skerrow-ferries.ts [FOLDER] [--summary]
  *
@@ -15,8 +17,10 @@ import { argv, stdout } from 'node:process'
 import { pathToFileURL } from 'node:url'
 import { blemish } from './making/blemishes.ts'
 import type { Row } from './making/blemishes.ts'
+import { driverLines } from './making/drivers.ts'
 import { exportFiles, text } from './making/export-files.ts'
 import type { ExportFile } from './making/export-files.ts'
+import { auditLines } from './making/hand-coding.ts'
 import { outcomeLines } from './making/outcome.ts'
 import { brand, writePosts } from './making/posts.ts'
 import type { Post } from './making/posts.ts'
@@ -36,18 +40,21 @@ export interface Demo {
   readonly files: readonly ExportFile[]
 }
 
-/** The whole demo in memory; the same on every run. Posts, survey and outcome have a stream of draws each. */
-export function makeDemo(storySeed = 2070, postSeed = 4, surveySeed = 7, outcomeSeed = 1): Demo {
+/** The whole demo in memory; the same on every run. Posts, survey, outcome, audit and drivers have a stream of draws each. */
+export function makeDemo(storySeed = 2070, postSeed = 4, surveySeed = 7, outcomeSeed = 1, auditSeed = 1, driverSeed = 2): Demo {
   const story = tellStory(seededDraws(storySeed))
   const draws = seededDraws(postSeed)
   const posts = writePosts(story, draws)
   const rows = blemish(posts, draws)
+  const sound = rows.filter(({ flaw, post }) => flaw === 'none' && post.brand === brand).map(({ post }) => post)
   return {
     story, posts, rows,
     files: [
       ...exportFiles(rows, draws),
       { path: 'survey/tracker.csv', bytes: text(surveyLines(story, seededDraws(surveySeed))) },
       { path: 'outcome/passengers.csv', bytes: text(outcomeLines(story, seededDraws(outcomeSeed))) },
+      { path: 'audit/coding.csv', bytes: text(auditLines(sound, seededDraws(auditSeed))) },
+      { path: 'importance/drivers.csv', bytes: text(driverLines(seededDraws(driverSeed))) },
       { path: 'truth.csv', bytes: truthTable(story) },
     ],
   }

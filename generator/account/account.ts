@@ -26,6 +26,8 @@ export interface Account {
   readonly targetMix: readonly TargetMargin[]
   readonly survey: SurveySource | null
   readonly benchmark: FileSet | null
+  /** How many customers the brand has; null where the account does not say. */
+  readonly customers: number | null
   readonly codingAudit: FileSet | null
   readonly importance: FileSet | null
   readonly events: FileSet | null

@@ -29,7 +29,7 @@ export function accountOf(folder: string, entries: Entries, found: Found, given:
       headline: entries.survey.headline ?? null, lags: entries.survey.lags ?? usualLags[entries.grid],
       labels: entries.survey.labels, nextFieldwork: entries.survey.next_fieldwork ?? null,
     },
-    benchmark: table('benchmark'), codingAudit: table('coding_audit'), importance: table('importance'),
+    benchmark: table('benchmark'), customers: entries.customers ?? null, codingAudit: table('coding_audit'), importance: table('importance'),
     events: table('events'), outcome: table('outcome'),
     template: entries.template ?? null, theme: entries.theme ?? null, notes: entries.notes ?? null,
     preparedBy: entries.prepared_by ?? null, reviewedBy: entries.reviewed_by ?? null,

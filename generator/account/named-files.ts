@@ -5,10 +5,9 @@ import { findFiles, findFolder, type Found } from './file-patterns.ts'
 import { dotted, placeOf, type KeyPath } from './yaml-places.ts'
 
 const mentionKinds = ['.csv', '.csv.gz', '.parquet', '.ndjson'] as const
-const tableKinds = ['.csv', '.csv.gz', '.parquet'] as const
+const cellKinds = ['.csv', '.csv.gz', '.parquet'] as const
 /** Of tables that people write: a fault in one is told by its line. */
 const lineKinds = ['.csv', '.csv.gz'] as const
-const byLine: readonly string[] = ['survey', 'events', 'outcome']
 
 interface Named {
   readonly path: KeyPath
@@ -44,11 +43,11 @@ export async function findNamedFiles(folder: string, entries: SoundEntries, plac
 function namedBy(entries: SoundEntries): readonly Named[] {
   const sources = (entries.mentions ?? []).flatMap((source, index): readonly Named[] => [
     ...(source.files === undefined ? [] : [{ path: ['mentions', index, 'files'], pattern: source.files, kinds: mentionKinds, what: 'file' as const }]),
-    ...(source.cells === undefined ? [] : [{ path: ['mentions', index, 'cells'], pattern: source.cells, kinds: tableKinds, what: 'file' as const }]),
+    ...(source.cells === undefined ? [] : [{ path: ['mentions', index, 'cells'], pattern: source.cells, kinds: cellKinds, what: 'file' as const }]),
   ])
   const tables = (['survey', 'benchmark', 'coding_audit', 'importance', 'events', 'outcome'] as const).flatMap((key): readonly Named[] => {
     const entry = entries[key]
-    return entry === undefined ? [] : [{ path: [key, 'files'], pattern: entry.files, kinds: byLine.includes(key) ? lineKinds : tableKinds, what: 'file' as const }]
+    return entry === undefined ? [] : [{ path: [key, 'files'], pattern: entry.files, kinds: lineKinds, what: 'file' as const }]
   })
   const single = (['template', 'theme', 'notes'] as const).flatMap((key): readonly Named[] => {
     const pattern = entries[key]

@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { isDate } from '../calendar/days.ts'
 import { expectations as expected } from '../faults/catalogue-account.ts'
+import { isLongName, mostCharacters } from './long-name.ts'
 
 /** The shape of account.yaml, key by key; what hangs together between keys is in combinations.ts. */
 
@@ -73,10 +74,11 @@ export const accountShape = {
     headline: text.optional(),
     lags: z.tuple([whole, whole], expected.lags).refine(([low, high]) => low <= high, expected.lags)
       .refine(([low, high]) => high - low < mostLags, expected.mostLags(mostLags)).optional(),
-    labels: z.record(z.string(), text).default({}),
+    labels: z.record(z.string(), text.refine((label) => !isLongName(label), expected.shortText(mostCharacters))).default({}),
     next_fieldwork: dateRange.optional(),
   }).optional(),
   benchmark: files.optional(),
+  customers: number.int(expected.customers).min(1, expected.customers).optional(),
   coding_audit: files.optional(),
   importance: files.optional(),
   events: files.optional(),
@@ -93,5 +95,5 @@ export type Entries = { readonly [K in keyof typeof accountShape]: z.output<(typ
 export type SourceEntry = z.output<typeof source>
 
 /** Keys that this version checks but does not use. */
-export const laterKeys = ['competitors', 'benchmark', 'coding_audit', 'importance', 'theme', 'notes'] as const
+export const laterKeys = ['competitors', 'theme', 'notes'] as const
 export type AccountKey = keyof typeof accountShape

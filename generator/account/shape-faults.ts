@@ -40,7 +40,8 @@ export function unknownKey(path: KeyPath, known: readonly string[], places: Read
 /** A value as a message shows it, short. */
 export function describe(value: unknown): string {
   if (value === null) return 'nothing'
-  if (Array.isArray(value)) return `list of ${value.length}`
+  // a pair is told by its values: which of them is wrong is seen at once
+  if (Array.isArray(value)) return value.length === 2 && value.every((part) => typeof part === 'number') ? `list \`[${value.join(', ')}]\`` : `list of ${value.length}`
   if (typeof value === 'object') return 'map'
   const text = JSON.stringify(value) ?? 'nothing'
   return `\`${text.length > 60 ? `${text.slice(0, 57)}...` : text}\``

@@ -7,6 +7,9 @@ export function isDate(text: string): boolean {
   return /^\d{4}-\d{2}-\d{2}$/.test(text) && isoDate(dayNumber(text)) === text
 }
 
+/** The dates that data may bear: one outside is mistyped. */
+export const dataDates = { first: '1900-01-01', last: '2199-12-31' } as const
+
 /** Day number of an ISO date; NaN where it cannot be read. @example dayNumber('1970-01-02') // => 1 */
 export function dayNumber(date: string): number {
   return Date.parse(`${date}T00:00:00Z`) / MILLISECONDS

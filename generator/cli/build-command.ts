@@ -8,6 +8,7 @@ import type { Program } from '../program/program.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
 import { showProgress } from './show-progress.ts'
 import type { Speaker, SpeakerOptions } from './speaker.ts'
+import { listenForStop } from './stop-signals.ts'
 
 export interface BuildFlags extends SpeakerOptions {
   readonly period?: string
@@ -25,14 +26,20 @@ export async function runBuild(program: Program, folders: readonly string[], fla
     return 2
   }
   const browsers = sharedBrowser(flags)
+  const signals = listenForStop()
   try {
     const outcomes: Outcome[] = []
-    for (const folder of folders) outcomes.push(await buildOne(program, folder, flags, browsers.open, speaker))
+    for (const folder of folders) {
+      const outcome = await buildOne(program, folder, flags, { browser: browsers.open, stop: signals.stop }, speaker)
+      outcomes.push(outcome)
+      if (outcome.exitCode > 128) break
+    }
     const exitCode = outcomes.reduce<ExitCode>((worst, outcome) => (outcome.exitCode > worst ? outcome.exitCode : worst), 0)
     speaker.give({ ok: exitCode === 0, drafts: outcomes.flatMap(({ draft }) => (draft === null ? [] : [draftResult(draft)])), faults: outcomes.flatMap(({ faults }) => faults) })
     return exitCode
   } finally {
     await browsers.close()
+    signals.close()
   }
 }
 
@@ -42,13 +49,20 @@ interface Outcome {
   readonly faults: readonly Fault[]
 }
 
-async function buildOne(program: Program, folder: string, flags: BuildFlags, browser: () => Promise<Browser>, speaker: Speaker): Promise<Outcome> {
+/** What all accounts of a run have in common. */
+interface Shared {
+  readonly browser: () => Promise<Browser>
+  readonly stop: AbortSignal
+}
+
+async function buildOne(program: Program, folder: string, flags: BuildFlags, { browser, stop }: Shared, speaker: Speaker): Promise<Outcome> {
   const shown = showProgress(speaker, process.stderr.isTTY && flags.json !== true, basename(resolve(folder)))
   try {
+    stop.throwIfAborted()
     const account = await readAccount(folder)
     const draft = await buildReview(program, account, {
       period: flags.period, out: flags.out === undefined ? undefined : resolve(flags.out), seed: flags.seed, threads: flags.threads,
-      browser: flags.pdf ? browser : null, progress: shown.progress,
+      browser: flags.pdf ? browser : null, progress: shown.progress, stop,
     })
     await shown.end()
     speaker.say(describeDraft(draft))

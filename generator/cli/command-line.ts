@@ -9,17 +9,19 @@ import { createSpeaker, type Streams } from './speaker.ts'
  * Parse the arguments and run the command they name.
  *
  * @param args - without the program's own name
- * @returns the exit code: 0 done, 1 input at fault, 2 wrong usage, 3 machine lacks something, 4 fault of the program
+ * @returns the exit code: 0 done, 1 input at fault, 2 wrong usage, 3 machine lacks something, 4 fault of the program, 130 or 143 stopped
  */
 export async function runCommandLine(args: readonly string[], streams: Streams = { out: process.stdout, err: process.stderr }): Promise<ExitCode> {
   let exitCode: ExitCode = 0
   const done = (code: ExitCode) => { exitCode = code }
-  const tareline = describe(streams, done)
   try {
+    const tareline = describe(streams, done)
     await tareline.parseAsync(args, { from: 'user' })
   } catch (error) {
     const failure = failureOf(error)
-    createSpeaker({}, streams).faults(failure.faults)
+    const speaker = createSpeaker({ json: args.includes('--json') }, streams)
+    if (failure.exitCode > 2) speaker.give({ ok: false, faults: failure.faults })
+    speaker.faults(failure.faults)
     return failure.exitCode
   }
   return exitCode
@@ -41,6 +43,8 @@ function describe(streams: Streams, done: (code: ExitCode) => void): Command {
   quietly(tareline.command('check').argument('<account>', 'folder with an account.yaml'))
     .description('read the account file, every input and the template; print the accounting of mentions; fit nothing')
     .option('--rejects <dir>', 'write the rows that could not be read, with file, line and reason')
+    .option('--audit-sample <number>', 'print the ids of so many posts to code by hand, drawn at random from every venue', wholeNumber)
+    .option('--seed <number>', 'seed of that draw; the same seed draws the same posts', wholeNumber, 1)
     .action(async (account: string, flags: CheckFlags) => { done(await runCheck(program, account, flags, createSpeaker(flags, streams))) })
 
   quietly(tareline.command('build').argument('<account...>', 'folders with an account.yaml'))

@@ -1,4 +1,17 @@
 #!/usr/bin/env node
-import { runCommandLine } from './command-line.ts'
+import { failureOf } from './outcome.ts'
 
-process.exitCode = await runCommandLine(process.argv.slice(2))
+const args = process.argv.slice(2)
+
+try {
+  // loaded here, so that whatever a machine does not let the program load is told like any other fault
+  const { runCommandLine } = await import('./command-line.ts')
+  process.exitCode = await runCommandLine(args)
+  // what was stopped may still be at work, on threads and in the database
+  if (process.exitCode > 128) process.exit()
+} catch (error) {
+  const { exitCode, faults } = failureOf(error)
+  process.exitCode = exitCode
+  if (args.includes('--json')) process.stdout.write(`${JSON.stringify({ ok: false, faults })}\n`)
+  for (const { message, mend } of faults) process.stderr.write(`${message}\n  ${mend}\n`)
+}

@@ -50,7 +50,7 @@ function showLive(what: string): ShownProgress {
       current = task
       return marks.get(stage)?.promise
     },
-  })), { exitOnError: true, rendererOptions: { collapseErrors: false, showErrorMessage: false } })
+  })), { exitOnError: true, registerSignalListeners: false, rendererOptions: { collapseErrors: false, showErrorMessage: false } })
   const shown = list.run().catch(() => undefined)
   const settleBefore = (stage: Stage) => { for (const earlier of stages.slice(0, stages.indexOf(stage))) marks.get(earlier)?.resolve() }
   return {

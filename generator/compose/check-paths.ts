@@ -82,5 +82,5 @@ function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter:
 }
 
 function written(path: Path): string {
-  return path.map((step) => step.end ? `${step.key}[${step.end}]` : step.pick ? `${step.key}[${step.pick.field}=...]` : step.key).join('.')
+  return path.map((step) => step.all ? `${step.key}[all]` : step.end ? `${step.key}[${step.end}]` : step.pick ? `${step.key}[${step.pick.field}=...]` : step.key).join('.')
 }

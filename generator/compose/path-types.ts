@@ -35,15 +35,16 @@ export function typeAt(path: Path, scope: TypeScope): PathType {
   if (!first) return { known: false, unknown: '', nearest: undefined }
   const starts = [scope.item, { properties: scope.names }, scope.findings].filter((start) => start !== undefined)
   const start = starts.find((node) => child(node, first.key)) ?? { properties: Object.fromEntries(starts.flatMap((node) => Object.entries(node.properties ?? {}))) }
-  return [first, ...rest].reduce<PathType>((at, step) => at.known ? follow(at.type, step, scope) : at, { known: true, type: start })
+  const found = [first, ...rest].reduce<PathType>((at, step) => at.known ? follow(at.type, step, scope) : at, { known: true, type: start })
+  return found.known && path.some(({ all }) => all) && !withoutNull(found.type).items ? { known: true, type: { type: 'array', items: found.type } } : found
 }
 
 function follow(node: TypeNode, step: Step, scope: TypeScope): PathType {
   const next = child(node, step.key)
   if (!next) return unknown(step.key, node)
-  if (!step.pick && !step.end) return { known: true, type: next }
+  if (!step.pick && !step.end && !step.all) return { known: true, type: next }
   const item = withoutNull(next).items
-  if (!item) return unknown(`${step.key}[${step.end ?? `${step.pick?.field}=`}]`, node)
+  if (!item) return unknown(`${step.key}[${step.all ? 'all' : step.end ?? `${step.pick?.field}=`}]`, node)
   if (!step.pick) return { known: true, type: withoutNull(item) }
   if (!child(item, step.pick.field)) return unknown(step.pick.field, item)
   const wanted = typeof step.pick.value === 'string' ? undefined : typeAt(step.pick.value, scope)
@@ -71,6 +72,7 @@ export function isOfKind(node: TypeNode, kind: string): boolean {
   const { properties = {} } = withoutNull(node)
   if (kind === 'shift') return 'share_from' in properties && 'share_to' in properties
   if (kind === 'fieldwork') return 'field_start' in properties && 'field_end' in properties
+  if (kind === 'spans') return 'best_lag' in properties && 'span_days' in properties
   return kind === 'event' ? 'label' in properties && 'date' in properties : kindOf(node) === kind
 }
 

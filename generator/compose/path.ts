@@ -1,7 +1,8 @@
 /**
  * Paths into the findings: `opinion.change.mean`, `venue.label` inside a block repeated as `venue`, and
  * `decomposition.parts[part=venue_mix].estimate`, the item of a list that a field picks out; with `@` the wanted value
- * is itself looked up: `decomposition.parts[part=@decomposition.largest].estimate`. `waves[first]` and `waves[last]` are the two ends of a list.
+ * is itself looked up: `decomposition.parts[part=@decomposition.largest].estimate`. `waves[first]` and `waves[last]` are the two ends of a list;
+ * `margins[all].levels` are the levels of every margin, one after the other.
  */
 export type Path = readonly Step[]
 
@@ -9,6 +10,7 @@ export interface Step {
   readonly key: string
   readonly pick?: { readonly field: string, readonly value: string | Path }
   readonly end?: 'first' | 'last'
+  readonly all?: true
 }
 
 /** Where paths start: the item at hand (inside `where`, `by`), the names given by `each`, the findings. First found wins. */
@@ -18,7 +20,7 @@ export interface Scope {
   readonly item?: unknown
 }
 
-const stepForm = /^([\p{L}\p{N}_-]+)(?:\[(?:([\w-]+)=(@?)([^\]@][^\]]*)|(first|last))\])?$/u
+const stepForm = /^([\p{L}\p{N}_-]+)(?:\[(?:([\w-]+)=(@?)([^\]@][^\]]*)|(first|last|all))\])?$/u
 
 /** Read a path; undefined where the text is none. */
 export function parsePath(text: string): Path | undefined {
@@ -35,6 +37,7 @@ function parseStep(text: string): Step | undefined {
   const [, key, field, reference, value, end] = stepForm.exec(text) ?? []
   if (key === undefined) return undefined
   if (end === 'first' || end === 'last') return { key, end }
+  if (end === 'all') return { key, all: true }
   if (field === undefined || value === undefined) return { key }
   const wanted = reference === '@' ? parsePath(value) : value
   return wanted === undefined ? undefined : { key, pick: { field, value: wanted } }
@@ -44,7 +47,14 @@ function parseStep(text: string): Step | undefined {
 export function lookUp(path: Path, scope: Scope): unknown {
   const [first] = path
   if (!first) return undefined
-  return path.reduce<unknown>((value, step) => follow(value, step, scope), startOf(first.key, scope))
+  return along(startOf(first.key, scope), path, scope)
+}
+
+function along(value: unknown, [step, ...rest]: Path, scope: Scope): unknown {
+  if (!step) return value
+  const next = follow(value, step, scope)
+  if (!step.all) return along(next, rest, scope)
+  return Array.isArray(next) ? next.flatMap((item: unknown) => along(item, rest, scope)) : undefined
 }
 
 function startOf(key: string, scope: Scope): unknown {

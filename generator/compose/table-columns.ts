@@ -11,7 +11,8 @@ export function parseColumns(text: string): readonly PrintedColumn[] {
   })
 }
 
-/** The message that words a column's header: `column-mentions`; every interval has the same. */
+/** The message that words a column's header: `column-mentions`; every interval has the same, save that of a change beside one of a level. */
 export function columnHeader({ keys }: PrintedColumn): string {
+  if (keys[0] === 'change_low') return 'column-change-interval'
   return keys.length === 2 ? 'column-interval' : `column-${keys[0]}`
 }

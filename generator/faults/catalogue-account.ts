@@ -4,6 +4,7 @@ import type { Wording } from './wording.ts'
 export const expectations = {
   accountName: 'letters, digits and hyphens',
   text: 'text',
+  shortText: (most: number) => `text of at most ${most} characters: it stands in tables and beside lines`,
   date: 'a date that exists, written 2026-10-31',
   dateOrder: '`to` on or after `from`',
   locale: 'a locale such as en-GB',
@@ -27,6 +28,7 @@ export const expectations = {
   share: 'a share from 0 to 1',
   shareSum: 'shares that sum to 1',
   cost: 'a number above 0',
+  customers: 'a whole number of at least 1',
   smallestGroup: 'a whole number of at least 10',
   factors: '`venue` first and every factor once',
   factorName: 'a name of lower-case letters, digits and underscores that is no column of a cell table',

@@ -10,6 +10,18 @@ export const buildWordings = {
     unexpected: `period ${details.name}`, expected: `one within the mentions, which run from ${details.first} to ${details.last}`,
     mend: 'Name another period with --period, or leave it out: then the last whole one serves.',
   }),
+  'draft-unwritable': (details: { readonly reason: string }): Wording => ({
+    unexpected: `refusal to write (${details.reason})`, expected: 'a folder that can be written, with room for a draft',
+    mend: 'Give this user the right to write there, make room, or name another folder with --out.',
+  }),
+  'stopped': (details: { readonly signal: string }): Wording => ({
+    unexpected: details.signal, expected: 'time to finish',
+    mend: 'Run the command again: an earlier draft is as it was, and what was computed is not computed twice.',
+  }),
+  'printer-unusable': (details: { readonly reason: string }): Wording => ({
+    unexpected: `state of the machine (${details.reason})`, expected: 'one in which the printing library starts',
+    mend: 'Set HOME to a folder that this user can read and work in one as well, or build with --no-pdf.',
+  }),
   'out-not-a-draft': (details: { readonly entry: string }): Wording => ({
     unexpected: `entry \`${details.entry}\``, expected: 'a folder that is absent, empty, or holds a draft',
     mend: 'Name another folder with --out: a folder with anything else in it is not replaced.',

@@ -1,10 +1,10 @@
-import type { Wording } from './wording.ts'
+import { shortened, told, type Wording } from './wording.ts'
 
 /** Faults of the data files. */
 export const intakeWordings = {
   'columns-absent': (details: { readonly columns: readonly string[]; readonly header: readonly string[]; readonly nearest: string }): Wording => ({
-    unexpected: `header ${details.header.map((name) => `\`${name}\``).join(', ')}`, expected: `the columns ${details.columns.map((name) => `\`${name}\``).join(', ')}`,
-    mend: `Mend \`columns\` of the account (nearest: \`${details.nearest}\`), or state \`delimiter\` if the header was cut wrongly.`,
+    unexpected: `header ${told(details.header)}`, expected: `the columns ${told(details.columns)}`,
+    mend: `Mend \`columns\` of the account (nearest: \`${shortened(details.nearest)}\`), or state \`delimiter\` if the header was cut wrongly.`,
   }),
   'header-twice': (details: { readonly column: string }): Wording => ({
     unexpected: `second column \`${details.column}\``, expected: 'every column of the header once',
@@ -37,6 +37,18 @@ export const intakeWordings = {
   'too-many-levels': (details: { readonly factor: string; readonly most: number }): Wording => ({
     unexpected: `more than ${details.most} values of \`${details.factor}\``, expected: 'a column with a few values that repeat',
     mend: 'Map another column to it under `columns`, give its values fewer names, or leave it out of `factors`.',
+  }),
+  'benchmark-margin-unmapped': (details: { readonly margin: string; readonly known: readonly string[]; readonly nearest: string }): Wording => ({
+    unexpected: `margin \`${details.margin}\``, expected: `a factor or a mapped column: ${details.known.join(', ')}`,
+    mend: `Did you mean \`${details.nearest}\`? Otherwise map the column that says it under \`columns\`, or leave the margin out of the benchmark.`,
+  }),
+  'audit-sample-ids': (_: object): Wording => ({
+    unexpected: 'absence of ids', expected: '`id` among the `columns` of a source whose scores are labels',
+    mend: 'Map the column that identifies a post, so that the posts to code by hand can be named.',
+  }),
+  'audit-sample-small': (details: { readonly size: number; readonly least: number; readonly each: number }): Wording => ({
+    unexpected: `sample of ${details.size}`, expected: `at least ${details.least}: ${details.each} of every venue, or all that it has`,
+    mend: `Ask for ${details.least} or more: an audit of fewer in a venue is not applied there.`,
   }),
   'cell-value': (details: { readonly actual: string; readonly expected: string }): Wording => ({
     unexpected: details.actual === '' ? 'empty value' : `\`${details.actual}\``, expected: details.expected,

@@ -11,7 +11,7 @@ export const outcomeColumns: TableColumns = { needed: ['date', 'value'], optiona
 /** Read a row of an event file, or tell everything that is wrong with it. */
 export function eventRow(row: CsvRow): RawEvent | readonly Fault[] {
   const read = rowReader(row)
-  const event = { date: read.date('date'), label: read.text('label'), kind: row.field('kind') }
+  const event = { date: read.date('date'), label: read.text('label'), kind: read.optionalText('kind') }
   return read.faults.length > 0 ? read.faults : event
 }
 
@@ -19,10 +19,13 @@ export interface OutcomeRow extends RawOutcome {
   readonly place: string
 }
 
+/** A smaller one is mistyped: its logarithm would drown all others. */
+const leastPositive = 1e-12
+
 /** Read a row of an outcome file, or tell everything that is wrong with it. */
 export function outcomeRow(row: CsvRow): OutcomeRow | readonly Fault[] {
   const read = rowReader(row)
-  const positive = (column: string): number => read.number(column, (value) => value > 0, expected.positive)
+  const positive = (column: string): number => read.number(column, (value) => value >= leastPositive, expected.positiveLogarithm, expected.positive)
   const outcome = { place: row.place, date: read.date('date'), value: positive('value'), market: row.field('market') === '' ? null : positive('market') }
   return read.faults.length > 0 ? read.faults : outcome
 }

@@ -14,7 +14,8 @@ export function placeInputs(raw: RawInputs, account: Account, timeline: Timeline
     survey: raw.survey === null || account.survey === null ? null : placeSurvey(raw.survey, account.survey, timeline),
     events: raw.events === null ? null : placeEvents(raw.events, timeline),
     outcome: raw.outcome === null ? null : placeOutcome(raw.outcome, timeline),
-    benchmark: null, audit: null, importance: null, customers: null,
+    // Nothing of these has a date.
+    benchmark: raw.benchmark, audit: raw.audit, importance: raw.importance?.input ?? null, customers: account.customers,
   }
 }
 
@@ -24,6 +25,11 @@ const wavesBefore = 8
 /** The day on which the fieldwork begins that is the first to be forecast: of the 9th wave that has the headline metric for everyone; null with fewer. */
 export function firstForecast({ survey }: RawInputs): string | null {
   return survey?.waves.filter((wave) => hasHeadline(wave, survey.headline))[wavesBefore]?.start ?? null
+}
+
+/** Traits of authors that the benchmark asks intake for. */
+export function marginsAsked({ benchmark }: RawInputs): readonly { readonly margin: string; readonly levels: readonly string[] }[] {
+  return (benchmark ?? []).map(({ margin, levels }) => ({ margin, levels: levels.map(({ level }) => level) }))
 }
 
 function placeSurvey(survey: RawSurvey, keys: SurveySource, timeline: Timeline): SurveyInput {

@@ -1,4 +1,4 @@
-import type { SurveyMetric, SurveyReading } from '../../model/inputs/small-inputs.ts'
+import type { AuditCount, BenchmarkMargin, ImportanceInput, SurveyMetric, SurveyReading } from '../../model/inputs/small-inputs.ts'
 
 /** The small inputs as their files have them, every value checked, before a period is chosen; dates are ISO dates. */
 export interface RawInputs {
@@ -7,6 +7,11 @@ export interface RawInputs {
   readonly events: readonly RawEvent[] | null
   /** In order of time, every date once, at least two. */
   readonly outcome: readonly RawOutcome[] | null
+  /** In the order of the files. */
+  readonly benchmark: readonly BenchmarkMargin[] | null
+  /** Venue, true and coded label once each. */
+  readonly audit: readonly AuditCount[] | null
+  readonly importance: RawImportance | null
   /** What was read. */
   readonly files: readonly ReadFile[]
 }
@@ -27,6 +32,12 @@ export interface RawWave {
   readonly start: string
   readonly end: string
   readonly readings: readonly SurveyReading[]
+}
+
+export interface RawImportance {
+  readonly input: ImportanceInput
+  /** Respondents left out because an answer is missing. */
+  readonly incomplete: number
 }
 
 export interface RawEvent {

@@ -1,10 +1,15 @@
+import type { AuditCount, BenchmarkMargin } from '../../model/inputs/small-inputs.ts'
 import type { Account, FileSet } from '../account/account.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, type Fault } from '../faults/fault.ts'
 import { byText } from '../intake/level-names.ts'
-import { readTable, type CsvRow, type TableColumns } from './csv-table.ts'
+import { auditColumns, auditCounts, auditRowOf } from './audit-counts.ts'
+import { benchmarkColumns, benchmarkFaults, benchmarkRow, marginsOf } from './benchmark-margins.ts'
+import type { TableColumns } from './csv-table.ts'
 import { eventColumns, eventRow, outcomeColumns, outcomeFaults, outcomeRow } from './dated-rows.ts'
-import type { RawEvent, RawInputs, RawOutcome, RawSurvey, ReadFile } from './raw-inputs.ts'
+import type { RawEvent, RawInputs, RawOutcome, RawSurvey } from './raw-inputs.ts'
+import { readImportance } from './read-importance.ts'
+import { notGiven, readRows, type Input, type Read } from './read-rows.ts'
 import { headlineOf, surveyKeyFaults } from './survey-keys.ts'
 import { clashesOf, surveyOfRows } from './survey-of-rows.ts'
 import { surveyColumns, surveyRow } from './survey-row.ts'
@@ -13,7 +18,7 @@ import { surveyColumns, surveyRow } from './survey-row.ts'
 const mostFaults = 100
 
 /**
- * Read the survey, the events and the outcome of an account:
+ * Read the small inputs of an account: survey, events, outcome, benchmark, coding audit, importance.
  *
  *   files ──cut──▶ rows ──each checked──▶ values ──checked together, and against the account──▶ RawInputs
  *
@@ -23,25 +28,23 @@ export async function readSmallInputs(account: Account): Promise<RawInputs> {
   const survey = await readSurvey(account)
   const events = await readEvents(account)
   const outcome = await readOutcome(account)
-  const faults = [survey, events, outcome].flatMap((input) => input.faults)
+  const benchmark = await readBenchmark(account)
+  const audit = await readAudit(account)
+  const importance = await readImportance(account)
+  const all = [survey, events, outcome, benchmark, audit, importance]
+  const faults = all.flatMap((input) => input.faults)
   if (faults.length > 0) throw new InputFault(faults.slice(0, mostFaults))
-  return { survey: survey.value, events: events.value, outcome: outcome.value, files: [survey, events, outcome].flatMap((input) => input.files) }
+  return {
+    survey: survey.value, events: events.value, outcome: outcome.value, benchmark: benchmark.value, audit: audit.value, importance: importance.value,
+    files: all.flatMap((input) => input.files),
+  }
 }
-
-/** What was read of one input, and what is wrong with it; `value` means something only where nothing is. */
-interface Input<T> {
-  readonly value: T | null
-  readonly files: readonly ReadFile[]
-  readonly faults: readonly Fault[]
-}
-
-const notGiven = { value: null, files: [], faults: [] } as const
 
 async function readSurvey(account: Account): Promise<Input<RawSurvey>> {
   if (account.survey === null) return notGiven
-  const { value: rows, files, faults } = await readRows(account, account.survey, surveyColumns, surveyRow)
-  const empty = faults.length === 0 && rows.length === 0 ? [faultOf('input-empty', account.survey.files[0]!, { needed: surveyColumns.needed })] : []
-  const wrong = [...faults, ...empty, ...clashesOf(rows)]
+  const read = await readRows(account, account.survey, surveyColumns, surveyRow)
+  const { value: rows, files } = read
+  const wrong = [...read.faults, ...emptyFaults(read, account.survey, surveyColumns), ...clashesOf(rows)]
   // Metrics and waves are not all known while rows are wrong: the account is held against them only then.
   if (wrong.length > 0) return { value: null, files, faults: wrong }
   const waves = surveyOfRows(rows, account.survey.labels)
@@ -63,27 +66,21 @@ async function readOutcome(account: Account): Promise<Input<readonly RawOutcome[
   return { value: rows.map(({ date, value: observed, market }) => ({ date, value: observed, market })), files, faults: [...faults, ...together] }
 }
 
-/** The sound rows of all files of an input. */
-async function readRows<T extends object>(
-  account: Account, { files: paths }: FileSet, columns: TableColumns, read: (row: CsvRow) => T | readonly Fault[],
-): Promise<Input<readonly T[]> & { readonly value: readonly T[] }> {
-  const value: T[] = []
-  const files: ReadFile[] = []
-  const faults: Fault[] = []
-  for (const path of paths) {
-    try {
-      const table = await readTable(account.folder, path, columns)
-      files.push({ path, sha256: table.sha256, rows: table.rows.length })
-      faults.push(...table.faults)
-      for (const row of table.rows) {
-        const result = read(row)
-        if (Array.isArray(result)) faults.push(...(result as readonly Fault[]))
-        else value.push(result as T)
-      }
-    } catch (error) {
-      if (!(error instanceof InputFault)) throw error
-      faults.push(...error.faults)
-    }
-  }
-  return { value, files, faults }
+async function readBenchmark(account: Account): Promise<Input<readonly BenchmarkMargin[]>> {
+  if (account.benchmark === null) return notGiven
+  const read = await readRows(account, account.benchmark, benchmarkColumns, benchmarkRow)
+  // Shares have a sum to keep only where all are there.
+  const wrong = read.faults.length > 0 ? read.faults : [...emptyFaults(read, account.benchmark, benchmarkColumns), ...benchmarkFaults(read.value)]
+  return { value: wrong.length > 0 ? null : marginsOf(read.value), files: read.files, faults: wrong }
+}
+
+async function readAudit(account: Account): Promise<Input<readonly AuditCount[]>> {
+  if (account.codingAudit === null) return notGiven
+  const read = await readRows(account, account.codingAudit, auditColumns, auditRowOf(account))
+  return { value: auditCounts(read.value), files: read.files, faults: [...read.faults, ...emptyFaults(read, account.codingAudit, auditColumns)] }
+}
+
+/** Files that hold no row at all, though nothing is wrong with one. */
+function emptyFaults({ value, faults }: Read<readonly unknown[]>, { files }: FileSet, { needed }: TableColumns): readonly Fault[] {
+  return faults.length === 0 && value.length === 0 ? [faultOf('input-empty', files[0]!, { needed })] : []
 }

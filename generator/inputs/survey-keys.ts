@@ -1,10 +1,12 @@
 import { closest } from 'fastest-levenshtein'
 import type { Account } from '../account/account.ts'
+import { dataDates, dayNumber } from '../calendar/days.ts'
 import { placeOf } from '../account/yaml-places.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import type { Fault } from '../faults/fault.ts'
 import { foldValue } from '../intake/level-names.ts'
 import { hasHeadline, type RawSurvey, type RawWave } from './raw-inputs.ts'
+import { longestFieldwork } from './survey-row.ts'
 
 type Waves = Omit<RawSurvey, 'headline'>
 
@@ -42,8 +44,10 @@ function headlineFaults({ metrics, segments, waves }: Waves, headline: number, a
 /** The wave to come lies after the last one; it may overlap that only where the waves of this survey do overlap. */
 function nextFieldworkFaults(waves: readonly RawWave[], next: { readonly from: string; readonly to: string } | null, place: string): readonly Fault[] {
   if (next === null) return []
+  const dates = `${next.from} to ${next.to}`
+  if (dayNumber(next.to) - dayNumber(next.from) + 1 > longestFieldwork || next.to > dataDates.last) return [faultOf('survey-next-fieldwork-long', place, { dates, most: longestFieldwork })]
   const last = waves.reduce((latest, wave) => (wave.end > latest.end ? wave : latest))
   const rolling = waves.some((wave, index) => index > 0 && wave.start <= waves[index - 1]!.end)
   if (rolling ? next.from > last.start && next.to > last.end : next.from > last.end) return []
-  return [faultOf('survey-next-fieldwork', place, { dates: `${next.from} to ${next.to}`, wave: last.name, last: `${last.start} to ${last.end}` })]
+  return [faultOf('survey-next-fieldwork', place, { dates, wave: last.name, last: `${last.start} to ${last.end}` })]
 }

@@ -9,19 +9,19 @@ import type { SurveyRow } from './survey-row.ts'
 export function surveyOfRows(rows: readonly SurveyRow[], labels: Readonly<Record<string, string>>): Omit<RawSurvey, 'headline'> {
   const metrics = namesOf(rows.map(({ metric }) => metric))
   const segments = namesOf(rows.map(({ segment }) => segment).filter((segment) => segment !== ''))
-  const waves = namesOf(rows.map(({ wave }) => wave))
+  const waves = namesOf(rows.map(({ wave }) => wave)).names
   const label = new Map(Object.entries(labels).map(([metric, given]) => [foldValue(metric), given]))
   const reading = (row: SurveyRow): SurveyReading => ({
     metric: metrics.indexOf(row.metric), segment: segments.indexOf(row.segment),
     base: row.base, effectiveBase: row.effectiveBase, value: row.value, sd: row.sd,
   })
+  const rowsOfWave = groupedBy(rows, ({ wave }) => wave)
+  const rowsOfMetric = groupedBy(rows, ({ metric }) => metric)
   return {
-    metrics: metrics.names.map((name, index) => ({
-      name, label: label.get(foldValue(name)) ?? plainLabel(name), kind: rows.find(({ metric }) => metrics.indexOf(metric) === index)!.kind,
-    })),
+    metrics: metrics.names.map((name) => ({ name, label: label.get(foldValue(name)) ?? plainLabel(name), kind: rowsOfMetric(name)[0]!.kind })),
     segments: segments.names,
-    waves: waves.names.map((name, index): RawWave => {
-      const own = rows.filter(({ wave }) => waves.indexOf(wave) === index)
+    waves: waves.map((name): RawWave => {
+      const own = rowsOfWave(name)
       return { name, start: own[0]!.start, end: own[0]!.end, readings: own.map(reading) }
     }).sort((a, b) => byText(a.start, b.start) || byText(a.end, b.end)),
   }
@@ -68,6 +68,18 @@ function namesOf(values: readonly string[]): Names {
   for (const value of values) if (!first.has(foldValue(value))) first.set(foldValue(value), value)
   const index = new Map([...first.keys()].map((key, at) => [key, at]))
   return { names: [...first.values()], indexOf: (name) => index.get(foldValue(name)) ?? -1 }
+}
+
+/** Rows by a name that they have in common; case and spacing do not tell names apart. */
+function groupedBy(rows: readonly SurveyRow[], nameOf: (row: SurveyRow) => string): (name: string) => readonly SurveyRow[] {
+  const groups = new Map<string, SurveyRow[]>()
+  for (const row of rows) {
+    const key = foldValue(nameOf(row))
+    const group = groups.get(key)
+    if (group === undefined) groups.set(key, [row])
+    else group.push(row)
+  }
+  return (name) => groups.get(foldValue(name)) ?? []
 }
 
 /** @example plainLabel('overall_satisfaction') // => 'Overall satisfaction' */

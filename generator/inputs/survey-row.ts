@@ -25,13 +25,13 @@ export interface SurveyRow {
   readonly sd: number | null
 }
 
-/** A longer fieldwork is a mistyped year. */
-const longestFieldwork = 366
+/** In days: a longer fieldwork is a mistyped year. */
+export const longestFieldwork = 366
 
 /** Read a row of a survey file, or tell everything that is wrong with it. */
 export function surveyRow(row: CsvRow): SurveyRow | readonly Fault[] {
   const read = rowReader(row)
-  const names = { place: row.place, wave: read.text('wave'), metric: read.text('metric'), segment: row.field('segment') }
+  const names = { place: row.place, wave: read.text('wave'), metric: read.text('metric'), segment: read.optionalText('segment') }
   const dates = fieldwork(read)
   const bases = sampleSizes(row, read)
   const figure = measured(row, read)
@@ -50,7 +50,7 @@ function fieldwork(read: RowReader): { readonly start: string; readonly end: str
 function sampleSizes(row: CsvRow, read: RowReader): { readonly base: number; readonly effectiveBase: number } {
   const base = read.number('base', (n) => Number.isSafeInteger(n) && n >= 1, expected.base)
   if (row.field('effective_base') === '') return { base, effectiveBase: base }
-  const effectiveBase = read.number('effective_base', (n) => n > 0, expected.effectiveBase)
+  const effectiveBase = read.number('effective_base', (n) => n >= 1, expected.effectiveBase)
   if (effectiveBase > base) read.fault('effective_base', expected.effectiveWithin(base))
   return { base, effectiveBase }
 }

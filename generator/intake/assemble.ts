@@ -1,4 +1,4 @@
-import type { AuthorCounts, AuthorVariation, CellColumns, ConcentrationRow, Factor, Hindsight, Timeline } from '../../model/intake/intake-tables.ts'
+import type { AuthorCounts, AuthorVariation, CellColumns, ConcentrationRow, ExtremeRow, Factor, Hindsight, PullRow, StayingRow, Timeline } from '../../model/intake/intake-tables.ts'
 import { isoDate } from '../calendar/days.ts'
 import type { GroupedMentions } from './read-mentions.ts'
 
@@ -23,15 +23,19 @@ export function indicesOf({ names }: GroupedMentions, axis: Timeline, factors: r
 
 /** Distinct authors of the mentions, added to those of ready-made cells if there are any. */
 export function addAuthors(counts: AuthorCounts, { authors }: GroupedMentions, indices: Indices, factors: readonly Factor[], exact: boolean): AuthorCounts {
-  const [byStep, byPeriod, byPeriodLevel] = [counts.byStep.slice(), counts.byPeriod.slice(), counts.byPeriodLevel.map((column) => column.slice())]
-  for (const row of authors.byStep) byStep[indices.step(row.step)]! += row.authors
+  const [byStep, byStepVenue, byPeriod, byPeriodLevel] = [counts.byStep.slice(), counts.byStepVenue.slice(), counts.byPeriod.slice(), counts.byPeriodLevel.map((column) => column.slice())]
+  for (const row of authors.byStepVenue) {
+    const step = indices.step(row.step)
+    byStep[step]! += row.authors
+    byStepVenue[step * factors[0]!.levels.length + indices.level(0, row.venue)]! += row.authors
+  }
   for (const row of authors.byPeriodLevel) {
     const period = indices.period(row.period)
     // An author is one handle in one venue: summed over venues, nobody counts twice.
     if (row.factor === 0) byPeriod[period]! += row.authors
     byPeriodLevel[row.factor]![period * factors[row.factor]!.levels.length + indices.level(row.factor, row.level)]! += row.authors
   }
-  return { exact, byStep, byStepVenue: counts.byStepVenue, byPeriod, byPeriodLevel }
+  return { exact, byStep, byStepVenue, byPeriod, byPeriodLevel }
 }
 
 /** The counts of counts by period: of every venue, and of all together as venue -1. */
@@ -43,6 +47,29 @@ export function concentrationRows({ authors }: GroupedMentions, indices: Indices
     together.set(key, { ...row, venue: -1, authors: row.authors + (together.get(key)?.authors ?? 0) })
   }
   return [...together.values(), ...byVenue].sort((a, b) => a.period - b.period || a.venue - b.venue || a.mentionsPerAuthor - b.mentionsPerAuthor)
+}
+
+/** Authors by stance of every period up to the one under review; of that, who stayed is not known yet. */
+export function stayingRows({ authors }: GroupedMentions, indices: Indices, { periods, review }: Timeline): readonly StayingRow[] {
+  const rows = new Map<string, StayingRow>()
+  for (const row of authors.staying) {
+    const period = indices.period(row.period)
+    if (periods[period]!.end > review.end) continue
+    const key = `${period} ${row.stance}`
+    const stayed = periods[period]!.name === review.name ? 0 : row.stayed
+    rows.set(key, { period, stance: row.stance as StayingRow['stance'], authors: row.authors + (rows.get(key)?.authors ?? 0), stayed: stayed + (rows.get(key)?.stayed ?? 0) })
+  }
+  return [...rows.values()].sort((a, b) => a.period - b.period || a.stance - b.stance)
+}
+
+export function extremeRows({ extremes }: GroupedMentions, indices: Indices): readonly ExtremeRow[] {
+  return extremes.map((row) => ({ ...row, period: indices.period(row.period), venue: indices.level(0, row.venue) })).sort((a, b) => a.period - b.period || a.venue - b.venue)
+}
+
+export function pullRows({ pull }: GroupedMentions, indices: Indices, factors: readonly Factor[]): readonly PullRow[] {
+  const poster = factors.findIndex((factor) => factor.name === 'poster')
+  return pull.map((row) => ({ ...row, venue: indices.level(0, row.venue), poster: row.poster < 0 ? -1 : indices.level(poster, row.poster) }))
+    .sort((a, b) => a.venue - b.venue || a.poster - b.poster)
 }
 
 /** Author variation in the order of the venues. */

@@ -1,17 +1,27 @@
-import type { CellColumns, Factor } from '../../model/intake/intake-tables.ts'
+import type { CellColumns, CellLabels, Factor } from '../../model/intake/intake-tables.ts'
 import type { CellPart } from './cell-part.ts'
+import type { LabelSet } from './labels.ts'
+
+/** A cell with the indices of its step and levels. */
+export interface PlacedCell {
+  readonly part: CellPart
+  readonly key: readonly number[]
+}
 
 /**
- * Cells as columns, sorted by step and then by the levels of each factor. Two sources may say something of the same cell:
- * these stay two rows, since each has a design effect of its own.
+ * Cells sorted by step and then by the levels of each factor. Two sources may say something of the same cell: these stay
+ * two, since each has a design effect of its own.
  *
  * @param steps - day number on which each step begins
  */
-export function cellColumns(parts: readonly CellPart[], steps: readonly number[], factors: readonly Factor[]): CellColumns {
+export function placeCells(parts: readonly CellPart[], steps: readonly number[], factors: readonly Factor[]): readonly PlacedCell[] {
   const stepIndex = indexOf(steps)
   const levelIndex = factors.map((factor) => indexOf(factor.levels.map((level) => level.name)))
   const cells = parts.map((part) => ({ part, key: [stepIndex.get(part.step)!, ...part.levels.map((level, factor) => levelIndex[factor]!.get(level)!)] }))
-  cells.sort((a, b) => compare(a.key, b.key))
+  return cells.sort((a, b) => compare(a.key, b.key))
+}
+
+export function cellColumns(cells: readonly PlacedCell[], factors: readonly Factor[]): CellColumns {
   const column = (value: (part: CellPart) => number): Float64Array => Float64Array.from(cells, (cell) => value(cell.part))
   return {
     count: cells.length,
@@ -25,6 +35,11 @@ export function cellColumns(parts: readonly CellPart[], steps: readonly number[]
     clustering: column((part) => part.clustering),
     deff: column((part) => part.deff),
   }
+}
+
+/** Mentions of each label, cell by cell. */
+export function cellLabels(cells: readonly PlacedCell[], { names, scores }: LabelSet): CellLabels {
+  return { names, scores: Float64Array.from(scores), counts: Float64Array.from(cells.flatMap(({ part }) => part.labels)) }
 }
 
 function indexOf<T>(values: readonly T[]): ReadonlyMap<T, number> {

@@ -13,4 +13,6 @@ export interface CellPart {
   readonly clustering: number
   /** NaN where it is to be computed from `clustering`. */
   readonly deff: number
+  /** Mentions by number of their label; empty where these are not counted. */
+  readonly labels: readonly number[]
 }

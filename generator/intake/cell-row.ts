@@ -32,7 +32,7 @@ export function cellRow(field: (column: string) => string, factors: readonly str
   if (complaints.length > 0) return complaints
   const freedom = Number.isNaN(variance) ? 0 : mentions - 1
   const levels = factors.map((factor) => field(factor) || (factor === 'poster' ? 'unknown' : 'none'))
-  return { step, levels, mentions, authors, mean, squares: freedom === 0 ? 0 : variance * freedom, freedom, clustering: 1, deff }
+  return { step, levels, mentions, authors, mean, squares: freedom === 0 ? 0 : variance * freedom, freedom, clustering: 1, deff, labels: [] }
 }
 
 function beginning(grid: Grid, day: number): string {

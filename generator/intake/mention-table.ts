@@ -17,12 +17,30 @@ export interface MentionNames {
   readonly periods: readonly string[]
   /** One list of level names per factor of the account. */
   readonly levels: readonly (readonly string[])[]
+  /** Index of the period under review; -1 where no mention's step belongs to it. */
+  readonly review: number
 }
 
 /** How the numbers and texts of a factor in `scanned` become levels of the account. */
 export interface Naming {
   readonly spellings: Spellings
   readonly levelOf: LevelReader
+  /** Columns that are no factor: an empty field is no level of theirs but the name ''. */
+  readonly traits: readonly string[]
+}
+
+/** What `viewMentions` is made of. */
+export interface ViewOptions {
+  readonly zone: ZoneSql
+  /** SQL condition on `scanned`: readable and in scope. */
+  readonly eligible: string
+  /** Day numbers of the first and last mention that can be eligible. */
+  readonly span: { readonly first: number; readonly last: number }
+  /** Name of the period under review. */
+  readonly period: string
+  /** Further columns of `scanned` that `mention` has. */
+  readonly extras: readonly string[]
+  readonly naming: Naming
 }
 
 /** Poster classes, in the order of their numbers. */
@@ -41,15 +59,13 @@ const secondsTo1970 = -Date.UTC(1900, 0, 1) / 1000
 
 /**
  * The modelled mentions as numbers only, as views of `scanned`: `kept` are its rows that are modelled, `mention (author,
- * moment, slot, score, source, clock, factor_0, ...)` what they say. The author, one handle in one venue, is a hash or
+ * moment, slot, score, source, clock, row, extras, factor_0, ...)` what they say. The author, one handle in one venue, is a hash or
  * NULL; the factor `poster` is still to come. Views, since writing a row a mention costs as much as working it out.
  *
- * @param eligible - SQL condition on `scanned`: readable and in scope
- * @param span - day numbers of the first and last mention that can be eligible
  * @throws {InputFault} `too-many-levels`
  */
 export async function viewMentions(
-  database: Database, account: Account, zone: ZoneSql, eligible: string, span: { readonly first: number; readonly last: number }, naming: Naming,
+  database: Database, account: Account, { zone, eligible, span, period, extras, naming }: ViewOptions,
 ): Promise<MentionNames> {
   const steps = stepsBetween(account.grid, span.first, span.last)
   const periodNames = steps.map((start) => periodHolding(account.reporting, midpointDay(account.grid, start)).name)
@@ -62,9 +78,9 @@ export async function viewMentions(
   const read = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
   const author = filledColumns(account).author ? `CASE WHEN handle IS NOT NULL THEN hash(xor(handle, hash(${coded[0]!.level}))) END` : 'NULL::UBIGINT'
   await database.run(`CREATE TEMP VIEW mention AS
-    SELECT ${author} AS author, ${secondsSql('instant')} * ${2 ** momentBits} + row::UBIGINT AS moment, slot, score, source, clock, ${read.map((index) => `${coded[index]!.level} AS factor_${index}`).join(', ')}
+    SELECT ${author} AS author, ${secondsSql('instant')} * ${2 ** momentBits} + row::UBIGINT AS moment, slot, score, source, clock, row, ${extras.map((column) => `${column}, `).join('')}${read.map((index) => `${coded[index]!.level} AS factor_${index}`).join(', ')}
     FROM (SELECT *, ${zone.instant} AS instant, ${zone.day} AS day FROM kept) JOIN step_day USING (day) ${coded.map((factor) => factor.joins).join(' ')}`)
-  return { steps, periods, levels: coded.map((factor) => factor.levels) }
+  return { steps, periods, levels: coded.map((factor) => factor.levels), review: periods.indexOf(period) }
 }
 
 /** Whole seconds since 1900 of an instant in microseconds since 1970. */
@@ -87,13 +103,13 @@ interface FactorSql {
 }
 
 /** Name every spelling of a factor; `code_level_N (code, level)` and `other_level_N (other, level)` hold the numbers. */
-async function nameLevels(database: Database, factor: string, index: number, { spellings, levelOf }: Naming): Promise<FactorSql> {
+async function nameLevels(database: Database, factor: string, index: number, { spellings, levelOf, traits }: Naming): Promise<FactorSql> {
   const found = await database.rows<{ code: number | null; other: string | null; mentions: bigint }>(
     `SELECT code_${index} AS code, other_${index} AS other, count(*) AS mentions FROM kept GROUP BY ALL ORDER BY ALL LIMIT ${mostSpellings + 1}`)
   if (found.length > mostSpellings) throw new InputFault([faultOf('too-many-levels', `mentions ${factor}`, { factor, most: mostSpellings })])
   const named = found.map(({ code, other, mentions }) => {
     const spelling = code === null ? other ?? '' : spellings[index]![code]!
-    return { code, other, name: levelOf(factor, tidyValue(spelling) || 'none', Number(mentions)) }
+    return { code, other, name: levelOf(factor, tidyValue(spelling) || (traits.includes(factor) ? '' : 'none'), Number(mentions)) }
   })
   const levels = [...new Set(named.map(({ name }) => name))].sort(byText)
   const coded = named.filter(({ code }) => code !== null).map(({ code, name }) => `(${code}, ${levels.indexOf(name)})`)

@@ -24,11 +24,14 @@ export const solitude = {
  * before it in the files); for mentions in the first 90 days of a source the window is those 90 days whole, or everyone
  * would look occasional at the start of history.
  *
- * Added besides: `solitude`, below.
+ * Added besides: `solitude`, above; and `stays`, on an author's last mention of a period: it has another in the period after.
+ *
+ * @param account - its factors followed by the traits that `mention` has
+ * @param extras - further columns of `mention` that are kept
  */
-export async function classifyPosters(database: Database, account: Account, openings: readonly Opening[]): Promise<void> {
+export async function classifyPosters(database: Database, account: Account, openings: readonly Opening[], extras: readonly string[]): Promise<void> {
   const poster = account.factors.indexOf('poster')
-  const others = account.factors.map((_, index) => `factor_${index}`).filter((_, index) => index !== poster)
+  const others = [...extras, ...account.factors.map((_, index) => `factor_${index}`).filter((_, index) => index !== poster)]
   if (poster >= 0) await createEarly(database, openings)
   const classed = poster < 0 ? '' : `, CAST(CASE WHEN author IS NULL THEN 3 ELSE ${classOf(account)} END AS UTINYINT) AS factor_${poster}`
   const backs = poster < 0 ? [] : [account.posters.occasional, account.posters.regular]
@@ -45,7 +48,8 @@ export async function classifyPosters(database: Database, account: Account, open
       CAST(CASE WHEN author IS NULL OR NOT (${before} OR ${after}) THEN ${solitude.alone}
         WHEN NOT ((${before} AND ${period('slot_before')} = ${period('slot')}) OR (${after} AND ${period('slot_after')} = ${period('slot')})) THEN ${solitude.aloneInPeriod}
         WHEN ${before} AND slot_before = slot THEN ${solitude.further}
-        WHEN ${after} AND slot_after = slot THEN ${solitude.firstInStep} ELSE ${solitude.aloneInStep} END AS UTINYINT) AS solitude
+        WHEN ${after} AND slot_after = slot THEN ${solitude.firstInStep} ELSE ${solitude.aloneInStep} END AS UTINYINT) AS solitude,
+      coalesce(author_after = author AND ${period('slot_after')} = ${period('slot')} + 1, false) AS stays
     FROM (SELECT *, ${opening} AS early_author, ${neighbours.join(', ')} FROM (SELECT * FROM mention ORDER BY author, moment))
     ${poster < 0 ? '' : 'LEFT JOIN early ON early.author_early = early_author AND early.source_early = source'}`)
 }

@@ -5,10 +5,12 @@ import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
 import { tablesOf, type Material } from './tables.ts'
-import { openDatabase } from './database.ts'
+import { openDatabase, type Database } from './database.ts'
 import { dateMentions } from './dated-mentions.ts'
 import { hashOf, lookOver, type InputFile } from './input-file.ts'
+import { labelSet } from './labels.ts'
 import { levelNames } from './level-names.ts'
+import { traitsOf, type MarginWish } from './margins.ts'
 import { settleMentions } from './read-mentions.ts'
 import { cellsWithin, daysOf, readReadyMade } from './ready-made.ts'
 import { countRejects, writeRejects } from './rejects.ts'
@@ -25,6 +27,10 @@ export interface IntakeOptions {
   readonly threads?: number | undefined
   /** ISO date of the first day as of which a forecast is to be made; null or absent: none is. */
   readonly hindsightFrom?: string | null | undefined
+  /** Count the labels of every cell, for a coding audit. */
+  readonly labels?: boolean | undefined
+  /** Count the authors of the period under review by these traits together, for a benchmark. */
+  readonly margins?: readonly MarginWish[] | undefined
 }
 
 /**
@@ -39,17 +45,36 @@ export interface IntakeOptions {
  * @throws {InputFault} see the catalogues of faults
  */
 export async function readIntake(account: Account, options: IntakeOptions = {}): Promise<IntakeTables> {
+  return withFiles(account, options, async (place, files) => {
+    // Files are hashed while the database works.
+    const hashing = hashAll(account, files.keys())
+    try {
+      const [material, hashes] = await Promise.all([gather(place, files, options), hashing])
+      return tablesOf(account, { ...material, inputs: material.inputs.map(({ path: file, rows }) => ({ path: file, sha256: hashes.get(file)!, rows })) })
+    } finally {
+      await hashing.catch(() => undefined)
+    }
+  })
+}
+
+/** Where intake works: a database that reaches the files, and a folder of its own. */
+export interface IntakePlace {
+  readonly database: Database
+  readonly account: Account
+  readonly scratch: string
+}
+
+/** Open a database on the account's files, and take it away again after use. */
+export async function withFiles<T>(
+  account: Account, options: Pick<IntakeOptions, 'threads' | 'progress'>, use: (place: IntakePlace, files: ReadonlyMap<string, InputFile>) => Promise<T>,
+): Promise<T> {
   const scratch = await mkdtemp(path.join(tmpdir(), 'tareline-intake-'))
   try {
     const files = await lookOverAll(account, scratch, options)
     const database = await openDatabase({ readable: [...files.values()].map((file) => file.readable), scratch, threads: options.threads })
-    // Files are hashed while the database works.
-    const hashing = hashAll(account, files.keys())
     try {
-      const [material, hashes] = await Promise.all([gather({ database, account, scratch }, files, options), hashing])
-      return tablesOf(account, { ...material, inputs: material.inputs.map(({ path: file, rows }) => ({ path: file, sha256: hashes.get(file)!, rows })) })
+      return await use({ database, account, scratch }, files)
     } finally {
-      await hashing.catch(() => undefined)
       database.close()
     }
   } finally {
@@ -57,7 +82,7 @@ export async function readIntake(account: Account, options: IntakeOptions = {}):
   }
 }
 
-async function lookOverAll(account: Account, scratch: string, options: IntakeOptions): Promise<ReadonlyMap<string, InputFile>> {
+async function lookOverAll(account: Account, scratch: string, options: Pick<IntakeOptions, 'progress'>): Promise<ReadonlyMap<string, InputFile>> {
   const files = new Map<string, InputFile>()
   for (const file of account.mentions.flatMap((source) => source.files)) {
     if (files.has(file)) continue
@@ -73,24 +98,30 @@ async function hashAll(account: Account, files: Iterable<string>): Promise<Reado
   return hashes
 }
 
-/** Everything but the hashes of the files. */
-async function gather(place: ScanPlace, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Gathered> {
+/** Everything but the hashes of the files. The tables that mentions were gathered in stay in the database. */
+export async function gather(place: IntakePlace, files: ReadonlyMap<string, InputFile>, options: IntakeOptions): Promise<Gathered> {
   const { database, account } = place
+  const margins = options.margins ?? []
+  const traits = traitsOf(account, margins)
+  const counted = options.labels === true ? labelSet(account) : null
+  const labels = typeof counted === 'string' ? null : counted
+  const widened = { ...account, factors: [...account.factors, ...traits] }
   const progress = options.progress ?? ((): void => undefined)
   const hindsightFrom = options.hindsightFrom == null ? null : dayNumber(options.hindsightFrom)
   const asked = options.period === undefined ? null : namedPeriod(account, options.period)
   const names = levelNames(account)
   const ready = await readReadyMade(database, account, files, names.levelOf)
-  const { scanned, spellings } = await scanAll(place, files, progress)
+  const { scanned, spellings } = await scanAll({ ...place, account: widened, labels }, files, progress)
   const rejected = await countRejects(database, scanned)
   if (options.rejects !== undefined) await writeRejects(database, scanned, options.rejects)
   const dated = await dateMentions(database, account)
   const spans = [dated.span, daysOf(ready.parts, account.grid)].filter((span) => span !== null)
   const review = asked ?? (spans.length === 0 ? null
     : coveredPeriod(account, Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))))
-  const settled = review === null ? null : await settleMentions(database, account, dated, dayNumber(review.end), hindsightFrom, { spellings, levelOf: names.levelOf }, progress)
+  const settled = review === null ? null : await settleMentions(database, widened, dated,
+    { review, hindsightFrom, naming: { spellings, levelOf: names.levelOf, traits }, labels, margins, progress })
   return {
-    review, scanned, rejected, dated, settled, unmapped: names.unmapped(),
+    review, scanned, rejected, dated, settled, unmapped: names.unmapped(), labels: counted, margins,
     ready: review === null ? [] : cellsWithin(ready.parts, account.grid, review),
     readyAfter: review === null ? 0 : ready.parts.length - cellsWithin(ready.parts, account.grid, review).length,
     inputs: [...files.values()].map(({ path: name }) => ({ path: name, rows: ready.rows.get(name) ?? rowsOf(scanned, name) })),
@@ -111,7 +142,7 @@ async function scanAll(place: ScanPlace, files: ReadonlyMap<string, InputFile>, 
   for (const { source } of sources) samples.push(await sampleFile(database, account, source, files.get(source.files[0]!)!))
   const spellings = joinSpellings(samples, account.factors)
   const scanned: ScannedFile[] = []
-  await createScanned(database, account)
+  await createScanned(place)
   for (const { source, index } of sources) {
     for (const file of source.files) {
       progress(`Reading ${file}`)

@@ -51,6 +51,7 @@ async function rejectsOf(database: Database, scanned: ScannedFile): Promise<read
   return all.sort((a, b) => a.line - b.line)
 }
 
-function csvField(text: string): string {
+/** A field as CSV takes it, quoted where it must be. */
+export function csvField(text: string): string {
   return /[",\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text
 }

@@ -3,6 +3,7 @@ import { literal, type Database } from './database.ts'
 import type { InputFile } from './input-file.ts'
 import { malformedRows, type MalformedRow } from './malformed-rows.ts'
 import { relationOf, type Relation } from './relation.ts'
+import { labelSql, type LabelSet } from './labels.ts'
 import { scoreSql } from './score-sql.ts'
 import { codeSql, sampleSpellings, spellingSql, type Spellings } from './spellings.ts'
 import { unreadValues, type UnreadValue } from './unread-values.ts'
@@ -21,6 +22,8 @@ export const lastReject = rejectReasons.length
 /** What the scan of one file found. */
 export interface ScannedFile {
   readonly file: InputFile
+  /** Index into the sources of the account. */
+  readonly source: number
   /** `rowid` of its first row in `scanned`. */
   readonly first: number
   readonly sound: number
@@ -37,22 +40,32 @@ export interface ScannedFile {
  *
  * Hashes have 64 bits: among 5 million ids the chance that any two different ones agree is 7 in 10 million.
  */
-export async function createScanned(database: Database, account: Account): Promise<void> {
-  await database.run(`CREATE TEMP TABLE scanned (${scannedColumns(account).map(({ name, type }) => `${name} ${type}`).join(', ')})`)
+export async function createScanned({ database, account, labels }: ScanPlace): Promise<void> {
+  await database.run(`CREATE TEMP TABLE scanned (${scannedColumns(account, labels).map(({ name, type }) => `${name} ${type}`).join(', ')})`)
 }
 
 /** Which of the columns that only some accounts fill are there. */
-export function filledColumns(account: Account): { readonly id: boolean; readonly author: boolean; readonly text: boolean } {
+export function filledColumns(account: Account): FilledColumns {
   const sources = account.mentions.filter((source): source is MentionSource => source.kind === 'mentions')
   const filled = (ours: string): boolean => sources.some((source) => source.columns[ours] !== undefined)
-  return { id: filled('id'), author: filled('author'), text: filled('text') }
+  return { id: filled('id'), author: filled('author'), text: filled('text'), thread: filled('thread'), place: filled('thread') && filled('thread_position') }
 }
 
-function scannedColumns(account: Account): readonly { readonly name: string; readonly type: string }[] {
-  const { id, author, text } = filledColumns(account)
+export interface FilledColumns {
+  readonly id: boolean
+  readonly author: boolean
+  readonly text: boolean
+  readonly thread: boolean
+  /** In the thread. */
+  readonly place: boolean
+}
+
+function scannedColumns(account: Account, labels: LabelSet | null): readonly { readonly name: string; readonly type: string }[] {
+  const { id, author, text, thread, place } = filledColumns(account)
   return [
     { name: 'source', type: 'USMALLINT' }, { name: 'fate', type: 'UTINYINT' }, { name: 'clock', type: 'BIGINT' }, { name: 'zoned', type: 'BOOLEAN' }, { name: 'score', type: 'INTEGER' },
     ...(id ? [{ name: 'id', type: 'UBIGINT' }] : []), ...(author ? [{ name: 'handle', type: 'UBIGINT' }] : []), ...(text ? [{ name: 'text', type: 'UBIGINT' }] : []),
+    ...(thread ? [{ name: 'thread', type: 'UBIGINT' }] : []), ...(place ? [{ name: 'place', type: 'DOUBLE' }] : []), ...(labels === null ? [] : [{ name: 'label', type: 'USMALLINT' }]),
     ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [{ name: `code_${index}`, type: 'UTINYINT' }, { name: `other_${index}`, type: 'VARCHAR' }])),
   ]
 }
@@ -60,8 +73,11 @@ function scannedColumns(account: Account): readonly { readonly name: string; rea
 /** Where `scanFile` reads from and writes to. */
 export interface ScanPlace {
   readonly database: Database
+  /** Its factors are followed by the columns that only a benchmark asks for. */
   readonly account: Account
   readonly scratch: string
+  /** null where nobody asks which label a mention was given. */
+  readonly labels: LabelSet | null
 }
 
 /** Read one file into `scanned`. */
@@ -70,7 +86,7 @@ export async function scanFile(place: ScanPlace, sourceIndex: number, file: Inpu
   const source = account.mentions[sourceIndex] as MentionSource
   const relation = await mentionRelation(database, account, source, file)
   const before = await extentOf(database)
-  await database.run(`INSERT INTO scanned ${scanSql(account, source, sourceIndex, relation, spellings)}`)
+  await database.run(`INSERT INTO scanned ${scanSql(place, sourceIndex, relation, spellings)}`)
   const after = await extentOf(database)
   const malformed = file.kind === 'parquet' ? [] : await malformedRows(database)
   const first = after.end - (after.rows - before.rows)
@@ -80,7 +96,7 @@ export async function scanFile(place: ScanPlace, sourceIndex: number, file: Inpu
     return scanFile(place, sourceIndex, closed, spellings, attempt + 1)
   }
   const sound = after.rows - before.rows
-  return { file, first, sound, malformed, cut: relation.cut, unread: await manyUnread(database, first, sound) ? await unreadValues(database, source, relation) : [] }
+  return { file, source: sourceIndex, first, sound, malformed, cut: relation.cut, unread: await manyUnread(database, first, sound) ? await unreadValues(database, source, relation) : [] }
 }
 
 /** Share of a file's rows without a readable time or score above which their values are looked at, in a second reading. */
@@ -110,27 +126,35 @@ function mentionRelation(database: Database, account: Account, source: MentionSo
 }
 
 function usedColumns(source: MentionSource, factors: readonly string[]): readonly string[] {
-  const read = new Set(['posted_at', 'score', 'id', 'author', 'brand', 'text', ...factors.filter((factor) => factor !== 'poster')])
+  const read = new Set(['posted_at', 'score', 'id', 'author', 'brand', 'text', 'thread', 'thread_position', ...factors.filter((factor) => factor !== 'poster')])
   return Object.keys(source.columns).filter((ours) => read.has(ours))
 }
 
-function scanSql(account: Account, source: MentionSource, sourceIndex: number, relation: Relation, spellings: Spellings): string {
+/** SQL of the hash that stands for an id: a source has ids of its own. */
+export function idSql(field: string, source: number): string {
+  return `xor(hash(${field}), hash(${source}))`
+}
+
+function scanSql({ account, labels }: ScanPlace, sourceIndex: number, relation: Relation, spellings: Spellings): string {
+  const source = account.mentions[sourceIndex] as MentionSource
   const time = timeSql('posted', source.timeFormat)
   const score = scoreSql('scored', source.score, relation.cut?.delimiter !== ',')
   const read = `SELECT ${fieldsSql(account, source, relation).join(', ')} FROM ${relation.sql}`
   const factors = account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [index]))
-  const timed = [[time.draft, ...factors.map((index) => `${codeSql(`factor_${index}`, spellings[index]!)} AS code_${index}`)], [time.zoned, `${score.score} AS score`], [time.reading], [time.clock]]
+  const timed = [[time.draft, ...factors.map((index) => `${codeSql(`factor_${index}`, spellings[index]!)} AS code_${index}`)], [time.zoned, `${score.score} AS score`, ...(labels === null ? [] : [`${labelSql('scored', source.score, labels)} AS label`])], [time.reading], [time.clock]]
     .reduce((inner, columns) => `SELECT *, ${columns.join(', ')} FROM (${inner})`, read)
   const unscored = `CASE WHEN ${score.outside} THEN 4 ELSE 3 END`
   const columns: Readonly<Record<string, string>> = {
     source: String(sourceIndex),
     fate: `CASE WHEN NOT sound THEN 1 WHEN clock IS NULL THEN 2 WHEN score IS NULL THEN ${unscored} WHEN ${blank('factor_0')} THEN 5 ELSE other END`,
-    id: `CASE WHEN id <> '' THEN xor(hash(id), hash(${sourceIndex})) END`,
+    id: `CASE WHEN id <> '' THEN ${idSql('id', sourceIndex)} END`,
+    thread: `CASE WHEN thread <> '' THEN ${idSql('thread', sourceIndex)} END`,
+    place: 'TRY_CAST(place AS DOUBLE)',
     handle: "CASE WHEN handle <> '' THEN hash(handle) END",
     text: 'CASE WHEN length(words) >= 40 THEN hash(words) END',
     ...Object.fromEntries(factors.map((index) => [`other_${index}`, `CASE WHEN code_${index} IS NULL THEN factor_${index} END`])),
   }
-  return `SELECT ${scannedColumns(account).map(({ name }) => columns[name] ?? name).join(', ')} FROM (${timed})`
+  return `SELECT ${scannedColumns(account, labels).map(({ name }) => columns[name] ?? name).join(', ')} FROM (${timed})`
 }
 
 /** The fields of a row as they stand in the file; values of factors are tidied when they are named, not here. */
@@ -144,6 +168,7 @@ function fieldsSql(account: Account, source: MentionSource, relation: Relation):
     : `CASE WHEN ${brand} = ${literal(account.brand.toLowerCase())} THEN 0 WHEN ${brand} <> '' THEN ${lastReject + 1} ELSE ${lastReject + 2} END`
   return [
     `${timeText(field('posted_at'))} AS posted`, `${field('score')} AS scored`, `${relation.sound} AS sound`, `${other} AS other`, `${field('id')} AS id`, `${field('author')} AS handle`,
+    `${field('thread')} AS thread`, `${field('thread_position')} AS place`,
     `${source.columns.text === undefined ? 'NULL::VARCHAR' : comparable(field('text'))} AS words`,
     ...account.factors.flatMap((factor, index) => (factor === 'poster' ? [] : [`${spellingSql(factor, source, relation)} AS factor_${index}`])),
   ]

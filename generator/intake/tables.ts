@@ -1,4 +1,4 @@
-import type { Accounting, Factor, IntakeTables, Period } from '../../model/intake/intake-tables.ts'
+import type { Accounting, Factor, IntakeTables, NoLabels, Period, SegmentTable } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
 import { joinUnread } from './unread-values.ts'
@@ -6,12 +6,14 @@ import { timeline } from '../calendar/timeline.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
 import { placeOf } from '../account/yaml-places.ts'
-import { addAuthors, authoredMentions, concentrationRows, hindsightOf, indicesOf, variationRows } from './assemble.ts'
+import { addAuthors, authoredMentions, concentrationRows, extremeRows, hindsightOf, indicesOf, pullRows, stayingRows, variationRows } from './assemble.ts'
 import { summedAuthors } from './author-counts.ts'
-import { cellColumns } from './cell-columns.ts'
+import { cellColumns, cellLabels, placeCells } from './cell-columns.ts'
 import type { CellPart } from './cell-part.ts'
 import type { Dated } from './dated-mentions.ts'
+import type { LabelSet } from './labels.ts'
 import { factorOf, mostLevels } from './level-names.ts'
+import type { MarginWish } from './margins.ts'
 import { daysOf } from './ready-made.ts'
 import type { SettledMentions } from './read-mentions.ts'
 import type { ScannedFile } from './scan-mentions.ts'
@@ -30,6 +32,9 @@ export interface Material {
   readonly ready: readonly CellPart[]
   readonly readyAfter: number
   readonly inputs: Accounting['inputs']
+  /** null where nobody asks for labels by cell. */
+  readonly labels: LabelSet | NoLabels | null
+  readonly margins: readonly MarginWish[]
 }
 
 /** A source of which more than this share can't be read is mapped wrongly: what is left would stand for nothing. */
@@ -43,7 +48,7 @@ const manyRows = 200
  * @throws {InputFault} `no-mentions`, `mostly-rejected`, `too-many-levels`, `target-mix-level`
  */
 export function tablesOf(account: Account, material: Material): IntakeTables {
-  const { review, settled, ready } = material
+  const { review, settled, ready, labels, margins } = material
   const grouped = settled?.grouped ?? null
   const parts = [...ready, ...(grouped?.parts ?? [])]
   const accounting = accountingOf(material)
@@ -62,20 +67,32 @@ export function tablesOf(account: Account, material: Material): IntakeTables {
   const [firstDay, lastDay] = [Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))]
   const axis = timeline({ ...account, firstDay, lastDay, review })
   const steps = axis.steps.map(dayNumber)
-  const readyCells = cellColumns(ready, steps, factors)
+  const readyCells = cellColumns(placeCells(ready, steps, factors), factors)
+  const cells = placeCells(parts, steps, factors)
   const indices = grouped === null ? null : indicesOf(grouped, axis, factors)
+  // Who is speaking is told of mentions alone.
+  const people = ready.length > 0 ? null : grouped
   const summed = summedAuthors(readyCells, axis, factors)
   return {
     timeline: axis,
     factors,
-    cells: cellColumns(parts, steps, factors),
+    cells: cellColumns(cells, factors),
     variation: grouped === null ? factors[0]!.levels.map(() => null) : variationRows(grouped.variation, indices!, factors[0]!.levels.length),
     hindsight: grouped === null ? null : hindsightOf(grouped, indices!, axis, factors[0]!.levels.length),
-    labels: null, noLabels: null, staying: [], extremes: [], pull: [], segments: null,
+    labels: labels === null || typeof labels === 'string' ? null : cellLabels(cells, labels),
+    noLabels: typeof labels === 'string' ? labels : null,
+    staying: people === null ? [] : stayingRows(people, indices!, axis),
+    extremes: people === null ? [] : extremeRows(people, indices!),
+    pull: people === null ? [] : pullRows(people, indices!, factors),
+    segments: margins.length === 0 ? null : people?.segments ?? withoutAuthors(margins),
     concentration: grouped === null ? [] : concentrationRows(grouped, indices!),
     authors: grouped === null ? summed : addAuthors(summed, grouped, indices!, factors, ready.length === 0),
     accounting: { ...accounting, withAuthor: authoredMentions(grouped, indices, readyCells, factors), readyMade: ready.length > 0 },
   }
+}
+
+function withoutAuthors(margins: readonly MarginWish[]): SegmentTable {
+  return { margins: margins.map(({ margin }) => margin), rows: [], levels: margins.map(() => []) }
 }
 
 /** Every row of every source, in one of four places. @throws if one is lost: a fault of the program */

@@ -1,7 +1,9 @@
 import { accessSync, constants } from 'node:fs'
 import { homedir } from 'node:os'
 import { join } from 'node:path'
-import puppeteer, { type Browser } from 'puppeteer'
+import type * as Puppeteer from 'puppeteer'
+import type { Browser } from 'puppeteer'
+import { faultOf } from '../faults/catalogue.ts'
 import { MachineFault } from '../faults/fault.ts'
 import { findBrowser, type FoundBrowser, type Machine } from './find-browser.ts'
 import { browserPackage, unpackBrowser } from './unpack-browser.ts'
@@ -14,15 +16,18 @@ export interface BrowserOptions {
 /**
  * Start a browser for printing. It dies with this process; close it with `browser.close()`.
  *
- * @throws {MachineFault} `browser-missing` or `browser-does-not-start`, each with what to do
+ * @throws {MachineFault} `browser-missing`, `browser-does-not-start` or `printer-unusable`, each with what to do
  */
 export async function openBrowser(options: BrowserOptions = {}): Promise<Browser> {
-  const found = await findBrowser(thisMachine(options))
+  const puppeteer = await printingLibrary()
+  const found = await findBrowser(thisMachine(options, puppeteer))
   try {
     return await puppeteer.launch({
       executablePath: found.executable,
       headless: /headless-shell|chromium-\d/.test(found.executable) ? 'shell' : true,
       pipe: true,
+      // signals are the command line's: it abandons the draft first; with the process the pipe ends, and with the pipe the browser
+      handleSIGINT: false, handleSIGTERM: false, handleSIGHUP: false,
       env: environment(found),
       args: launchArguments(),
     })
@@ -31,13 +36,22 @@ export async function openBrowser(options: BrowserOptions = {}): Promise<Browser
   }
 }
 
-function thisMachine(options: BrowserOptions): Machine {
+/** Loaded when something is printed: it looks for settings in the folders above and at home, which a machine may not let it. */
+async function printingLibrary(): Promise<typeof Puppeteer> {
+  try {
+    return await import('puppeteer')
+  } catch (error) {
+    throw new MachineFault(faultOf('printer-unusable', 'this machine', { reason: error instanceof Error ? error.message.split('\n')[0]! : String(error) }))
+  }
+}
+
+function thisMachine(options: BrowserOptions, puppeteer: typeof Puppeteer): Machine {
   const asked = options.browser ?? process.env.TARELINE_BROWSER
   return {
     platform: process.platform,
     architecture: process.arch,
     asked: asked === '' ? undefined : asked,
-    pinned: pinnedBrowser(),
+    pinned: pinnedBrowser(puppeteer),
     isProgram,
     unpack: async () => unpackBrowser(await browserPackage(), cacheFolder()),
   }
@@ -48,7 +62,7 @@ function cacheFolder(): string {
   return stated === undefined || stated === '' ? join(homedir(), '.cache') : stated
 }
 
-function pinnedBrowser(): string | undefined {
+function pinnedBrowser(puppeteer: typeof Puppeteer): string | undefined {
   try {
     return puppeteer.executablePath()
   } catch {

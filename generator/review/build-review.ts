@@ -4,17 +4,18 @@ import type { Findings } from '../../model/findings/schema.ts'
 import type { Account } from '../account/account.ts'
 import { openCache } from '../cache/cache.ts'
 import { compose } from '../compose/compose.ts'
-import { firstForecast, placeInputs } from '../inputs/place-inputs.ts'
+import { firstForecast, marginsAsked, placeInputs } from '../inputs/place-inputs.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
 import { readIntake } from '../intake/read-intake.ts'
 import { print } from '../print/print.ts'
 import type { Program } from '../program/program.ts'
 import { render } from '../render/render.ts'
 import { tablesOf } from '../tables/tables-of.ts'
-import { loadHouse } from './house.ts'
+import { loadHouse, type House } from './house.ts'
 import { makeFindings, requireSteps } from './make-findings.ts'
 import type { Progress } from './stages.ts'
-import { openDraft, requireDraft } from './write-draft.ts'
+import { unlessStopped } from './stopping.ts'
+import { openDraft, requireDraft, type DraftContents } from './write-draft.ts'
 
 /*
  *   account ──▶ intake tables ──▶ findings ──▶ document ──▶ review.html ──▶ review.pdf
@@ -32,6 +33,8 @@ export interface BuildOptions {
   /** Opened once per run, when a PDF is first printed; null: no PDF. */
   readonly browser: (() => Promise<Browser>) | null
   readonly progress: Progress
+  /** When it is aborted, the draft is abandoned, unless it is just being put in its place. */
+  readonly stop?: AbortSignal | undefined
 }
 
 export interface Draft {
@@ -41,7 +44,6 @@ export interface Draft {
 
 /** Make the draft review of one account and period. What was there before stays until the new draft is whole. */
 export async function buildReview(program: Program, account: Account, options: BuildOptions): Promise<Draft> {
-  const { progress } = options
   const house = await loadHouse(program, account)
   const browser = options.browser === null ? null : options.browser()
   // a machine without a browser is told at once, not after the fit; the answer is awaited where it is needed
@@ -49,30 +51,38 @@ export async function buildReview(program: Program, account: Account, options: B
   if (options.out !== undefined) await requireDraft(options.out)
   const draft = await openDraft(options.out === undefined ? join(account.folder, 'drafts') : dirname(options.out))
   try {
-    progress.stage('intake')
-    const inputs = await readSmallInputs(account)
-    const tables = await readIntake(account, {
-      period: options.period, threads: options.threads, rejects: draft.rejects, hindsightFrom: firstForecast(inputs), progress: progress.detail,
-    })
-    requireSteps(account, tables)
-    const small = placeInputs(inputs, account, tables.timeline)
-    progress.stage('fit')
-    const findings = await makeFindings(account, { tables, small, files: inputs.files }, house.words, {
-      seed: options.seed, version: program.version, threads: options.threads, cache: openCache(join(account.folder, 'cache'), program.model), progress,
-    })
-    progress.stage('document')
-    const figures = tablesOf(findings)
-    const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })
-    const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme })
-    if (browser !== null) progress.stage('print')
-    const pdf = browser === null ? null : await print(html, await browser, {
-      title: document.title, author: account.preparedBy ?? account.brand, date: findings.period.end, language: document.lang,
-    })
-    const folder = options.out ?? join(account.folder, 'drafts', findings.period.name)
-    await draft.finish(folder, { findings, tables: figures, html, pdf })
-    return { folder, findings }
+    const contents = await unlessStopped(options.stop, makeContents(program, account, house, draft.rejects, browser, options))
+    const folder = options.out ?? join(account.folder, 'drafts', contents.findings.period.name)
+    await draft.finish(folder, contents)
+    return { folder, findings: contents.findings }
   } catch (error) {
     await draft.abandon()
     throw error
   }
+}
+
+async function makeContents(
+  program: Program, account: Account, house: House, rejects: string, browser: Promise<Browser> | null, { period, threads, seed, progress }: BuildOptions,
+): Promise<DraftContents> {
+  progress.stage('intake')
+  const inputs = await readSmallInputs(account)
+  const tables = await readIntake(account, {
+    period, threads, rejects, hindsightFrom: firstForecast(inputs),
+    labels: inputs.audit !== null, margins: marginsAsked(inputs), progress: progress.detail,
+  })
+  requireSteps(account, tables)
+  const small = placeInputs(inputs, account, tables.timeline)
+  progress.stage('fit')
+  const findings = await makeFindings(account, { tables, small, files: inputs.files }, house.words, {
+    seed, version: program.version, threads, cache: openCache(join(account.folder, 'cache'), program.model), progress,
+  })
+  progress.stage('document')
+  const figures = tablesOf(findings)
+  const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })
+  const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme })
+  if (browser !== null) progress.stage('print')
+  const pdf = browser === null ? null : await print(html, await browser, {
+    title: document.title, author: account.preparedBy ?? account.brand, date: findings.period.end, language: document.lang,
+  })
+  return { findings, tables: figures, html, pdf }
 }

@@ -11,6 +11,7 @@ import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
 import { startFitThreads, type FitThreads } from '../threads/fit-threads.ts'
 import { startRefitThreads } from '../threads/refit-threads.ts'
+import { wordAdvice } from '../words/advice.ts'
 import { wordCaveat } from '../words/caveats.ts'
 import type { Words } from '../words/words.ts'
 import type { Progress } from './stages.ts'
@@ -35,20 +36,28 @@ export interface FitOptions {
 /** Tables and inputs ──model──▶ analysis ──worded──▶ findings, checked against their schema. */
 export async function makeFindings(account: Account, inputs: ReviewInputs, words: Words, options: FitOptions): Promise<Findings> {
   const spec = specOf(account, options.seed)
-  // whatever template, words and theme say, the figures are the same
-  const analysis = await options.cache.remember('analyses', [inputs, spec], () => compute(inputs, spec, options), analysisOf)
-  const { caveats, ...computed } = analysis
-  return findingsSchema.parse({
+  const worded = ({ caveats, advice, ...computed }: Analysis): Findings => findingsSchema.parse({
     ...computed,
     account: account.account, brand: account.brand, locale: account.locale,
     caveats: caveats.map((caveat) => ({ ...caveat, ...wordCaveat(words, caveat.code, caveat.figures) })),
+    advice: advice.map((piece) => ({ ...piece, ...wordAdvice(words, piece.code, piece.figures) })),
     inputs: [...inputs.tables.accounting.inputs, ...inputs.files].map((input) => ({ ...input })),
     program: { version: options.version, seed: options.seed },
   })
+  // whatever template, words and theme say, the figures are the same
+  const analysis = await options.cache.remember('analyses', [inputs, spec], () => compute(inputs, spec, options), (written) => {
+    const restored = analysisOf(written)
+    // one that can't be worded is none: what this throws leads to a fresh one
+    if (restored !== null) worded(restored)
+    return restored
+  })
+  return worded(analysis)
 }
 
-const analysisShape = findingsSchema.omit({ account: true, brand: true, locale: true, inputs: true, program: true, caveats: true })
-  .extend({ caveats: findingsSchema.shape.caveats.element.pick({ code: true, severity: true, figures: true }).array() })
+const analysisShape = findingsSchema.omit({ account: true, brand: true, locale: true, inputs: true, program: true, caveats: true, advice: true }).extend({
+  caveats: findingsSchema.shape.caveats.element.pick({ code: true, severity: true, figures: true }).array(),
+  advice: findingsSchema.shape.advice.element.omit({ action: true, evidence: true, success: true }).array(),
+})
 
 /** An analysis that was written down, if it has the shape of one. */
 function analysisOf(written: unknown): Analysis | null {
@@ -61,9 +70,17 @@ function specOf(account: Account, seed: number): AnalysisSpec {
     targetMix: Object.fromEntries(account.targetMix.map(({ factor, shares }) => [factor, Object.fromEntries(shares.map(({ level, share }) => [level, share]))])),
     facts: {
       givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, posterBounds: account.posters, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
-      timeZone: account.timeZone, reporting: account.reporting,
+      timeZone: account.timeZone, reporting: account.reporting, labelScores: labelScoresOf(account),
     },
   }
+}
+
+/** Scores of the labels of the first source that has any, each once. */
+function labelScoresOf({ mentions }: Account): readonly number[] | null {
+  const labelled = mentions.find((source) => source.kind === 'mentions' && source.score.kind === 'labels')
+  if (labelled?.kind !== 'mentions' || labelled.score.kind !== 'labels') return null
+  const scores = [...new Set(labelled.score.labels.map(({ score }) => score))].sort((a, b) => a - b)
+  return scores.length < 2 ? null : scores
 }
 
 async function compute({ tables, small }: ReviewInputs, spec: AnalysisSpec, { threads = Math.min(8, availableParallelism()), cache, progress }: FitOptions): Promise<Analysis> {

@@ -1,8 +1,8 @@
-import { chmod, mkdir, mkdtemp, readdir, rename, rm, rmdir, writeFile } from 'node:fs/promises'
+import { chmod, mkdir, mkdtemp, readdir, rename, rm, rmdir, stat, writeFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import type { Findings } from '../../model/findings/schema.ts'
 import { faultOf } from '../faults/catalogue.ts'
-import { InputFault } from '../faults/fault.ts'
+import { InputFault, MachineFault } from '../faults/fault.ts'
 import { toCsv } from '../tables/csv.ts'
 import type { Table } from '../tables/table.ts'
 
@@ -27,22 +27,56 @@ export interface UnfinishedDraft {
   abandon(): Promise<void>
 }
 
-/** @param parent - the folder in which the draft's own will stand; made where it is absent */
+/**
+ * Begin a draft; unfinished ones that a killed build left behind more than a day ago go.
+ *
+ * @param parent - the folder in which the draft's own will stand; made where it is absent
+ * @throws {MachineFault} `draft-unwritable`, then and when the draft is finished
+ */
 export async function openDraft(parent: string): Promise<UnfinishedDraft> {
-  const made = await mkdir(parent, { recursive: true })
-  const unfinished = await mkdtemp(join(parent, '.unfinished-'))
+  const made = await writing(parent, () => mkdir(parent, { recursive: true }))
+  const unfinished = await writing(parent, () => mkdtemp(join(parent, '.unfinished-')))
+  await sweep(parent)
   return {
     rejects: join(unfinished, 'rejects'),
     finish: async (folder, contents) => {
       await requireDraft(folder)
-      await fill(unfinished, contents)
-      await chmod(unfinished, 0o755)
-      await replace(folder, unfinished)
+      await writing(parent, async () => {
+        await fill(unfinished, contents)
+        await chmod(unfinished, 0o755)
+        await replace(folder, unfinished)
+      })
     },
     abandon: async () => {
-      await rm(unfinished, { recursive: true, force: true })
+      // what could not be written may not be removable either; why it was abandoned is told, not that
+      await rm(unfinished, { recursive: true, force: true }).catch(() => undefined)
       if (made !== undefined) await rmdir(made).catch(() => undefined)
     },
+  }
+}
+
+/** What a file system says when it does not take a draft: no right, no room, no place. */
+const refusals: ReadonlySet<string> = new Set(['EACCES', 'EPERM', 'EROFS', 'ENOSPC', 'EDQUOT', 'ENOTDIR', 'EEXIST', 'ENAMETOOLONG', 'ENOENT'])
+
+async function writing<T>(parent: string, write: () => Promise<T>): Promise<T> {
+  try {
+    return await write()
+  } catch (error) {
+    const { code } = error as NodeJS.ErrnoException
+    throw code !== undefined && refusals.has(code) ? new MachineFault(faultOf('draft-unwritable', parent, { reason: code })) : error
+  }
+}
+
+const dayLong = 24 * 60 * 60 * 1000
+
+/** Take away what killed builds left behind; what can't be taken away stays. */
+async function sweep(parent: string): Promise<void> {
+  const entries = await readdir(parent, { withFileTypes: true }).catch(() => [])
+  // a `-before` is an earlier draft on its way: it is never taken away unseen
+  for (const entry of entries.filter(({ name }) => /^\.unfinished-[^-]+$/.test(name))) {
+    const left = join(parent, entry.name)
+    const age = await stat(left).then(({ mtimeMs }) => Date.now() - mtimeMs, () => 0)
+    if (entry.isDirectory() && age > dayLong) await rm(left, { recursive: true, force: true }).catch(() => undefined)
   }
 }
 

@@ -14,7 +14,16 @@ export function surveyForecastsTable({ survey }: Findings): Table {
   })))
 }
 
-/** Forecasts from the posts and from their two rivals, a row each; empty where nothing was forecast. */
+/** The next wave as it is forecast, beside those of which it can be told how they came out; no row where there is no forecast. */
+export function nextWaveTable({ survey }: Findings): Table {
+  const next = survey?.next_wave ?? null
+  return makeTable('next-wave', { field_start: 'date', field_end: 'date', middle: 'date', kind: 'text', forecast: 'measure', low: 'measure', high: 'measure', last: 'measure' }, next === null ? [] : [{
+    field_start: next.field_start, field_end: next.field_end, middle: middleOf(next.field_start, next.field_end), kind: survey?.kind ?? null,
+    forecast: next.forecast.mean, low: next.forecast.low, high: next.forecast.high, last: next.last,
+  }])
+}
+
+/** Forecasts from the posts and from their rivals, a row each; empty where nothing was forecast. */
 export function surveyRivalsTable({ survey }: Findings): Table {
   const forecast = survey?.forecast ?? null
   const posts = forecast === null ? [] : [{ ...forecast, rival: 'posts', rmse_ratio: null, crps_ratio: null, dm_p: null }]
@@ -42,11 +51,11 @@ export function departuresTable({ survey }: Findings): Table {
   }))))
 }
 
-/** Growth of the outcome that goes with a rise of opinion by 10 points, at each lag; in percent. */
+/** Growth of the outcome that goes with a rise of opinion by 1 point, at each lag; in percentage points. */
 export function outcomeLagsTable({ outcome }: Findings): Table {
-  return makeTable('outcome-lags', { span_lag: 'count', effect: 'change', low: 'change', high: 'change', effect_p: 'p-value', adjusted_p: 'p-value', observations: 'count', best: 'word' },
+  return makeTable('outcome-lags', { span_lag: 'word', effect: 'number', low: 'number', high: 'number', effect_p: 'p-value', adjusted_p: 'p-value', observations: 'count', best: 'word' },
     (outcome?.lags ?? []).map(({ lag, effect, p, adjusted_p: adjusted, observations }) => (
-      { span_lag: lag, effect: effect.mean, low: effect.low, high: effect.high, effect_p: p, adjusted_p: adjusted, observations, best: lag === outcome?.best_lag }
+      { span_lag: String(lag), effect: effect.mean / 10, low: effect.low / 10, high: effect.high / 10, effect_p: p, adjusted_p: adjusted, observations, best: lag === outcome?.best_lag }
     )))
 }
 

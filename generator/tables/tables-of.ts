@@ -2,17 +2,21 @@ import type { Findings } from '../../model/findings/schema.ts'
 import { accountingTable, checksTable, inputsTable, scalesTable, targetMixTable } from './method-tables.ts'
 import { decompositionTable, opinionTable, periodsTable, spansTable } from './opinion-tables.ts'
 import { concentrationTable, mixTable, offsetsTable } from './speaking-tables.ts'
-import { departuresTable, eventsTable, lagWeightsTable, outcomeLagsTable, surveyForecastsTable, surveyRivalsTable } from './survey-forecast-tables.ts'
+import { departuresTable, eventsTable, lagWeightsTable, nextWaveTable, outcomeLagsTable, surveyForecastsTable, surveyRivalsTable } from './survey-forecast-tables.ts'
 import { agreementTable, surveyCandidatesTable, surveyLagsTable, surveyWavesTable, trackerTable } from './survey-tables.ts'
+import { adviceTable, hearingTable } from './advice-tables.ts'
+import { benchmarkMarginsTable, benchmarkTable, coderTable, importanceTable, tippingTable } from './customer-tables.ts'
 import { inOrder, levelOrder } from './level-order.ts'
+import { pullTable, spreadSeriesTable, spreadTable, stayingTable } from './staying-tables.ts'
 import type { Table } from './table.ts'
 import { venueSeriesTable, venuesBeforeTable, venuesTable } from './venue-tables.ts'
 
 const makers = [
   opinionTable, periodsTable, spansTable, decompositionTable, venuesTable, venueSeriesTable, venuesBeforeTable, mixTable, offsetsTable, concentrationTable,
   accountingTable, scalesTable, targetMixTable, checksTable, inputsTable,
-  trackerTable, surveyWavesTable, agreementTable, surveyLagsTable, surveyCandidatesTable, surveyForecastsTable, surveyRivalsTable, lagWeightsTable, departuresTable,
+  trackerTable, surveyWavesTable, agreementTable, surveyLagsTable, surveyCandidatesTable, surveyForecastsTable, nextWaveTable, surveyRivalsTable, lagWeightsTable, departuresTable,
   outcomeLagsTable, eventsTable,
+  stayingTable, spreadTable, spreadSeriesTable, pullTable, benchmarkTable, benchmarkMarginsTable, tippingTable, coderTable, importanceTable, hearingTable, adviceTable,
 ] as const
 
 /** Tables list venues as they find them: in the one order of the document. */
@@ -22,9 +26,16 @@ function withVenuesInOrder(findings: Findings): Findings {
   const candidates = findings.survey === null ? [] : [...inOrder(findings.survey.candidates, 'venue', order, ({ venue }) => venue ?? '')]
   const first = (series: string) => candidates.filter((of) => of.series === series)
   return {
-    ...findings, venues: sorted(findings.venues), speaking: { ...findings.speaking, venues: sorted(findings.speaking.venues) },
+    ...findings, venues: sorted(findings.venues), speaking: withSpeakingInOrder(findings.speaking, sorted),
+    coder: { ...findings.coder, venues: sorted(findings.coder.venues) }, hearing: findings.hearing && { ...findings.hearing, venues: sorted(findings.hearing.venues) },
     survey: findings.survey && { ...findings.survey, candidates: [...first('adjusted'), ...first('raw'), ...first('venue')] },
   }
+}
+
+type Sorted = <T extends { readonly venue: string }>(list: readonly T[]) => T[]
+
+function withSpeakingInOrder(speaking: Findings['speaking'], sorted: Sorted): Findings['speaking'] {
+  return { ...speaking, venues: sorted(speaking.venues), spread: sorted(speaking.spread), pull: sorted(speaking.pull) }
 }
 
 /**

@@ -8,6 +8,7 @@ const formOf: Readonly<Record<string, FormName>> = {
   share: 'share', from: 'share', to: 'share', correlation: 'number', pareto_k: 'number', ess: 'count',
   raw_change: 'change', change: 'change', first: 'date', last: 'date', factor: 'factor',
   mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain', least: 'plain', most: 'count',
+  correction: 'change', gap: 'change', reason: 'code', now: 'points', base: 'points', usual: 'count', unreached: 'plain', slope: 'number-size', shift: 'number',
   pairs: 'plain', needed: 'plain', waves: 'plain', hidden: 'plain', flagged: 'plain', observed: 'measure', expected: 'measure',
 }
 
@@ -28,7 +29,7 @@ function writeFigure(name: string, value: string | number, words: Words, kind: s
   if (typeof value === 'number') return write(value, form === undefined || form === 'factor' || form === 'date' ? 'number' : form, words, kind)
   if (name === 'level') return levelLabel({ label: value, level: value }, words)
   if (form === 'date' && /^\d{4}-\d{2}-\d{2}$/.test(value)) return write(value, 'date', words)
-  return form === 'factor' ? write(value, 'factor', words) : value
+  return form === 'factor' || form === 'code' ? write(value, form, words) : value
 }
 
 /**

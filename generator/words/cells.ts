@@ -52,13 +52,15 @@ function mark({ kind }: Column, row: Row, words: Words): string {
 }
 
 /**
- * What a row is called: a metric by its own label, a series compared with the survey by the catalogue or its venue's label, a level as everywhere.
+ * What a row is called: a metric by its own label, with the segment if it is that of one, a series compared with the survey by the catalogue or its venue's label, a level as everywhere.
  *
  * @returns undefined where the row has no label
  */
 export function rowLabel(row: Row, words: Words): string | undefined {
-  const { label, level = row['venue'], series } = row
+  const { label, level = row['venue'], series, metric, segment } = row
   if (typeof label !== 'string') return undefined
+  if (typeof metric === 'string' && typeof segment === 'string') return words.say('metric-segment', { label, segment })
+  if (series === 'venue') return words.say('venue-raw', { label: levelLabel({ label, level: typeof level === 'string' ? level : label }, words) })
   if (typeof series === 'string') return levelLabel({ label, series, level: label }, words)
   return typeof level === 'string' ? levelLabel({ label, level }, words) : label
 }
@@ -70,10 +72,11 @@ const fingerprintShown = 12
 
 function writeText(key: string, value: string, row: Row, words: Words, labels: Labels): string {
   if (key === 'label') return rowLabel(row, words) ?? value
-  if (key === 'period') return String(write(value, 'period', words))
+  if (key === 'period' || key === 'next_period') return String(write(value, 'period', words))
   if (key === 'factor') return String(write(value, 'factor', words))
   if (key === 'sha256') return value.slice(0, fingerprintShown)
   if (key === 'venue') return labels.get(value) ?? value
+  if (key === 'poster') return value === 'all' ? words.say('poster-all') : levelLabel({ label: value, poster: value }, words)
   if (key === 'scale' && value.startsWith(driftScale)) {
     const venue = value.slice(driftScale.length)
     return words.say('scale-venue_drift', { venue: labels.get(venue) ?? venue })
@@ -88,5 +91,6 @@ export function writeBounds(low: Cell, high: Cell, kind: ColumnKind, words: Word
   if (typeof low !== 'number' || typeof high !== 'number') return words.say('cell-empty')
   const format = measureFormats[kind]
   if (format) return measureInterval({ low, high }, unitOf(row, kind), format, words)
+  if (kind === 'share') return interval({ low, high }, (value) => numbers.share(value, words), words)
   return interval({ low, high }, kind === 'change' ? numbers.change : kind === 'number' ? numbers.number : numbers.points, words)
 }

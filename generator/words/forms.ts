@@ -1,11 +1,11 @@
 import { date, days, period, shortDate } from './dates.ts'
 import { factorName, levelLabel, partName } from './labels.ts'
 import { measure, measureChange, measureInterval, measureSize, steps } from './measures.ts'
-import { change, count, countRange, interval, number, pValue, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange } from './numbers.ts'
+import { change, count, countRange, interval, number, pValue, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange, tinyNumber } from './numbers.ts'
 import type { WordArgument, Words } from './words.ts'
 
 /** What a form is made from. */
-export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'fieldwork' | 'event' | 'any'
+export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'fieldwork' | 'event' | 'spans' | 'any'
 
 export interface Form {
   readonly from: Kind
@@ -23,6 +23,7 @@ const ofMeasures = (format: typeof measure): Form => ({ from: 'estimate', needsU
 const ofList = (write: (value: readonly unknown[], words: Words) => WordArgument): Form => ({ from: 'list', write })
 
 interface Bounds { readonly low: number, readonly high: number }
+interface Spans { readonly best_lag: number, readonly span_days: number }
 interface Shift { readonly share_from: number, readonly share_to: number }
 
 /** Every form that a figure can take; a template names one by `as`. */
@@ -32,10 +33,15 @@ export const forms = {
   size: ofNumber(size),
   count: ofNumber((value, words) => count(value, words.locale)),
   number: ofNumber((value, words) => number(value, words.locale)),
+  'tiny-number': ofNumber((value, words) => tinyNumber(value, words.locale)),
+  /** Half the width of an interval, for `plus or minus`: 3.6 is `1.8`. */
+  'half-width': ofNumber((value, words) => number(value / 2, words.locale)),
   share: ofNumber(share),
   probability: ofNumber(probability),
   'probability-words': ofNumber((value, words) => words.say('probability-words', { band: probabilityBand(value) })),
   'probability-figure': ofNumber(probabilityFigure),
+  /** How large a small figure is, without its sign: `0.13`. */
+  'number-size': ofNumber((value, words) => number(Math.abs(value), words.locale)),
   /** For choosing a case: `up`, `down`, or `flat` where one decimal shows nothing. */
   sign: ofNumber(signOf),
   /** The bare number, for plurals and exact cases. */
@@ -53,8 +59,16 @@ export const forms = {
   steps: ofMeasure(steps),
   'number-interval': ofBounds((value, words) => interval(value, number, words)),
   'p-value': ofNumber(pValue),
-  /** How far a ratio lies from 1, as a percentage: 0.69 and 1.31 are both `31%`. */
-  'ratio-size': ofNumber((value, words) => share(Math.abs(1 - value), words)),
+  /** For choosing a case: whether chance is a poor explanation (`clear`, p at most 0.05, the level of the verdict's rule) or may do (`open`). */
+  chance: ofNumber((p) => (p <= 0.05 ? 'clear' : 'open')),
+  /** What an interval leaves outside, as a p-value: 0.90 leaves `0.10`. */
+  outside: ofNumber((value, words) => pValue(1 - value, words)),
+  /** Something that goes with 10 points, as it goes with 1: `+0.21`. */
+  'per-point': ofNumber((value, words) => measureChange(value / 10, 'mean', words.locale)),
+  'per-point-size': ofNumber((value, words) => measureSize(value / 10, 'mean', words.locale)),
+  'per-point-interval': ofBounds(({ low, high }, words) => measureInterval({ low: low / 10, high: high / 10 }, 'mean', measureChange, words)),
+  /** How long after opinion the outcome follows: in months where its spans are months, else in days. */
+  'span-lag': { from: 'spans', write: (value: Spans, words: Words) => spanLag(value, words) } satisfies Form,
   /** For choosing a case: whether a ratio lies above 1 (`up`), below (`down`) or is 1 (`flat`); exact, since a verdict rests on it. */
   'ratio-sign': ofNumber((value) => (value === 1 ? 'flat' : value > 1 ? 'up' : 'down')),
   date: ofString((value, words) => date(value, words.locale)),
@@ -69,6 +83,8 @@ export const forms = {
   /** A number that names something, ungrouped: a seed. */
   digits: ofNumber((value) => String(value)),
   text: ofString((value) => value),
+  /** A name at the start of a line: with a capital, as levels are written in tables. */
+  name: ofString((value, words) => levelLabel({ label: value }, words)),
   /** A factor's name: `venue` is worded, one that the account adds stays as it is. */
   factor: ofString(factorName),
   /** A part of a decomposition, as tables and charts name it. */
@@ -107,6 +123,13 @@ function shareDirection(from: number, to: number): 'up' | 'down' | 'flat' {
   return to > from ? 'up' : 'down'
 }
 
+/** Lengths of a calendar month, in days. */
+const [shortestMonth, longestMonth] = [28, 31]
+
+function spanLag({ best_lag: lag, span_days: span }: Spans, words: Words): string {
+  return words.say('span-lag', { monthly: span >= shortestMonth && span <= longestMonth ? 'yes' : 'no', lag, days: count(lag * span, words.locale) })
+}
+
 /** What one decimal shows of a number's direction. */
 function signOf(value: number): 'up' | 'down' | 'flat' {
   if (Math.abs(value) < 0.05) return 'flat'
@@ -124,7 +147,7 @@ export function write(value: unknown, form: FormName, words: Words, unit = ''): 
   return fits(value, from) ? toWords(value as never, words, unit) : words.say('not-known')
 }
 
-const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'], fieldwork: ['field_start', 'field_end'], event: ['label', 'date'] } as const
+const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'], fieldwork: ['field_start', 'field_end'], event: ['label', 'date'], spans: ['best_lag', 'span_days'] } as const
 
 function fits(value: unknown, kind: Kind): boolean {
   if (kind === 'any') return true

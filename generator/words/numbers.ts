@@ -40,6 +40,11 @@ export function number(value: number, locale: string): string {
   return figure(value, locale, { minimumFractionDigits: 2, maximumFractionDigits: 2 })
 }
 
+/** A figure so small that two decimals would hide it: `0.0109`, `−0.00052`; two figures that count. */
+export function tinyNumber(value: number, locale: string): string {
+  return figure(value, locale, { maximumSignificantDigits: 2 })
+}
+
 /** A share as a whole percentage, alike in text, tables and charts: `41%`; what rounds to nothing, or to all, but is not is `under 1%`, `over 99%`. */
 export function share(value: number, words: Words): string {
   const percent = (of: number) => figure(of, words.locale, { style: 'percent', maximumFractionDigits: 0 })

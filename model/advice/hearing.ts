@@ -19,7 +19,7 @@ const mostOfAll = 0.8
 /** Nobody is asked to hear more than as many again as there are, within these bounds. */
 const mostAuthors = { least: 50, most: 2000 } as const
 /** Falls by less than this part are not worth asking for. */
-const leastFall = 0.01
+const leastFall = 0.02
 
 /** What hearing more authors somewhere would do. */
 export interface Gain {

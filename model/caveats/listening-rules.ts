@@ -28,7 +28,11 @@ export const listeningRules: readonly CaveatRule[] = [
   ({ findings: { speaking } }) => speaking.pull.filter(({ poster, movement, slope }) => poster === null && movement !== 'not-established' && Math.abs(slope.mean) >= pulls)
     .map(({ venue: _name, label, slope }) => caveat('note', 'conversation-pull', { venue: label, lean: slope.mean > 0 ? 'towards' : 'away', slope: slope.mean })),
   ({ findings: { benchmark } }) => (benchmark === null ? [] : benchmark.margins.flatMap((margin) => mismatchOf(margin, benchmark.unreachable.filter((of) => of.margin === margin.margin)))),
-  ({ findings: { coder } }) => (coder.status === 'refused' && coder.reason !== null ? [caveat('caution', 'audit-refused', { reason: coder.reason })] : []),
+  ({ findings: { coder } }) => {
+    if (coder.status === 'refused' && coder.reason !== null) return [caveat('caution', 'audit-refused', { scope: 'all', venue: '', reason: coder.reason })]
+    const left = coder.status === 'applied' ? coder.venues : []
+    return left.flatMap(({ label, refused }) => (refused === null ? [] : [caveat('note', 'audit-refused', { scope: 'venue', venue: label, reason: refused })]))
+  },
   ({ findings: { coder } }) => {
     const { correction, movement } = coder
     return correction !== null && movement !== null && movement !== 'not-established' && Math.abs(correction.mean) >= coderBias

@@ -100,7 +100,7 @@ export const benchmark = z.strictObject({
 
 export const volume = z.strictObject({
   wave: z.string(), metric: z.string(), label: z.string(),
-  /** Percent: authors positive on the whole, and what the survey found. */
+  /** Percent: content voices by the raw average, a neutral one counted half; and what the survey found. */
   posts: z.number(), survey: z.number(), gap: z.number(),
   authors: count,
   /** From the account; null where it does not say. */

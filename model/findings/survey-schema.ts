@@ -80,6 +80,7 @@ const forecastWave = z.strictObject({
 })
 
 const forecast = forecastScore.extend({
+  /** Waves forecast: those with eight waves known before them and posts, of more than 150 the last 150. */
   origins: count,
   /** Against the last wave carried forward. */
   rmse_ratio: z.number().min(0).nullable(), dm_p: share.nullable(),

@@ -1,6 +1,6 @@
 import type { Findings } from '../findings/schema.ts'
 import type { AccountEvent } from '../inputs/small-inputs.ts'
-import { forecastEstimate } from './forecast-estimate.ts'
+import { forecastEstimate, type Limits } from './forecast-estimate.ts'
 import type { ForecastWave } from './evaluate-forecasts.ts'
 
 type Survey = NonNullable<Findings['survey']>
@@ -11,10 +11,10 @@ const parting = 0.95
 const nearDays = 91
 
 /** Waves that lie outside the 95 % interval of their forecast, with the account's events of the three months before. */
-export function readDepartures(waves: readonly ForecastWave[], events: readonly AccountEvent[], stepDays: number): Pick<Survey, 'departures' | 'departures_expected'> {
+export function readDepartures(waves: readonly ForecastWave[], events: readonly AccountEvent[], stepDays: number, limits: Limits): Pick<Survey, 'departures' | 'departures_expected'> {
   return {
     departures: waves.flatMap(({ wave, forecast }) => {
-      const estimate = forecastEstimate(forecast.components, parting)
+      const estimate = forecastEstimate(forecast.components, parting, limits)
       if (wave.value >= estimate.low && wave.value <= estimate.high) return []
       const from = wave.startStep - Math.round(nearDays / stepDays)
       return [{

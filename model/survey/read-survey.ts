@@ -3,7 +3,7 @@ import type { AccountEvent, SurveyInput } from '../inputs/small-inputs.ts'
 import type { Reading } from '../reading/context.ts'
 import { movementOf } from '../reading/movement.ts'
 import { createGenerator } from '../random/generator.ts'
-import { forecastEstimate } from './forecast-estimate.ts'
+import { forecastEstimate, limitsOf, type Limits } from './forecast-estimate.ts'
 import { quantiles } from '../statistics/quantile.ts'
 import { candidatesOf } from './candidates.ts'
 import { correlateCandidate, lagsBetween } from './correlations.ts'
@@ -39,6 +39,7 @@ export async function readSurvey(reading: Reading, survey: SurveyInput, events: 
   const lags = lagsBetween(survey.lags)
   const metrics = readTracker(survey, interval)
   const { name, label, kind } = survey.metrics[survey.headline]
+  const limits = limitsOf(kind)
   const candidates = candidatesOf(reading).map((candidate, i) => correlateCandidate(candidate, waves, lags, interval, createGenerator(seed, surrogateStream + i)))
 
   const forecasts = await forecastWaves(fitted, waves, [...waves, ...(survey.next === null ? [] : [survey.next])], lags, refit, seed)
@@ -46,7 +47,7 @@ export async function readSurvey(reading: Reading, survey: SurveyInput, events: 
     const forecast = forecasts[w]
     return forecast === null ? [] : [{ wave, forecast }]
   })
-  const forecast = evaluateForecasts(scored, interval)
+  const forecast = evaluateForecasts(scored, interval, limits)
   const next = survey.next === null ? null : forecasts[waves.length]
   const [adjusted] = candidates
   return {
@@ -60,8 +61,8 @@ export async function readSurvey(reading: Reading, survey: SurveyInput, events: 
     pairs: adjusted.best?.pairs ?? Math.max(0, ...adjusted.lags.map(({ pairs }) => pairs)), pairs_needed: pairsNeeded,
     forecast,
     lag_weights: lagWeightsOf((next ?? scored.at(-1)?.forecast)?.models ?? []),
-    next_wave: next === null ? null : nextWave(survey.next, waves, next, interval),
-    ...readDepartures(scored, events, tables.timeline.stepDays),
+    next_wave: next === null ? null : nextWave(survey.next, waves, next, interval, limits),
+    ...readDepartures(scored, events, tables.timeline.stepDays, limits),
     verdict: verdictOf(adjusted, forecast),
   }
 }
@@ -71,10 +72,10 @@ function overlapping(waves: readonly HeadlineWave[]): string[] {
   return waves.filter((wave, w) => w > 0 && wave.start <= waves[w - 1].end).map((wave) => wave.name)
 }
 
-function nextWave(window: SurveyInput['next'], waves: readonly HeadlineWave[], { components }: WaveForecast, interval: number): Survey['next_wave'] {
+function nextWave(window: SurveyInput['next'], waves: readonly HeadlineWave[], { components }: WaveForecast, interval: number, limits: Limits): Survey['next_wave'] {
   const last = waves.at(-1)
   if (window === null || last === undefined) return null
-  const forecast = forecastEstimate(components, interval)
+  const forecast = forecastEstimate(components, interval, limits)
   const difference = { mean: forecast.mean - last.value, low: forecast.low - last.value, high: forecast.high - last.value, sd: forecast.sd }
   return { field_start: window.start, field_end: window.end, dates: window.dates, forecast, last: last.value, difference, movement: movementOf(difference) }
 }

@@ -4,16 +4,12 @@ import { movementOf } from '../reading/movement.ts'
 import { holmAdjusted } from '../statistics/holm.ts'
 import { twoMeans, twoShares } from '../statistics/two-sample-tests.ts'
 import { twoSidedQuantile, wilsonInterval, type Interval } from '../statistics/wilson.ts'
-import { standardErrorOf, unitOf } from './headline.ts'
+import { showingOf, standardErrorOf, unitOf } from './headline.ts'
 
 type Survey = NonNullable<Findings['survey']>
 type MetricFinding = Survey['metrics'][number]
 type ReadingFinding = MetricFinding['waves'][number]
 type Change = NonNullable<ReadingFinding['change']>
-
-/** Bases below these are not shown, and flagged (common practice, no source). */
-const hiddenBelow = 30
-const flaggedBelow = 75
 
 /**
  * The tracker's own figures: every metric for everyone and then for every segment, wave by wave, each with its interval and its
@@ -21,27 +17,42 @@ const flaggedBelow = 75
  * the metrics of a wave (Holm 1979).
  */
 export function readTracker(survey: SurveyInput, interval: number): readonly MetricFinding[] {
-  const plain = [-1, ...survey.segments.keys()].flatMap((segment) => survey.metrics.map((_, metric) => readMetric(survey, metric, segment, interval)))
+  const found = readingsByMetric(survey)
+  const plain = [-1, ...survey.segments.keys()].flatMap((segment) => survey.metrics.map((_, metric) => readMetric(survey, metric, segment, found(metric, segment), interval)))
   const everyone = plain.filter(({ segment }) => segment === null)
-  return plain.map((finding) => (finding.segment === null ? adjustOverMetrics(finding, everyone, 1 - interval) : finding))
-    .filter(({ waves }) => waves.length > 0)
+  return [...adjustOverMetrics(everyone, 1 - interval), ...plain.slice(everyone.length)].filter(({ waves }) => waves.length > 0)
 }
 
-function readMetric(survey: SurveyInput, metric: number, segment: number, interval: number): MetricFinding {
+/** What every metric of every segment has, in order of the waves. */
+function readingsByMetric(survey: SurveyInput): (metric: number, segment: number) => readonly WaveReading[] {
+  const keyOf = (metric: number, segment: number) => metric * (survey.segments.length + 1) + segment + 1
+  const found = new Map<number, WaveReading[]>()
+  for (const wave of survey.waves) {
+    for (const reading of wave.readings) {
+      const key = keyOf(reading.metric, reading.segment)
+      const before = found.get(key)
+      if (before === undefined) found.set(key, [{ wave, reading }])
+      else before.push({ wave, reading })
+    }
+  }
+  return (metric, segment) => found.get(keyOf(metric, segment)) ?? []
+}
+
+function readMetric(survey: SurveyInput, metric: number, segment: number, found: readonly WaveReading[], interval: number): MetricFinding {
   const { name, label, kind } = survey.metrics[metric]
-  const found = survey.waves.flatMap((wave) => {
-    const reading = wave.readings.find((candidate) => candidate.metric === metric && candidate.segment === segment)
-    return reading === undefined ? [] : [{ wave, reading }]
-  })
   const having = new Set(found.map(({ wave }) => wave))
   return {
     metric: name, label, kind, segment: segment === -1 ? null : survey.segments[segment],
     missing: survey.waves.filter((wave) => !having.has(wave)).map((wave) => wave.name),
-    waves: found.map(({ wave, reading }, i) => {
-      const before = found.slice(0, i).reverse().find((earlier) => earlier.wave.end < wave.start)
-      return readWave(kind, wave, reading, before, interval)
-    }),
+    waves: found.map(({ wave, reading }, i) => readWave(kind, wave, reading, lastOverBefore(found, i), interval)),
   }
+}
+
+/** The last wave before whose fieldwork was over when that of this one began. */
+function lastOverBefore(found: readonly WaveReading[], i: number): WaveReading | undefined {
+  const { start } = found[i].wave
+  for (let earlier = i - 1; earlier >= 0; earlier--) if (found[earlier].wave.end < start) return found[earlier]
+  return undefined
 }
 
 interface WaveReading {
@@ -50,22 +61,15 @@ interface WaveReading {
 }
 
 function readWave(kind: 'share' | 'mean', wave: SurveyWave, reading: SurveyReading, before: WaveReading | undefined, interval: number): ReadingFinding {
-  const shown = showing(reading)
+  const shown = showingOf(reading)
   const hidden = shown === 'hidden'
   const unit = unitOf(kind)
   const bounds = hidden ? null : boundsOf(reading, interval)
   return {
     wave: wave.name, field_start: wave.start, field_end: wave.end, base: reading.base, effective_base: reading.effectiveBase, shown,
     value: hidden ? null : unit * reading.value, low: bounds === null ? null : unit * bounds.low, high: bounds === null ? null : unit * bounds.high,
-    change: hidden || before === undefined || showing(before.reading) === 'hidden' ? null : changeOf(unit, before, reading, interval),
+    change: hidden || before === undefined || showingOf(before.reading) === 'hidden' ? null : changeOf(unit, before, reading, interval),
   }
-}
-
-/** By the effective base, which says better what a figure is worth. */
-function showing({ base, effectiveBase }: SurveyReading): ReadingFinding['shown'] {
-  const worth = Math.min(base, effectiveBase)
-  if (worth < hiddenBelow) return 'hidden'
-  return worth < flaggedBelow ? 'flagged' : 'shown'
 }
 
 function boundsOf(reading: SurveyReading, interval: number): Interval {
@@ -87,16 +91,25 @@ function changeOf(unit: number, before: WaveReading, now: SurveyReading, interva
 }
 
 /** Give every change its p-value for as many metrics as the wave tests; by that one it is established or not. */
-function adjustOverMetrics(finding: MetricFinding, everyone: readonly MetricFinding[], alpha: number): MetricFinding {
-  return {
+function adjustOverMetrics(everyone: readonly MetricFinding[], alpha: number): readonly MetricFinding[] {
+  const tested = new Map<string, { readonly metric: string; readonly p: number }[]>()
+  for (const { metric, waves } of everyone) {
+    for (const { wave, change } of waves) {
+      if (change !== null) tested.set(wave, [...(tested.get(wave) ?? []), { metric, p: change.p }])
+    }
+  }
+  const adjusted = new Map([...tested].map(([wave, tests]) => {
+    const values = holmAdjusted(tests.map(({ p }) => p))
+    return [wave, new Map(tests.map(({ metric }, i) => [metric, values[i]]))]
+  }))
+  return everyone.map((finding) => ({
     ...finding,
     waves: finding.waves.map((reading) => {
-      if (reading.change === null) return reading
-      const tested = everyone.flatMap(({ metric, waves }) => waves.filter(({ wave, change }) => wave === reading.wave && change !== null).map(({ change }) => ({ metric, p: change?.p ?? 1 })))
-      const adjusted = holmAdjusted(tested.map(({ p }) => p))[tested.findIndex(({ metric }) => metric === finding.metric)]
+      const p = adjusted.get(reading.wave)?.get(finding.metric)
+      if (reading.change === null || p === undefined) return reading
       const { difference } = reading.change
-      const movement = adjusted > alpha || difference === 0 ? 'not-established' : difference > 0 ? 'up' : 'down'
-      return { ...reading, change: { ...reading.change, adjusted_p: adjusted, movement } }
+      const movement = p > alpha || difference === 0 ? 'not-established' : difference > 0 ? 'up' : 'down'
+      return { ...reading, change: { ...reading.change, adjusted_p: p, movement } }
     }),
-  }
+  }))
 }

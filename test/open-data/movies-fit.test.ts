@@ -31,7 +31,7 @@ beforeAll(async () => {
   const sampling = samplingVariance(tables)
   const problem = buildProblem(tables, sampling.variance)
   const posterior = await samplePosterior(problem, localExecutor(problem), { seed: 1, proposals: 4000, draws: 2000 })
-  reading = createReading(tables, targetMix(tables), sampling, posterior, 0.9)
+  reading = createReading(tables, tables, targetMix(tables), sampling, posterior, 0.9)
 })
 afterAll(() => rm(folder, { recursive: true, force: true }))
 

@@ -28,11 +28,12 @@ export function plainProblem(observations: readonly PlainObservation[], options:
     venueFixed: Int32Array.from({ length: groups + 1 }, (_, v) => (v < groups ? v : -1)),
     groups: fixedGroups, border: groups,
     cells: {
-      count: sorted.length, effects: [], pairs: [],
+      count: sorted.length, effects: [], pairs: [], mentions: new Float64Array(sorted.length).fill(1), levels: [],
       venues: groupCells(Int32Array.from(sorted, ({ step }) => step), Int32Array.from(sorted, ({ group }) => group ?? groups), new Int32Array(sorted.length), groups + 1, 1),
       mean: Float64Array.from(sorted, ({ value }) => value),
       variance: Float64Array.from(sorted, ({ variance }) => variance ?? 0),
     },
+    coder: null,
     movementMultiplier: new Float64Array(options.steps).fill(1),
     scales: names.map((name, i) => ({ name, prior: options.priors?.[i] ?? 1 })),
     position: { mu: 0, drift: new Int32Array(0), venue: groups > 0 ? 1 : -1, tau: names.length - 1 },

@@ -26,6 +26,12 @@ function tablesFromCells(csv: string, base: { readonly from: string; readonly to
   const step = Int32Array.from(times, (time) => (time - first) / (7 * day))
   const venues = factors[0].levels.length
   const periodOf = Int32Array.from(middle, (date) => months.indexOf(date.slice(0, 7)))
+  const authors = number('authors')
+  const [byStep, byStepVenue] = [new Float64Array(count), new Float64Array(count * venues)]
+  rows.forEach((row, c) => {
+    byStep[step[c]] += authors[c]
+    byStepVenue[step[c] * venues + factors[0].levels.findIndex(({ name }) => name === row.venue)] += authors[c]
+  })
   const total = mentions.reduce((a, b) => a + b, 0)
   return {
     timeline: {
@@ -37,7 +43,7 @@ function tablesFromCells(csv: string, base: { readonly from: string; readonly to
     cells: {
       count: rows.length, step,
       levels: factors.map(({ name, levels }) => Int32Array.from(rows, (row) => levels.findIndex((level) => level.name === row[name]))),
-      mentions, authors: number('authors'), mean: number('mean'),
+      mentions, authors, mean: number('mean'),
       squares: Float64Array.from(rows, (row, c) => freedom[c] * Number(row.variance)), freedom,
       clustering: new Float64Array(rows.length).fill(1), deff: number('deff'),
     },
@@ -45,7 +51,7 @@ function tablesFromCells(csv: string, base: { readonly from: string; readonly to
     hindsight: null, labels: null, noLabels: null, staying: [], extremes: [], pull: [], segments: null,
     concentration: [],
     authors: {
-      exact: false, byStep: new Float64Array(count), byStepVenue: new Float64Array(count * venues), byPeriod: new Float64Array(periods.length),
+      exact: false, byStep, byStepVenue, byPeriod: new Float64Array(periods.length),
       byPeriodLevel: factors.map(({ levels }) => new Float64Array(periods.length * levels.length)),
     },
     accounting: {

@@ -1,4 +1,5 @@
 import type { Findings } from '../../model/findings/schema.ts'
+import { type CoderState, sampleAdvice, sampleBenchmark, sampleCoder, sampleHearing, sampleImportance, sampleSensitivity, sampleStaying, sampleTipping, sampleVolume } from './sample-listening.ts'
 import { around, average, baseSteps, opinionAt, periodNames, periodOf, ripple, stepDate, steps, stepsOf } from './sample-series.ts'
 import { sampleEvents, sampleOutcome, sampleSurvey } from './sample-survey.ts'
 import type { Verdict } from './sample-survey.ts'
@@ -133,6 +134,10 @@ function levelFinding(given: { label: string, offset: number, from: number, to: 
   }
 }
 
+function topics(): Findings['topics'] {
+  return topicsGiven.map((topic) => ({ topic: topic.level, ...levelFinding(topic) }))
+}
+
 function speaking(): Findings['speaking'] {
   const concentration = (authors: number, mentions: number) => ({ authors, mentions, top_share: 0.14, gini: 0.43, effective_authors: authors * 0.48 })
   const mixOf = (factor: string, levels: readonly { name: string, label: string, from: number, to: number }[]) => periodNames.flatMap((period) =>
@@ -148,7 +153,7 @@ function speaking(): Findings['speaking'] {
       ...mixOf('venue', venuesGiven.map((venue) => ({ ...venue, name: venue.venue }))),
       ...mixOf('topic', topicsGiven.map(named)), ...mixOf('poster', postersGiven.map(named)),
     ],
-    staying: null, spread: [], pull: [],
+    ...sampleStaying(venuesGiven),
   }
 }
 
@@ -166,7 +171,7 @@ export function sampleFindings(): Findings {
       in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1), last_day: '2026-10-31',
     },
     opinion: opinion(), decomposition: decomposition(), venues: venues(),
-    topics: topicsGiven.map((topic) => ({ topic: topic.level, ...levelFinding(topic) })),
+    topics: topics(),
     posters: postersGiven.map((poster) => ({ poster: poster.level, ...levelFinding(poster) })),
     factors: [],
     scales: {
@@ -175,10 +180,9 @@ export function sampleFindings(): Findings {
       venue: around(9.2, 4.1), topic: around(10.4, 4.4), poster: around(6, 3.9), factors: {},
     },
     survey: sampleSurvey(), events: sampleEvents(), outcome: sampleOutcome(), speaking: speaking(),
-    benchmark: null, importance: null, volume: null, tipping: null,
-    coder: { status: 'absent', reason: null, venues: [], correction: null, movement: null, audit_size: null },
-    sensitivity: { scales: [], shift: 0, reliable: true }, hearing: null,
-    caveats: sampleCaveats(), advice: [], diagnostics: sampleDiagnostics(venuesGiven.map((venue) => venue.venue)),
+    benchmark: sampleBenchmark(), importance: sampleImportance(topics()), volume: sampleVolume(), tipping: sampleTipping(mean(before, opinionAt), mean(now, opinionAt)),
+    coder: sampleCoder('applied', venuesGiven), sensitivity: sampleSensitivity(), hearing: sampleHearing(venuesGiven),
+    caveats: sampleCaveats(), advice: sampleAdvice(), diagnostics: sampleDiagnostics(venuesGiven.map((venue) => venue.venue)),
     method: sampleMethod([
       ...venuesGiven.map((venue) => ({ factor: 'venue', level: venue.venue, label: venue.label, share: meanOf(baseSteps, venue) })),
       ...topicsGiven.map((topic) => ({ factor: 'topic', level: topic.level, label: topic.label, share: meanOf(baseSteps, topic) })),
@@ -197,9 +201,30 @@ export function withVerdict(verdict: Verdict): Findings {
   return { ...sampleFindings(), survey: sampleSurvey(verdict) }
 }
 
-/** The sample of an account that gives posts alone. */
+/** The sample with its coder in another state. */
+export function withCoder(state: CoderState): Findings {
+  return { ...sampleFindings(), coder: sampleCoder(state, venuesGiven) }
+}
+
+/** The sample of an account that gives posts alone: no survey, no picture of the customers, no audit, no threads. */
 export function postsAlone(): Findings {
-  const findings = sampleFindings()
-  const absent = { code: 'survey-absent', severity: 'caution' as const, figures: {}, evidence: '', meaning: '', remedy: '' }
-  return { ...findings, survey: null, events: null, outcome: null, caveats: [...findings.caveats, absent] }
+  const findings = withCoder('absent')
+  const absent = ['survey-absent', 'benchmark-absent', 'coder-unaudited'].map((code) => ({ code, severity: 'caution' as const, figures: {}, evidence: '', meaning: '', remedy: '' }))
+  return {
+    ...findings, survey: null, events: null, outcome: null, benchmark: null, importance: null, volume: null, speaking: { ...findings.speaking, pull: [] },
+    caveats: [...findings.caveats.filter(({ code }) => !ofInputs.includes(code)), ...absent],
+    advice: findings.advice.filter(({ code }) => ['hear-venue', 'invite-everyone', 'standing-way-in'].includes(code)),
+  }
+}
+
+/** Caveats of the sample that rest on an input beside the posts. */
+const ofInputs: readonly string[] = ['survey-bases-small', 'benchmark-mismatch', 'coder-biased', 'talk-unlike-importance', 'conversation-pull']
+
+/** The sample as far as a table of ready-made cells goes: nothing is known of authors but their number. */
+export function readyMade(): Findings {
+  const findings = postsAlone()
+  return {
+    ...findings, coder: { ...findings.coder, audit_size: null }, hearing: null, tipping: null, advice: [],
+    speaking: { ...findings.speaking, staying: null, spread: [] },
+  }
 }

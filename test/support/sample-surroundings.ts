@@ -7,15 +7,18 @@ export function sampleCaveats(): Caveat[] {
     ({ code, severity, figures, evidence: `evidence of ${code}`, meaning: `meaning of ${code}`, remedy: `remedy of ${code}` })
   return [
     raise('pooled-average-misleads', 'serious', { raw_change: -2.27, change: 2.21 }),
-    raise('mix-moved', 'serious', { factor: 'venue', level: 'Discussion boards', from: 0.24, to: 0.41 }),
-    raise('coder-unaudited', 'caution'),
+    raise('benchmark-mismatch', 'serious', { margin: 'segment', known: 'yes', share: 0.307, unreached: 1, names: 'school parties' }),
+    raise('talk-unlike-importance', 'caution', { share: 0.24 }),
+    raise('moderates-leaving', 'caution', { gap: -15.2, change: -13.4 }),
+    raise('coder-biased', 'caution', { correction: -1.9 }),
     raise('authors-partly-unknown', 'caution', { venue: 'Video comments', share: 0.29 }),
     raise('empty-steps', 'caution', { steps: 1 }),
     raise('values-unmapped', 'note', { factor: 'topic', values: 'harbour works', mentions: 118 }),
     raise('given-not-used', 'note', { keys: 'competitors' }),
+    raise('mix-moved', 'note', { factor: 'venue', level: 'Discussion boards', from: 0.24, to: 0.41 }),
     raise('no-sampling-error', 'note'),
     raise('survey-bases-small', 'note', { hidden: 1, flagged: 26 }),
-    raise('benchmark-absent', 'note'),
+    raise('conversation-pull', 'note', { venue: 'Discussion boards', lean: 'towards', slope: 0.24 }),
   ]
 }
 

@@ -51,7 +51,7 @@ function metricOf(given: Given, of: (typeof segmentsGiven)[number] | null): Surv
     const effective = base * 0.85
     const value = given.at(wave) + (of === null ? 0 : of.shift * (given.kind === 'mean' ? 0.06 : 1) + (given.kind === 'mean' ? 0.1 : 2) * spread(wave, 12))
     const half = 1.645 * errorOf(given.kind, value, effective)
-    const shown = shownBy(base)
+    const shown = shownBy(Math.min(base, effective))
     return { wave: nameOf(wave), ...fieldwork(wave), base, effective_base: effective, shown, change: null, ...(shown === 'hidden' ? { value: null, low: null, high: null } : { value, low: value - half, high: value + half }) }
   })
   return {
@@ -119,16 +119,17 @@ function forecast(blur: number): NonNullable<Survey['forecast']> {
   })
   const rmse = rootMeanSquare(waves.map((wave) => wave.forecast.mean - wave.observed))
   const score = (error: number, coverage: number) => ({ rmse: error, crps: 0.57 * error, coverage })
-  const rivalOf = (rival: 'carry-forward' | 'past-mean', error: number, dmP: number) => ({ rival, ...score(error, 0.86), rmse_ratio: rmse / error, crps_ratio: rmse / error + 0.02, dm_p: dmP })
+  const rivalOf = (rival: NonNullable<Survey['forecast']>['rivals'][number]['rival'], error: number, dmP: number) => ({ rival, ...score(error, 0.86), rmse_ratio: rmse / error, crps_ratio: rmse / error + 0.02, dm_p: dmP })
   const carried = rivalOf('carry-forward', rootMeanSquare(waves.map((wave) => wave.carried - wave.observed)), 0.041)
   const mean = rivalOf('past-mean', rootMeanSquare(waves.map((wave) => wave.past_mean - wave.observed)), 0.018)
-  return { ...score(rmse, waves.filter(({ inside }) => inside).length / waves.length), origins: waves.length, rmse_ratio: carried.rmse_ratio, dm_p: carried.dm_p, rivals: [carried, mean], waves }
+  const alone = rivalOf('waves-alone', 0.8 * mean.rmse, 0.12)
+  return { ...score(rmse, waves.filter(({ inside }) => inside).length / waves.length), origins: waves.length, rmse_ratio: carried.rmse_ratio, dm_p: carried.dm_p, rivals: [carried, mean, alone], waves }
 }
 
 function lagWeights(): Survey['lag_weights'] {
-  const bell = Array.from({ length: 17 }, (_, lag) => Math.exp(-(((lag - leadOfPosts) / 2) ** 2)))
-  const total = bell.reduce((sum, weight) => sum + weight, 0)
-  return bell.map((weight, lag) => ({ lag, weight: weight / total }))
+  const bell = Array.from({ length: 16 }, (_, at) => ({ lag: at + 1, weight: Math.exp(-(((at + 1 - leadOfPosts) / 2) ** 2)) }))
+  const total = bell.reduce((sum, { weight }) => sum + weight, 0)
+  return bell.map(({ lag, weight }) => ({ lag, weight: weight / total }))
 }
 
 /** The survey of the sample: one that follows opinion by four weeks. */

@@ -1,3 +1,4 @@
+import { advice } from './advice.ts'
 import { blocks } from './blocks.ts'
 import { caveat } from './caveat.ts'
 import { chart } from './chart.ts'
@@ -13,7 +14,7 @@ import { table } from './table.ts'
 import { when } from './when.ts'
 
 /** The template language: every word it has. */
-const directives: readonly Directive[] = [section, figure, say, made, caveat, chart, table, contents, glossary, when, each, ...blocks]
+const directives: readonly Directive[] = [section, figure, say, made, caveat, advice, chart, table, contents, glossary, when, each, ...blocks]
 
 export function directiveOf(node: DirectiveNode): Directive | undefined {
   return directives.find(({ type, name }) => type === node.type && name === node.name)

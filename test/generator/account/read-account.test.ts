@@ -30,7 +30,7 @@ describe('an account file that is right', () => {
     const account = await read(sound)
     expect(account).toMatchObject({
       account: 'demo', brand: 'Skerrow Ferries', competitors: [], locale: 'en-GB', timeZone: 'UTC', grid: 'week', reporting: 'month', base: null, interval: 0.9,
-      factors: ['venue', 'topic', 'poster'], posters: { occasional: 1, regular: 5 }, smallestGroup: 10, template: null, givenNotUsed: [],
+      factors: ['venue', 'topic', 'poster'], posters: { occasional: 1, regular: 5 }, smallestGroup: 10, customers: null, template: null, givenNotUsed: [],
       mentions: [{ kind: 'mentions', files: ['posts/a.csv'], columns: { posted_at: 'published', venue: 'source', score: 'tone' }, timeFormat: null,
         score: { kind: 'labels', labels: [{ label: 'negative', score: -1 }, { label: 'positive', score: 1 }] } }],
     })
@@ -54,6 +54,7 @@ posters: { occasional: 2, regular: 9 }
 target_mix: { venue: { boards: 0.25, panel: 0.75 } }
 survey: { files: survey/*.csv, headline: favourability, lags: [-8, 16], labels: { favourability: Warmth }, next_fieldwork: { from: 2026-11-16, to: 2026-11-27 } }
 benchmark: { files: survey/w.csv }
+customers: 310000
 coding_audit: { files: survey/w.csv }
 importance: { files: survey/w.csv }
 events: { files: survey/w.csv }
@@ -75,7 +76,9 @@ smallest_group: 12
       labels: { favourability: 'Warmth' }, nextFieldwork: { from: '2026-11-16', to: '2026-11-27' },
     })
     expect(account.targetMix).toEqual([{ factor: 'venue', shares: [{ level: 'boards', share: 0.25 }, { level: 'panel', share: 0.75 }] }])
-    expect(account.givenNotUsed).toEqual(['competitors', 'benchmark', 'coding_audit', 'importance', 'theme', 'notes'])
+    const table = { pattern: 'survey/w.csv', files: ['survey/w.csv'] }
+    expect(account).toMatchObject({ benchmark: table, codingAudit: table, importance: table, customers: 310_000 })
+    expect(account.givenNotUsed).toEqual(['competitors', 'theme', 'notes'])
   })
 
   test.each([['day', [-56, 112]], ['week', [-8, 16]], ['month', [-2, 4]]])('looks at lags from two months behind to four ahead on a grid by the %s', async (grid, lags) => {
@@ -112,6 +115,11 @@ const wrongs: readonly (readonly [string, string, string, string, RegExp])[] = [
   ['an unknown key of the next fieldwork', `${sound}survey: { files: survey/w.csv, next_fieldwork: { from: 2026-02-02, till: 2026-02-09 } }\n`, 'account-key-unknown', 'account.yaml:7:68 survey.next_fieldwork.till', /one of from, to/],
   ['a label of nothing', `${sound}survey: { files: survey/w.csv, labels: { favourability: } }\n`, 'account-value', 'account.yaml:7:42 survey.labels.favourability', /expected text/],
   ['a survey that is no CSV', `${sound}survey: { files: theme.yaml }\n`, 'account-file-kind', 'account.yaml:7:11 survey.files', /\.csv, \.csv\.gz/],
+  ['a benchmark that is no CSV', `${sound}benchmark: { files: theme.yaml }\n`, 'account-file-kind', 'account.yaml:7:14 benchmark.files', /\.csv, \.csv\.gz/],
+  ['an unknown key of the audit', `${sound}coding_audit: { file: survey/w.csv }\n`, 'account-key-unknown', 'account.yaml:7:17 coding_audit.file', /Did you mean `files`/],
+  ['customers by halves', `${sound}customers: 10.5\n`, 'account-value', 'account.yaml:7:1 customers', /a whole number/],
+  ['no customers at all', `${sound}customers: 0\n`, 'account-value', 'account.yaml:7:1 customers', /at least 1/],
+  ['customers in words', `${sound}customers: many\n`, 'account-value', 'account.yaml:7:1 customers', /a number/],
   ['a drift that is not none', `${sound}venues:\n  boards: { drift: slow }\n`, 'account-value', 'account.yaml:8:13 venues.boards.drift', /none/],
   ['a smallest group too small', `${sound}smallest_group: 3\n`, 'account-value', 'account.yaml:7:1 smallest_group', /at least 10/],
   ['cells and files in one source', sound.replace('- files: posts/*.csv', '- files: posts/*.csv\n    cells: posts/*.csv'), 'account-combination', 'account.yaml:4:5 mentions.0.files', /beside `cells`/],

@@ -1,4 +1,4 @@
-import { chmod, mkdtemp, readdir, rm, writeFile } from 'node:fs/promises'
+import { chmod, mkdir, mkdtemp, readdir, readFile, rm, stat, symlink, utimes, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterEach, beforeEach, describe, expect, test } from 'vitest'
@@ -61,4 +61,97 @@ describe('what was computed', () => {
     expect(times()).toBe(2)
     await chmod(folder, 0o755)
   })
+})
+
+describe('what was written', () => {
+  const fileOf = async (kind = 'kind') => join(folder, kind, (await readdir(join(folder, kind)))[0])
+
+  test('stands beside its hash, and is not used where the two do not fit', async () => {
+    const { ask, times } = counted()
+    await ask(1)
+    const file = await fileOf()
+    const written = JSON.parse(await readFile(file, 'utf8')) as { sha256: string; result: number[] }
+    expect(written).toEqual({ sha256: expect.stringMatching(/^[0-9a-f]{64}$/) as string, result: [1, 0.1 + 0.2] })
+    await writeFile(file, JSON.stringify({ ...written, result: [1, 0.4] }))
+    expect(await ask(1)).toEqual(Float64Array.of(2, 0.1 + 0.2))
+    await writeFile(file, JSON.stringify([1, 0.4]))
+    await ask(1)
+    expect(times()).toBe(3)
+    await ask(1)
+    expect(times()).toBe(3)
+  })
+  test('is not used where restoring it fails', async () => {
+    let times = 0
+    const ask = () => openCache(folder, 'program').remember('kind', 1, () => Promise.resolve(++times), () => { throw new Error('what a figure') })
+    expect([await ask(), await ask()]).toEqual([1, 2])
+  })
+  test('is not read where it is larger than 64 MB', async () => {
+    const { ask, times } = counted()
+    await ask(1)
+    const file = await fileOf()
+    // sound JSON all the same, with its hash: only the size speaks against it
+    await writeFile(file, `${await readFile(file, 'utf8')}${' '.repeat(64 * 1024 * 1024)}`)
+    await ask(1)
+    expect(times()).toBe(2)
+    expect((await stat(file)).size).toBeLessThan(1000)
+  })
+  test('is at most 2,000 results a kind: the oldest go', async () => {
+    await mkdir(join(folder, 'kind'))
+    const old = (i: number) => join(folder, 'kind', `${i.toString(16).padStart(64, '0')}.json`)
+    for (let i = 0; i < 2000; i++) {
+      await writeFile(old(i), '{}')
+      await utimes(old(i), 1000 + (i * 7) % 2000, 1000 + (i * 7) % 2000)
+    }
+    await writeFile(join(folder, 'kind', 'mine.txt'), 'not a result')
+    await counted().ask(1)
+    const kept = await readdir(join(folder, 'kind'))
+    expect(kept).toHaveLength(2001)
+    expect(kept).toContain('mine.txt')
+    expect(kept).not.toContain(old(0).slice(-69))
+    expect(kept).toContain(old(1).slice(-69))
+  })
+  test.each(['the folder', 'a kind', 'a result'])('is neither read nor written where %s is a link that leads out of the account', async (what) => {
+    const elsewhere = await mkdtemp(join(tmpdir(), 'elsewhere-'))
+    const cache = join(folder, 'account/cache')
+    await mkdir(join(folder, 'account'))
+    const { ask, times } = counted(openCache(cache, 'program'))
+    await ask(1)
+    const [file] = await readdir(join(cache, 'kind'))
+    const [from, to] = what === 'the folder' ? [cache, elsewhere] : what === 'a kind' ? [join(cache, 'kind'), join(elsewhere, 'kind')] : [join(cache, 'kind', file), join(elsewhere, file)]
+    await mkdir(join(elsewhere, 'kind'), { recursive: true })
+    const written = await readFile(join(cache, 'kind', file))
+    await writeFile(join(elsewhere, 'kind', file), written)
+    await writeFile(join(elsewhere, file), written)
+    await rm(from, { recursive: true })
+    await symlink(to, from)
+    const before = await stat(join(elsewhere, 'kind', file))
+    await ask(1)
+    expect(times()).toBe(2)
+    await ask(2)
+    expect(await readdir(join(elsewhere, 'kind'))).toEqual([file])
+    expect((await stat(join(elsewhere, 'kind', file))).mtimeMs).toBe(before.mtimeMs)
+    await rm(elsewhere, { recursive: true })
+  })
+  test('is used where a link stays in the account', async () => {
+    const account = join(folder, 'account')
+    await mkdir(join(account, 'kept'), { recursive: true })
+    await symlink(join(account, 'kept'), join(account, 'cache'))
+    const { ask, times } = counted(openCache(join(account, 'cache'), 'program'))
+    await ask(1)
+    await ask(1)
+    expect(times()).toBe(1)
+  })
+})
+
+test('two who ask for the same at once share one computation; one that failed is tried again', async () => {
+  const cache = openCache(folder, 'program')
+  let times = 0
+  const ask = (from: unknown) => cache.remember('kind', from, async () => {
+    await new Promise((resolve) => { setTimeout(resolve, 5) })
+    if (++times === 1) throw new Error('no luck')
+    return times
+  }, (written) => (typeof written === 'number' ? written : null))
+  expect((await Promise.allSettled([ask(1), ask(1)])).map(({ status }) => status)).toEqual(['rejected', 'rejected'])
+  expect(times).toBe(1)
+  expect(await Promise.all([ask(1), ask(1), ask({}), ask(1)])).toEqual([2, 2, 3, 2])
 })

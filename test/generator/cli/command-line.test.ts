@@ -27,9 +27,25 @@ describe('check', () => {
     const demo = join(import.meta.dirname, '../../../sample-data/skerrow-ferries')
     const { code, out } = await run('check', demo)
     expect(code).toBe(0)
-    expect(out).toContain('survey: 30 waves, 4 metrics, 2024-05-16 to 2026-10-29\nevents: 9, 2024-06-10 to 2026-10-13\noutcome: 30 values, 2024-05-01 to 2026-10-01\n')
-    expect(JSON.parse((await run('check', demo, '--json')).out)).toMatchObject({ ok: true, survey: { waves: 30, metrics: 4 } })
-    expect(JSON.parse((await run('check', account, '--json')).out)).toMatchObject({ ok: true, survey: null })
+    expect(out).toContain('survey: 30 waves, 4 metrics, 2024-05-16 to 2026-10-29\nevents: 9, 2024-06-10 to 2026-10-13\noutcome: 30 values, 2024-05-01 to 2026-10-01\n'
+      + 'benchmark: 1 margin, 4 levels\ncoding audit: 600 codings in 4 venues\nimportance: 6 topics, 387 respondents, 13 rows left out for want of an answer\n')
+    expect(JSON.parse((await run('check', demo, '--json')).out)).toMatchObject({
+      ok: true, survey: { waves: 30, metrics: 4 }, benchmark: { margins: 1, levels: 4 }, coding_audit: { venues: 4, codings: 600 },
+      importance: { kind: 'respondents', topics: 6, respondents: 387, incomplete: 13 },
+    })
+    expect(JSON.parse((await run('check', account, '--json')).out)).toMatchObject({ ok: true, survey: null, benchmark: null, coding_audit: null, importance: null })
+  })
+
+  test('--audit-sample: ids and nothing else on stdout, the same for a seed', async () => {
+    const demo = join(import.meta.dirname, '../../../sample-data/skerrow-ferries')
+    const { code, out, err } = await run('check', demo, '--audit-sample', '300', '--seed', '5')
+    const lines = out.trimEnd().split('\n')
+    expect([code, lines.length, lines[0]]).toEqual([0, 301, 'venue,id'])
+    expect(err).toMatch(/modelled +\d+\n/)
+    const told = JSON.parse((await run('check', demo, '--audit-sample', '300', '--seed', '5', '--json', '--quiet')).out) as { audit_sample: readonly object[] }
+    expect(told.audit_sample).toEqual(lines.slice(1).map((line) => { const [venue, id] = line.split(','); return { venue, id } }))
+    expect(await run('check', demo, '--audit-sample', '50', '--quiet')).toMatchObject({ code: 1, out: '', err: expect.stringContaining('audit-sample-small') as string })
+    expect((await run('check', account, '--audit-sample', '300')).err).toContain('audit-sample-ids')
   })
 
   test('a folder without an account file: exit code 1, the fault as data and in words', async () => {

@@ -36,6 +36,19 @@ test('the two ends of a list', () => {
   expect(typeAt(parsePath('brand[last]')!, findingsScope)).toMatchObject({ known: false, unknown: 'brand[last]' })
 })
 
+test('every item of a list, and the lists inside them as one', () => {
+  const scope = { findings: { margins: [{ name: 'age', levels: [1, 2] }, { name: 'region', levels: [] }, { name: 'segment', levels: [3] }], one: 1 }, names: {} }
+  const found = (text: string) => lookUp(parsePath(text)!, scope)
+  expect(found('margins[all].levels')).toEqual([1, 2, 3])
+  expect(found('margins[all].name')).toEqual(['age', 'region', 'segment'])
+  expect(found('one[all].name')).toBeUndefined()
+  const kind = (text: string) => {
+    const type = typeAt(parsePath(text)!, findingsScope)
+    return type.known ? kindOf(type.type) : type.unknown
+  }
+  expect(['benchmark.margins[all].levels', 'benchmark.margins[all].margin', 'benchmark.margins[all].lvels', 'brand[all].x'].map(kind)).toEqual(['list', 'list', 'lvels', 'brand[all]'])
+})
+
 test.each(['', '.', 'a.', 'a[b]', 'a[middle]', 'a[b=]', 'a b', 'a[b=@]'])('no path: "%s"', (text) => {
   expect(parsePath(text)).toBeUndefined()
 })

@@ -1,9 +1,14 @@
 import { expect, test } from 'vitest'
 import { findingsSchema } from '../../../model/findings/schema.ts'
-import { sampleFindings } from '../../support/sample-findings.ts'
+import { postsAlone, readyMade, sampleFindings, withCoder } from '../../support/sample-findings.ts'
 
 test('the sample findings are valid by the schema and the same at every call', () => {
   expect(findingsSchema.parse(sampleFindings())).toEqual(sampleFindings())
+})
+
+test('so are its variants: posts alone, ready-made cells, each state of the coder', () => {
+  const states = (['absent', 'applied', 'too-few', 'too-poor', 'ranges', 'ready-made'] as const).map(withCoder)
+  for (const findings of [postsAlone(), readyMade(), ...states]) expect(findingsSchema.parse(findings)).toEqual(findings)
 })
 
 test('it can fail: a share above one is refused', () => {

@@ -28,9 +28,14 @@ describe('a table', () => {
     ['with columns that mean nothing here', plain.replace('date,', 'date,id,').replace('01-01,', '01-01,7,')],
     ['with trailing delimiters', plain.replaceAll('\n', ',,\n')],
     ['in windows-1252', Uint8Array.from(Buffer.from(plain, 'latin1'))],
+    ['in UTF-16 with the larger byte first', Uint8Array.from([0xfe, 0xff, ...Buffer.from(plain, 'utf16le').swap16()])],
     ['in UTF-16', Uint8Array.from([0xff, 0xfe, ...Buffer.from(plain, 'utf16le')])],
   ])('is read %s', async (_, content) => {
     expect(await rowsOf('t.csv', content)).toEqual(expected)
+  })
+
+  test('tells its header: where it stands, what is in it, and which columns asked for it has', async () => {
+    expect((await read('t.csv', '\nLabel, ,Date ,On board\nx,,2026-01-01,\n')).header).toEqual({ place: 't.csv:2', names: ['Label', 'Date', 'On board'], columns: ['date', 'label'] })
   })
 
   test('is read from a gzip', async () => {

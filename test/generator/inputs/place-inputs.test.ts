@@ -12,7 +12,7 @@ const reading = (metric: number, segment = -1): SurveyReading => ({ metric, segm
 const wave = (name: string, start: string, end: string, readings: readonly SurveyReading[] = [reading(0)]): RawWave => ({ name, start, end, readings })
 const metric = (name: string) => ({ name, label: name, kind: 'share' as const })
 const surveyOf = (waves: readonly RawWave[]): RawSurvey => ({ headline: 0, metrics: [metric('favourability'), metric('trust')], segments: ['islander', 'visitor'], waves })
-const rawOf = (parts: Partial<RawInputs>): RawInputs => ({ survey: null, events: null, outcome: null, files: [], ...parts })
+const rawOf = (parts: Partial<RawInputs>): RawInputs => ({ survey: null, events: null, outcome: null, benchmark: null, audit: null, importance: null, files: [], ...parts })
 
 /** Mentions from 5 January to 28 March 2026 under review of March: on a grid of weeks, steps from Monday 5 January on. */
 function axis(grid: Grid = 'week', review = '2026-03') {
@@ -20,7 +20,7 @@ function axis(grid: Grid = 'week', review = '2026-03') {
 }
 
 const accountWith = (nextFieldwork: { from: string; to: string } | null = null) =>
-  ({ survey: { pattern: '', files: [], headline: null, lags: [-8, 16], labels: {}, nextFieldwork } }) as unknown as Account
+  ({ customers: null, survey: { pattern: '', files: [], headline: null, lags: [-8, 16], labels: {}, nextFieldwork } }) as unknown as Account
 
 const place = (parts: Partial<RawInputs>, nextFieldwork: { from: string; to: string } | null = null, on = axis()) => placeInputs(rawOf(parts), accountWith(nextFieldwork), on)
 const days = (window: { days: Float64Array }) => [...window.days]
@@ -122,6 +122,14 @@ describe('events and the outcome on the time axis', () => {
   })
 
   test('what the account does not give is null', () => {
-    expect(place({})).toEqual({ survey: null, events: null, outcome: null })
+    expect(place({})).toEqual({ survey: null, events: null, outcome: null, benchmark: null, audit: null, importance: null, customers: null })
   })
+})
+
+test('what has no date is as it was read', () => {
+  const benchmark = [{ margin: 'segment', levels: [{ level: 'islander', share: 1 }] }]
+  const audit = [{ venue: 'boards', trueLabel: 'neutral', codedLabel: 'negative', count: 7 }]
+  const input = { kind: 'stated', topics: [{ topic: 'staff', weight: 1 }] } as const
+  const raw = rawOf({ benchmark, audit, importance: { input, incomplete: 3 } })
+  expect(placeInputs(raw, { ...accountWith(), customers: 310_000 }, axis())).toMatchObject({ benchmark, audit, importance: input, customers: 310_000 })
 })

@@ -11,6 +11,11 @@ export interface PlainRow {
   readonly topic: string
   readonly brand: string
   readonly text: string
+  /** Read by who-speaks-plainly.ts alone; NaN for no place. */
+  readonly tone?: string
+  readonly segment?: string
+  readonly thread?: string
+  readonly place?: number
 }
 
 export interface PlainCell {

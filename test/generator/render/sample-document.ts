@@ -18,14 +18,16 @@ export const templates = fileURLToPath(new URL('../../../templates/', import.met
 /** A catalogue of this test's own, so that a change of the house's wording breaks no test of the page. */
 export const sampleWords: Words = createWords({
   'axis-points': 'Points', 'axis-points-change': 'Points of change', 'axis-points-offset': 'Points off', 'label-raw': 'Raw average', 'label-adjusted': 'Mix-adjusted',
-  'label-survey': 'Survey', 'label-posts': 'Posts', 'label-posts-later': 'Posts, moved … later', 'label-posts-earlier': 'Posts, moved … earlier', 'label-forecast': 'Forecast', 'label-observed': 'Found',
+  'label-survey': 'Survey', 'label-posts': 'Posts', 'label-posts-later': 'Posts, moved … later', 'label-posts-earlier': 'Posts, moved … earlier', 'label-forecast': 'Forecast', 'label-observed': 'Found', 'axis-pull': 'Points a point', 'axis-points-correction': 'Points of correction', 'axis-times': 'Times as likely',
+  'label-customers': 'Customers', 'label-heard': 'Heard', 'label-importance': 'Importance', 'label-talk': 'Talk', 'label-reported': 'As reported', 'label-next': 'next', 'metric-segment': '{label}, {segment}', 'venue-raw': '{label}, raw',
   steps: '{steps} {grid}', 'mark-flagged': '*', 'span-base': 'Base', 'span-review': 'Period under review', 'when-base': 'Base', 'when-now': 'This period', 'part-factor_mix': 'Mix of {factor}',
   'page-of': 'Page {page} of {pages}', 'skip-to-review': 'Skip to the review', 'cell-empty': '–', range: '{low} to {high}',
   'probability-over': 'over {figure}', 'probability-under': 'under {figure}', 'not-known': 'not known',
 }, 'en', 'en-GB')
 
 export const chartNames = ['opinion', 'decomposition', 'venues', 'venues-before', 'mix-venue', 'mix-poster', 'topics', 'posters', 'accounting',
-  'tracker', 'agreement', 'survey-lags', 'survey-forecasts', 'lag-weights'] as const
+  'tracker', 'agreement', 'survey-lags', 'survey-forecasts', 'lag-weights',
+  'staying', 'spread', 'pull', 'benchmark', 'importance', 'tipping', 'coder', 'hearing'] as const
 
 export async function sampleRendering(findings: Findings = sampleFindings()): Promise<Rendering> {
   return { tables: tablesOf(findings), charts: await loadCharts(`${templates}charts`), words: sampleWords, theme: await loadTheme(`${templates}theme`) }

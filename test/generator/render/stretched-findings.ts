@@ -24,12 +24,15 @@ export function stretchedFindings({ venues, topics, steps, grid }: Stretch): Fin
     ...of, venue: `venue-${index}`, label: label('Venue', index), share: 1 / venues,
     series: dates.map((step, place) => ({ ...at(of.series, place), step, raw: gap(place, at(of.series, place).raw) })),
   }))
+  const perVenue = <T extends { readonly venue: string, readonly label: string }>(list: readonly T[]) => venueList.map(({ venue, label: name }, index) => ({ ...at(list, index), venue, label: name }))
   const topicList = Array.from({ length: topics }, (_, index) => ({ ...at(findings.topics, index), topic: `topic-${index}`, label: label('Topic', index) }))
   return {
     ...findings, grid, venues: venueList, topics: topicList,
     opinion: { ...findings.opinion, series: dates.map((step, place) => ({ ...at(findings.opinion.series, place), step, raw: gap(place, at(findings.opinion.series, place).raw) })) },
     method: { ...findings.method, base: { from: dates[0], to: dates[Math.min(steps - 1, grid === 'week' ? 51 : 11)] } },
-    speaking: { ...findings.speaking, mix: [
+    coder: { ...findings.coder, venues: perVenue(findings.coder.venues) }, hearing: findings.hearing && { ...findings.hearing, venues: perVenue(findings.hearing.venues) },
+    importance: findings.importance && { ...findings.importance, topics: topicList.map(({ topic, label: name }, index) => ({ ...at(findings.importance!.topics, index), topic, label: name })) },
+    speaking: { ...findings.speaking, spread: perVenue(findings.speaking.spread), pull: perVenue(findings.speaking.pull.filter(({ poster }) => poster === null)), mix: [
       ...findings.speaking.mix.filter((row) => row.factor !== 'venue'),
       ...findings.opinion.periods.flatMap(({ period }) => venueList.map((of, index) => ({
         factor: 'venue', level: of.venue, label: of.label, period, mentions: 100, share: shareOf(index, venues),

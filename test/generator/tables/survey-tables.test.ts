@@ -12,7 +12,7 @@ const findings = sampleFindings()
 const survey = findings.survey!
 const rowsOf = (of: Findings, name: string): readonly Row[] => tablesOf(of).find((table) => table.name === name)?.rows ?? []
 const withSurvey = (change: Partial<Survey>): Findings => ({ ...findings, survey: { ...sampleSurvey(), ...change } })
-const ofSurvey = ['tracker', 'survey-waves', 'agreement', 'survey-lags', 'survey-candidates', 'survey-forecasts', 'survey-rivals', 'lag-weights', 'departures', 'outcome-lags', 'events']
+const ofSurvey = ['tracker', 'survey-waves', 'agreement', 'survey-lags', 'survey-candidates', 'survey-forecasts', 'next-wave', 'survey-rivals', 'lag-weights', 'departures', 'outcome-lags', 'events']
 
 test('without survey, outcome and events their tables are there and empty', () => {
   for (const name of ofSurvey) expect(rowsOf(postsAlone(), name), name).toEqual([])
@@ -84,12 +84,22 @@ describe('lags', () => {
   })
 })
 
-test('forecasts: three rows of scores, the posts\u2019 own first and without a ratio', () => {
+test('forecasts: four rows of scores, the posts\u2019 own first and without a ratio', () => {
   const rows = rowsOf(findings, 'survey-rivals')
-  expect(rows.map(({ rival }) => rival)).toEqual(['posts', 'carry-forward', 'past-mean'])
+  expect(rows.map(({ rival }) => rival)).toEqual(['posts', 'carry-forward', 'past-mean', 'waves-alone'])
   expect(rows[0]).toMatchObject({ rmse: survey.forecast!.rmse, rmse_ratio: null, crps_ratio: null, dm_p: null })
   expect(rows[2]).toMatchObject({ rmse_ratio: survey.forecast!.rivals[1]!.rmse_ratio })
   expect(rowsOf(findings, 'survey-forecasts')).toHaveLength(22)
+})
+
+test('the next wave is a row by itself, none where there is none', () => {
+  expect(rowsOf(findings, 'next-wave')).toEqual([expect.objectContaining({ middle: '2026-11-15', forecast: survey.next_wave!.forecast.mean, low: survey.next_wave!.forecast.low, last: survey.next_wave!.last })])
+  expect(rowsOf(withSurvey({ next_wave: null }), 'next-wave')).toEqual([])
+})
+
+test('the outcome is told for a rise of 1 point, a tenth of what the findings hold', () => {
+  const of = findings.outcome!.lags[1]!.effect
+  expect(rowsOf(findings, 'outcome-lags')[1]).toMatchObject({ span_lag: '1', effect: of.mean / 10, low: of.low / 10, high: of.high / 10 })
 })
 
 test('a departure has a row for each event beside it, and one where there is none', () => {

@@ -13,7 +13,8 @@ describe('tablesOf', () => {
     expect(tablesOf(findings).map((table) => table.name)).toEqual([
       'opinion', 'periods', 'spans', 'decomposition', 'venues', 'venue-series', 'venues-before', 'mix', 'offsets', 'concentration',
       'accounting', 'scales', 'target-mix', 'checks', 'inputs',
-      'tracker', 'survey-waves', 'agreement', 'survey-lags', 'survey-candidates', 'survey-forecasts', 'survey-rivals', 'lag-weights', 'departures', 'outcome-lags', 'events',
+      'tracker', 'survey-waves', 'agreement', 'survey-lags', 'survey-candidates', 'survey-forecasts', 'next-wave', 'survey-rivals', 'lag-weights', 'departures', 'outcome-lags', 'events',
+      'staying', 'spread', 'spread-series', 'pull', 'benchmark', 'benchmark-margins', 'tipping', 'coder', 'importance', 'hearing', 'advice',
     ])
   })
 

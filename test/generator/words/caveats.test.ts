@@ -16,6 +16,9 @@ const raised: Readonly<Record<string, Readonly<Record<string, string | number>>>
   'survey-too-few': { pairs: 3, needed: 8 }, 'survey-contradicts': { label: 'Favourability', correlation: -0.62, pairs: 30 }, 'survey-not-established': { label: 'Favourability', pairs: 12 },
   'survey-waves-overlap': { waves: 2, names: 'June, July' }, 'survey-waves-later': { waves: 1, names: 'November' }, 'survey-metric-missing': { label: 'Favourability', waves: 1, names: 'August' },
   'survey-bases-small': { hidden: 1, flagged: 26 }, 'survey-departs': { label: 'Favourability', kind: 'share', observed: 38.14, expected: 44.02 },
+  'coverage-break': { scope: 'venue', venue: 'Blogs', mentions: 1204, usual: 388.2 }, 'moderates-leaving': { gap: -15.2, change: -13.4 }, 'spread-widening': { venue: 'Blogs', base: 58.1, now: 65.4 },
+  'conversation-pull': { venue: 'Blogs', lean: 'away', slope: -0.13 }, 'benchmark-mismatch': { margin: 'segment', known: 'yes', share: 0.31, unreached: 1, names: 'freight' },
+  'audit-refused': { scope: 'venue', venue: 'Blogs', reason: 'too-few' }, 'coder-biased': { correction: -1.9 }, 'talk-unlike-importance': { share: 0.24 }, 'prior-matters': { shift: 0.41 },
   'no-previous-period': {}, 'ready-made-authors': {}, 'sharp-move': { steps: 2 },
 }
 
@@ -23,7 +26,7 @@ test.each(Object.entries(raised))('caveat %s is worded whole: evidence, meaning,
   const worded = wordCaveat(words, code, figures)
   for (const sentence of Object.values(worded)) expect(sentence).toMatch(/^(?!.*(NaN|undefined))[A-Z0-9“].*\.$/)
   for (const [name, figure] of Object.entries(figures)) {
-    if (typeof figure === 'string' && name !== 'factor' && name !== 'kind' && !/^\d/.test(figure)) expect(JSON.stringify([worded, words.say(`caveat-${code}-title`, { ...figures })])).toContain(figure)
+    if (typeof figure === 'string' && !['factor', 'kind', 'scope', 'lean', 'known', 'reason'].includes(name) && !/^\d/.test(figure)) expect(JSON.stringify([worded, words.say(`caveat-${code}-title`, { ...figures })])).toContain(figure)
   }
   expect(words.has(`caveat-${code}-title`)).toBe(true)
 })
@@ -39,11 +42,23 @@ test('figures are written by their kind', () => {
 
 test('a survey’s figures are written by its kind, its bases counted in words', () => {
   expect(wordCaveat(words, 'survey-departs', raised['survey-departs']!).evidence)
-    .toBe('Favourability came out at 38.1%, where the posts had led to expect 44.0%; this is outside the 95% interval of the forecast.')
-  expect(wordCaveat(words, 'survey-departs', { label: 'Satisfaction', kind: 'mean', observed: 6.814, expected: 7.1 }).evidence).toContain('came out at 6.81, where the posts had led to expect 7.10;')
-  expect(wordCaveat(words, 'survey-bases-small', { hidden: 0, flagged: 1 }).evidence).toBe('1 base of 30 to 74 interviews is marked.')
-  expect(wordCaveat(words, 'survey-bases-small', { hidden: 2, flagged: 0 }).evidence).toBe('2 bases of fewer than 30 interviews are not shown.')
+    .toBe('Favourability came out at 38.1%, where posts and past waves had led to expect 44.0%; this is outside the 95% interval of the forecast.')
+  expect(wordCaveat(words, 'survey-departs', { label: 'Satisfaction', kind: 'mean', observed: 6.814, expected: 7.1 }).evidence).toContain('came out at 6.81, where posts and past waves had led to expect 7.10;')
+  expect(wordCaveat(words, 'survey-bases-small', { hidden: 0, flagged: 1 }).evidence).toBe('1 base is marked: its effective base is 30 to 74.')
+  expect(wordCaveat(words, 'survey-bases-small', { hidden: 2, flagged: 0 }).evidence).toBe('2 bases are not shown: their effective bases are under 30.')
   expect(wordCaveat(words, 'survey-too-few', { pairs: 0, needed: 8 }).evidence).toBe('No wave can be compared with the posts; at least 8 are needed.')
+})
+
+test('coverage, conversation, customers, coder: each case has its words', () => {
+  expect(wordCaveat(words, 'coverage-break', { scope: 'all', venue: '', mentions: 0, usual: 412.4 }).evidence).toBe('No mention was posted in this period; the periods before lead one to expect about 412.')
+  expect(wordCaveat(words, 'coverage-break', raised['coverage-break']!).evidence).toBe('Blogs holds 1,204 mentions of this period; the periods before lead one to expect about 388.')
+  expect(wordCaveat(words, 'conversation-pull', { venue: 'Boards', lean: 'towards', slope: 0.24 }).evidence).toBe('In Boards, replies lean towards the thread before them, by 0.24 of a point for each point.')
+  expect(wordCaveat(words, 'conversation-pull', raised['conversation-pull']!).meaning).toContain('set themselves off')
+  expect(wordCaveat(words, 'benchmark-mismatch', { ...raised['benchmark-mismatch']!, unreached: 0, names: '' }).evidence).toBe('By segment, 31% of the authors would have to belong to another group to be like the customers.')
+  expect(wordCaveat(words, 'benchmark-mismatch', { ...raised['benchmark-mismatch']!, known: 'no', share: 0 }).evidence).toBe('Nobody was heard of: freight.')
+  const reasons = ['too-few', 'too-poor', 'ranges', 'labels-differ', 'ready-made', 'no-audit'].map((reason) => Object.values(wordCaveat(words, 'audit-refused', { scope: 'all', venue: '', reason })).join(' '))
+  expect(new Set(reasons).size).toBe(6)
+  expect(wordCaveat(words, 'audit-refused', { scope: 'venue', venue: 'Blogs', reason: 'no-audit' }).evidence).toBe('In Blogs: no mention was judged by people.')
 })
 
 test('the catalogue words no caveat that is not raised', () => {

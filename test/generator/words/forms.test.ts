@@ -14,6 +14,8 @@ test('a form writes what it is made from', () => {
   expect(write([2.21, 2.19], 'size-range', words)).toBe('2.2')
   expect(write({ start: '2026-10-01', end: '2026-10-31' }, 'days', words)).toBe('1 – 31 October 2026')
   expect([[0.2, 0.3], [0.3, 0.2], [0.301, 0.304]].map(([share_from, share_to]) => write({ share_from, share_to }, 'share-direction', words))).toEqual(['up', 'down', 'flat'])
+  expect([0.0109, -0.00052].map((value) => write(value, 'tiny-number', words))).toEqual(['0.011', '\u22120.00052'])
+  expect([write(3.6, 'half-width', words), write(-0.128, 'number-size', words), write('islander', 'name', words)]).toEqual(['1.8', '0.13', 'Islander'])
   expect(write('not-established', 'code', words)).toBe('not_established')
   expect([0.04, -0.06, 3].map((value) => write(value, 'sign', words))).toEqual(['flat', 'down', 'up'])
 })
@@ -45,11 +47,18 @@ test('an interval that lacks a bound is not known', () => {
 })
 
 test('ratios, p-values, fieldwork, events, counts', () => {
-  expect([0.69, 1.31, 0.998, 1].map((ratio) => [write(ratio, 'ratio-sign', words), write(ratio, 'ratio-size', words)])).toEqual([['down', '31%'], ['up', '31%'], ['down', 'under 1%'], ['flat', '0%']])
+  expect([0.69, 1.31, 0.998, 1].map((ratio) => write(ratio, 'ratio-sign', words))).toEqual(['down', 'up', 'down', 'flat'])
   expect([0.0004, 0.0031, 0.0316, 0.0996, 0.443, 1].map((p) => write(p, 'p-value', words))).toEqual(['under 0.001', '0.003', '0.032', '0.10', '0.44', '1.00'])
   expect(write({ wave: 'W1', field_start: '2026-09-28', field_end: '2026-10-09' }, 'fieldwork', words)).toBe('28 September – 9 October 2026')
   expect(write({ label: 'Storm', date: '2026-10-05', kind: '' }, 'event', words)).toBe('Storm (5 October 2026)')
   expect([[1204, 380, 410], [400, 400], []].map((list) => write(list, 'count-range', words))).toEqual(['380 to 1,204', '400', 'not known'])
+})
+
+test('chance, what lies outside an interval, effects of one point, lags of the outcome', () => {
+  expect([0.049, 0.05, 0.0501].map((p) => write(p, 'chance', words))).toEqual(['clear', 'clear', 'open'])
+  expect([0.9, 0.95].map((interval) => write(interval, 'outside', words))).toEqual(['0.10', '0.050'])
+  expect([write(-2.14, 'per-point', words), write(-2.14, 'per-point-size', words), write({ low: -0.4, high: 12 }, 'per-point-interval', words)]).toEqual(['\u22120.21', '0.21', '\u22120.04 to +1.20'])
+  expect([[1, 30], [2, 31], [3, 7], [1, 27]].map(([best_lag, span_days]) => write({ best_lag, span_days }, 'span-lag', words))).toEqual(['one month', '2 months', 'about 21 days', 'about 27 days'])
 })
 
 test('a level without a label of its own is worded, one with a label is not', () => {
@@ -68,6 +77,7 @@ test('cells of tables', () => {
   expect(writeCell({ key: 'venue', kind: 'text' }, { venue: 'boards' }, words, new Map([['boards', 'Discussion boards']]))).toBe('Discussion boards')
   expect(writeCell({ key: 'scale', kind: 'text' }, { scale: 'venue_drift.boards' }, words, new Map([['boards', 'Discussion boards']]))).toBe('Drift, step to step: Discussion boards')
   expect(writeBounds(-0.44, 2, 'change', words)).toBe('\u22120.4 to +2.0')
+  expect(writeBounds(0.387, 0.452, 'share', words)).toBe('39% to 45%')
   expect(writeBounds(null, 2, 'change', words)).toBe('–')
   expect(writeBounds(40.06, 46.34, 'measure', words, { kind: 'share' })).toBe('40.1% to 46.3%')
   expect(writeBounds(6.6, 7, 'measure', words, { kind: 'mean' })).toBe('6.60 to 7.00')
@@ -75,7 +85,9 @@ test('cells of tables', () => {
   expect(writeCell({ key: 'value', kind: 'measure' }, { value: 43.24, kind: 'share', shown: 'flagged' }, words, none)).toBe('43.2%*')
   expect(writeCell({ key: 'moved_by', kind: 'steps' }, { moved_by: 4, grid: 'week' }, words, none)).toBe('4 weeks')
   expect(writeCell({ key: 'label', kind: 'text' }, { label: 'raw', series: 'raw', venue: null }, words, none)).toBe('Raw average')
-  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'Blogs', series: 'venue', venue: 'blogs' }, words, none)).toBe('Blogs')
+  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'Blogs', series: 'venue', venue: 'blogs' }, words, none)).toBe('Blogs, raw')
+  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'Favourability', metric: 'favourability', segment: 'visitor' }, words, none)).toBe('Favourability, visitor')
+  expect(writeCell({ key: 'label', kind: 'text' }, { label: 'Favourability', metric: 'favourability', segment: null }, words, none)).toBe('Favourability')
   // a metric's own label is never taken for a word of the catalogue
   expect(writeCell({ key: 'label', kind: 'text' }, { label: 'raw', metric: 'raw' }, words, none)).toBe('raw')
 })

@@ -11,6 +11,8 @@ import { createReading } from '../../../model/reading/context.ts'
 import type { Accounting } from '../../../model/intake/intake-tables.ts'
 import { analyseHere } from '../../support/analyse-reference.ts'
 import { sampleSurvey, type Survey } from '../../support/sample-survey.ts'
+import { houseWords } from '../../support/house-words.ts'
+import { sampleBenchmark, sampleCoder, sampleImportance, sampleStaying } from '../../support/sample-listening.ts'
 import { simulateCells } from '../../support/simulate-cells.ts'
 
 const simulated = simulateCells({
@@ -25,7 +27,9 @@ beforeAll(async () => {
   const sampling = samplingVariance(tables)
   const problem = buildProblem(tables, sampling.variance)
   const posterior = await samplePosterior(problem, localExecutor(problem), { seed: 1, proposals: 2000, draws: 1000 })
-  const { caveats, ...findings } = await analyseHere(tables)
+  const { caveats, ...found } = await analyseHere(tables)
+  // by chance alone one venue in twenty widens
+  const findings = { ...found, speaking: { ...found.speaking, spread: found.speaking.spread.map((of) => ({ ...of, movement: 'not-established' as const })) } }
   expect(caveats.length).toBeGreaterThan(0)
   calm = { findings, reading: createReading(tables, tables, targetMix(tables), sampling, posterior, 0.9), givenNotUsed: [] }
 })
@@ -46,6 +50,20 @@ const firstVenue = (change: Partial<CaveatGrounds['findings']['venues'][number]>
 const survey = (change: (survey: Survey) => Partial<Survey>): Change => withFindings(() => ({ survey: { ...calmSurvey, ...change(calmSurvey) } }))
 const opinion = (change: Partial<CaveatGrounds['findings']['opinion']>): Change => withFindings((findings) => ({ opinion: { ...findings.opinion, ...change } }))
 const steps = tables.timeline.steps
+const speaking = (change: (speaking: CaveatGrounds['findings']['speaking']) => Partial<CaveatGrounds['findings']['speaking']>): Change => withFindings((findings) => ({ speaking: { ...findings.speaking, ...change(findings.speaking) } }))
+const coder = (change: Partial<CaveatGrounds['findings']['coder']>): Change => withFindings((findings) => ({ coder: { ...findings.coder, ...change } }))
+const venuesNamed = [{ venue: 'boards', label: 'Boards' }, { venue: 'microblogs', label: 'Microblogs' }]
+const ofSample = sampleStaying(venuesNamed)
+/** A sample benchmark like the posts: no level is missing. */
+const alike = { ...sampleBenchmark(), margins: sampleBenchmark().margins.map((margin) => ({ ...margin, dissimilarity: 0.04 })), unreachable: [] }
+const benchmark = (dissimilarity: number | null, unreachable: readonly number[] = []): Change => withFindings(() => ({
+  benchmark: { ...alike, margins: alike.margins.slice(0, 1).map((margin) => ({ ...margin, dissimilarity })), unreachable: unreachable.map((customers) => ({ margin: 'segment', level: 'freight', customers })) },
+}))
+
+/** Other volumes of the periods. */
+function opinionPeriods(of: (mentions: number, last: boolean) => number): Change {
+  return withFindings(({ opinion: found }) => ({ opinion: { ...found, periods: found.periods.map((period, p) => ({ ...period, mentions: Math.round(of(period.mentions, p === found.periods.length - 1)) })) } }))
+}
 
 const occasions: readonly (readonly [string, Change])[] = [
   ['fit-not-converged', withFindings(({ diagnostics }) => ({ diagnostics: { ...diagnostics, converged: false, passed: false } }))],
@@ -80,6 +98,15 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['survey-waves-later', survey(() => ({ later_waves: ['2026-11'] }))],
   ['survey-metric-missing', survey(({ metrics }) => ({ metrics: metrics.map((of, m) => (m === 0 ? { ...of, missing: ['2025-08'] } : of)) }))],
   ['survey-bases-small', survey(() => ({ metrics: leading.metrics }))],
+  ['coverage-break', opinionPeriods((mentions, last) => (last ? 4 * mentions : mentions))],
+  ['moderates-leaving', speaking(() => ({ staying: ofSample.staying }))],
+  ['spread-widening', speaking(() => ({ spread: ofSample.spread }))],
+  ['conversation-pull', speaking(() => ({ pull: ofSample.pull }))],
+  ['benchmark-mismatch', benchmark(0.12)],
+  ['audit-refused', coder({ status: 'refused', reason: 'too-few' })],
+  ['coder-biased', withFindings(() => ({ coder: sampleCoder('applied', venuesNamed) }))],
+  ['talk-unlike-importance', withFindings(() => ({ importance: sampleImportance([]) }))],
+  ['prior-matters', withFindings(() => ({ sensitivity: { scales: [], shift: 0.4, reliable: true } }))],
   ['opinion-drift-entangled', (grounds) => {
     const { columns } = grounds.reading
     // drifts that mirror opinion draw by draw: the posts can't tell one from the other
@@ -94,8 +121,79 @@ describe('every rule has an occasion, and keeps silent without it', () => {
   })
 })
 
-test.each(['no-sampling-error', 'level-conventional', 'coder-unaudited', 'survey-absent', 'benchmark-absent'])('%s stands in every review that lacks the input', (code) => {
+/** What stands in every review of posts that lacks an input, and when it must not. */
+const standing: readonly (readonly [string, Change])[] = [
+  ['no-sampling-error', withFindings(({ accounting }) => ({ accounting: { ...accounting, modelled: 0 } }))],
+  ['level-conventional', withFindings(({ method }) => ({ method: { ...method, target_source: { venue: 'account', topic: 'account', poster: 'account' } } }))],
+  ['coder-unaudited', coder({ status: 'refused', reason: 'ranges' })],
+  ['survey-absent', survey(() => ({}))],
+  ['benchmark-absent', benchmark(0.04)],
+]
+
+test.each(standing)('%s stands, save where it does not apply', (code, change) => {
   expect(codesOf(calm)).toContain(code)
+  expect(codesOf(change(calm))).not.toContain(code)
+})
+
+test('every caveat that the catalogue words has an occasion here', async () => {
+  const worded = (await houseWords()).keys.flatMap((key) => /^caveat-(.+)-evidence$/.exec(key)?.[1] ?? [])
+  expect([...occasions, ...standing].map(([code]) => code).sort()).toEqual(worded.sort())
+})
+
+describe('thresholds', () => {
+  const found = (change: Change, code: string) => ruleCaveats(change(calm)).filter((caveat) => caveat.code === code)
+  test('volume: both ways, in all and by venue, not for an ordinary month, and not on a short history', () => {
+    expect(found(opinionPeriods((mentions, last) => (last ? mentions / 4 : mentions)), 'coverage-break').map(({ figures }) => figures.scope)).toEqual(['all'])
+    expect(found(opinionPeriods((mentions, last) => (last ? 1.3 * mentions : mentions)), 'coverage-break')).toEqual([])
+    const short: Change = (grounds) => withFindings(({ opinion: of }) => ({ opinion: { ...of, periods: of.periods.slice(-6) } }))(opinionPeriods((mentions, last) => (last ? 4 * mentions : mentions))(grounds))
+    expect(found(short, 'coverage-break')).toEqual([])
+    // the same jump in a history that jumps as much
+    const restless = withFindings(({ opinion: of }) => ({ opinion: { ...of, periods: of.periods.map((period, p) => ({ ...period, mentions: period.mentions * (p === of.periods.length - 1 ? 4 : [1, 2, 4][p % 3]) })) } }))
+    expect(found(restless, 'coverage-break')).toEqual([])
+    const inVenue = speaking(({ mix }) => ({ mix: mix.map((row) => (row.factor === 'venue' && row.level === calm.findings.venues[1]!.venue && row.period === calm.findings.period.name ? { ...row, mentions: 9 * row.mentions } : row)) }))
+    expect(found(inVenue, 'coverage-break').map(({ figures }) => [figures.scope, figures.venue])).toEqual([['venue', calm.findings.venues[1]!.label]])
+  })
+  test('the usual volume told is that of the history', () => {
+    const [jump] = found(opinionPeriods((mentions, last) => (last ? 4 * mentions : mentions)), 'coverage-break')
+    const inPeriod = calm.findings.opinion.periods.at(-1)!.mentions
+    expect(Number(jump?.figures.usual) / inPeriod).toBeCloseTo(1, 1)
+    expect(jump?.figures.mentions).toBe(4 * inPeriod)
+  })
+  test.each<[string, Change, string | undefined]>([
+    ['a little unlike', benchmark(0.09), undefined], ['unlike', benchmark(0.1), 'caution'], ['very unlike', benchmark(0.25), 'serious'],
+    ['alike, but many customers unheard', benchmark(0.05, [0.05]), 'serious'], ['alike, but few customers unheard', benchmark(0.04, [0.04]), undefined],
+    ['not known, many unheard', benchmark(null, [0.2]), 'serious'], ['not known', benchmark(null), undefined],
+  ])('customers: %s', (_name, change, severity) => {
+    expect(found(change, 'benchmark-mismatch').map((caveat) => caveat.severity)).toEqual(severity === undefined ? [] : [severity])
+  })
+  test('an audit that is applied, but not in every venue, is told of those left as coded', () => {
+    const venue = { venue: 'boards', label: 'Boards', codings: 22, agreement: 0.8, smallest_singular_value: 0.5, correction: null }
+    expect(found(coder({ status: 'applied', venues: [{ ...venue, refused: 'too-few' }, { ...venue, refused: null }] }), 'audit-refused'))
+      .toEqual([{ code: 'audit-refused', severity: 'note', figures: { scope: 'venue', venue: 'Boards', reason: 'too-few' } }])
+    expect(found(coder({ status: 'absent', venues: [{ ...venue, refused: 'too-few' }] }), 'audit-refused')).toEqual([])
+  })
+  test('a coder off by less than a point, or not shown to be off, is not called biased', () => {
+    const bias = (mean: number, movement: 'up' | 'down' | 'not-established') => found(coder({ status: 'applied', correction: { mean, low: mean - 1, high: mean + 1, sd: 0.6 }, movement }), 'coder-biased')
+    expect(bias(1.2, 'up')).toHaveLength(1)
+    expect(bias(-0.9, 'down')).toEqual([])
+    expect(bias(1.2, 'not-established')).toEqual([])
+  })
+  test('a pull counts for all classes together, shown, and of some size', () => {
+    const pulling = (change: Partial<CaveatGrounds['findings']['speaking']['pull'][number]>) => found(speaking(() => ({ pull: ofSample.pull.slice(0, 1).map((of) => ({ ...of, ...change })) })), 'conversation-pull')
+    expect(pulling({}).map(({ figures }) => figures.lean)).toEqual(['towards'])
+    expect(pulling({ slope: { mean: -0.2, low: -0.3, high: -0.1, sd: 0.06 }, movement: 'down' }).map(({ figures }) => figures.lean)).toEqual(['away'])
+    expect(pulling({ poster: 'regular' })).toEqual([])
+    expect(pulling({ movement: 'not-established' })).toEqual([])
+    expect(pulling({ slope: { mean: 0.09, low: 0.05, high: 0.13, sd: 0.02 } })).toEqual([])
+  })
+  test('no ground: the middle stays as it did, spread narrows, talk is like importance, the prior can’t be judged', () => {
+    const staying = ofSample.staying!
+    expect(found(speaking(() => ({ staying: { ...staying, middle_gap_change: { ...staying.middle_gap_change!, movement: 'not-established' } } })), 'moderates-leaving')).toEqual([])
+    expect(found(speaking(() => ({ staying: { ...staying, middle_gap_change: null } })), 'moderates-leaving')).toEqual([])
+    expect(found(speaking(() => ({ spread: ofSample.spread.map((of) => ({ ...of, movement: 'down' as const })) })), 'spread-widening')).toEqual([])
+    expect(found(withFindings(() => ({ importance: { ...sampleImportance([]), dissimilarity: 0.14 } })), 'talk-unlike-importance')).toEqual([])
+    expect(found(withFindings(() => ({ sensitivity: { scales: [], shift: 0.9, reliable: false } })), 'prior-matters')).toEqual([])
+  })
 })
 
 describe('the survey', () => {

@@ -2,7 +2,6 @@ import { describe, expect, test } from 'vitest'
 import { readTipping } from '../../../model/customers/tipping.ts'
 import { readVolume } from '../../../model/customers/volume.ts'
 import type { Findings } from '../../../model/findings/schema.ts'
-import type { IntakeTables } from '../../../model/intake/intake-tables.ts'
 import type { Reading } from '../../../model/reading/context.ts'
 
 const reading = (before: readonly number[], now: readonly number[]) => ({ adjusted: [Float64Array.from(before), Float64Array.from(now)], periodSteps: [1], previousSteps: [0] }) as unknown as Reading
@@ -28,26 +27,25 @@ describe('how selective posting would have to be', () => {
 })
 
 describe('what the volume is worth', () => {
-  const tables = (positive: number, authors: number) => ({
-    timeline: { current: 3 }, staying: [{ period: 3, stance: 0, authors: authors - positive, stayed: 0 }, { period: 3, stance: 2, authors: positive, stayed: 0 }, { period: 2, stance: 2, authors: 1e6, stayed: 0 }],
-  }) as unknown as IntakeTables
+  // of which so many are content: raw 100 (2 share - 1)
+  const opinion = (content: number, authors: number) => ({ raw: 100 * (2 * content / authors - 1), authors }) as unknown as Findings['opinion']
   const survey = (value: number, base: number, kind = 'share') => ({ kind, metric: 'favourability', label: 'Favourability', waves: [{ wave: 'w1', value, effective_base: base }] }) as unknown as Findings['survey']
 
   test('a gap of ten points is worth a random sample of 25', () => {
     // sd^2 / gap^2 = 0.25 / 0.01, the survey's own error left out
-    const found = readVolume(tables(600, 1000), survey(50, 1e12), 10_000, 10)!
+    const found = readVolume(opinion(600, 1000), survey(50, 1e12), 10_000, 10)!
     expect(found.gap).toBeCloseTo(10, 9)
     expect(found.equal_sample).toBeCloseTo(25, 6)
     // Meng (2018), eq. 2.3: gap = rho sqrt((1 - f) / f) sd, with f = 0.1
     expect(found.defect_correlation).toBeCloseTo(0.1 / (3 * 0.5), 9)
   })
   test('without the number of customers there is no correlation; a gap within the survey’s own error is worth no number', () => {
-    expect(readVolume(tables(600, 1000), survey(50, 1e12), null, 10)).toMatchObject({ customers: null, defect_correlation: null })
-    expect(readVolume(tables(510, 1000), survey(50, 400), null, 10)!.equal_sample).toBeNull()
+    expect(readVolume(opinion(600, 1000), survey(50, 1e12), null, 10)).toMatchObject({ customers: null, defect_correlation: null })
+    expect(readVolume(opinion(510, 1000), survey(50, 400), null, 10)!.equal_sample).toBeNull()
   })
   test('needs a share, and authors enough', () => {
-    expect(readVolume(tables(5, 9), survey(50, 400), null, 10)).toBeNull()
-    expect(readVolume(tables(500, 900), survey(7, 400, 'mean'), null, 10)).toBeNull()
-    expect(readVolume(tables(500, 900), null, null, 10)).toBeNull()
+    expect(readVolume(opinion(5, 9), survey(50, 400), null, 10)).toBeNull()
+    expect(readVolume(opinion(500, 900), survey(7, 400, 'mean'), null, 10)).toBeNull()
+    expect(readVolume(opinion(500, 900), null, null, 10)).toBeNull()
   })
 })

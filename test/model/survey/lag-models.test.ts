@@ -87,7 +87,7 @@ describe('forecasts', () => {
     for (let run = 0; run < runs; run++) {
       const { x, pairs, y } = pairsOf(13, 2, 100 + run, [1, 2, 3])
       const known = pairs.map(({ lag, x: partners }) => ({ lag, x: partners.slice(0, 12), y: y.slice(0, 12) }))
-      const { low, high } = forecastEstimate(forecastFrom(fitLagModels(known), (lag) => x[4 - lag + 12]), 0.9)
+      const { low, high } = forecastEstimate(forecastFrom(fitLagModels(known), (lag) => x[4 - lag + 12]), 0.9, [-Infinity, Infinity])
       if (y[12] >= low && y[12] <= high) inside++
     }
     expect(inside / runs).toBeGreaterThan(0.86)
@@ -98,7 +98,7 @@ describe('forecasts', () => {
     let own = 0
     const y = Float64Array.from({ length: 40 }, () => (own = 0.95 * own + generator.normal()))
     const x = Float64Array.from({ length: 40 }, () => generator.normal())
-    const { mean } = forecastEstimate(forecastFrom(fitLagModels([{ lag: 1, x, y }]), () => 0), 0.9)
+    const { mean } = forecastEstimate(forecastFrom(fitLagModels([{ lag: 1, x, y }]), () => 0), 0.9, [-Infinity, Infinity])
     expect(Math.abs(mean - y[39])).toBeLessThan(0.4 * Math.abs(y[39] - y.reduce((sum, value) => sum + value, 0) / 40))
   })
   test('a lag without a partner is left out', () => {

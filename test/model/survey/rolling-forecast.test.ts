@@ -66,3 +66,49 @@ describe('a forecast', () => {
     expect((await forecastOf(tables, waves, wave))?.known).toHaveLength(10)
   })
 })
+
+describe('many waves', () => {
+  /** A wave begins every day, on this grid of weeks: seven of them may be forecast from the same posts. */
+  const rolling: readonly HeadlineWave[] = Array.from({ length: 210 }, (_, w) => {
+    const start = new Date(Date.UTC(2024, 2, 4 + w)).toISOString().slice(0, 10)
+    return { name: `d${w}`, start, end: start, startStep: 9 + Math.floor(w / 7), days: Float64Array.of(1), value: 50 + 3 * Math.sin(w), standardError: 2.5 }
+  })
+  /** A refit that answers when it is let, and how many were asked at once. */
+  function watched() {
+    const [problems, most] = [new Set<unknown>(), { asked: 0, atOnce: 0 }]
+    const refit: typeof meanPath = async (problem) => {
+      problems.add(problem)
+      most.asked++
+      most.atOnce = Math.max(most.atOnce, problems.size)
+      await new Promise((resolve) => { setTimeout(resolve, 2) })
+      problems.delete(problem)
+      return Float64Array.from({ length: problem.steps }, (_, t) => Math.sin(t) + problem.cells.count / 1000)
+    }
+    return { refit, most }
+  }
+
+  test('that begin in the same step share one fit, and few problems are there at a time', async () => {
+    const { refit, most } = watched()
+    const found = await forecastWaves(tables, rolling.slice(0, 140), rolling.slice(0, 140), lags, refit, 1)
+    expect(found.filter((forecast) => forecast !== null)).toHaveLength(132)
+    // of the 20 weeks the first has no wave with eight before it, and the first wave of the second none either
+    expect(most.asked).toBe(19)
+    expect(most.atOnce).toBeGreaterThan(1)
+    expect(most.atOnce).toBeLessThanOrEqual(8)
+  })
+  test('are each forecast as it would be alone', async () => {
+    const { refit } = watched()
+    const together = await forecastWaves(tables, rolling.slice(0, 60), rolling.slice(0, 60), lags, refit, 1)
+    for (const w of [8, 20, 21, 59]) expect(together[w]).toEqual((await forecastWaves(tables, rolling, [rolling[w]], lags, refit, 1))[0])
+  })
+  test('are forecast from the last back, 150 at the most', async () => {
+    const found = await forecastWaves(tables, rolling, rolling, lags, watched().refit, 1)
+    expect(found).toHaveLength(210)
+    expect(found.map((forecast) => forecast !== null)).toEqual(rolling.map((_, w) => w >= 60))
+  })
+  test('a fit that fails is told, and no other is begun', async () => {
+    let asked = 0
+    await expect(forecastWaves(tables, rolling, rolling, lags, () => Promise.reject(new Error(`fit ${++asked}`)), 1)).rejects.toThrow('fit 1')
+    expect(asked).toBeLessThanOrEqual(8)
+  })
+})
