@@ -1,5 +1,5 @@
 import { basename, resolve } from 'node:path'
-import type { Accounting } from '../../model/intake/intake-tables.ts'
+import type { Accounting, Timeline } from '../../model/intake/intake-tables.ts'
 import { readAccount } from '../account/read-account.ts'
 import type { RawInputs } from '../inputs/raw-inputs.ts'
 import { sampleForAudit, type AuditPost } from '../intake/audit-sample.ts'
@@ -28,15 +28,15 @@ export async function runCheck(program: Program, folder: string, flags: CheckFla
       : await unlessStopped(stop, sampleForAudit(await readAccount(folder), { size: flags.auditSample, seed: flags.seed, progress: shown.progress.detail }))
     // The ids are for a spreadsheet: nothing else goes to stdout beside them.
     const say = sample === null ? speaker.say : speaker.note
-    speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting), period: timeline.review.name, survey: surveyResult(inputs.survey), ...listeningResult(inputs), ...sampleResult(sample) })
+    speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting), period: timeline.review.name, survey: surveyResult(inputs.survey), events: eventsResult(inputs.events, timeline), ...listeningResult(inputs), ...sampleResult(sample) })
     say(describeAccounting(accounting))
-    for (const line of describeInputs(inputs)) say(line)
+    for (const line of describeInputs(inputs, timeline)) say(line)
     say(`mentions from ${timeline.steps[0]} to ${timeline.lastMention}; a build would review ${timeline.review.name}`)
     if (sample !== null) speaker.say(['venue,id', ...sample.map(({ venue, id }) => `${csvField(venue)},${csvField(id)}`)].join('\n'))
     return 0
   } catch (error) {
     const { exitCode, faults } = failureOf(error)
-    speaker.give({ ok: false, faults, accounting: null, survey: null, benchmark: null, coding_audit: null, importance: null })
+    speaker.give({ ok: false, faults, accounting: null, survey: null, events: null, benchmark: null, coding_audit: null, importance: null })
     speaker.faults(faults)
     return exitCode
   } finally {
@@ -54,6 +54,25 @@ function sampleResult(sample: readonly AuditPost[] | null) {
 
 function surveyResult(survey: RawInputs['survey']) {
   return survey === null ? null : { waves: survey.waves.length, metrics: survey.metrics.length }
+}
+
+/** Events, those of them that are left out because they are dated after the period under review, and those that are kept though there are no mentions of their day. */
+function eventsResult(events: RawInputs['events'], { steps, lastMention, review }: Timeline) {
+  if (events === null) return null
+  const after = events.filter(({ date }) => date > review.end)
+  const outside = events.filter(({ date }) => date <= review.end && (date < steps[0] || date > lastMention))
+  return { events: events.length, after_period: after.length, outside_mentions: outside.length }
+}
+
+function describeEvents(events: RawInputs['events'], timeline: Timeline): readonly string[] {
+  const result = eventsResult(events, timeline)
+  if (events === null || result === null) return []
+  if (events.length === 0) return ['events: none']
+  return [
+    `events: ${events.length}, ${events[0].date} to ${events.at(-1)?.date}`,
+    ...(result.after_period === 0 ? [] : [`  after ${timeline.review.name}, so left out of its review: ${result.after_period}`]),
+    ...(result.outside_mentions === 0 ? [] : [`  before the first mentions or after the last, and kept: ${result.outside_mentions}`]),
+  ]
 }
 
 /** What is read for the questions who is speaking and how well they are coded. */
@@ -79,13 +98,13 @@ function describeListening(inputs: RawInputs): readonly string[] {
   ]
 }
 
-function describeInputs(inputs: RawInputs): readonly string[] {
+function describeInputs(inputs: RawInputs, timeline: Timeline): readonly string[] {
   const { survey, events, outcome } = inputs
   const span = (dates: readonly string[]): string => (dates.length === 0 ? '' : `, ${dates[0]} to ${dates.at(-1)}`)
   const ends = survey?.waves.map(({ end }) => end).sort() ?? []
   return [
     ...(survey === null ? [] : [`survey: ${counted(survey.waves.length, 'wave')}, ${counted(survey.metrics.length, 'metric')}${span([survey.waves[0]!.start, ...ends])}`]),
-    ...(events === null ? [] : [`events: ${events.length}${span(events.map(({ date }) => date))}`]),
+    ...describeEvents(events, timeline),
     ...(outcome === null ? [] : [`outcome: ${counted(outcome.length, 'value')}${span(outcome.map(({ date }) => date))}`]),
     ...describeListening(inputs),
   ]

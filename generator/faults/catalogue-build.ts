@@ -23,7 +23,7 @@ export const buildWordings = {
     mend: 'Set HOME to a folder that this user can read and work in one as well, or build with --no-pdf.',
   }),
   'out-not-a-draft': (details: { readonly entry: string }): Wording => ({
-    unexpected: `entry \`${details.entry}\``, expected: 'a folder that is absent, empty, or holds a draft',
+    unexpected: details.entry === 'a file' ? details.entry : `entry \`${details.entry}\``, expected: 'a folder that is absent, empty, or holds a draft',
     mend: 'Name another folder with --out: a folder with anything else in it is not replaced.',
   }),
 }

@@ -1,4 +1,5 @@
 import { accessSync, constants } from 'node:fs'
+import { createRequire } from 'node:module'
 import { homedir } from 'node:os'
 import { join } from 'node:path'
 import type * as Puppeteer from 'puppeteer'
@@ -19,7 +20,7 @@ export interface BrowserOptions {
  * @throws {MachineFault} `browser-missing`, `browser-does-not-start` or `printer-unusable`, each with what to do
  */
 export async function openBrowser(options: BrowserOptions = {}): Promise<Browser> {
-  const puppeteer = await printingLibrary()
+  const puppeteer = printingLibrary()
   const found = await findBrowser(thisMachine(options, puppeteer))
   try {
     return await puppeteer.launch({
@@ -36,10 +37,13 @@ export async function openBrowser(options: BrowserOptions = {}): Promise<Browser
   }
 }
 
-/** Loaded when something is printed: it looks for settings in the folders above and at home, which a machine may not let it. */
-async function printingLibrary(): Promise<typeof Puppeteer> {
+/**
+ * Loaded when something is printed: it looks for settings in the folders above and at home, which a machine may not let it. Required and
+ * not imported: an import that fails halfway rejects a second time, where nobody can catch it.
+ */
+function printingLibrary(): typeof Puppeteer {
   try {
-    return await import('puppeteer')
+    return createRequire(import.meta.url)('puppeteer') as typeof Puppeteer
   } catch (error) {
     throw new MachineFault(faultOf('printer-unusable', 'this machine', { reason: error instanceof Error ? error.message.split('\n')[0]! : String(error) }))
   }

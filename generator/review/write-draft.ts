@@ -62,9 +62,13 @@ async function writing<T>(parent: string, write: () => Promise<T>): Promise<T> {
   try {
     return await write()
   } catch (error) {
-    const { code } = error as NodeJS.ErrnoException
-    throw code !== undefined && refusals.has(code) ? new MachineFault(faultOf('draft-unwritable', parent, { reason: code })) : error
+    throw refused(parent, error)
   }
+}
+
+function refused(folder: string, error: unknown): unknown {
+  const { code } = error as NodeJS.ErrnoException
+  return code !== undefined && refusals.has(code) ? new MachineFault(faultOf('draft-unwritable', folder, { reason: code })) : error
 }
 
 const dayLong = 24 * 60 * 60 * 1000
@@ -84,11 +88,12 @@ async function sweep(parent: string): Promise<void> {
  * A folder that may be replaced by a draft: absent, empty, or a draft itself.
  *
  * @throws {InputFault} `out-not-a-draft` where it holds anything that no draft does
+ * @throws {MachineFault} `draft-unwritable` where nobody may look into it
  */
 export async function requireDraft(folder: string): Promise<void> {
   const found = await readdir(folder).catch((error: NodeJS.ErrnoException) => {
     if (error.code === 'ENOENT') return []
-    throw new InputFault([faultOf('out-not-a-draft', folder, { entry: error.code ?? error.message })])
+    throw error.code === 'ENOTDIR' ? new InputFault([faultOf('out-not-a-draft', folder, { entry: 'a file' })]) : refused(folder, error)
   })
   const foreign = found.find((entry) => !ours.has(entry))
   if (foreign !== undefined) throw new InputFault([faultOf('out-not-a-draft', folder, { entry: foreign })])

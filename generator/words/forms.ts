@@ -34,7 +34,7 @@ export const forms = {
   count: ofNumber((value, words) => count(value, words.locale)),
   number: ofNumber((value, words) => number(value, words.locale)),
   'tiny-number': ofNumber((value, words) => tinyNumber(value, words.locale)),
-  /** Half the width of an interval, for `plus or minus`: 3.6 is `1.8`. */
+  /** Half the width of an interval, for `plus or minus`: 3.6 is `1.80`. */
   'half-width': ofNumber((value, words) => number(value / 2, words.locale)),
   share: ofNumber(share),
   probability: ofNumber(probability),

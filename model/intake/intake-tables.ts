@@ -119,11 +119,11 @@ export interface CellLabels {
   readonly names: readonly string[]
   /** Shape (labels), in [-1, 1]. */
   readonly scores: Float64Array
-  /** Row-major of shape (cells x labels): mentions; each row sums to the cell's mentions. */
+  /** Row-major of shape (cells x labels): mentions; a row sums to the cell's mentions, or to less where some are scored by a range. */
   readonly counts: Float64Array
 }
 
-/** Why cells have no labels: scores come from a range in some source, sources label differently, or cells came ready-made. */
+/** Why cells have no labels: scores come from ranges in every source, sources label differently, or cells came ready-made. */
 export type NoLabels = 'ranges' | 'labels-differ' | 'ready-made'
 
 /** Known authors of a period by stance, and how many of them posted in the period after it as well. */

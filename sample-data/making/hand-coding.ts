@@ -16,7 +16,7 @@ export type CodedVenue = keyof typeof coder
 export const codedVenues = Object.keys(coder) as CodedVenue[]
 
 const labels = ['negative', 'neutral', 'positive']
-const codingsPerVenue = 150
+const codingsPerVenue = 360
 /** The month whose posts are coded by hand: the last. */
 const month = monthOf(endWall - 1)
 

@@ -1,4 +1,4 @@
-import { mkdtemp, readFile, readdir, rm } from 'node:fs/promises'
+import { appendFile, chmod, cp, mkdir, mkdtemp, readFile, readdir, rm, utimes, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
@@ -46,6 +46,23 @@ describe('check', () => {
     expect(told.audit_sample).toEqual(lines.slice(1).map((line) => { const [venue, id] = line.split(','); return { venue, id } }))
     expect(await run('check', demo, '--audit-sample', '50', '--quiet')).toMatchObject({ code: 1, out: '', err: expect.stringContaining('audit-sample-small') as string })
     expect((await run('check', account, '--audit-sample', '300')).err).toContain('audit-sample-ids')
+  })
+
+  test('tells which events are left out, which lie outside the mentions, and that there are none yet', async () => {
+    const folder = join(scratch, 'eventful')
+    await cp(account, folder, { recursive: true })
+    await appendFile(join(folder, 'account.yaml'), 'events: { files: events.csv }\n')
+    const events = async (...dates: readonly string[]) => {
+      await writeFile(join(folder, 'events.csv'), `date,label\n${dates.map((date) => `${date},x\n`).join('')}`)
+      return { plain: (await run('check', folder)).out, json: JSON.parse((await run('check', folder, '--json')).out) as { events: object } }
+    }
+    const some = await events('2025-09-01', '1900-01-01', '2025-05-01', '2199-12-31')
+    expect(some.plain).toContain('events: 4, 1900-01-01 to 2199-12-31\n  after 2025-08, so left out of its review: 2\n  before the first mentions or after the last, and kept: 1\n')
+    expect(some.json.events).toEqual({ events: 4, after_period: 2, outside_mentions: 1 })
+    expect((await events('2025-05-01')).plain).toContain('events: 1, 2025-05-01 to 2025-05-01\nmentions from')
+    const none = await events()
+    expect(none.plain).toContain('events: none\n')
+    expect(none.json.events).toEqual({ events: 0, after_period: 0, outside_mentions: 0 })
   })
 
   test('a folder without an account file: exit code 1, the fault as data and in words', async () => {
@@ -98,4 +115,43 @@ test('a machine without the browser that was asked for: exit code 3, and what to
   expect(code).toBe(3)
   expect(err).toContain('no-browser')
   expect(await readdir(scratch)).not.toContain('none')
+})
+
+describe('a folder that takes no draft', () => {
+  test('no name that it could have: exit code 3, the folder and --out named', async () => {
+    const folder = join(scratch, 'x'.repeat(300))
+    const { code, out, err } = await run('build', account, '--out', folder, '--no-pdf', '--json')
+    expect(code).toBe(3)
+    expect(JSON.parse(out)).toMatchObject({ ok: false, drafts: [], faults: [{ code: 'draft-unwritable', place: folder, mend: expect.stringContaining('--out') as string }] })
+    expect(err).toContain('[draft-unwritable]')
+  })
+
+  test('no right to write: the same, in the account’s own drafts', async () => {
+    const folder = join(scratch, 'read-only')
+    await cp(account, folder, { recursive: true })
+    for (const each of [scratch, folder]) await chmod(each, 0o555)
+    // root may write everywhere: then as nobody
+    const root = process.geteuid?.() === 0
+    if (root) process.seteuid!(65534)
+    try {
+      const { code, out } = await run('build', folder, '--no-pdf', '--json')
+      expect([code, JSON.parse(out)]).toMatchObject([3, { faults: [{ code: 'draft-unwritable', place: join(folder, 'drafts'), message: expect.stringContaining('EACCES') as string }] }])
+    } finally {
+      if (root) process.seteuid!(0)
+      for (const each of [scratch, folder]) await chmod(each, 0o755)
+    }
+  })
+})
+
+test('unfinished drafts of killed builds go after a day; others stay', async () => {
+  const folder = join(scratch, 'sweep')
+  const day = 86_400
+  const ages = { '.unfinished-aaaaaa': 2 * day, '.unfinished-bbbbbb': day / 2, '.unfinished-cccccc-before': 2 * day, 'mine': 2 * day }
+  for (const [name, age] of Object.entries(ages)) {
+    await mkdir(join(folder, name), { recursive: true })
+    await writeFile(join(folder, name, 'findings.json'), '{}')
+    await utimes(join(folder, name), Date.now() / 1000 - age, Date.now() / 1000 - age)
+  }
+  expect((await run('build', account, '--out', join(folder, 'draft'), '--no-pdf', '--quiet')).code).toBe(0)
+  expect((await readdir(folder)).sort()).toEqual(['.unfinished-bbbbbb', '.unfinished-cccccc-before', 'draft', 'mine'])
 })

@@ -133,7 +133,7 @@ describe('what the volume is worth', () => {
   const of = (change: Partial<typeof volume>) => sectionText(withFindings({ volume: { ...volume, ...change } }), 'volume')
   test('as many interviews, the gap, and the correlation behind it with its source', () => {
     expect(of({})).toContain('2,940 mentions by 1,490 authors are worth as much as a random sample of about 45 interviews.')
-    expect(of({})).toContain('53.4% of the authors were favourable on the whole; the survey found 45.6% (Favourability, wave 2026-10). They lie 7.8 percentage points apart')
+    expect(of({})).toContain('By the raw average 53.4% of what was said is favourable, a neutral mention counted as half; the survey found 45.6% (Favourability, wave 2026-10). They lie 7.8 percentage points apart')
     expect(of({})).toContain('among 310,000 customers, a correlation of 0.011 between being favourable and posting brings about such a gap (the data defect correlation, Meng 2018)')
   })
   test('a sample of next to nothing, a gap within the survey’s own error, no number of customers', () => {
@@ -147,7 +147,7 @@ describe('what the volume is worth', () => {
     expect(of({})).toContain('Had content customers become 1.05 times as likely to post as before, and unhappy ones not (90% interval 1.02 to 1.08), the reported change of +2.2 points would be nothing but that.')
     const fell = withFindings({ tipping: { ...sample.tipping!, who: 'unhappy' } })
     expect(sectionText(fell, 'volume')).toContain('Had unhappy customers become 1.05 times as likely to post as before, and content ones not')
-    expect(sectionText(composeHouse(postsAlone()), 'volume')).toMatch(/^What the volume is worth What would explain the change away/)
+    expect(sectionText(composeHouse(postsAlone()), 'volume')).toMatch(/^What would explain the change away Had content customers/)
     expect(sectionText(withFindings({ tipping: null }), 'volume')).not.toContain('explain the change away')
   })
 })
@@ -168,7 +168,7 @@ describe('what the coder adds', () => {
     expect(text(state)).not.toMatch(unworded)
   })
   test('absent: what a check would take', () => {
-    expect(text('absent')).toContain('350 mentions of each venue, 1,750 in all, drawn at random and judged by people. If the coder is right 85% of the time, what it adds to the interval of a level is then ±1.0 points.')
+    expect(text('absent')).toContain('350 mentions of each venue, 1,750 in all, drawn at random and judged by people. If the coder is right 85% of the time, what it adds to the interval of a level is then ±1.00 points.')
   })
   test('what intervals leave out goes by whether coding errors were corrected', () => {
     expect(sectionText(usual, 'first-page')).not.toContain('errors in how mentions were coded')

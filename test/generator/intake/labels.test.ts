@@ -22,11 +22,16 @@ describe('labels by cell', () => {
   test.each([
     ['labels-differ', source('a.csv', '{ labels: { good: 1, bad: -1 } }') + source('b.csv', '{ labels: { good: 1, bad: -0.5 } }')],
     ['labels-differ', source('a.csv', '{ labels: { good: 1, bad: -1 } }') + source('b.csv', '{ labels: { good: 1, bad: -1, so-so: 0 } }')],
-    ['ranges', source('a.csv', '{ labels: { good: 1, bad: -1 } }') + source('n.csv', '{ range: [1, 5] }')],
+    ['ranges', source('n.csv', '{ range: [1, 5] }')],
     ['ready-made', source('a.csv', '{ labels: { good: 1, bad: -1 } }') + cells],
     ['ready-made', source('n.csv', '{ range: [1, 5] }') + cells],
   ])('are not to be had: %s', async (reason, sources) => {
     expect(await intake(sources, true)).toMatchObject({ labels: null, noLabels: reason })
+  })
+
+  test('are none of mentions that are scored by a range: the others keep theirs', async () => {
+    const { labels, cells } = await intake(source('a.csv', '{ labels: { good: 1, bad: -1 } }') + source('n.csv', '{ range: [1, 5] }'), true)
+    expect([cells.mentions.reduce((sum, n) => sum + n, 0), labels!.counts.reduce((sum, n) => sum + n, 0)]).toEqual([3, 2])
   })
 
   test('are not counted where nobody asks', async () => {

@@ -87,6 +87,17 @@ describe('a build', () => {
     expect(await hashes(join(scratch, 'mended'))).toEqual(await hashes(join(scratch, 'one')))
   })
 
+  test('nor one that was forged, hash and all, and can’t be worded', async () => {
+    const analyses = join(account, 'cache/analyses')
+    for (const file of await readdir(analyses)) {
+      const { result } = JSON.parse(await readFile(join(analyses, file), 'utf8')) as { result: { caveats: { code: string }[] } }
+      result.caveats[0].code = 'no-such'
+      await writeFile(join(analyses, file), JSON.stringify({ sha256: createHash('sha256').update(JSON.stringify(result)).digest('hex'), result }))
+    }
+    await build('mended', { threads: 2 })
+    expect(await hashes(join(scratch, 'mended'))).toEqual(await hashes(join(scratch, 'one')))
+  })
+
   test('it can fail: another seed gives other bytes', async () => {
     await build('other', { seed: 2 })
     const [one, other] = [await hashes(join(scratch, 'one')), await hashes(join(scratch, 'other'))]

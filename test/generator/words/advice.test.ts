@@ -31,10 +31,10 @@ test('the catalogue words no advice that is not given', () => {
 describe('figures', () => {
   const evidence = (code: string, change: Readonly<Record<string, string | number>> = {}) => wordAdvice(words, code, { ...advised[code], ...change }).evidence
   test('widths are told as plus or minus half of them; where they are written alike nothing narrows', () => {
-    expect(evidence('hear-venue')).toBe('118 authors were heard there in this period. With so many more in the next one, the interval of the next change of opinion narrows from ±1.8 to ±1.5 points.')
-    expect(evidence('hear-venue', { width_after: 3.55 })).toContain('stays at about ±1.8 points')
+    expect(evidence('hear-venue')).toBe('118 authors were heard there in this period. With so many more in the next one, the interval of the next change of opinion narrows from ±1.80 to ±1.50 points.')
+    expect(evidence('hear-venue', { width_after: 3.595 })).toContain('stays at about ±1.80 points')
     expect(evidence('hear-venue', { heard: 0 })).toContain('No author was heard there')
-    expect(evidence('audit-start')).toContain('about ±1.0 points')
+    expect(evidence('audit-start')).toContain('about ±1.00 points')
   })
   test('what was heard is a share of a segment and a number of a venue', () => {
     expect(evidence('hear-segment')).toBe('They are 34% of the customers and 21% of the authors heard. Counted by the customers’ shares, the authors are worth 612 equal voices; with so many more, 941.')

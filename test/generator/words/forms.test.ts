@@ -15,7 +15,7 @@ test('a form writes what it is made from', () => {
   expect(write({ start: '2026-10-01', end: '2026-10-31' }, 'days', words)).toBe('1 – 31 October 2026')
   expect([[0.2, 0.3], [0.3, 0.2], [0.301, 0.304]].map(([share_from, share_to]) => write({ share_from, share_to }, 'share-direction', words))).toEqual(['up', 'down', 'flat'])
   expect([0.0109, -0.00052].map((value) => write(value, 'tiny-number', words))).toEqual(['0.011', '\u22120.00052'])
-  expect([write(3.6, 'half-width', words), write(-0.128, 'number-size', words), write('islander', 'name', words)]).toEqual(['1.8', '0.13', 'Islander'])
+  expect([write(3.6, 'half-width', words), write(-0.128, 'number-size', words), write('islander', 'name', words)]).toEqual(['1.80', '0.13', 'Islander'])
   expect(write('not-established', 'code', words)).toBe('not_established')
   expect([0.04, -0.06, 3].map((value) => write(value, 'sign', words))).toEqual(['flat', 'down', 'up'])
 })
