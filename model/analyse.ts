@@ -111,7 +111,7 @@ export async function analyse(
     diagnostics: readDiagnostics(reading, spec.seed, spec.interval),
     method: readMethod(reading, spec.facts),
   }
-  const advice = readAdvice(outlook, findings, inputs.benchmark)
+  const advice = readAdvice(outlook, findings, inputs.benchmark, smallestGroup)
   const unruled: Unruled = maskSmallGroups({ ...findings, advice }, tables, smallestGroup)
   return { ...unruled, caveats: ruleCaveats({ findings: unruled, reading, givenNotUsed: spec.facts.givenNotUsed }) }
 }

@@ -17,8 +17,8 @@ const littleTalked = 0.02
  * What to do to hear more kinds of people: the fall of a posterior standard deviation per unit of cost ranks what can be computed; what can't
  * stands behind it in the order of the program.
  */
-export function readAdvice(outlook: Outlook, grounds: Grounds, margins: readonly BenchmarkMargin[] | null): RuledAdvice[] {
-  const computed = [...adviseVenues(outlook), ...adviseTopics(outlook, grounds), ...adviseSegments(outlook.reading, margins, grounds)]
+export function readAdvice(outlook: Outlook, grounds: Grounds, margins: readonly BenchmarkMargin[] | null, smallestGroup: number): RuledAdvice[] {
+  const computed = [...adviseVenues(outlook), ...adviseTopics(outlook, grounds), ...adviseSegments(outlook.reading, margins, grounds, smallestGroup)]
     .sort((a, b) => (b.gain_per_cost ?? 0) - (a.gain_per_cost ?? 0))
   return [...computed, ...adviseSurvey(grounds), ...adviseCoder(grounds), ...adviseEveryone(outlook.reading, grounds, computed.length > 0)]
 }

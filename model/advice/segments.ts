@@ -14,7 +14,7 @@ const littleHeard = 0.03
  * Which customers to hear: for every segment heard too little, the authors that would bring its share to that of customers, and what that does to the
  * standard error of the mean weighted to customers, sd / sqrt(effective authors).
  */
-export function adviseSegments(reading: Reading, margins: readonly BenchmarkMargin[] | null, { benchmark, interval }: Grounds): RuledAdvice[] {
+export function adviseSegments(reading: Reading, margins: readonly BenchmarkMargin[] | null, { benchmark, interval }: Grounds, smallestGroup: number): RuledAdvice[] {
   const { segments } = reading.tables
   if (segments === null || margins === null || benchmark === null) return []
   const heard = heardBy(segments, margins)
@@ -25,7 +25,9 @@ export function adviseSegments(reading: Reading, margins: readonly BenchmarkMarg
     const counts = levels.map((_, of) => heard.authors.reduce((sum, count, i) => sum + (heard.levels[i][m] === of ? count : 0), 0))
     const known = counts.reduce((sum, count) => sum + count, 0)
     if (known === 0 || share - counts[l] / known < littleHeard) return []
-    const authors = neededAt(counts[l], known, share)
+    // of a group too small to be shown as if it were as large as may be shown, and needed as if nobody of it were heard
+    const few = counts[l] < smallestGroup
+    const authors = neededAt(few ? 0 : counts[l], known, share)
     const after = effectiveOf(withMore(heard, m, l, authors))
     const fall = points * sd * (1 / Math.sqrt(Math.max(1, before)) - 1 / Math.sqrt(Math.max(1, after)))
     if (fall <= 0) return []
@@ -35,7 +37,7 @@ export function adviseSegments(reading: Reading, margins: readonly BenchmarkMarg
     return [{
       code: 'hear-segment', where: level, where_kind: 'segment', how_many: authors, gain: { mean: fall, low: fall - reach, high: fall + reach, sd: spread }, gain_of: 'customer-mean',
       cost: authors * cost.each, cost_given: cost.given, gain_per_cost: fall / (authors * cost.each),
-      figures: { margin, segment: level, authors, heard: counts[l] / known, customers: share, effective_before: Math.round(before), effective_after: Math.round(after), cost: authors * cost.each },
+      figures: { margin, segment: level, authors, heard: Math.max(counts[l], few ? Math.min(smallestGroup, known) : 0) / known, customers: share, effective_before: Math.round(before), effective_after: Math.round(after), cost: authors * cost.each },
     }]
   }))
 }

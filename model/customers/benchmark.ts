@@ -72,7 +72,8 @@ function readMargin(heard: Heard, { margin, levels }: BenchmarkMargin, m: number
       const shown = known >= smallestGroup && (counts[l] === 0 || counts[l] >= smallestGroup)
       return {
         level, customers: share, heard: shown ? counts[l] / known : null, authors: shown ? counts[l] : null,
-        gap: shown ? percent * (counts[l] / known - share) : null, needed: neededAt(counts[l], known, share),
+        gap: shown ? percent * (counts[l] / known - share) : null, // of a group that is not shown the number must not give its size away
+        needed: neededAt(shown ? counts[l] : 0, known, share),
       }
     }),
   }

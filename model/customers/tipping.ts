@@ -7,8 +7,9 @@ import { changeUnderRatio, tippingRatio } from '../statistics/selection-odds.ts'
 
 type Tipping = NonNullable<Findings['tipping']>
 
-/** How many times likelier the unhappy might have become, for the curve. */
-const ratios = [0.5, 0.6, 0.7, 0.8, 0.9, 1, 1.1, 1.25, 1.4, 1.6, 1.8, 2] as const
+/** How many times likelier the unhappy might have become, for the curve: near 1 where little would do, else far from it. */
+const ratios = { near: [0.8, 0.85, 0.9, 0.95, 1, 1.05, 1.1, 1.15, 1.2, 1.25], far: [0.5, 0.6, 0.7, 0.8, 0.9, 1, 1.1, 1.25, 1.4, 1.6, 1.8, 2] } as const
+const little = 1.2
 
 /**
  * How strong selective posting would have to be to make the reported change of opinion out of nothing, draw by draw.
@@ -22,8 +23,9 @@ export function readTipping({ adjusted, periodSteps, previousSteps }: Reading, i
   const ratio = now.map((after, i) => tippingRatio(before[i], after).value ?? 1)
   // a rise is undone by the content, a fall by the unhappy having become likelier to post
   const fell = ratio.reduce((sum, value) => sum + Math.log(value), 0) > 0
+  const tips = estimateOf(fell ? ratio : ratio.map((value) => 1 / value), interval)
   return {
-    who: fell ? 'unhappy' : 'content', ratio: estimateOf(fell ? ratio : ratio.map((value) => 1 / value), interval),
-    curve: ratios.map((times) => ({ ratio: times, change: estimateOf(now.map((after, i) => points * (changeUnderRatio(before[i], after, times).value ?? 0)), interval) })),
+    who: fell ? 'unhappy' : 'content', ratio: tips,
+    curve: (tips.mean < little ? ratios.near : ratios.far).map((times) => ({ ratio: times, change: estimateOf(now.map((after, i) => points * (changeUnderRatio(before[i], after, times).value ?? 0)), interval) })),
   }
 }

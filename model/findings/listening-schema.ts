@@ -120,8 +120,8 @@ export const tipping = z.strictObject({
 
 export const coder = z.strictObject({
   status: z.enum(['absent', 'applied', 'refused']),
-  /** Why it was refused: too few codings in a venue, too poor to invert, scores from a range, ready-made cells. */
-  reason: z.enum(['too-few', 'too-poor', 'ranges', 'ready-made']).nullable(),
+  /** Why it was refused: too few codings in a venue, too poor to invert, scores from a range, labels that differ between sources, ready-made cells. */
+  reason: z.enum(['too-few', 'too-poor', 'ranges', 'labels-differ', 'ready-made']).nullable(),
   venues: z.array(z.strictObject({
     venue: z.string(), label: z.string(), codings: count,
     /** Share of the hand-coded posts that the coder labelled alike. */

@@ -38,7 +38,7 @@ export function readCoder(reading: Reading, audited: CoderCorrection | null, giv
   const { tables, summary } = reading
   const { factors, timeline, noLabels } = tables
   if (!given) return { status: 'absent', reason: null, venues: [], correction: null, movement: null, audit_size: labels === null ? null : auditSize(labels, factors[0].levels.length, interval) }
-  if (audited === null) return { status: 'refused', reason: noLabels === 'ready-made' ? 'ready-made' : 'ranges', venues: [], correction: null, movement: null, audit_size: null }
+  if (audited === null) return { status: 'refused', reason: noLabels ?? 'ranges', venues: [], correction: null, movement: null, audit_size: null }
   const applied = audited.venues.some(({ refused }) => refused === null)
   const correction = periodCorrection(reading, timeline.current)
   const estimate = correction === null ? null : summary.estimate(correction)

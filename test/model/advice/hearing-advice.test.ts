@@ -1,0 +1,45 @@
+import { describe, expect, test } from 'vitest'
+import type { IntakeTables } from '../../../model/intake/intake-tables.ts'
+import { createGenerator } from '../../../model/random/generator.ts'
+import { analyseHere, noInputs } from '../../support/analyse-reference.ts'
+import { simulateCells } from '../../support/simulate-cells.ts'
+
+const simulated = (mentionsPerStep: number) => simulateCells({
+  steps: 20, venues: 2, topics: 1, posters: 1, mentionsPerStep, sigmas: { mu: 0.03, venueDrift: [0.005, 0.005], venue: 0.1, topic: 0, poster: 0, tau: 0.001 },
+}, createGenerator(6, 0)).tables
+
+/** 200 authors known by segment, 180 islanders and 20 visitors, scores alike. */
+const segmented = (tables: IntakeTables): IntakeTables => ({
+  ...tables, segments: { margins: ['segment'], levels: [['islander', 'visitor']], rows: [{ levels: [0], authors: 180, sum: 0, squares: 60 }, { levels: [1], authors: 20, sum: 0, squares: 6 }] },
+})
+const benchmark = (visitors: number) => [{ margin: 'segment', levels: [{ level: 'islander', share: 1 - visitors }, { level: 'visitor', share: visitors }] }]
+
+describe('where to hear more people', () => {
+  test('venues whose posts would narrow the next interval are named, the best for its cost first', async () => {
+    const { advice, hearing } = await analyseHere(simulated(40))
+    const venues = advice.filter(({ code }) => code === 'hear-venue')
+    expect(venues.length).toBeGreaterThan(0)
+    const gains = venues.map((piece) => piece.gain_per_cost!)
+    expect(gains).toEqual([...gains].sort((a, b) => b - a))
+    for (const { gain, figures, how_many: authors } of venues) {
+      expect(gain!.mean).toBeGreaterThan(0)
+      expect(figures['width_after']).toBeLessThan(figures['width_before'] as number)
+      expect(authors).toBeGreaterThan(0)
+    }
+    for (const { curve } of hearing!.venues) expect(curve.every(({ width }, i) => i === 0 || width < curve[i - 1].width)).toBe(true)
+  })
+  test('none where posts are so many that more of them tell next to nothing', async () => {
+    const { advice } = await analyseHere(simulated(20_000))
+    expect(advice.filter(({ code }) => code === 'hear-venue')).toEqual([])
+  })
+  test('segments that are customers more than they are heard are named with the authors needed', async () => {
+    const { advice } = await analyseHere(segmented(simulated(40)), {}, { ...noInputs, benchmark: benchmark(0.5) })
+    const [segment] = advice.filter(({ code }) => code === 'hear-segment')
+    expect(segment).toMatchObject({ where: 'visitor', how_many: 160, gain_of: 'customer-mean' })
+    expect(segment.figures['effective_after']).toBeGreaterThan(segment.figures['effective_before'] as number)
+  })
+  test('none where they are heard as they are customers', async () => {
+    const { advice } = await analyseHere(segmented(simulated(40)), {}, { ...noInputs, benchmark: benchmark(0.1) })
+    expect(advice.filter(({ code }) => code === 'hear-segment')).toEqual([])
+  })
+})
