@@ -58,7 +58,8 @@ describe('a machine without a home', () => {
   const homeless = preload("import os from 'node:os'; os.homedir = () => { throw new Error('no home') }")
 
   test('does all but print', async () => {
-    const cells = join(root, 'test/generator/intake/fixtures/open-cells')
+    const cells = join(scratch, 'homeless')
+    await cp(join(root, 'test/generator/intake/fixtures/open-cells'), cells, { recursive: true })
     expect((await run(['check', cells, '--json'], { preload: [homeless] })).code).toBe(0)
     const { code, out } = await run(['build', cells, '--out', join(scratch, 'printed'), '--json'], { preload: [homeless] })
     expect([code, JSON.parse(out)]).toMatchObject([3, { ok: false, faults: [{ code: 'printer-unusable', message: expect.stringContaining('no home') as string, mend: expect.stringContaining('HOME') as string }] }])

@@ -102,8 +102,10 @@ describe('structure', () => {
 
 test('the contents name the page on which each heading stands', async () => {
   const texts = await pageTexts(pdf)
+  // as many charts fill more than one page of contents
+  const contents = texts.slice(0, 2).join(' ')
   for (const name of chartNames) {
-    const stated = new RegExp(`What chart ${name} shows (\\d+)(?: |$)`).exec(texts[0])
+    const stated = new RegExp(`What chart ${name} shows (\\d+)(?: |$)`).exec(contents)
     const page = Number(stated?.[1])
     expect(texts[page - 1], name).toContain(`What chart ${name} shows As the`)
   }

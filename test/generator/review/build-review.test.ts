@@ -39,6 +39,8 @@ afterAll(async () => {
 async function copyAccount(name: string): Promise<string> {
   const folder = join(scratch, 'accounts', name)
   await cp(openCells, folder, { recursive: true })
+  // other tests build where the fixture lies
+  await rm(join(folder, 'cache'), { recursive: true, force: true })
   await mkdir(join(folder, 'survey'))
   await writeFile(join(folder, 'survey/waves.csv'), `wave,field_start,field_end,metric,segment,base,effective_base,value,kind,sd\n${waves.join('\n')}\n`)
   await appendFile(join(folder, 'account.yaml'), 'survey: { files: survey/*.csv, lags: [-2, 6] }\n')
