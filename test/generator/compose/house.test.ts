@@ -116,8 +116,8 @@ test('one venue only: no drift is told', () => {
 test('without a serious caveat the first page shows the cautions, without either it says so', () => {
   const only = (...severities: string[]) => composeHouse({ ...sample, caveats: sample.caveats.filter(({ severity }) => severities.includes(severity)) })
   expect(firstPage(usual)).toContain('Serious caveats')
-  expect(firstPage(usual)).not.toContain('Moderate voices are leaving')
-  expect(firstPage(only('caution', 'note'))).toContain('Moderate voices are leaving')
+  expect(firstPage(usual)).not.toContain('Moderate voices fall behind')
+  expect(firstPage(only('caution', 'note'))).toContain('Moderate voices fall behind')
   expect(firstPage(only('note'))).toContain('No serious caveat and no caution applies')
 })
 

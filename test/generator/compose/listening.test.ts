@@ -68,7 +68,7 @@ describe('who stays', () => {
   ] as const)('a change that is %s', (movement, words) => {
     const text = withSpeaking({ staying: { ...staying, middle_gap_change: { ...staying.middle_gap_change!, movement } } })
     expect(text).toContain(words)
-    expect(text).not.toContain('): moderate voices are leaving.')
+    expect(text).not.toContain('): moderate voices are heard less and less beside them.')
   })
   test('without a base to compare with nothing is said of leaving; without the gap the picture stands alone', () => {
     expect(withSpeaking({ staying: { ...staying, middle_gap_change: null } })).not.toMatch(/moderate|unworded|not known/)
