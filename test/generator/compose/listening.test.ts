@@ -61,7 +61,7 @@ describe('what is not given is not there: no section, no heading, no chart', () 
 describe('who stays', () => {
   const staying = sample.speaking.staying!
   test('moderate voices that leave are said to', () => {
-    expect(sectionText(usual, 'speaking')).toContain('Authors who speak in the middle come back less often than the others: by 15.2 percentage points (90% interval 11.5 to 18.9). Against the base they have fallen behind by 13.4 percentage points (90% interval 8.7 to 18.1): moderate voices are leaving.')
+    expect(sectionText(usual, 'speaking')).toContain('Authors who speak in the middle come back less often than the others: by 15.2 percentage points (90% interval 11.5 to 18.9). Against the base they have fallen behind by 13.4 percentage points (90% interval 8.7 to 18.1): moderate voices are heard less and less beside them.')
   })
   test.each([
     ['up', 'moderate voices stay more than they did.'], ['not-established', 'so that it stays open whether moderate voices are leaving.'],
