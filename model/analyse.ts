@@ -73,10 +73,12 @@ export async function analyse(
   tables: IntakeTables, inputs: SmallInputs, spec: AnalysisSpec, workers: Workers, progress: AnalysisProgress = {},
 ): Promise<Analysis> {
   const audited = inputs.audit === null ? null : readAudit(tables, inputs.audit)
-  const fitted = audited === null ? tables : rescoredTables(tables, audited)
+  // an audit that is refused everywhere changes nothing, and costs nothing
+  const applied = audited !== null && audited.weights.some((weights) => weights !== null) ? audited : null
+  const fitted = applied === null ? tables : rescoredTables(tables, applied)
   const sampling = samplingVariance(fitted)
   const mix = targetMix(tables, spec.targetMix)
-  const problem = buildProblem(fitted, sampling.variance, audited)
+  const problem = buildProblem(fitted, sampling.variance, applied)
   const posterior = await samplePosterior(problem, workers.executorFor(problem), { seed: spec.seed, ...effortFor(problem), ...(progress.draws && { progress: progress.draws }) })
   const reading = createReading(tables, fitted, mix, sampling, posterior, spec.interval)
   const { timeline } = tables
