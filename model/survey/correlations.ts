@@ -3,10 +3,10 @@ import type { Generator } from '../random/generator.ts'
 import { correctedCorrelation } from '../statistics/attenuation.ts'
 import { correlation } from '../statistics/correlation.ts'
 import { effectivePairs } from '../statistics/effective-pairs.ts'
-import { autoregressionCoefficient } from '../statistics/first-order-autoregression.ts'
 import { fisherInterval } from '../statistics/fisher-interval.ts'
 import type { Candidate } from './candidates.ts'
 import type { HeadlineWave } from './headline.ts'
+import type { DrawSurrogate } from './persistence.ts'
 import { maxStatisticP, type LaggedPartners } from './surrogates.ts'
 import { pairsNeeded } from './verdict.ts'
 import { partnerOf } from './windows.ts'
@@ -23,17 +23,16 @@ export function lagsBetween([from, to]: readonly [number, number]): readonly num
  * One series against the waves at every lag: r, its interval on the effective number of pairs, r without the waves' sampling error; the best
  * lag by |r|, and how often chance alone would do as well at one of as many lags.
  */
-export function correlateCandidate(candidate: Candidate, waves: readonly HeadlineWave[], lags: readonly number[], interval: number, generator: Generator): CandidateFinding {
+export function correlateCandidate(candidate: Candidate, waves: readonly HeadlineWave[], lags: readonly number[], draw: DrawSurrogate | null, interval: number, generator: Generator): CandidateFinding {
   const paired = lags.map((lag) => ({ lag, ...pairAt(candidate, waves, lag) }))
   const found = paired.map(({ lag, waves: which, partners }) => correlateLag(lag, partners, Array.from(which, (w) => waves[w]), interval))
   const eligible = found.filter(({ r, pairs }) => r !== null && pairs >= pairsNeeded)
   const best = eligible.reduce<LagFinding | null>((most, lag) => (most === null || Math.abs(lag.r ?? 0) > Math.abs(most.r ?? 0) ? lag : most), null)
-  const values = Float64Array.from(waves, ({ value }) => value)
   const lookedAt = paired.filter((_, i) => eligible.includes(found[i]))
   return {
     series: candidate.series, venue: candidate.venue, label: candidate.label, lags: found,
     best_lag: best?.lag ?? null, best,
-    adjusted_p: best === null ? null : maxStatisticP(Math.abs(best.r ?? 0), lookedAt, autoregressionCoefficient(values).value ?? 0, waves.length, generator),
+    adjusted_p: best === null || draw === null ? null : maxStatisticP(Math.abs(best.r ?? 0), lookedAt, draw, waves.length, generator),
   }
 }
 

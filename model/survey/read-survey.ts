@@ -11,6 +11,7 @@ import { readDepartures } from './departures.ts'
 import { evaluateForecasts, type ForecastWave } from './evaluate-forecasts.ts'
 import { headlineWaves, type HeadlineWave } from './headline.ts'
 import { lagWeightsOf } from './lag-models.ts'
+import { surrogatesOf } from './persistence.ts'
 import { forecastWaves, type Refit, type WaveForecast } from './rolling-forecast.ts'
 import { readTracker } from './tracker.ts'
 import { pairsNeeded, verdictOf } from './verdict.ts'
@@ -40,7 +41,8 @@ export async function readSurvey(reading: Reading, survey: SurveyInput, events: 
   const metrics = readTracker(survey, interval)
   const { name, label, kind } = survey.metrics[survey.headline]
   const limits = limitsOf(kind)
-  const candidates = candidatesOf(reading).map((candidate, i) => correlateCandidate(candidate, waves, lags, interval, createGenerator(seed, surrogateStream + i)))
+  const draw = surrogatesOf(waves.map(({ value }) => value), waves.map(({ standardError }) => standardError))
+  const candidates = candidatesOf(reading).map((candidate, i) => correlateCandidate(candidate, waves, lags, draw, interval, createGenerator(seed, surrogateStream + i)))
 
   const forecasts = await forecastWaves(fitted, waves, [...waves, ...(survey.next === null ? [] : [survey.next])], lags, refit, seed)
   const scored = waves.flatMap((wave, w): ForecastWave[] => {

@@ -1,5 +1,5 @@
 import type { Generator } from '../random/generator.ts'
-import { fillAutoregression } from '../statistics/first-order-autoregression.ts'
+import type { DrawSurrogate } from './persistence.ts'
 
 /** The partners of the waves at one lag. */
 export interface LaggedPartners {
@@ -14,22 +14,21 @@ const surrogates = 1999
 
 /**
  * How often a survey that has nothing to do with the series would show a correlation as large as the largest found, looked for at as many
- * lags: the largest |r| over the lags, of each of 1,999 surrogates drawn from an autoregression of first order (Westfall and Young 1993,
- * Resampling-Based Multiple Testing, single-step maxT; surrogates for autocorrelated series: Theiler, Eubank, Longtin, Galdrikian and Farmer 1992,
- * Physica D 58:77).
+ * lags: the largest |r| over the lags, of each of 1,999 surrogates of the survey (Westfall and Young 1993, Resampling-Based Multiple Testing,
+ * single-step maxT; surrogates for autocorrelated series: Theiler, Eubank, Longtin, Galdrikian and Farmer 1992, Physica D 58:77).
  *
  * @param largest - the largest |r| found
  * @param lags - the partners at every lag looked at
- * @param coefficient - of the autoregression of the survey's own series, one value a wave, in [0, 1)
+ * @param draw - writes one surrogate
  * @param waves - number of waves
  * @returns in (0, 1]: (1 + surrogates that reach it) / (1 + surrogates)
  */
-export function maxStatisticP(largest: number, lags: readonly LaggedPartners[], coefficient: number, waves: number, generator: Generator): number {
+export function maxStatisticP(largest: number, lags: readonly LaggedPartners[], draw: DrawSurrogate, waves: number, generator: Generator): number {
   const directions = lags.map(({ waves: which, partners }) => ({ which, direction: unitDeviations(partners) }))
   const surrogate = new Float64Array(waves)
   let reached = 0
   for (let i = 0; i < surrogates; i++) {
-    fillAutoregression(surrogate, { mean: 0, sd: 1, coefficient }, generator)
+    draw(surrogate, generator)
     if (directions.some(({ which, direction }) => Math.abs(correlate(surrogate, which, direction)) >= largest - 1e-12)) reached++
   }
   return (1 + reached) / (1 + surrogates)

@@ -5,6 +5,7 @@ import { localExecutor } from '../../model/fit/executor.ts'
 import { samplePosterior } from '../../model/fit/posterior.ts'
 import { conditionalCovariance, conditionalMean, createStateWorkspace } from '../../model/fit/states.ts'
 import { mean, standardDeviation } from '../../model/statistics/moments.ts'
+import { restrictedLogLikelihood } from '../../model/statistics/noisy-autoregression.ts'
 import { weightedEstimate } from '../../model/statistics/weighted-estimate.ts'
 import { maximise } from '../support/maximise.ts'
 import { plainProblem } from '../support/plain-problem.ts'
@@ -51,6 +52,9 @@ test.each([
 ])('SS-02, concentrated log-likelihood at q = %s', (q, s2, withConstants, printed) => {
   const found = diffuse(flow, q * s2, s2)
   expect(Math.abs(found - withConstants)).toBeLessThan(1e-6)
+  // of the waves' memory, too: a walk seen with error
+  const walk = restrictedLogLikelihood(flow, flow.map(() => s2), { coefficient: 1, innovation: Math.sqrt(q * s2) })
+  expect(Math.abs(walk - (flow.length / 2) * Math.log(2 * Math.PI) - withConstants)).toBeLessThan(1e-6)
   const concentrated = found + (flow.length / 2) * Math.log(2 * Math.PI) + (flow.length - 1) / 2
   expect(Math.abs(concentrated - printed)).toBeLessThan(0.01)
 })

@@ -6,7 +6,7 @@ import { runSurveyScenario, trueLead, type SurveyRun, type SurveyScenario } from
  * Simulated truth: does adjusted opinion follow it where the raw average does not, do intervals cover, is silence kept where only the mix moves?
  * And of a survey: is a true lead found, is none found where there is none, do forecasts cover? Of a coder that errs: does an audit undo it?
  *
- *   npm run simulate [-- RUNS [SEED [against|drawn|still|leading|unrelated|coder]]]
+ *   npm run simulate [-- RUNS [SEED [against|drawn|still|leading|unrelated|returning|coder]]]
  */
 const runs = Number(process.argv[2] ?? 200)
 const seed = Number(process.argv[3] ?? 11)
@@ -38,17 +38,21 @@ if (only === undefined || only === 'still') {
   process.stdout.write(`  a change is announced in ${share(still, (run) => run.announced)} %; the interval covers in ${share(still, (run) => run.covered)} %\n`)
 }
 
+const told: Readonly<Record<SurveyScenario, string>> = {
+  leading: 'that follows opinion four weeks later', unrelated: 'that walks on its own', returning: 'of its own that returns to its mean',
+}
+
 async function surveyStudy(scenario: SurveyScenario): Promise<void> {
   const found: SurveyRun[] = []
   for (let run = 0; run < runs; run++) found.push(await runSurveyScenario(scenario, seed, run))
   const per = (holds: (run: SurveyRun) => boolean) => (100 * found.filter(holds).length / found.length).toFixed(1)
   const verdicts = [...new Set(found.map(({ verdict }) => verdict))].sort().map((verdict) => `${verdict} ${per((run) => run.verdict === verdict)} %`)
-  process.stdout.write(`a survey ${scenario === 'leading' ? 'that follows opinion four weeks later' : 'unrelated to opinion'}, ${runs} runs\n  ${verdicts.join(', ')}\n`)
+  process.stdout.write(`a survey ${told[scenario]}, ${runs} runs\n  ${verdicts.join(', ')}\n`)
   process.stdout.write(`  best lag within a week of the true one in ${per(({ bestLag }) => bestLag !== null && Math.abs(bestLag - trueLead) <= 1)} %\n`)
   process.stdout.write(`  90 % forecast intervals cover ${(100 * found.reduce((sum, { coverage }) => sum + coverage, 0) / found.length).toFixed(1)} % of waves\n`)
 }
 
-for (const scenario of ['leading', 'unrelated'] as const) if (only === undefined || only === scenario) await surveyStudy(scenario)
+for (const scenario of ['leading', 'unrelated', 'returning'] as const) if (only === undefined || only === scenario) await surveyStudy(scenario)
 
 async function coderStudy(): Promise<void> {
   process.stdout.write(`a coder that errs, ${runs} runs: the 90 % interval of the period's opinion\n`)

@@ -1,5 +1,6 @@
 import type { DayWindow, SurveyInput, SurveyWave } from '../../model/inputs/small-inputs.ts'
 import { createGenerator, type Generator } from '../../model/random/generator.ts'
+import { fillMemory, type Memory } from '../../model/statistics/noisy-autoregression.ts'
 import type { Findings } from '../../model/findings/schema.ts'
 import { analyseHere, noInputs } from '../support/analyse-reference.ts'
 import { simulateCells, type SimulationOptions } from '../support/simulate-cells.ts'
@@ -15,14 +16,19 @@ const steps = spacing * (months + 1)
 /** A share for a score: from -1 to 1 opinion turns nobody into everybody. */
 const shareOfScore = 0.5
 
+/** Standard deviation of a week's movement of opinion. */
+const movement = 0.025
+
 const posts: SimulationOptions = {
   steps, venues: 4, topics: 3, posters: 1, mentionsPerStep: 600,
-  sigmas: { mu: 0.025, venueDrift: [0.015, 0.004, 0.003, 0.008], venue: 0.2, topic: 0.25, poster: 0, tau: 0.03 },
+  sigmas: { mu: movement, venueDrift: [0.015, 0.004, 0.003, 0.008], venue: 0.2, topic: 0.25, poster: 0, tau: 0.03 },
   mix: { venue: { from: [0.2, 0.3, 0.3, 0.2], to: [0.5, 0.15, 0.15, 0.2] }, topic: { from: [0.6, 0.3, 0.1], to: [0.2, 0.3, 0.5] } },
 }
 
-/** `leading`: the survey says four weeks later what opinion was; `unrelated`: it follows a walk of its own, of the same law. */
-export type SurveyScenario = 'leading' | 'unrelated'
+/** `leading`: the survey says four weeks later what opinion was; it follows a walk of its own, of the same law (`unrelated`), or a series that returns (`returning`). */
+export type SurveyScenario = 'leading' | 'unrelated' | 'returning'
+/** What a week keeps of the week before where the survey's own series returns: 0.81 a month; its innovations give it the spread that opinion has. */
+const returning: Memory = { coefficient: 0.95, innovation: 0.03 }
 
 export interface SurveyRun {
   readonly verdict: NonNullable<Findings['survey']>['verdict']
@@ -37,7 +43,7 @@ export interface SurveyRun {
 export async function runSurveyScenario(scenario: SurveyScenario, seed: number, run: number): Promise<SurveyRun> {
   const generator = createGenerator(seed, run)
   const { tables, truth } = simulateCells(posts, generator)
-  const walk = scenario === 'leading' ? truth.mu : walkLike(generator)
+  const walk = scenario === 'leading' ? truth.mu : ownSeries(scenario === 'unrelated' ? { coefficient: 1, innovation: movement } : returning, generator)
   const survey = surveyOf(walk, scenario === 'leading' ? trueLead : 0, generator)
   const { survey: found } = await analyseHere(tables, { seed: run }, { ...noInputs, survey })
   if (found === null) throw new Error('a survey was given')
@@ -48,9 +54,10 @@ export async function runSurveyScenario(scenario: SurveyScenario, seed: number, 
   }
 }
 
-function walkLike(generator: Generator): Float64Array {
-  let at = 0
-  return Float64Array.from({ length: steps }, () => (at += 0.025 * generator.normal()))
+function ownSeries(memory: Memory, generator: Generator): Float64Array {
+  const series = new Float64Array(steps)
+  fillMemory(series, memory, generator)
+  return series
 }
 
 /** Monthly waves of two weeks, each of 400 interviews. */

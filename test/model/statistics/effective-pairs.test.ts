@@ -2,12 +2,12 @@ import { expect, test } from 'vitest'
 import { createGenerator } from '../../../model/random/generator.ts'
 import { correlation } from '../../../model/statistics/correlation.ts'
 import { effectivePairs, lagOnePairs, pairsFromProducts } from '../../../model/statistics/effective-pairs.ts'
-import { fillAutoregression } from '../../../model/statistics/first-order-autoregression.ts'
 import { fisherInterval } from '../../../model/statistics/fisher-interval.ts'
+import { fillMemory } from '../../../model/statistics/noisy-autoregression.ts'
 
 const drawn = (n: number, coefficient: number, stream: number) => {
   const series = new Float64Array(n)
-  fillAutoregression(series, { mean: 0, sd: 1, coefficient }, createGenerator(7, stream))
+  fillMemory(series, { coefficient, innovation: 1 }, createGenerator(7, stream))
   return series
 }
 

@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
 import { createGenerator } from '../../../model/random/generator.ts'
-import { fillAutoregression } from '../../../model/statistics/first-order-autoregression.ts'
+import { fillMemory } from '../../../model/statistics/noisy-autoregression.ts'
 import { neweyWest, neweyWestLags } from '../../../model/statistics/newey-west.ts'
 
 const constant = (n: number) => new Float64Array(n).fill(1)
@@ -43,7 +43,7 @@ test('with autocorrelated errors the 90 % interval of a mean covers oftener with
   const y = new Float64Array(n)
   const covered = { lags: 0, none: 0 }
   for (let sample = 0; sample < samples; sample += 1) {
-    fillAutoregression(y, { mean: 0, sd: 1, coefficient: 0.5 }, generator)
+    fillMemory(y, { coefficient: 0.5, innovation: 1 }, generator)
     for (const [name, lags] of [['lags', 10], ['none', 0]] as const) {
       const { coefficients, standardErrors } = neweyWest([constant(n)], y, lags)
       if (Math.abs(coefficients[0]) < 1.645 * standardErrors[0]) covered[name] += 1
