@@ -36,6 +36,7 @@ export interface Account {
   readonly template: string | null
   readonly theme: string | null
   readonly notes: string | null
+  readonly words: string | null
   readonly preparedBy: string | null
   readonly reviewedBy: string | null
   /** Fewest authors of a group that may be shown. */

@@ -49,7 +49,7 @@ function namedBy(entries: SoundEntries): readonly Named[] {
     const entry = entries[key]
     return entry === undefined ? [] : [{ path: [key, 'files'], pattern: entry.files, kinds: lineKinds, what: 'file' as const }]
   })
-  const single = (['template', 'theme', 'notes'] as const).flatMap((key): readonly Named[] => {
+  const single = (['template', 'theme', 'notes', 'words'] as const).flatMap((key): readonly Named[] => {
     const pattern = entries[key]
     return pattern === undefined ? [] : [{ path: [key], pattern, kinds: [], what: key === 'notes' ? 'folder' as const : 'file' as const }]
   })

@@ -86,6 +86,7 @@ export const accountShape = {
   template: text.optional(),
   theme: text.optional(),
   notes: text.optional(),
+  words: text.optional(),
   prepared_by: text.optional(),
   reviewed_by: text.optional(),
   smallest_group: z.number().int(expected.smallestGroup).min(10, expected.smallestGroup).default(10),
@@ -95,5 +96,5 @@ export type Entries = { readonly [K in keyof typeof accountShape]: z.output<(typ
 export type SourceEntry = z.output<typeof source>
 
 /** Keys that this version checks but does not use. */
-export const laterKeys = ['competitors', 'theme', 'notes'] as const
+export const laterKeys = ['competitors'] as const
 export type AccountKey = keyof typeof accountShape

@@ -7,7 +7,9 @@ import { placeOf, type KeyPath } from './yaml-places.ts'
 type Issue = z.core.$ZodIssue
 
 /** The keys that a map at a path may have, for the nearest one: paths are written with `*` for any name or index. */
-const knownKeys: Readonly<Record<string, readonly string[]>> = {
+export type KnownKeys = Readonly<Record<string, readonly string[]>>
+
+const accountKeys: KnownKeys = {
   'base': ['from', 'to'],
   'mentions.*': ['files', 'cells', 'columns', 'score', 'delimiter', 'quote', 'time_format'],
   'mentions.*.score': ['labels', 'range'],
@@ -19,7 +21,7 @@ const knownKeys: Readonly<Record<string, readonly string[]>> = {
 }
 
 /** The faults of one zod issue: what zod found, said in the words of the catalogue and placed in the file. */
-export function shapeFaults(issue: Issue, base: KeyPath, given: unknown, places: Readonly<Record<string, string>>): readonly Fault[] {
+export function shapeFaults(issue: Issue, base: KeyPath, given: unknown, places: Readonly<Record<string, string>>, knownKeys = accountKeys): readonly Fault[] {
   const path = [...base, ...issue.path.map((part) => (typeof part === 'number' ? part : String(part)))]
   if (issue.code === 'unrecognized_keys') {
     const known = knownKeys[path.map((part, index) => (index > 0 && (typeof part === 'number' || index === 1) ? '*' : part)).join('.')] ?? ['files']

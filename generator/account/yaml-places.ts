@@ -12,10 +12,14 @@ export interface PlacedYaml {
   readonly faults: readonly Fault[]
 }
 
-const file = 'account.yaml'
+const accountFile = 'account.yaml'
 
-/** Read YAML and remember where everything stands; what only YAML's cleverer parts can say is a fault. */
-export function readPlacedYaml(text: string): PlacedYaml {
+/**
+ * Read YAML and remember where everything stands; what only YAML's cleverer parts can say is a fault.
+ *
+ * @param file - what places call it
+ */
+export function readPlacedYaml(text: string, file = accountFile): PlacedYaml {
   const lines = new LineCounter()
   const document = parseDocument(text, { lineCounter: lines, uniqueKeys: true, stringKeys: true, merge: false, version: '1.2', schema: 'core' })
   const placeAt = (offset: number, path: string): string => {
@@ -40,7 +44,7 @@ export function placeOf(places: Readonly<Record<string, string>>, path: KeyPath)
     const place = Object.hasOwn(places, dotted(path.slice(0, length))) ? places[dotted(path.slice(0, length))] : undefined
     if (place !== undefined) return length === path.length ? place : `${place.split(' ')[0]} ${dotted(path)}`
   }
-  return path.length === 0 ? file : `${file} ${dotted(path)}`
+  return path.length === 0 ? accountFile : `${accountFile} ${dotted(path)}`
 }
 
 type PlaceAt = (offset: number, path: string) => string

@@ -4,6 +4,7 @@ import { runBuild, type BuildFlags } from './build-command.ts'
 import { runCheck, type CheckFlags } from './check-command.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
 import { createSpeaker, type Streams } from './speaker.ts'
+import { runStart, type StartFlags } from './start-command.ts'
 
 /**
  * Parse the arguments and run the command they name.
@@ -39,6 +40,11 @@ function describe(streams: Streams, done: (code: ExitCode) => void): Command {
     .version(program.version)
     .exitOverride()
     .configureOutput({ writeOut: (text) => streams.out.write(text), writeErr: (text) => streams.err.write(text) })
+
+  quietly(tareline.command('start').argument('<folder>', 'folder of the new account: absent or empty'))
+    .description('lay out a new account with a commented account.yaml, and check it at once')
+    .option('--from <file>', 'file of mentions (.csv, .ndjson, .parquet, ...): propose which of its columns is what, and copy it into the account')
+    .action(async (folder: string, flags: StartFlags) => { done(await runStart(program, folder, flags, createSpeaker(flags, streams))) })
 
   quietly(tareline.command('check').argument('<account>', 'folder with an account.yaml'))
     .description('read the account file, every input and the template; print the accounting of mentions; fit nothing')

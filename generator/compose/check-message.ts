@@ -17,7 +17,11 @@ export function checkMessage(message: string, scope: TypeScope, context: Pick<Ch
   if (!sentence && context.words.argumentsOf(message).length > 0) {
     reporter.report(at, 'sentence-missing', `message "${message}" without a sentence`, `its arguments ${context.words.argumentsOf(message).join(', ')}`, 'Declare them in sentences.yaml.')
   }
-  for (const argument of Object.values(sentence?.arguments ?? {})) checkArgument(argument, scope, at, reporter)
+  for (const argument of Object.values(sentence?.arguments ?? {})) {
+    // an account's own sentence is mended where it is declared, the house's can only be used elsewhere
+    if (sentence?.place === undefined) checkArgument(argument, scope, at, reporter)
+    else checkArgument(argument, scope, argument, reporter.of(sentence.place))
+  }
 }
 
 function checkArgument(argument: Argument, scope: TypeScope, at: Placed | undefined, reporter: Reporter): void {

@@ -13,7 +13,8 @@ export function checkTree(tree: Root, place: string, scope: TypeScope, context: 
   return faults
 }
 
-function checkNodes(nodes: readonly RootContent[], scope: TypeScope, context: CheckContext, reporter: Reporter): void {
+/** Check nodes that stand beside each other. */
+export function checkNodes(nodes: readonly RootContent[], scope: TypeScope, context: CheckContext, reporter: Reporter): void {
   for (const node of nodes) checkNode(node, scope, context, reporter)
 }
 
@@ -22,19 +23,28 @@ function checkNode(node: RootContent, scope: TypeScope, context: CheckContext, r
     checkNodes(node.children, checkDirective(node, scope, context, reporter), context, reporter)
     return
   }
-  if (node.type === 'html') reporter.report(node, 'html-in-template', 'raw HTML', 'Markdown and directives', 'Remove it; a block like :::note gives a place in the design.')
-  if (node.type === 'image' || node.type === 'imageReference') reporter.report(node, 'image-in-template', 'a picture', 'charts only', 'Remove it: a review holds no picture from elsewhere.')
-  if (node.type === 'link' || node.type === 'definition') checkAddress(node, context, reporter)
+  checkProse(node, context, reporter)
   if ('children' in node) checkNodes(node.children, scope, context, reporter)
 }
+
+/** What Markdown can say and a review can't. */
+function checkProse(node: RootContent, context: CheckContext, reporter: Reporter): void {
+  if (node.type === 'html') reporter.report(node, 'html-in-template', 'raw HTML', 'Markdown and directives', 'Remove it; a block like :::note gives a place in the design.')
+  if (node.type === 'image' || node.type === 'imageReference') reporter.report(node, 'image-in-template', 'a picture', 'charts only', 'Remove it: a review holds no picture from elsewhere; figures are drawn by ::chart.')
+  if (node.type === 'link' || node.type === 'definition') checkAddress(node, context, reporter)
+  if (node.type === 'footnoteDefinition') reporter.fault(node, 'footnote-in-template', {})
+  if (node.type === 'heading' && node.depth > deepestHeading) reporter.fault(node, 'heading-deep', { depth: node.depth })
+}
+
+const deepestHeading = 4
 
 function checkAddress(node: RootContent & { readonly url: string }, context: CheckContext, reporter: Reporter): void {
   const { url } = node
   if (url.startsWith('#')) {
     const anchor = url.slice(1)
     if (!context.anchors.has(anchor)) reporter.report(node, 'anchor-unknown', `anchor "${anchor}"`, 'the message of a heading or the name of a section', nearest(anchor, [...context.anchors]))
-  } else if (!/^(https:\/\/|mailto:)/.test(url)) {
-    reporter.report(node, 'address-unfit', `address "${url}"`, 'https:, mailto: or a place in the document', 'Give a whole https address.')
+  } else if (!/^(https?:\/\/|mailto:)/i.test(url)) {
+    reporter.report(node, 'address-unfit', `address "${url}"`, 'https:, http:, mailto: or a place in the document', 'Give a whole https address.')
   }
 }
 
@@ -42,6 +52,10 @@ function checkDirective(node: DirectiveNode, scope: TypeScope, context: CheckCon
   const directive = directiveOf(node)
   if (!directive) {
     reporter.report(node, 'directive-unknown', `directive "${node.name}"`, `a ${typeWords[node.type]}`, nearest(node.name, namesOf(node.type)))
+    return scope
+  }
+  if (context.inNote && node.name !== 'figure') {
+    reporter.fault(node, 'note-directive', { name: node.name })
     return scope
   }
   return checkAttributes(node, directive, reporter) ? directive.check({ node, attributes: attributesOf(node) }, scope, context, reporter) : scope

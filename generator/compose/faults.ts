@@ -1,4 +1,5 @@
 import { closest, distance } from 'fastest-levenshtein'
+import { faultOf, type FaultCode } from '../faults/catalogue.ts'
 import type { Fault } from '../faults/fault.ts'
 
 /** Anything that may know where in its file it stands: a node of a tree, an entry of sentences.yaml. */
@@ -8,19 +9,34 @@ export interface Placed {
 
 /** Collects what is wrong in one file; all faults of a template are told at once. */
 export interface Reporter {
-  readonly place: string
   readonly report: (at: Placed | undefined, code: string, unexpected: string, expected: string, mend: string) => void
+  /** Like `report`, in the words of the catalogue of faults. */
+  readonly fault: <C extends FaultCode>(at: Placed | undefined, code: C, details: Parameters<typeof faultOf<C>>[2]) => void
+  /** Where a node stands, as faults name it. */
+  readonly placeOf: (at: Placed | undefined) => string
+  readonly add: (fault: Fault) => void
+  /** A reporter of another file, into the same list. */
+  readonly of: (place: string) => Reporter
+  /** A reporter that tells everything at one place of this file, whatever file it was found in. */
+  readonly at: (placed: Placed) => Reporter
 }
 
 /** A reporter that adds to `faults`, naming file, line and column. */
 export function createReporter(place: string, faults: Fault[]): Reporter {
+  return reporterOf(faults, (at) => {
+    const start = at?.position?.start
+    return start ? `${place}:${start.line}:${start.column}` : place
+  })
+}
+
+function reporterOf(faults: Fault[], placeOf: (at: Placed | undefined) => string): Reporter {
   return {
-    place,
-    report: (at, code, unexpected, expected, mend) => {
-      const start = at?.position?.start
-      const where = start ? `${place}:${start.line}:${start.column}` : place
-      faults.push({ code, place: where, message: `Unexpected ${unexpected}, expected ${expected}`, mend })
-    },
+    placeOf,
+    add: (fault) => void faults.push(fault),
+    report: (at, code, unexpected, expected, mend) => void faults.push({ code, place: placeOf(at), message: `Unexpected ${unexpected}, expected ${expected}`, mend }),
+    fault: (at, code, details) => void faults.push(faultOf(code, placeOf(at), details)),
+    of: (place) => createReporter(place, faults),
+    at: (placed) => reporterOf(faults, () => placeOf(placed)),
   }
 }
 

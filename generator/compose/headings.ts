@@ -1,7 +1,9 @@
 import type { Element, ElementContent, Root as HtmlRoot } from 'hast'
 import { h } from 'hastscript'
 import { toString } from 'hast-util-to-string'
-import type { Heading as MarkdownHeading, Root } from 'mdast'
+import type { Heading as MarkdownHeading, Root, RootContent } from 'mdast'
+import rehypeSlug from 'rehype-slug'
+import { unified } from 'unified'
 import { visit } from 'unist-util-visit'
 import type { Heading } from './document.ts'
 
@@ -11,14 +13,23 @@ export function messageOfHeading(heading: MarkdownHeading): string | undefined {
   return say?.type === 'textDirective' ? say.attributes?.['message'] ?? undefined : undefined
 }
 
-/** Ids of the headings of a template file. */
+/** Ids of the headings of a template file: the name of the message, or what becomes of plain words. */
 export function anchorsOf(tree: Root): readonly string[] {
   const anchors: string[] = []
-  visit(tree, 'heading', (heading) => {
-    const message = messageOfHeading(heading)
-    if (message !== undefined) anchors.push(message)
-  })
+  visit(tree, 'heading', (heading) => void anchors.push(messageOfHeading(heading) ?? slugOf(plainText(heading))))
   return anchors
+}
+
+/** The text of a node without its marks. */
+export function plainText(node: RootContent): string {
+  if ('value' in node) return node.value
+  return 'children' in node ? node.children.map(plainText).join('') : ''
+}
+
+function slugOf(words: string): string {
+  const tree: HtmlRoot = { type: 'root', children: [h('h2', words)] }
+  unified().use(rehypeSlug).runSync(tree)
+  return headingsOf(tree)[0]?.id ?? ''
 }
 
 /** The headings of a finished tree, in order. */

@@ -17,7 +17,7 @@ const schema: Schema = {
     td: ['align'],
     ol: ['start'],
   },
-  protocols: { href: ['https', 'mailto'] },
+  protocols: { href: ['https', 'http', 'mailto'] },
   clobber: [],
   clobberPrefix: '',
   strip: ['script', 'style'],

@@ -2,7 +2,7 @@ import { LineCounter, isAlias, isMap, isScalar, parseDocument, visit } from 'yam
 import type { Document, ParsedNode } from 'yaml'
 import type { FormName } from '../words/forms.ts'
 import { formNames, isFormName, write } from '../words/forms.ts'
-import type { WordArguments, Words } from '../words/words.ts'
+import type { OwnWords, WordArguments, Words } from '../words/words.ts'
 import { nearest } from './faults.ts'
 import type { Reporter } from './faults.ts'
 import { lookUp, parsePath } from './path.ts'
@@ -23,6 +23,8 @@ export type Sentences = ReadonlyMap<string, Sentence>
 export interface Sentence {
   readonly arguments: Readonly<Record<string, Argument>>
   readonly position: Position
+  /** Its file, where that is the account's own. */
+  readonly place?: string | undefined
 }
 
 export interface Argument {
@@ -42,6 +44,17 @@ interface Position { readonly start: { readonly line: number, readonly column: n
 
 /** Read `sentences.yaml`; what can't be read is reported and left out. */
 export function parseSentences(text: string, reporter: Reporter): Sentences {
+  return readSentences(text, (node) => node, reporter)
+}
+
+/** The sentences of an account's own words: messages that declare `arguments`. */
+export function parseOwnSentences({ place, text, added }: OwnWords, reporter: Reporter): Sentences {
+  const declaring = readSentences(text, (node, anchors) => entries(node, anchors).find(([key]) => key === 'arguments')?.[1] ?? null, reporter)
+  return new Map([...declaring].filter(([message]) => added.includes(message)).map(([message, sentence]) => [message, { ...sentence, place }]))
+}
+
+/** @param argumentsIn - the part of an entry that holds its arguments */
+function readSentences(text: string, argumentsIn: (node: ParsedNode | null, anchors: Anchors) => ParsedNode | null, reporter: Reporter): Sentences {
   const lines = new LineCounter()
   const document = parseDocument(text, { lineCounter: lines })
   const [place, anchors] = [placeIn(lines), anchorsIn(document)]
@@ -51,7 +64,7 @@ export function parseSentences(text: string, reporter: Reporter): Sentences {
   }
   return new Map(entries(document.contents, anchors).map(([message, node]) => {
     const position = place(node)
-    const found = entries(node, anchors).map(([name, spec]) => [name, readArgument(name, asStrings(spec, anchors), place(spec), reporter)] as const)
+    const found = entries(argumentsIn(node, anchors), anchors).map(([name, spec]) => [name, readArgument(name, asStrings(spec, anchors), place(spec), reporter)] as const)
     return [message, { position, arguments: Object.fromEntries(found.filter((entry): entry is [string, Argument] => entry[1] !== undefined)) }]
   }))
 }

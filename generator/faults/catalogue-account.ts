@@ -44,7 +44,7 @@ export const expectations = {
 export const accountWordings = {
   'account-missing': (_: object): Wording => ({
     unexpected: 'absence of account.yaml', expected: 'a folder with an account.yaml',
-    mend: 'Name the folder of an account; the README shows how to begin one.',
+    mend: 'Name the folder of an account; `tareline start` begins one.',
   }),
   'account-unreadable': (details: { readonly reason: string }): Wording => ({
     unexpected: `text that is no UTF-8 YAML (${details.reason})`, expected: 'YAML in UTF-8',
@@ -68,7 +68,7 @@ export const accountWordings = {
   }),
   'account-key-absent': (details: { readonly key: string }): Wording => ({
     unexpected: `absence of \`${details.key}\``, expected: 'it to be given',
-    mend: `Add \`${details.key}:\` to account.yaml.`,
+    mend: `Add \`${details.key}:\` there.`,
   }),
   'account-value': (details: { readonly actual: string; readonly expected: string }): Wording => ({
     unexpected: details.actual, expected: details.expected, mend: `Give ${details.expected}.`,

@@ -1,11 +1,16 @@
 import { accountWordings } from './catalogue-account.ts'
+import { archiveWordings } from './catalogue-archive.ts'
 import { buildWordings } from './catalogue-build.ts'
 import { inputWordings } from './catalogue-inputs.ts'
 import { intakeWordings } from './catalogue-intake.ts'
+import { startWordings } from './catalogue-start.ts'
+import { templateWordings } from './catalogue-template.ts'
+import { themeWordings } from './catalogue-theme.ts'
+import { wordWordings } from './catalogue-words.ts'
 import type { Fault } from './fault.ts'
 import type { Wording } from './wording.ts'
 
-const wordings = { ...accountWordings, ...intakeWordings, ...inputWordings, ...buildWordings }
+const wordings = { ...accountWordings, ...intakeWordings, ...inputWordings, ...buildWordings, ...archiveWordings, ...templateWordings, ...themeWordings, ...wordWordings, ...startWordings }
 
 type Wordings = typeof wordings
 export type FaultCode = keyof Wordings

@@ -1,15 +1,29 @@
 import { createHash } from 'node:crypto'
-import { PDFArray, PDFDict, PDFDocument, PDFHexString, PDFName, PDFString, ParseSpeeds } from '@cantoo/pdf-lib'
+import { PDFArray, PDFDocument, PDFHexString, ParseSpeeds } from '@cantoo/pdf-lib'
+import { attachFiles, type Attachment } from './attach-files.ts'
+import { declareArchive } from './declare-archive.ts'
 import { markArtifacts } from './mark-artifacts.ts'
+import { mendStructure } from './mend-structure.ts'
+import { plainText } from './xmp-packet.ts'
 
 /** What the file says of itself. */
 export interface PdfFacts {
   readonly title: string
   readonly author: string
-  /** ISO date of the review, e.g. the last day of its period: both dates of the file. */
+  /** ISO date of the review, e.g. the last day of its period: every date in the file. */
   readonly date: string
   /** BCP 47, e.g. `en-GB`. */
   readonly language: string
+}
+
+/** What a file is made of. */
+export interface Finishing {
+  /** What was printed. */
+  readonly html: string
+  readonly facts: PdfFacts
+  readonly attachments: readonly Attachment[]
+  /** Text of the heading that each target of a link inside the document stands for, by id. */
+  readonly names: ReadonlyMap<string, string>
 }
 
 /** Read a print, its dates untouched, without pausing: nothing else waits in this process. */
@@ -17,60 +31,39 @@ export async function readPdf(pdf: Uint8Array): Promise<PDFDocument> {
   return PDFDocument.load(pdf, { updateMetadata: false, parseSpeed: ParseSpeeds.Fastest })
 }
 
+const creator = 'Tareline'
+
 /**
- * Finish a print: dates and file identifier from the review instead of the clock, title, author and language, the running head marked as
- * no part of the text, a description on every link, and no Figure but the pictures.
+ * Finish a print as a PDF/A-3b tagged for PDF/UA-1: dates and file identifier from the review instead of the clock, title, author and language,
+ * decoration marked as no part of the text, the structure mended, files attached.
  *
  * @param document - a tagged print by Chromium, as `readPdf` reads it; changed in place
- * @param html - what was printed: the file's identifier is made from it and the facts
  * @returns the same bytes for the same input
  */
-export async function finishPdf(document: PDFDocument, html: string, facts: PdfFacts): Promise<Uint8Array> {
+export async function finishPdf(document: PDFDocument, { html, facts, attachments, names }: Finishing): Promise<Uint8Array> {
   const date = new Date(`${facts.date}T00:00:00Z`)
-  document.setTitle(facts.title, { showInWindowTitleBar: true })
-  document.setAuthor(facts.author)
+  const [title, author] = [plainText(facts.title), plainText(facts.author)]
+  document.setTitle(title, { showInWindowTitleBar: true })
+  document.setAuthor(author)
   document.setLanguage(facts.language)
-  document.setCreator('Tareline')
+  document.setCreator(creator)
   document.setCreationDate(date)
   document.setModificationDate(date)
-  for (const page of document.getPages()) markArtifacts(document.context, page.node)
-  describeLinks(document)
-  keepPictures(document)
-  const identifier = PDFHexString.of(createHash('md5').update(html).update(JSON.stringify(facts)).digest('hex'))
-  const identifiers = PDFArray.withContext(document.context)
-  identifiers.push(identifier)
-  identifiers.push(identifier)
-  document.context.trailerInfo.ID = identifiers
+  for (const page of document.getPages()) markArtifacts(document, page)
+  mendStructure(document, names)
+  const ordered = [...attachments].sort((a, b) => (a.name < b.name ? -1 : 1))
+  attachFiles(document, ordered, date)
+  declareArchive(document, { title, author, language: facts.language, date: `${facts.date}T00:00:00Z`, creator, producer: document.getProducer() ?? '' })
+  identify(document, createHash('md5').update(html).update(JSON.stringify(facts)), ordered)
   return document.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity })
 }
 
-/**
- * PDF/UA-1, 7.3: a Figure has a text alternative. Chromium makes one of the picture, which has it, and one of the frame with the caption around it,
- * which has none: the frame becomes a plain division.
- */
-function keepPictures(document: PDFDocument): void {
-  for (const [, object] of document.context.enumerateIndirectObjects()) {
-    if (!(object instanceof PDFDict) || object.get(PDFName.of('S')) !== PDFName.of('Figure')) continue
-    if (!object.has(PDFName.of('Alt'))) object.set(PDFName.of('S'), PDFName.of('Div'))
-  }
-}
-
-/** PDF/UA-1, 7.18.5: a link says where it leads; Chromium leaves it out. */
-function describeLinks(document: PDFDocument): void {
-  for (const page of document.getPages()) {
-    const annotations = page.node.Annots()
-    for (let index = 0; index < (annotations?.size() ?? 0); index += 1) {
-      const annotation = annotations?.lookup(index, PDFDict)
-      if (annotation === undefined || annotation.get(PDFName.of('Subtype')) !== PDFName.of('Link')) continue
-      annotation.set(PDFName.of('Contents'), PDFHexString.fromText(destination(annotation)))
-    }
-  }
-}
-
-function destination(annotation: PDFDict): string {
-  const action = annotation.lookupMaybe(PDFName.of('A'), PDFDict)
-  const address = action?.lookup(PDFName.of('URI'))
-  if (address instanceof PDFString || address instanceof PDFHexString) return address.decodeText()
-  const target = annotation.lookup(PDFName.of('Dest'))
-  return target instanceof PDFName ? target.decodeText() : ''
+/** The file's two identifiers: the same for the same contents. */
+function identify({ context }: PDFDocument, hash: ReturnType<typeof createHash>, attachments: readonly Attachment[]): void {
+  for (const { bytes, ...told } of attachments) hash.update(JSON.stringify(told)).update(bytes)
+  const identifier = PDFHexString.of(hash.digest('hex'))
+  const identifiers = PDFArray.withContext(context)
+  identifiers.push(identifier)
+  identifiers.push(identifier)
+  context.trailerInfo.ID = identifiers
 }

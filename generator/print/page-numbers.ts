@@ -15,15 +15,47 @@ export function pagesOfTargets(document: PDFDocument): ReadonlyMap<string, numbe
     const target = document.context.lookup(entry)
     const first = target instanceof PDFArray ? target.get(0) : undefined
     const number = first instanceof PDFRef ? numbers.get(first.toString()) : undefined
-    if (number !== undefined) pages.set(name.decodeText(), number)
+    if (number !== undefined) pages.set(plainName(name.decodeText()), number)
   }
   return pages
+}
+
+/** The name of a target: Chromium writes what is not ASCII in percent. */
+export function plainName(name: string): string {
+  try {
+    return decodeURIComponent(name)
+  } catch {
+    return name
+  }
 }
 
 /** The part of a page's element that is touched here: the function below runs inside the browser. */
 interface Place {
   textContent: string | null
   getAttribute(name: string): string | null
+}
+
+/** A place, and what may stand in it. */
+interface Target extends Place {
+  readonly tagName: string
+  readonly ownerDocument: { getElementById(id: string): Target | null }
+  querySelector(selector: string): Target | null
+}
+
+/**
+ * What the targets of links inside the document are called: by their heading, or how they begin.
+ *
+ * @returns id -> name; the target of a link to nowhere is missing
+ */
+export async function namesOfTargets(page: Page): Promise<ReadonlyMap<string, string>> {
+  const written = await page.$$eval('a[href^="#"]', (links: readonly Place[]) => links.map((link) => (link.getAttribute('href') ?? '').slice(1)))
+  const ids = [...new Set(written.map(plainName))]
+  return new Map(await page.$eval('body', (body: Target, wanted) => wanted.flatMap((id): (readonly [string, string])[] => {
+    const target = body.ownerDocument.getElementById(id)
+    if (target === null) return []
+    const heading = /^H[1-6]$/.test(target.tagName) ? target : target.querySelector('h1, h2, h3, h4, h5, h6, caption, dt') ?? target
+    return [[id, (heading.textContent ?? '').replace(/\s+/g, ' ').trim().slice(0, 120)]]
+  }), ids))
 }
 
 /**

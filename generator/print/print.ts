@@ -1,25 +1,28 @@
 import type { PDFDocument } from '@cantoo/pdf-lib'
 import type { Browser, Page } from 'puppeteer'
+import type { Attachment } from './attach-files.ts'
 import { finishPdf, type PdfFacts, readPdf } from './finish-pdf.ts'
 import { isolatedPage } from './isolate-page.ts'
-import { fillPageNumbers, pagesOfTargets } from './page-numbers.ts'
+import { fillPageNumbers, namesOfTargets, pagesOfTargets } from './page-numbers.ts'
 
 /**
- * Print a review: A4, tagged, bookmarked, with page numbers in its contents.
- * The same HTML and facts give the same bytes from the same browser.
+ * Print a review for keeping: PDF/A-3b, A4, tagged, bookmarked, with page numbers in its contents and files attached.
+ * The same HTML, facts and files give the same bytes from the same browser.
  *
  * @param html - one self-contained file, as `render` makes it
  * @param browser - from `openBrowser`; a fresh context is used and closed
  * @param facts - what the file says of itself; the date comes from the review, never from the clock
+ * @param attachments - in any order
  */
-export async function print(html: string, browser: Browser, facts: PdfFacts): Promise<Uint8Array> {
+export async function print(html: string, browser: Browser, facts: PdfFacts, attachments: readonly Attachment[]): Promise<Uint8Array> {
   const { page, refused } = await isolatedPage(browser)
   try {
     await page.setContent(html, { waitUntil: 'load' })
     await page.evaluate('document.fonts.ready.then(() => undefined)')
+    const names = await namesOfTargets(page)
     const pdf = await printSettled(page)
     if (refused.length > 0) throw new Error(`Unexpected requests by the review, expected none: ${refused.join(', ')}`)
-    return await finishPdf(pdf, html, facts)
+    return await finishPdf(pdf, { html, facts, attachments, names })
   } finally {
     await page.browserContext().close()
   }

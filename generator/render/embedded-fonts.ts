@@ -1,11 +1,14 @@
-import type { Face, Theme } from './theme.ts'
+import type { Face, Theme } from '../theme/theme.ts'
+
+/** RFC 8081. */
+const mediaTypes = { woff2: 'woff2', truetype: 'ttf', opentype: 'otf' } as const satisfies Readonly<Record<Face['form'], string>>
 
 /** `@font-face` rules with the faces inside, only those that the text needs. */
 export function fontFaces(text: string, theme: Theme): string {
   const characters = new Set([...text].map((character) => character.codePointAt(0) ?? 0))
   return theme.faces.filter((face) => needed(face, characters)).map((face) => (
     `@font-face{font-family:"${theme.chart.font}";font-style:normal;font-weight:${face.weight};font-display:block;` +
-    `src:url(data:font/woff2;base64,${Buffer.from(face.woff2).toString('base64')}) format("woff2");unicode-range:${face.range}}`
+    `src:url(data:font/${mediaTypes[face.form]};base64,${Buffer.from(face.bytes).toString('base64')}) format("${face.form}");unicode-range:${face.range}}`
   )).join('\n')
 }
 

@@ -2,7 +2,7 @@ import type { Element, Properties, Root } from 'hast'
 import { h } from 'hastscript'
 import { visit } from 'unist-util-visit'
 import { fitsPortrait } from './table-width.ts'
-import type { AdvanceTable } from './theme.ts'
+import type { Theme } from '../theme/theme.ts'
 
 const fewColumns = 4
 const fewRows = 16
@@ -22,12 +22,12 @@ export interface DrawingPlace {
  *
  * @returns a new tree, and the places to be drawn in, in order
  */
-export function prepareTree(tree: Root, advances: AdvanceTable): { readonly tree: Root, readonly places: readonly DrawingPlace[] } {
+export function prepareTree(tree: Root, theme: Pick<Theme, 'advances' | 'paper'>): { readonly tree: Root, readonly places: readonly DrawingPlace[] } {
   const prepared = structuredClone(tree)
   const places: DrawingPlace[] = []
   visit(prepared, 'element', (element) => {
     if (typeof element.properties.dataChart === 'string') places.push(frameDrawing(element, element.properties.dataChart, places))
-    if (element.tagName === 'div' && hasClass(element, 'table')) markTable(element, advances)
+    if (element.tagName === 'div' && hasClass(element, 'table')) markTable(element, theme)
     if (element.tagName === 'a') awaitPageNumber(element)
   })
   return { tree: prepared, places }
@@ -44,17 +44,17 @@ function frameDrawing(figure: Element, chart: string, before: readonly DrawingPl
 }
 
 /** What the style sheet cannot count: columns that need a landscape page, so few that they stand closer, so few rows that no page break is needed. */
-function classesOf(region: Element, advances: AdvanceTable): readonly string[] {
+function classesOf(region: Element, theme: Pick<Theme, 'advances' | 'paper'>): readonly string[] {
   let [columns, rows] = [0, 0]
   visit(region, 'element', (element) => {
     if (element.tagName === 'th' && element.properties.scope === 'col') columns += 1
     if (element.tagName === 'tr') rows += 1
   })
-  return [...(fitsPortrait(region, advances) ? [] : ['wide']), ...(columns <= fewColumns ? ['few-columns'] : []), ...(rows <= fewRows ? ['few-rows'] : [])]
+  return [...(fitsPortrait(region, theme.advances, theme.paper) ? [] : ['wide']), ...(columns <= fewColumns ? ['few-columns'] : []), ...(rows <= fewRows ? ['few-rows'] : [])]
 }
 
-function markTable(region: Element, advances: AdvanceTable): void {
-  region.properties = { ...without(region.properties, ['dataTable']), className: ['table', ...classesOf(region, advances)] }
+function markTable(region: Element, theme: Pick<Theme, 'advances' | 'paper'>): void {
+  region.properties = { ...without(region.properties, ['dataTable']), className: ['table', ...classesOf(region, theme)] }
 }
 
 function awaitPageNumber(link: Element): void {

@@ -5,13 +5,14 @@ import rehypeStringify from 'rehype-stringify'
 import { unified } from 'unified'
 import type { Document } from '../compose/document.ts'
 import type { Table } from '../tables/table.ts'
+import type { Theme } from '../theme/theme.ts'
 import type { Words } from '../words/words.ts'
 import { drawChart } from './charts/draw-chart.ts'
 import type { ChartSpec } from './charts/chart-spec.ts'
 import { fontFaces } from './embedded-fonts.ts'
+import { frontOf, type Imprint } from './imprint.ts'
+import { pageBoxes } from './page-boxes.ts'
 import { type DrawingPlace, prepareTree } from './prepare-tree.ts'
-import { runningHead } from './running-head.ts'
-import type { Theme } from './theme.ts'
 
 export interface Rendering {
   readonly tables: readonly Table[]
@@ -19,6 +20,7 @@ export interface Rendering {
   readonly charts: ReadonlyMap<string, ChartSpec>
   readonly words: Words
   readonly theme: Theme
+  readonly imprint: Imprint
 }
 
 /**
@@ -32,7 +34,7 @@ export interface Rendering {
  * @throws {Error} a chart that is not among `charts`, or that cannot be drawn as specified
  */
 export async function render(document: Document, rendering: Rendering): Promise<string> {
-  const { tree, places } = prepareTree(document.tree, rendering.theme.advances)
+  const { tree, places } = prepareTree(document.tree, rendering.theme)
   const drawings = new Map(await inTurn(places, async (place) => [place.id, await bothSizes(place, rendering)] as const))
   const body = toHtml(tree).replace(/ data-drawing="([^"]+)">/g, (_whole, id: string) => `>${drawings.get(id) ?? ''}`)
   return page(document, body, rendering)
@@ -62,9 +64,14 @@ async function inTurn<T, R>(items: readonly T[], work: (item: T) => Promise<R>):
   return results
 }
 
-function page({ title, lang }: Document, body: string, { words, theme }: Rendering): string {
-  const style = [fontFaces(title + body, theme), theme.css, runningHead(title, words)].join('\n')
-  const policy = `default-src 'none'; style-src 'sha256-${createHash('sha256').update(style).digest('base64')}'; font-src data:; base-uri 'none'; form-action 'none'`
+function page({ title, lang }: Document, body: string, { words, theme, imprint }: Rendering): string {
+  const front = frontOf(theme, imprint, words).map((element) => `${toHtml({ type: 'root', children: [element] })}\n`).join('')
+  const boxes = pageBoxes(theme, words, title, imprint)
+  const style = [fontFaces(title + JSON.stringify([imprint, theme.running]) + front + body, theme), theme.css, boxes].join('\n')
+  const policy = [
+    `default-src 'none'; style-src 'sha256-${createHash('sha256').update(style).digest('base64')}'; font-src data:;`,
+    ...(theme.logo === null ? [] : ['img-src data:;']), "base-uri 'none'; form-action 'none'",
+  ].join(' ')
   const head = toHtml({ type: 'root', children: [
     h('meta', { charSet: 'utf-8' }),
     h('meta', { httpEquiv: 'Content-Security-Policy', content: policy }),
@@ -74,7 +81,7 @@ function page({ title, lang }: Document, body: string, { words, theme }: Renderi
   ] })
   const skip = toHtml({ type: 'root', children: [h('a.skip', { href: '#review' }, words.say('skip-to-review'))] })
   const [opening] = toHtml({ type: 'root', children: [h('html', { lang })] }).split('</html>')
-  return `<!doctype html>\n${opening}<head>${head}<style>${style}</style></head>\n<body>${skip}\n<main id="review" tabindex="-1">\n${body}\n</main></body></html>\n`
+  return `<!doctype html>\n${opening}<head>${head}<style>${style}</style></head>\n<body>${skip}\n<main id="review" tabindex="-1">\n${front}${body}\n</main></body></html>\n`
 }
 
 function toHtml(tree: Root): string {

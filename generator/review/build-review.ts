@@ -9,8 +9,10 @@ import { readSmallInputs } from '../inputs/read-small-inputs.ts'
 import { readIntake } from '../intake/read-intake.ts'
 import { print } from '../print/print.ts'
 import type { Program } from '../program/program.ts'
+import { imprintOf } from '../render/imprint.ts'
 import { render } from '../render/render.ts'
 import { tablesOf } from '../tables/tables-of.ts'
+import { attachmentsOf, dataFiles } from './data-files.ts'
 import { loadHouse, type House } from './house.ts'
 import { makeFindings, requireSteps } from './make-findings.ts'
 import type { Progress } from './stages.ts'
@@ -79,10 +81,11 @@ async function makeContents(
   progress.stage('document')
   const figures = tablesOf(findings)
   const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })
-  const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme })
+  const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme, imprint: imprintOf(findings, house.words) })
+  const data = dataFiles(findings, figures)
   if (browser !== null) progress.stage('print')
   const pdf = browser === null ? null : await print(html, await browser, {
     title: document.title, author: account.preparedBy ?? account.brand, date: findings.period.end, language: document.lang,
-  })
-  return { findings, tables: figures, html, pdf }
+  }, attachmentsOf(data, house.words))
+  return { findings, data, html, pdf }
 }

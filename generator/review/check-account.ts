@@ -2,7 +2,7 @@ import { blankFindings } from '../../model/findings/blank.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { readAccount } from '../account/read-account.ts'
-import { compose } from '../compose/compose.ts'
+import { requireSound } from '../compose/compose.ts'
 import { InputFault } from '../faults/fault.ts'
 import type { RawInputs } from '../inputs/raw-inputs.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
@@ -20,7 +20,7 @@ export interface Checked {
 }
 
 /**
- * Read the account file, every input and the template, as a build would, and fit nothing.
+ * Read the account file, every input, the template and the notes of all periods, as a build would, and fit nothing.
  *
  * @param rejects - folder for the rows that could not be read; nothing is written where it is absent
  * @throws {InputFault} with what is wrong
@@ -28,7 +28,7 @@ export interface Checked {
 export async function checkAccount(program: Program, folder: string, rejects: string | undefined, progress: Progress): Promise<Checked> {
   const account = await readAccount(folder)
   const house = await loadHouse(program, account)
-  compose({ template: house.template, findings: blankFindings, tables: tablesOf(blankFindings), charts: [...house.charts.keys()], words: house.words })
+  requireSound({ template: house.template, findings: blankFindings, tables: tablesOf(blankFindings), charts: [...house.charts.keys()], words: house.words })
   progress.stage('intake')
   const [inputs, tables] = await Promise.allSettled([readSmallInputs(account), readMentions(account, rejects, progress)])
   if (inputs.status === 'fulfilled' && tables.status === 'fulfilled') return { tables: tables.value, inputs: inputs.value }

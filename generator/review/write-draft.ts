@@ -3,15 +3,15 @@ import { join } from 'node:path'
 import type { Findings } from '../../model/findings/schema.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, MachineFault } from '../faults/fault.ts'
-import { toCsv } from '../tables/csv.ts'
-import type { Table } from '../tables/table.ts'
+import type { DataFile } from './data-files.ts'
 
 /** Everything a draft folder may hold: a folder with anything else in it is somebody's, and is left alone. */
 const ours = new Set(['review.html', 'review.pdf', 'findings.json', 'tables', 'rejects'])
 
 export interface DraftContents {
   readonly findings: Findings
-  readonly tables: readonly Table[]
+  /** `findings.json` and the tables. */
+  readonly data: readonly DataFile[]
   readonly html: string
   /** null with `--no-pdf`. */
   readonly pdf: Uint8Array | null
@@ -99,12 +99,11 @@ export async function requireDraft(folder: string): Promise<void> {
   if (foreign !== undefined) throw new InputFault([faultOf('out-not-a-draft', folder, { entry: foreign })])
 }
 
-async function fill(folder: string, { findings, tables, html, pdf }: DraftContents): Promise<void> {
+async function fill(folder: string, { data, html, pdf }: DraftContents): Promise<void> {
   await mkdir(join(folder, 'tables'))
-  await writeFile(join(folder, 'findings.json'), `${JSON.stringify(findings, null, 2)}\n`)
   await writeFile(join(folder, 'review.html'), html)
   if (pdf !== null) await writeFile(join(folder, 'review.pdf'), pdf)
-  for (const table of tables) await writeFile(join(folder, 'tables', `${table.name}.csv`), toCsv(table))
+  for (const { path, bytes } of data) await writeFile(join(folder, path), bytes)
 }
 
 /** The old folder steps aside before the new one takes its name, so that at every moment one of the two is whole. */

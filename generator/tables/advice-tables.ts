@@ -13,8 +13,8 @@ export function hearingTable({ hearing }: Findings): Table {
 /** Every piece of advice in its rank, with the gain that it is ranked by. */
 export function adviceTable({ advice }: Findings): Table {
   return makeTable('advice', {
-    rank: 'count', code: 'text', where: 'text', where_kind: 'text', how_many: 'count', gain: 'number', gain_low: 'number', gain_high: 'number', gain_of: 'text', cost: 'number', gain_per_cost: 'number',
-  }, advice.map(({ code, where, where_kind, how_many, gain, gain_of, cost, gain_per_cost }, at) => (
-    { rank: at + 1, code, where, where_kind, how_many, ...estimateCells('gain', gain), gain_of, cost, gain_per_cost }
+    rank: 'count', code: 'text', where: 'text', where_kind: 'text', how_many: 'count', helps: 'text', gain_share: 'share', gain: 'number', gain_low: 'number', gain_high: 'number', gain_of: 'text', cost: 'number', gain_per_cost: 'number',
+  }, advice.map(({ code, where, where_kind, how_many, helps, gain_share, gain, gain_of, cost, gain_per_cost }, at) => (
+    { rank: at + 1, code, where, where_kind, how_many, helps, gain_share, ...estimateCells('gain', gain), gain_of, cost, gain_per_cost }
   )))
 }

@@ -3,17 +3,17 @@ import { estimateCells, makeTable } from './make-table.ts'
 import type { Table } from './table.ts'
 
 /**
- * Customers beside the authors heard, level by level, those first of whom most are missing. A level is named with its margin where there
+ * Customers beside the authors heard, level by level, those first that are furthest below their share. A level is named with its margin where there
  * are several. Shares of fewer authors than the smallest group are null.
  */
 export function benchmarkTable({ benchmark }: Findings): Table {
   const margins = benchmark?.margins ?? []
   const unreachable = benchmark?.unreachable ?? []
   return makeTable('benchmark', {
-    margin: 'text', level: 'text', label: 'text', customers: 'share', heard: 'share', authors: 'count', gap: 'change', authors_needed: 'count', unreached: 'word',
-  }, margins.flatMap(({ margin, levels }) => [...levels].sort((a, b) => b.needed - a.needed || (a.gap ?? 0) - (b.gap ?? 0)).map((of) => ({
+    margin: 'text', level: 'text', label: 'text', customers: 'share', heard: 'share', authors: 'count', gap: 'change', authors_needed: 'count', authors_needed_jointly: 'count', unreached: 'word',
+  }, margins.flatMap(({ margin, levels }) => [...levels].sort((a, b) => (b.shortfall ?? 0) - (a.shortfall ?? 0) || (a.gap ?? 0) - (b.gap ?? 0)).map((of) => ({
     margin, level: of.level, label: margins.length > 1 ? `${of.level} (${margin})` : of.level, customers: of.customers, heard: of.heard, authors: of.authors, gap: of.gap,
-    authors_needed: of.needed, unreached: unreachable.some((level) => level.margin === margin && level.level === of.level),
+    authors_needed: of.needed, authors_needed_jointly: of.needed_jointly, unreached: unreachable.some((level) => level.margin === margin && level.level === of.level),
   }))))
 }
 
@@ -23,10 +23,10 @@ export function benchmarkMarginsTable({ benchmark }: Findings): Table {
     (benchmark?.margins ?? []).map(({ margin, dissimilarity, authors, all_authors }) => ({ margin, dissimilarity, authors, all_authors })))
 }
 
-/** Change of opinion if the unhappy had become `ratio` times likelier to post. */
+/** What would be left of the change of opinion if one side had become `ratio` times likelier to post; a word marks the row at which nothing is. */
 export function tippingTable({ tipping }: Findings): Table {
-  return makeTable('tipping', { ratio: 'number', tipped_change: 'change', low: 'change', high: 'change' },
-    (tipping?.curve ?? []).map(({ ratio, change }) => ({ ratio, tipped_change: change.mean, low: change.low, high: change.high })))
+  return makeTable('tipping', { ratio: 'number', tipped_change: 'change', low: 'change', high: 'change', tips: 'word' },
+    (tipping?.curve ?? []).map(({ ratio, change }) => ({ ratio, tipped_change: change.mean, low: change.low, high: change.high, tips: ratio === tipping?.ratio.mean })))
 }
 
 /** How often coder and people agree, venue by venue, why a venue is left as coded, and what correcting does to its mean score. */

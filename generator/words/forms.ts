@@ -1,4 +1,4 @@
-import { date, days, period, shortDate } from './dates.ts'
+import { date, days, period, shortDate, when } from './dates.ts'
 import { factorName, levelLabel, partName } from './labels.ts'
 import { measure, measureChange, measureInterval, measureSize, steps } from './measures.ts'
 import { change, count, countRange, interval, number, pValue, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange, tinyNumber } from './numbers.ts'
@@ -74,6 +74,8 @@ export const forms = {
   date: ofString((value, words) => date(value, words.locale)),
   'short-date': ofString((value, words) => shortDate(value, words.locale)),
   period: ofString(period),
+  /** A period as an adverb of time, with its preposition: `in October 2026`. */
+  when: ofString(when),
   /** A stretch of days. */
   days: { from: 'span', write: (value: Parameters<typeof days>[0], words: Words) => days(value, words.locale) } satisfies Form,
   /** Days of a wave's fieldwork. */
@@ -99,6 +101,8 @@ export const forms = {
   'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => shareDirection(from, to) } satisfies Form,
   /** Smallest to largest size in a list of numbers. */
   'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words)),
+  /** The sum of a list of changes: `+0.5`. */
+  'sum-change': ofList((value, words) => change(value.reduce<number>((sum, item) => (typeof item === 'number' ? sum + item : sum), 0), words.locale)),
   /** Smallest to largest of a list of counts: `382 to 417`. */
   'count-range': ofList((value, words) => countRange(value.filter((item) => typeof item === 'number'), words)),
   list: ofList((value, words) => new Intl.ListFormat(words.locale, { style: 'long', type: 'conjunction' }).format(value.map(String))),

@@ -1,3 +1,4 @@
+import { plainSpaces } from './spaces.ts'
 import type { Words } from './words.ts'
 
 /**
@@ -9,7 +10,7 @@ type Style = Pick<Intl.NumberFormatOptions, 'style' | 'signDisplay' | 'minimumFr
 /** A figure in a style of Intl's. */
 export function figure(value: number, locale: string, style: Style): string {
   const parts = new Intl.NumberFormat(locale, { signDisplay: 'negative', ...style }).formatToParts(value)
-  return parts.map((part) => part.type === 'minusSign' ? '\u2212' : part.value).join('')
+  return plainSpaces(parts.map((part) => part.type === 'minusSign' ? '\u2212' : part.value).join(''))
 }
 
 const oneDecimal = { minimumFractionDigits: 1, maximumFractionDigits: 1 } as const

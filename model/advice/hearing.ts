@@ -18,7 +18,7 @@ const soughtFall = 0.1
 const mostOfAll = 0.8
 /** Nobody is asked to hear more than as many again as there are, within these bounds. */
 const mostAuthors = { least: 50, most: 2000 } as const
-/** Falls by less than this part are not worth asking for. */
+/** Falls by less than this part are not told at all, not even as hardly helping. */
 const leastFall = 0.02
 
 /** What hearing more authors somewhere would do. */

@@ -1,7 +1,7 @@
 import type { Findings } from '../findings/schema.ts'
 import type { BenchmarkMargin } from '../inputs/small-inputs.ts'
 import type { Reading } from '../reading/context.ts'
-import type { RuledAdvice } from './ruled-advice.ts'
+import { helpsBy, type RuledAdvice } from './ruled-advice.ts'
 import { adviseCoder, adviseEveryone, adviseSurvey } from './standing-advice.ts'
 import { gainOf, ofLevelAt, ofNextChange, type Gain, type Outlook } from './hearing.ts'
 import { adviseSegments } from './segments.ts'
@@ -15,12 +15,16 @@ const littleTalked = 0.02
 
 /**
  * What to do to hear more kinds of people: the fall of a posterior standard deviation per unit of cost ranks what can be computed; what can't
- * stands behind it in the order of the program.
+ * stands behind it in the order of the program, and last what is computed but hardly helps.
  */
 export function readAdvice(outlook: Outlook, grounds: Grounds, margins: readonly BenchmarkMargin[] | null, smallestGroup: number): RuledAdvice[] {
   const computed = [...adviseVenues(outlook), ...adviseTopics(outlook, grounds), ...adviseSegments(outlook.reading, margins, grounds, smallestGroup)]
     .sort((a, b) => (b.gain_per_cost ?? 0) - (a.gain_per_cost ?? 0))
-  return [...computed, ...adviseSurvey(grounds), ...adviseCoder(grounds), ...adviseEveryone(outlook.reading, grounds, computed.length > 0)]
+  return [
+    ...computed.filter(({ helps }) => helps === 'clearly'),
+    ...adviseSurvey(grounds), ...adviseCoder(grounds), ...adviseEveryone(outlook.reading, grounds, computed.length > 0),
+    ...computed.filter(({ helps }) => helps === 'hardly'),
+  ]
 }
 
 function adviseVenues(outlook: Outlook): RuledAdvice[] {
@@ -52,8 +56,9 @@ function hear(
   cost: { readonly each: number; readonly given: boolean }, figures: RuledAdvice['figures'],
 ): RuledAdvice {
   const total = authors * cost.each
+  const gainShare = (widthBefore - widthAfter) / widthBefore
   return {
-    code, where, where_kind: kind, how_many: authors, gain: fall, gain_of: of, cost: total, cost_given: cost.given, gain_per_cost: fall.mean / total,
+    code, where, where_kind: kind, how_many: authors, helps: helpsBy(gainShare), gain_share: gainShare, gain: fall, gain_of: of, cost: total, cost_given: cost.given, gain_per_cost: fall.mean / total,
     figures: { ...figures, authors, width_before: widthBefore, width_after: widthAfter, cost: total },
   }
 }

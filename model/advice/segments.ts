@@ -1,10 +1,10 @@
-import { heardBy, neededAt, rakeHeard, type Heard } from '../customers/benchmark.ts'
+import { heardBy, neededAt, neededJointly, rakeHeard, type Heard } from '../customers/benchmark.ts'
 import type { BenchmarkMargin } from '../inputs/small-inputs.ts'
 import type { Reading } from '../reading/context.ts'
 import { points } from '../reading/summarise.ts'
 import { twoSidedQuantile } from '../statistics/wilson.ts'
 import type { Grounds } from './read-advice.ts'
-import type { RuledAdvice } from './ruled-advice.ts'
+import { helpsBy, type RuledAdvice } from './ruled-advice.ts'
 import { usualCost } from './usual-cost.ts'
 
 /** Segments heard so much less than they are customers are worth asking for; as a share. */
@@ -31,13 +31,15 @@ export function adviseSegments(reading: Reading, margins: readonly BenchmarkMarg
     const after = effectiveOf(withMore(heard, m, l, authors))
     const fall = points * sd * (1 / Math.sqrt(Math.max(1, before)) - 1 / Math.sqrt(Math.max(1, after)))
     if (fall <= 0) return []
+    const gainShare = 1 - Math.sqrt(Math.max(1, before) / Math.max(1, after))
+    const jointly = neededJointly(counts.map((count) => (count < smallestGroup ? 0 : count)), levels.map((of) => of.share))
     // of a standard deviation known from so many authors
     const spread = fall / Math.sqrt(2 * Math.max(1, known - 1))
     const reach = twoSidedQuantile(interval) * spread
     return [{
-      code: 'hear-segment', where: level, where_kind: 'segment', how_many: authors, gain: { mean: fall, low: fall - reach, high: fall + reach, sd: spread }, gain_of: 'customer-mean',
+      code: 'hear-segment', where: level, where_kind: 'segment', how_many: authors, helps: helpsBy(gainShare), gain_share: gainShare, gain: { mean: fall, low: fall - reach, high: fall + reach, sd: spread }, gain_of: 'customer-mean',
       cost: authors * cost.each, cost_given: cost.given, gain_per_cost: fall / (authors * cost.each),
-      figures: { margin, segment: level, authors, heard: Math.max(counts[l], few ? Math.min(smallestGroup, known) : 0) / known, customers: share, effective_before: Math.round(before), effective_after: Math.round(after), cost: authors * cost.each },
+      figures: { margin, segment: level, authors, jointly: jointly?.[l] ?? 0, heard: Math.max(counts[l], few ? Math.min(smallestGroup, known) : 0) / known, customers: share, effective_before: Math.round(before), effective_after: Math.round(after), cost: authors * cost.each },
     }]
   }))
 }

@@ -65,15 +65,21 @@ function authorsAt({ levels, authors }: Heard, margin: number, level: number): n
 function readMargin(heard: Heard, { margin, levels }: BenchmarkMargin, m: number, smallestGroup: number): Margin {
   const counts = levels.map((_, l) => authorsAt(heard, m, l))
   const known = counts.reduce((sum, count) => sum + count, 0)
+  const shownOf = counts.map((count) => known >= smallestGroup && (count === 0 || count >= smallestGroup))
+  // of a level that is not shown no number may give its size away: it is taken for unheard
+  const told = counts.map((count, l) => (shownOf[l] ? count : 0))
+  const jointly = neededJointly(told, levels.map(({ share }) => share))
   return {
     margin, authors: known, all_authors: heard.authors.reduce((sum, count) => sum + count, 0),
     dissimilarity: known < smallestGroup ? null : dissimilarityIndex(counts.map((count) => count / known), levels.map(({ share }) => share)),
+    needed_jointly: jointly === null ? null : jointly.reduce((sum, count) => sum + count, 0),
     levels: levels.map(({ level, share }, l) => {
-      const shown = known >= smallestGroup && (counts[l] === 0 || counts[l] >= smallestGroup)
+      const shown = shownOf[l]
       return {
         level, customers: share, heard: shown ? counts[l] / known : null, authors: shown ? counts[l] : null,
-        gap: shown ? percent * (counts[l] / known - share) : null, // of a group that is not shown the number must not give its size away
-        needed: neededAt(shown ? counts[l] : 0, known, share),
+        gap: shown ? percent * (counts[l] / known - share) : null,
+        shortfall: known < smallestGroup ? null : percent * Math.max(0, share - told[l] / known),
+        needed: neededAt(told[l], known, share), needed_jointly: jointly === null ? null : jointly[l],
       }
     }),
   }
@@ -82,6 +88,21 @@ function readMargin(heard: Heard, { margin, levels }: BenchmarkMargin, m: number
 /** Authors of a level besides, for its share to be that of customers: (a + x) / (n + x) = share. */
 export function neededAt(authors: number, known: number, share: number): number {
   return share >= 1 ? 0 : Math.max(0, Math.ceil((share * known - authors) / (1 - share)))
+}
+
+/**
+ * Authors of each level besides, the fewest with which no level's share stays below that of customers. Shares that sum to 1 can't all be reached from below unless
+ * each is met, so the authors in all must be as many as the most over-heard level's are at its share, max(a / share), and each level fills up to share times that.
+ *
+ * @param authors - shape (levels), heard now
+ * @param shares - shape (levels), of customers, summing to 1
+ * @returns shape (levels), rounded up; null where authors were heard of a level that no customer belongs to
+ */
+export function neededJointly(authors: readonly number[], shares: readonly number[]): readonly number[] | null {
+  if (authors.some((count, l) => count > 0 && !(shares[l] > 0))) return null
+  const all = Math.max(0, ...authors.map((count, l) => (count > 0 ? count / shares[l] : 0)))
+  const rounding = 1e-9 * Math.max(1, all) // a level that is filled already must not need one author more for a last bit
+  return authors.map((count, l) => Math.max(0, Math.ceil(shares[l] * all - count - rounding)))
 }
 
 function tellRaking({ converged, cycles, lowest, highest, bounded, size, effectiveSize }: Raking): Benchmark['raking'] {

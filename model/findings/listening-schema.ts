@@ -72,8 +72,10 @@ const benchmarkLevel = z.strictObject({
   authors: count.nullable(),
   /** heard less customers, in percentage points. */
   gap: z.number().nullable(),
-  /** Authors of this level that would be needed besides, for its share to be that of customers. */
-  needed: count,
+  /** Percentage points by which its share of the authors stays below that of customers, 0 if it does not; a level too small to show counts as unheard. Null where too few authors of the margin are known. */
+  shortfall: z.number().min(0).nullable(),
+  /** Authors of this level that would be needed besides, for its share to be that of customers: if it alone were heard more, and if all levels were brought to their shares at once (null where that can't be done). */
+  needed: count, needed_jointly: count.nullable(),
 })
 
 export const benchmark = z.strictObject({
@@ -83,6 +85,8 @@ export const benchmark = z.strictObject({
     dissimilarity: share.nullable(),
     /** Authors whose level is known, and all. */
     authors: count, all_authors: count,
+    /** Authors needed besides, over all levels, for every share to be that of customers; null where customers' shares leave out a level that was heard. */
+    needed_jointly: count.nullable(),
     levels: z.array(benchmarkLevel),
   })),
   /** Weights that bring the authors to the margins (Deming and Stephan 1940); null where it can't be done at all. */
@@ -114,7 +118,7 @@ export const volume = z.strictObject({
 export const tipping = z.strictObject({
   /** How many times likelier to post, against before, the `who` must have become for the reported change of opinion to vanish. */
   ratio: estimate, who: z.enum(['content', 'unhappy']),
-  /** Change of opinion, in points, if the unhappy had become so many times likelier to post. */
+  /** Change of opinion that would be left, in points, if the `who` had become so many times likelier to post; one row stands at the mean of `ratio`. */
   curve: z.array(z.strictObject({ ratio: z.number(), change: estimate })),
 })
 
@@ -179,12 +183,16 @@ export const advice = z.strictObject({
   /** Which venue, segment or topic; empty where it concerns all. */
   where: z.string(), where_kind: z.enum(['venue', 'segment', 'topic', 'survey', 'coder', 'all']),
   how_many: count,
+  /** Whether it narrows its interval by enough to be worth doing (`clearly`) or not (`hardly`), where that can be computed. */
+  helps: z.enum(['clearly', 'hardly', 'not-computed']),
+  /** The part of the interval's width that it takes away. */
+  gain_share: share.nullable(),
   /** Fall of the standard deviation that the advice is ranked by, in points; of what is said in `gain_of`. */
   gain: estimate.nullable(), gain_of: z.enum(['next-change', 'importance-level', 'customer-mean', 'none']),
   cost: z.number().min(0).nullable(),
   /** Whether the account gave the cost of an author; 1 each if not. */
   cost_given: z.boolean(),
-  /** Gain per unit of cost, by which it is ranked; null for advice that no gain can be computed for, which comes last. */
+  /** Gain per unit of cost, by which it is ranked; null for advice that no gain can be computed for. First what clearly helps, by this; then what no gain can be computed for; last what hardly helps, by this. */
   gain_per_cost: z.number().nullable(),
   action: z.string(), evidence: z.string(), success: z.string(),
   /** The figures in the wording. */

@@ -4,7 +4,7 @@ import { spawnSync } from 'node:child_process'
  * Every benchmark in turn: npm run bench. The part against JAGS runs where Rscript is installed.
  */
 const parts: readonly (readonly [what: string, command: string, ...args: string[]])[] = [
-  ['the demo, HTML and PDF', 'npm', 'run', '--silent', 'demo', '--', '--quiet'],
+  ['the ferry demo, HTML and PDF', 'npm', 'run', '--silent', 'tareline', '--', 'build', 'sample-data/skerrow-ferries', '--out', 'demo/skerrow-ferries', '--quiet'],
   ['printing', 'npx', 'tsx', 'test/bench/print.ts'],
   ['a fit on one core', 'npx', 'tsx', 'test/bench/fit.ts'],
   ['ten times the steps', 'npx', 'tsx', 'test/bench/fit.ts', 'steps'],

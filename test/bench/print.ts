@@ -6,7 +6,7 @@ import { print } from '../../generator/print/print.ts'
  * Printing against what the browser alone needs for the same HTML: npx tsx test/bench/print.ts [HTML]
  * Each run opens a browser, prints and closes it, in turn; medians.
  */
-const html = readFileSync(process.argv[2] ?? 'demo/review.html', 'utf8')
+const html = readFileSync(process.argv[2] ?? 'demo/skerrow-ferries/review.html', 'utf8')
 const runs = 5
 
 async function alone(): Promise<void> {
@@ -19,7 +19,7 @@ async function alone(): Promise<void> {
 
 async function ours(): Promise<void> {
   const browser = await openBrowser()
-  await print(html, browser, { title: 'Bench', author: 'Bench', date: '2026-10-31', language: 'en-GB' })
+  await print(html, browser, { title: 'Bench', author: 'Bench', date: '2026-10-31', language: 'en-GB' }, [])
   await browser.close()
 }
 

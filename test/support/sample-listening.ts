@@ -70,9 +70,10 @@ export function sampleStaying(venues: readonly Venue[]): Pick<Speaking, 'staying
 
 const authorsKnown = 1212
 
-function level(name: string, customers: number, authors: number | null, needed: number): Benchmark['margins'][number]['levels'][number] {
+/** @param jointly - authors needed besides if all levels are brought to their shares at once */
+function level(name: string, customers: number, authors: number | null, needed: number, jointly: number): Benchmark['margins'][number]['levels'][number] {
   const heard = authors === null ? null : authors / authorsKnown
-  return { level: name, customers, heard, authors, gap: heard === null ? null : 100 * (heard - customers), needed }
+  return { level: name, customers, heard, authors, gap: heard === null ? null : 100 * (heard - customers), shortfall: 100 * Math.max(0, customers - (heard ?? 0)), needed, needed_jointly: jointly }
 }
 
 /** Customers by two traits; freight customers are too few to show, of school parties nobody was heard. */
@@ -80,12 +81,12 @@ export function sampleBenchmark(): Benchmark {
   return {
     margins: [
       {
-        margin: 'segment', dissimilarity: 0.307, authors: authorsKnown, all_authors: 1490,
-        levels: [level('islander', 0.34, 254, 240), level('commuter', 0.24, 388, 0), level('holiday', 0.3, 563, 0), level('freight', 0.08, null, 99), level('school parties', 0.04, 0, 51)],
+        margin: 'segment', dissimilarity: 0.307, authors: authorsKnown, all_authors: 1490, needed_jointly: 385 + 63 + 151 + 76,
+        levels: [level('islander', 0.34, 254, 240, 385), level('commuter', 0.24, 388, 0, 63), level('holiday', 0.3, 563, 0, 0), level('freight', 0.08, null, 99, 151), level('school parties', 0.04, 0, 51, 76)],
       },
       {
-        margin: 'age', dissimilarity: 0.19, authors: 1187, all_authors: 1490,
-        levels: [level('under 35', 0.22, 499, 0), level('35 to 54', 0.35, 428, 0), level('55 and over', 0.43, 285, 416)],
+        margin: 'age', dissimilarity: 0.19, authors: 1187, all_authors: 1490, needed_jointly: 366 + 691,
+        levels: [level('under 35', 0.22, 499, 0, 0), level('35 to 54', 0.35, 428, 0, 366), level('55 and over', 0.43, 285, 416, 691)],
       },
     ],
     raking: { converged: true, cycles: 9, lowest: 0.31, highest: 4.2, bounded: 14, design_effect: 1.94, authors: 1187, effective_authors: 612 },
@@ -98,15 +99,15 @@ export function sampleVolume(): NonNullable<Findings['volume']> {
   return { wave: '2026-10', metric: 'favourability', label: 'Favourability', posts: 53.4, survey: 45.6, gap: 7.8, authors: 1490, customers: 310_000, defect_correlation: 0.0109, equal_sample: 44.8 }
 }
 
-/** Odds of praise as the sample's opinion has them in the two months; the curve divides them by how much likelier the unhappy became to post. */
+/** Odds of praise as the sample's opinion has them in the two months; the curve divides them by how much likelier the content became to post. */
 export function sampleTipping(before: number, now: number): NonNullable<Findings['tipping']> {
   const odds = (points: number) => (1 + points / 100) / (1 - points / 100)
   const pointsOf = (of: number) => 100 * (of - 1) / (of + 1)
   const ratio = odds(now) / odds(before)
-  const ratios = Array.from({ length: 17 }, (_, at) => 1.2 ** ((at - 8) / 8))
+  const ratios = [...Array.from({ length: 17 }, (_, at) => 1.2 ** ((at - 8) / 8)), ratio].sort((a, b) => a - b)
   return {
     ratio: around(ratio, 0.03), who: 'content',
-    curve: ratios.map((of) => ({ ratio: of, change: around(pointsOf(odds(now) * of) - before, 1.4) })),
+    curve: ratios.map((of) => ({ ratio: of, change: around(pointsOf(odds(now) / of) - before, 1.4) })),
   }
 }
 
@@ -151,19 +152,20 @@ export function sampleHearing(venues: readonly Venue[]): NonNullable<Findings['h
   }
 }
 
-/** A piece of each kind of advice, the most gained for its cost first; worded by the catalogue. */
+/** A piece of each kind of advice, the most gained for its cost first, what hardly helps last; worded by the catalogue. */
 export function sampleAdvice(): Findings['advice'] {
-  const piece = (code: string, where: string, where_kind: Findings['advice'][number]['where_kind'], how_many: number, figures: Findings['advice'][number]['figures'], gain: number | null = null, gain_of: Findings['advice'][number]['gain_of'] = 'none', cost: number | null = null): Findings['advice'][number] => ({
-    code, where, where_kind, how_many, gain: gain === null ? null : around(gain, 0.02), gain_of, cost, cost_given: false, gain_per_cost: gain === null || cost === null ? null : gain / cost,
+  const piece = (code: string, where: string, where_kind: Findings['advice'][number]['where_kind'], how_many: number, figures: Findings['advice'][number]['figures'], gain: number | null = null, gain_of: Findings['advice'][number]['gain_of'] = 'none', cost: number | null = null, gainShare: number | null = null): Findings['advice'][number] => ({
+    code, where, where_kind, how_many, helps: gainShare === null ? 'not-computed' : gainShare < 0.05 ? 'hardly' : 'clearly', gain_share: gainShare, gain: gain === null ? null : around(gain, 0.02), gain_of, cost, cost_given: false, gain_per_cost: gain === null || cost === null ? null : gain / cost,
     action: `action of ${code}`, evidence: `evidence of ${code}`, success: `success of ${code}`, figures,
   })
   return [
-    piece('hear-venue', 'Video comments', 'venue', 200, { venue: 'Video comments', authors: 200, heard: 118, width_before: 3.6, width_after: 3.18, cost: 200 }, 0.13, 'next-change', 200),
-    piece('hear-topic', 'On board', 'topic', 150, { topic: 'On board', authors: 150, talk: 0.16, importance: 0.27, width_before: 4.2, width_after: 3.7, cost: 150 }, 0.15, 'importance-level', 150),
-    piece('hear-segment', 'islander', 'segment', 240, { margin: 'segment', segment: 'islander', authors: 240, heard: 0.21, customers: 0.34, effective_before: 612, effective_after: 941, cost: 240 }, 0.2, 'customer-mean', 240),
+    piece('hear-venue', 'Video comments', 'venue', 200, { venue: 'Video comments', authors: 200, heard: 118, width_before: 3.6, width_after: 3.18, cost: 200 }, 0.13, 'next-change', 200, 0.117),
+    piece('hear-topic', 'On board', 'topic', 150, { topic: 'On board', authors: 150, talk: 0.16, importance: 0.27, width_before: 4.2, width_after: 3.7, cost: 150 }, 0.15, 'importance-level', 150, 0.119),
+    piece('hear-segment', 'islander', 'segment', 240, { margin: 'segment', segment: 'islander', authors: 240, jointly: 385, heard: 0.21, customers: 0.34, effective_before: 612, effective_after: 941, cost: 240 }, 0.2, 'customer-mean', 240, 0.194),
     piece('audit-more', 'Microblogs', 'coder', 28, { venue: 'Microblogs', codings: 22, needed: 50 }),
     piece('survey-waves', 'Favourability', 'survey', 11, { waves: 11, waves_now: 30, correlation: 0.31 }),
     piece('invite-everyone', '', 'all', 0, { extremes: 0.61 }),
     piece('standing-way-in', '', 'all', 0, { share: 0.27 }),
+    piece('hear-venue', 'Blogs', 'venue', 125, { venue: 'Blogs', authors: 125, heard: 310, width_before: 3.6, width_after: 3.49, cost: 125 }, 0.03, 'next-change', 125, 0.031),
   ]
 }

@@ -50,7 +50,10 @@ export function hostileFindings(): Findings {
 export function smallComposition(input: string, given: Partial<Composition> & { readonly sentencesText?: string, readonly messages?: Readonly<Record<string, string>> } = {}): Composition {
   const { sentencesText = sentences, messages = catalogue, ...rest } = given
   return {
-    template: { review: { place: 'review.md', text: input }, sections: {}, sentences: { place: 'sentences.yaml', text: sentencesText } },
+    template: {
+      review: { place: 'review.md', text: input }, house: { place: 'templates/review.md', text: '' }, sections: {}, ownSections: [],
+      sentences: { place: 'sentences.yaml', text: sentencesText }, included: {}, notes: {},
+    },
     findings: sampleFindings(), tables: [small, hostile], charts: ['bars'], words: createWords(messages, 'en', 'en-GB'), ...rest,
   }
 }

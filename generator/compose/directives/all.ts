@@ -1,20 +1,22 @@
-import { advice } from './advice.ts'
 import { blocks } from './blocks.ts'
-import { caveat } from './caveat.ts'
 import { chart } from './chart.ts'
 import { contents } from './contents.ts'
 import type { Directive, DirectiveNode } from './directive.ts'
 import { each } from './each.ts'
 import { figure } from './figure.ts'
 import { glossary } from './glossary.ts'
+import { house } from './house.ts'
+import { include } from './include.ts'
 import { made } from './made.ts'
+import { notes } from './notes.ts'
 import { say } from './say.ts'
 import { section } from './section.ts'
 import { table } from './table.ts'
 import { when } from './when.ts'
+import { advice, caveat } from './worded.ts'
 
 /** The template language: every word it has. */
-const directives: readonly Directive[] = [section, figure, say, made, caveat, advice, chart, table, contents, glossary, when, each, ...blocks]
+const directives: readonly Directive[] = [section, house, include, notes, figure, say, made, caveat, advice, chart, table, contents, glossary, when, each, ...blocks]
 
 export function directiveOf(node: DirectiveNode): Directive | undefined {
   return directives.find(({ type, name }) => type === node.type && name === node.name)

@@ -1,5 +1,5 @@
 import type { Config } from 'vega-lite'
-import type { ChartTheme } from '../theme.ts'
+import type { ChartTheme } from '../../theme/theme.ts'
 
 /** The theme as Vega-Lite's configuration: one place for fonts, axes and named looks, so that specifications hold none. */
 export function chartConfig(theme: ChartTheme): Config {
@@ -22,7 +22,7 @@ export function chartConfig(theme: ChartTheme): Config {
     legend: { labelFont: theme.font, labelFontSize: theme.font_size, labelColor: theme.ink, title: null, symbolStrokeWidth: 2, orient: 'top', direction: 'horizontal', offset: 8, padding: 0 },
     text: { ...text, color: theme.ink, lineBreak: '\n', lineHeight: theme.font_size * 1.12 },
     facet: { spacing: 20 },
-    range: { ramp: theme.shares },
+    range: { ramp: [...theme.shares] },
     style: theme.styles,
     area: { opacity: 1 }, bar: { opacity: 1 }, point: { opacity: 1 }, rect: { opacity: 1 }, tick: { opacity: 1 },
     mark: { invalid: 'break-paths-show-path-domains' },

@@ -1,7 +1,7 @@
 import type { Column, Row, Table } from '../../tables/table.ts'
 import { rowLabel, valueWord, writeCell } from '../../words/cells.ts'
 import type { Words } from '../../words/words.ts'
-import type { DrawingSize, Theme } from '../theme.ts'
+import type { DrawingSize, Theme } from '../../theme/theme.ts'
 import { wrapLabel } from './text-metrics.ts'
 
 /** One mark's worth of data: dates as milliseconds (UTC), labels broken into lines, figures beside their wording. */

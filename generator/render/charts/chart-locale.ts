@@ -1,15 +1,34 @@
+import { plainSpaces } from '../../words/spaces.ts'
+
 /** Figures and dates on axes in the reader's locale, as vega wants them, taken from Intl. */
 export function vegaLocale(locale: string) {
   const parts = new Intl.NumberFormat(locale, { useGrouping: true, minimumFractionDigits: 1 }).formatToParts(-1234567.5)
-  const part = (type: Intl.NumberFormatPartTypes, otherwise: string): string => parts.find((candidate) => candidate.type === type)?.value ?? otherwise
+  const part = (type: Intl.NumberFormatPartTypes, otherwise: string): string => plainSpaces(parts.find((candidate) => candidate.type === type)?.value ?? otherwise)
   return {
-    number: { decimal: part('decimal', '.'), thousands: part('group', ','), grouping: [3], currency: ['', ''] as [string, string], minus: '\u2212' },
+    number: {
+      decimal: part('decimal', '.'), thousands: part('group', ','), grouping: [3], currency: ['', ''] as [string, string], minus: '\u2212', percent: percentSign(locale),
+    },
     time: {
-      dateTime: '%Y-%m-%d %H:%M', date: '%Y-%m-%d', time: '%H:%M', periods: ['AM', 'PM'] as [string, string],
+      // `%x` on an axis is a day of the month: short, without its year
+      dateTime: '%Y-%m-%d %H:%M', date: dayOfMonth(locale), time: '%H:%M', periods: ['AM', 'PM'] as [string, string],
       days: days(locale, 'long'), shortDays: days(locale, 'short'),
       months: months(locale, 'long'), shortMonths: months(locale, 'short'),
     },
   }
+}
+
+/** What stands after the digits of a percentage: `%`, or a no-break space and `%`. */
+function percentSign(locale: string): string {
+  const parts = new Intl.NumberFormat(locale, { style: 'percent' }).formatToParts(0.9)
+  const after = parts.slice(parts.findIndex(({ type }) => type === 'integer') + 1)
+  return plainSpaces(after.map(({ value }) => value).join(''))
+}
+
+/** A day and its month as a specifier of d3's, in the order and with the signs of the locale: `%-d %b`, `%-d. %b`, `%b %-d`. */
+function dayOfMonth(locale: string): string {
+  const parts = new Intl.DateTimeFormat(locale, { day: 'numeric', month: 'short', timeZone: 'UTC' }).formatToParts(Date.UTC(2000, 10, 5))
+  const specifier = parts.map(({ type, value }) => type === 'day' ? '%-d' : type === 'month' ? (/^\d+$/.test(value) ? '%m' : '%b') : value.replaceAll('%', '%%'))
+  return plainSpaces(specifier.join(''))
 }
 
 type Seven = [string, string, string, string, string, string, string]

@@ -1,10 +1,12 @@
 import type { TopLevelSpec } from 'vega-lite'
 import { z } from 'zod'
 import type { Words } from '../../words/words.ts'
-import type { DrawingSize } from '../theme.ts'
+import type { DrawingSize } from '../../theme/theme.ts'
 
 export type Json = string | number | boolean | null | readonly Json[] | { readonly [key: string]: Json }
 export type JsonObject = Readonly<Record<string, Json>>
+
+export const ownPlace: unique symbol = Symbol('place of an own chart')
 
 /**
  * A chart as kept in templates/charts: a Vega-Lite specification that holds no words and no figures. It names tables as its data, and under
@@ -17,6 +19,8 @@ export type JsonObject = Readonly<Record<string, Json>>
  */
 export interface ChartSpec {
   readonly name: string
+  /** The file of a chart that is an account's own: what is wrong with it is a fault of the input. No part of the specification, so no key of it. */
+  readonly [ownPlace]?: string
   readonly [key: string]: Json
 }
 
@@ -37,6 +41,11 @@ export function layoutOf(spec: ChartSpec): Layout {
   const read = layout.safeParse(spec.usermeta ?? {})
   if (!read.success) throw new Error(`Unexpected usermeta of chart ${spec.name}: ${z.prettifyError(read.error)}`)
   return read.data
+}
+
+/** What is wrong with how a chart is laid out: the path of each key and why. */
+export function layoutProblems(usermeta: Json): readonly { readonly path: readonly PropertyKey[], readonly reason: string }[] {
+  return layout.safeParse(usermeta).error?.issues.map(({ path, message }) => ({ path, reason: message })) ?? []
 }
 
 /** The specification at one size: with what differs on a phone put in, and `narrow` told to its expressions. */

@@ -1,13 +1,18 @@
-import { Error as ErrorsOnly, parse, resetSVGDefIds, View } from 'vega'
+import { Error as ErrorsOnly, parse, randomLCG, resetSVGDefIds, setRandom, View } from 'vega'
+import { expressionInterpreter } from 'vega-interpreter'
+import type { Loader } from 'vega'
 import { compile } from 'vega-lite'
+import { faultOf } from '../../faults/catalogue.ts'
+import { InputFault } from '../../faults/fault.ts'
 import type { Table } from '../../tables/table.ts'
 import type { Words } from '../../words/words.ts'
-import type { DrawingSize, Theme } from '../theme.ts'
+import type { DrawingSize, Theme } from '../../theme/theme.ts'
 import { chartConfig } from './chart-config.ts'
 import { chartData, type Datum } from './chart-data.ts'
 import { vegaLocale } from './chart-locale.ts'
-import { asVegaLite, atSize, type ChartSpec, type Json, layoutOf, type Panels, tablesIn, worded } from './chart-spec.ts'
+import { asVegaLite, atSize, type ChartSpec, type Json, layoutOf, ownPlace, type Panels, tablesIn, worded } from './chart-spec.ts'
 import { cleanSvg } from './clean-svg.ts'
+import { requirePlain } from './plain-svg.ts'
 import { stackedShares } from './stack-ends.ts'
 import { withStacked } from './stacked-panels.ts'
 import { measureBy } from './text-metrics.ts'
@@ -17,29 +22,51 @@ import { measureBy } from './text-metrics.ts'
  *
  *     specification ─at size─▶ ─worded─▶ ─with data─▶ vega-lite ─▶ vega ─▶ SVG ─cleaned─▶
  *
- * The same specification, tables, words and theme give the same bytes, in any time zone.
+ * The same specification, tables, words and theme give the same bytes, in any time zone. Expressions are interpreted, never made into code; nothing
+ * is loaded from anywhere; what is drawn holds nothing but plain shapes and text.
  *
- * @param spec - a specification of templates/charts
+ * @param spec - a specification of templates/charts, or of an account
  * @param size - for the page and paper, or for a phone
  * @throws {Error} an unknown table or message, or whatever Vega-Lite warns of: a picture that is not as specified must not pass
+ * @throws {InputFault} `chart-undrawable`: the same of a chart that is an account's own
  */
 export async function drawChart(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize = 'wide'): Promise<string> {
+  try {
+    return await draw(spec, tables, words, theme, size)
+  } catch (error) {
+    const place = spec[ownPlace]
+    throw place === undefined ? error : new InputFault([faultOf('chart-undrawable', place, { reason: error instanceof Error ? error.message : String(error) })])
+  }
+}
+
+async function draw(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize): Promise<string> {
   const sized = worded(atSize(spec, size), words) as unknown as ChartSpec
   const read = readTables(sized, tables, words, theme, size)
   const { spec: roomy, datasets } = withStack(withRoom(laidOut(sized, read, theme, size), read), read)
-  const warnings: string[] = []
+  const [warnings, errors]: [string[], string[]] = [[], []]
   const config = { ...chartConfig(theme.chart), locale: vegaLocale(words.locale) }
   measureBy(theme.advances)
-  const { spec: compiled } = compile(asVegaLite({ ...roomy, datasets: datasets as unknown as Json }), { config, logger: collector(warnings) })
+  const { spec: compiled } = compile(asVegaLite({ ...roomy, datasets: datasets as unknown as Json }), { config, logger: collector(warnings, warnings) })
   if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${spec.name}: ${warnings.join('; ')}`)
   resetSVGDefIds()
+  setRandom(randomLCG(1))
   // a layer without rows, such as labels' leaders where none had to move, has no extent, and vega would warn of it
-  const view = new View(parse(compiled), { renderer: 'none', logLevel: ErrorsOnly })
+  const options = { renderer: 'none', logLevel: ErrorsOnly, logger: collector(errors, []), loader: noLoader, expr: expressionInterpreter } as const
+  const view = new View(parse(compiled, undefined, { ast: true }), options)
   try {
-    return cleanSvg(await view.toSVG(), `${spec.name}-${size}`)
+    const svg = await view.toSVG()
+    if (errors.length > 0) throw new Error(`Unexpected error while drawing chart ${spec.name}: ${errors.join('; ')}`)
+    return cleanSvg(requirePlain(svg), `${spec.name}-${size}`)
   } finally {
     view.finalize()
   }
+}
+
+/** Loads nothing, whatever is asked. */
+const noLoader: Loader = { load: refuse, sanitize: refuse, http: refuse, file: refuse }
+
+function refuse(address: string): Promise<never> {
+  return Promise.reject(new Error(`Unexpected address ${address}, expected a table of the findings`))
 }
 
 type Datasets = Readonly<Record<string, readonly Datum[]>>
@@ -95,16 +122,16 @@ function panelWidth(panels: Panels, columns: number, width: number): number {
 /** Said also of `fit-x`, which a chart of steps asks for and gets: nothing is dropped then. */
 const untrue = 'Dropping "fit-y" because spec has discrete height.'
 
-function collector(warnings: string[]) {
-  const collect = (...args: readonly unknown[]) => {
-    const warning = args.join(' ')
-    if (warning !== untrue) warnings.push(warning)
+function collector(errors: string[], warnings: string[]) {
+  const into = (list: string[]) => (...args: readonly unknown[]) => {
+    const told = args.join(' ')
+    if (told !== untrue) list.push(told)
     return logger
   }
   const logger = {
     level: () => logger,
-    error: collect,
-    warn: collect,
+    error: into(errors),
+    warn: into(warnings),
     info: () => logger,
     debug: () => logger,
   }

@@ -1,4 +1,4 @@
-import type { Theme } from '../theme.ts'
+import type { Theme } from '../../theme/theme.ts'
 import type { Datum } from './chart-data.ts'
 import { type ChartSpec, isObject, type Json, type JsonObject, layoutOf, mergePatch } from './chart-spec.ts'
 import { textWidth } from './text-metrics.ts'

@@ -1,5 +1,5 @@
 import { textMetrics } from 'vega'
-import type { AdvanceTable } from '../theme.ts'
+import type { AdvanceTable } from '../../theme/theme.ts'
 
 export interface TextStyle {
   readonly fontSize?: number

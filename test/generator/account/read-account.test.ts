@@ -78,7 +78,7 @@ smallest_group: 12
     expect(account.targetMix).toEqual([{ factor: 'venue', shares: [{ level: 'boards', share: 0.25 }, { level: 'panel', share: 0.75 }] }])
     const table = { pattern: 'survey/w.csv', files: ['survey/w.csv'] }
     expect(account).toMatchObject({ benchmark: table, codingAudit: table, importance: table, customers: 310_000 })
-    expect(account.givenNotUsed).toEqual(['competitors', 'theme', 'notes'])
+    expect(account.givenNotUsed).toEqual(['competitors'])
   })
 
   test.each([['day', [-56, 112]], ['week', [-8, 16]], ['month', [-2, 4]]])('looks at lags from two months behind to four ahead on a grid by the %s', async (grid, lags) => {

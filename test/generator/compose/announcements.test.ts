@@ -1,5 +1,8 @@
 import { expect, test } from 'vitest'
+import { createReporter } from '../../../generator/compose/faults.ts'
 import { argumentsFor, parseSentences } from '../../../generator/compose/sentences.ts'
+import { InputFault } from '../../../generator/faults/fault.ts'
+import type { Fault } from '../../../generator/faults/fault.ts'
 import type { Findings, Movement } from '../../../model/findings/schema.ts'
 import { houseTemplate } from '../../support/house-composition.ts'
 import { houseWords } from '../../support/house-words.ts'
@@ -7,7 +10,9 @@ import { sampleFindings } from '../../support/sample-findings.ts'
 
 const words = await houseWords()
 const sample = sampleFindings()
-const sentences = parseSentences(houseTemplate.sentences.text, { place: '', report: (_at, _code, unexpected) => { throw new Error(unexpected) } })
+const faults: Fault[] = []
+const sentences = parseSentences(houseTemplate.sentences.text, createReporter('', faults))
+if (faults.length > 0) throw new InputFault(faults)
 const say = (message: string, findings: Findings) => words.say(message, argumentsFor(sentences.get(message), { findings, names: {} }, words))
 
 const movements: readonly (Movement | null)[] = ['up', 'down', 'not-established', null]

@@ -16,7 +16,13 @@ const estimate = (mean: number, low: number, high: number) => ({ mean, low, high
 
 test('raw and adjusted part: the headline says both, and the reason follows', () => {
   expect(lead(usual)).toBe('Opinion of Skerrow Ferries rose by 2.2 points in October 2026 compared with September 2026 (90% interval 0.8 to 3.6). Yet the raw average of all mentions fell by 2.3 points. The main reason: mentions in Discussion boards, less kind than the rest, went from 33% to 40% of all.')
-  expect(firstPage(usual)).toContain('Where people posted lowered it by 1.7 points (90% interval 1.3 to 2.1), that shift alone by 1.3 (90% interval 1.0 to 1.6). Opinion itself raised it by 2.2 points (90% interval 0.8 to 3.6).')
+  expect(firstPage(usual)).toContain('Where people posted lowered it by 1.7 points (90% interval 1.3 to 2.1). Opinion itself raised it by 2.2 points (90% interval 0.8 to 3.6). The others together: ')
+})
+
+test('what the first page says of the parts adds up to the change of the raw average, but for the last digit', () => {
+  const [, sign, lowered, raised, rest] = /raw average of all mentions (fell|rose) by [\d.]+ points, from.*lowered it by ([\d.]+) .*itself raised it by ([\d.]+) .*The others together: ([−+][\d.]+)\. /.exec(firstPage(usual))!
+  expect(sign).toBe('fell')
+  expect(-Number(lowered) + Number(raised) + Number(rest.replace('−', '-'))).toBeCloseTo(sample.decomposition!.raw_change, 0)
 })
 
 test('where opinion moved the same way, the reason is one beside it', () => {
@@ -111,6 +117,35 @@ test('one venue only: no drift is told', () => {
   expect(sectionText(document, 'venues')).toContain('With one venue alone, its drift can’t be told from opinion.')
   expect(sectionText(document, 'venues')).not.toMatch(/[Dd]rifted|Drift since base/)
   expect(firstPage(document)).toContain('One venue only. All mentions come from one venue.')
+})
+
+test('of serious caveats the first page tells three, and how many more there are; the caveats section tells all', () => {
+  const serious = ['authors-unknown', 'one-venue', 'survey-contradicts', 'no-previous-period', 'ready-made-authors'].map((code) => (
+    { code, severity: 'serious' as const, figures: code === 'authors-unknown' ? { share: 0.6 } : code === 'survey-contradicts' ? { label: 'Favourability', correlation: -0.6, pairs: 20 } : {}, evidence: '', meaning: '', remedy: '' }
+  ))
+  const titles = ['Authors are not known', 'One venue only', 'The survey contradicts the posts', 'Nothing to compare with', 'Authors counted cell by cell']
+  const parting = sample.caveats.find(({ code }) => code === 'pooled-average-misleads')!
+  const told = (text: string) => titles.filter((title) => text.includes(`${title}.`))
+  const withCaveats = (caveats: Findings['caveats']) => composeHouse({ ...sample, caveats })
+  const [three, five, four] = [serious.slice(0, 3), serious, [...serious.slice(0, 3), parting]].map(withCaveats)
+  expect(told(firstPage(three!))).toEqual(titles.slice(0, 3))
+  expect(firstPage(three!)).not.toContain('more serious')
+  expect(told(firstPage(five!))).toEqual(titles.slice(0, 3))
+  expect(firstPage(five!)).toContain('And 2 more serious caveats. All caveats, what they mean and what you can do')
+  // that raw average and opinion part ways stands first and counts
+  expect(firstPage(four!)).toContain('The raw average and opinion part ways.')
+  expect(told(firstPage(four!))).toEqual(titles.slice(0, 2))
+  expect(firstPage(four!)).toContain('And 1 more serious caveat. All caveats')
+  for (const title of titles) expect(sectionText(five!, 'caveats')).toContain(title)
+  expect(elementsOf(four!, 'a').some((link) => link.properties['href'] === '#caveats-heading' && toString(link).startsWith('And 1 more serious caveat.'))).toBe(true)
+})
+
+test('why authors are fewer in one table than elsewhere is said where some are not known, and not where all are', () => {
+  const text = (findings: Findings) => sectionText(composeHouse(findings), 'speaking')
+  const known = sample.posters.filter(({ poster }) => poster !== 'unknown')
+  const unknown = { ...known[0]!, poster: 'unknown', label: 'unknown' }
+  expect(text({ ...sample, posters: [...known, unknown] })).toContain('Mentions whose author is not known are left out of this table.')
+  expect(text({ ...sample, posters: known })).not.toContain('left out of this table')
 })
 
 test('without a serious caveat the first page shows the cautions, without either it says so', () => {

@@ -44,7 +44,7 @@ describe('what is not given is not there: no section, no heading, no chart', () 
   })
   test('without advice the first page has none; with it the first three, one line each', () => {
     expect(sectionText(composeHouse(readyMade()), 'first-page')).not.toContain('What to do first')
-    expect(sectionText(usual, 'first-page')).toMatch(/What to do first Hear 200 more authors in Video comments\. Ask 150 people about “On board”\. Hear 240 more authors of the group “islander” \(segment\)\.$/)
+    expect(sectionText(usual, 'first-page')).toMatch(/What to do first Least heard, for their share of the customers: 55 and over, islander and freight\. Hear 200 more authors in Video comments: invite everyone to post there, never only the content\. Ask 150 people, drawn at random, about “On board”\. Hear 240 more authors of “islander” \(segment\): invite all of them, or a random sample\.$/)
   })
   test('no heading stands alone', () => {
     for (const [, document] of cases) {
@@ -104,19 +104,21 @@ describe('whom the posts stand for', () => {
   const text = sectionText(usual, 'customers')
   test('the three groups least heard come first, over all margins, one of them too small to show', () => {
     expect(text).toMatch(/^Whom the posts stand for Least heard, for their share of the customers: 55 and over, islander and freight\./)
-    expect(text).toContain('Islander: 34% of the customers, 21% of the authors heard. 240 more authors would make up for it.')
-    expect(text).toContain('Freight: 8% of the customers, fewer than 10 of the authors heard. 99 more authors would make up for it.')
+    expect(text).toContain('Islander: 34% of the customers, 21% of the authors heard. 240 more authors would make up for it, if the other groups stay as they are.')
+    expect(text).toContain('Freight: 8% of the customers, fewer than 10 of the authors heard. 99 more authors would make up for it, if the other groups stay as they are.')
+    expect(text).toContain('To bring all groups by segment to their shares at once takes 675 more authors: islander, freight, school parties and commuter (385, 151, 76 and 63).')
   })
   test('of one, of two, of none', () => {
-    const only = (count: number) => customers({ margins: benchmark.margins.map((margin, m) => ({ ...margin, levels: margin.levels.map((level, l) => ({ ...level, needed: m === 0 && l < count ? 10 - l : 0 })) })) })
+    const only = (count: number) => customers({ margins: benchmark.margins.map((margin, m) => ({ ...margin, levels: margin.levels.map((level, l) => ({ ...level, shortfall: m === 0 && l < count ? 10 - l : 0 })) })) })
     expect(only(0)).toContain('No group of customers is heard less than its share.')
     expect(only(1)).toContain('One group of customers is heard less than its share: islander.')
     expect(only(2)).toContain('Two groups of customers are heard less than their share: islander and commuter.')
+    expect(customers({ margins: benchmark.margins.map((of) => ({ ...of, dissimilarity: null, needed_jointly: null, levels: of.levels.map((level) => ({ ...level, shortfall: null, needed_jointly: null })) })) })).toMatch(/Too few authors are known by group to say who is heard too little\.(?!.*at once takes)/)
     expect(altOf('benchmark', withFindings({ benchmark: { ...benchmark, margins: [] } }))).not.toContain('Least heard')
   })
   test('dissimilarity by margin, weights and what they cost, and the groups that no weight brings in', () => {
     expect(text).toContain('By segment, 31% of the authors would have to belong to another group for the posts to be made up like the customers. The segment is known of 1,212 of 1,490 authors.')
-    expect(text).toContain('Single authors then count between 0.31 and 4.20 times the average; 14 would have counted for more or less than we allow. That has a price: 1,187 authors tell no more than 612 who are a true picture of the customers.')
+    expect(text).toContain('Single authors then count between 0.31 and 4.20 times the average; 14 would have counted for more or less than we allow. That has a price: 1,187 authors tell no more about all customers than 612 effective authors, who need no weights.')
     expect(text).toContain('As heard, the authors’ mean is 17.2 points; counted by the customers’ shares it is 11.6 points (90% interval 8.2 to 15.0).')
     expect(text).toContain('School parties (segment): 4% of the customers, and none of the authors.')
   })
@@ -134,7 +136,7 @@ describe('what the volume is worth', () => {
   test('as many interviews, the gap, and the correlation behind it with its source', () => {
     expect(of({})).toContain('2,940 mentions by 1,490 authors are worth as much as a random sample of about 45 interviews.')
     expect(of({})).toContain('By the raw average 53.4% of what was said is favourable, a neutral mention counted as half; the survey found 45.6% (Favourability, wave 2026-10). They lie 7.8 percentage points apart')
-    expect(of({})).toContain('among 310,000 customers, a correlation of 0.011 between being favourable and posting brings about such a gap (the data defect correlation, Meng 2018)')
+    expect(of({})).toContain('because content customers are a little likelier to post than others: among 310,000 customers, a tie between being favourable and posting as weak as 0.011 is enough, where 0 is none at all (the data defect correlation, Meng 2018)')
   })
   test('a sample of next to nothing, a gap within the survey’s own error, no number of customers', () => {
     expect(of({ equal_sample: 0.4 })).toContain('are worth no more than asking one or two customers at random')
@@ -145,7 +147,9 @@ describe('what the volume is worth', () => {
   })
   test('the tipping point, for a rise and for a fall; it stands without a survey too', () => {
     expect(of({})).toContain('Had content customers become 1.05 times as likely to post as before, and unhappy ones not (90% interval 1.02 to 1.08), the reported change of +2.2 points would be nothing but that.')
+    expect(altOf('tipping')).toContain('if content customers had become')
     const fell = withFindings({ tipping: { ...sample.tipping!, who: 'unhappy' } })
+    expect(altOf('tipping', fell)).toContain('if unhappy customers had become')
     expect(sectionText(fell, 'volume')).toContain('Had unhappy customers become 1.05 times as likely to post as before, and content ones not')
     expect(sectionText(composeHouse(postsAlone()), 'volume')).toMatch(/^What would explain the change away Had content customers/)
     expect(sectionText(withFindings({ tipping: null }), 'volume')).not.toContain('explain the change away')
@@ -195,18 +199,32 @@ describe('talk against importance', () => {
 
 describe('advice', () => {
   const text = sectionText(usual, 'advice')
+  const worth = sample.advice.filter(({ helps }) => helps !== 'hardly')
   test('the first piece leads; every piece says what, why, at what cost and how it will show', () => {
-    expect(text).toMatch(/^What to do First: Hear 200 more authors in Video comments\./)
+    expect(text).toMatch(/^What to do First: Hear 200 more authors in Video comments: invite everyone to post there/)
     const lists = elementsOf(usual, 'ol').filter((list) => toString(list).includes('Hear 200') && toString(list).includes('Why:'))
     expect(lists).toHaveLength(1)
-    expect(lists[0]!.children.filter((child) => child.type === 'element')).toHaveLength(sample.advice.length)
-    expect(text.match(/Why: /g)).toHaveLength(sample.advice.length)
-    expect(text.match(/How the next review will show it: /g)).toHaveLength(sample.advice.length)
-    expect(text.match(/Cost: /g)).toHaveLength(sample.advice.filter(({ cost }) => cost !== null).length)
+    expect(lists[0]!.children.filter((child) => child.type === 'element')).toHaveLength(worth.length)
+    expect(text.match(/Why: /g)).toHaveLength(worth.length)
+    expect(text.match(/How the next review will show it: /g)).toHaveLength(worth.length)
+    expect(text.match(/Cost: /g)).toHaveLength(worth.filter(({ cost }) => cost !== null).length)
   })
-  test('which cost is assumed', () => {
-    expect(text).toContain('Cost: 200, counting every author as 1, because the account gives no cost.')
-    expect(sectionText(withFindings({ advice: sample.advice.map((piece) => ({ ...piece, cost_given: true })) }), 'advice')).toContain('Cost: 200, from what the account says one more author costs.')
+  test('the chart names the venue where more authors tell most, unless they hardly tell anywhere', () => {
+    const title = (document: Document) => toString(elementsOf(document, 'figure').find(({ properties }) => properties['dataChart'] === 'hearing')!)
+    expect(title(usual)).toContain('One more author tells most in Video comments')
+    expect(title(withFindings({ advice: sample.advice.map((piece) => ({ ...piece, helps: 'hardly' as const })) }))).toContain('In no venue would more authors narrow the interval by much')
+  })
+  test('what hardly helps is told as such, apart from the rest, and is not among the first things to do', () => {
+    expect(text).toContain('What hardly helps More authors here would narrow the interval by less than 5%, too little to show in the next review. 125 more authors in Blogs: an interval narrower by 3%.')
+    const hardly = [...sample.advice].sort((a, b) => Number(b.helps === 'hardly') - Number(a.helps === 'hardly'))
+    expect(hardly[0]!.helps).toBe('hardly')
+    expect(sectionText(withFindings({ advice: hardly }), 'first-page')).toMatch(/What to do first .* Hear 200 more authors in Video comments/)
+    expect(sectionText(withFindings({ advice: hardly }), 'first-page')).not.toContain('in Blogs:')
+    expect(sectionText(withFindings({ advice: worth }), 'advice')).not.toContain('What hardly helps')
+  })
+  test('costs are explained once, as no currency', () => {
+    expect(text).toContain('Cost: 200 units.')
+    expect(text.match(/no currency is meant/g)).toHaveLength(1)
   })
   test('cautions on asking: everyone, same words, same reward, a log, the law', () => {
     for (const words of ['Ask everyone, or a random sample', 'The same words and the same reward', '16 CFR Part 465', '23b and 23c', 'Keep a log of who was asked', 'Local law and your counsel decide']) expect(text).toContain(words)
@@ -218,7 +236,7 @@ describe('advice', () => {
       benchmark: { ...sample.benchmark!, margins: sample.benchmark!.margins.map((of) => ({ ...of, margin: hostile, levels: of.levels.map((level) => ({ ...level, level: hostile })) })) },
     })
     expect(elementsOf(document, 'img')).toEqual([])
-    expect(sectionText(document, 'first-page')).toContain(`Hear 200 more authors in ${hostile}.`)
+    expect(sectionText(document, 'first-page')).toContain(`Hear 200 more authors in ${hostile}: invite`)
   })
 })
 

@@ -12,18 +12,36 @@ describe('operationsOf', () => {
   })
 })
 
+const nothing = () => null
+const header = '/Artifact <</Type /Pagination /Subtype /Header >>BDC'
+
 describe('withArtifacts', () => {
-  test('text outside tagged content is marked, text inside is left', () => {
+  test('text outside tagged content is marked as running head or foot, text inside is left', () => {
     const tagged = '/P <</MCID 0 >>BDC\nBT\n<01> Tj\nET\nEMC\n'
-    expect(withArtifacts(`BT\n<02> Tj\nET\n${tagged}`)).toBe(`/Artifact BMC\nBT\n<02> Tj\nET\nEMC\n${tagged}`)
+    const text = (down: number) => `BT\n/F4 11 Tf\n1 0 0 -1 20 ${down} Tm\n<02> Tj\nET`
+    expect(withArtifacts(`${text(40)}\n${tagged}`, 842, nothing)).toBe(`${header}\n${text(40)}\nEMC\n${tagged}`)
+    expect(withArtifacts(text(1090), 842, nothing)).toBe(`${header.replace('Header', 'Footer')}\n${text(1090)}\nEMC`)
   })
 
   test('painted paths are marked; a clipping path, which paints nothing, and states are left', () => {
-    expect(withArtifacts('q\n0 0 9 9 re\nW* n\n1 1 2 2 re\nf\nQ')).toBe('q\n0 0 9 9 re\nW* n\n/Artifact BMC\n1 1 2 2 re\nf\nEMC\nQ')
+    expect(withArtifacts('q\n0 0 9 9 re\nW* n\n1 1 2 2 re\nf\nQ', 842, nothing)).toBe('q\n0 0 9 9 re\nW* n\n/Artifact BMC\n1 1 2 2 re\nf\nEMC\nQ')
   })
 
   test('a text object that holds tagged content is not marked as a whole', () => {
     const source = 'BT\n/P <</MCID 0 >>BDC\n<01> Tj\nEMC\nET'
-    expect(withArtifacts(source)).toBe(source)
+    expect(withArtifacts(source, 842, nothing)).toBe(source)
+  })
+
+  test('one that holds a ligature with its letters is', () => {
+    const source = 'BT\n1 0 0 -1 20 40 Tm\n/Span<</ActualText (fi) >> BDC\n<01> Tj\nEMC\n<02> Tj\nET'
+    expect(withArtifacts(source, 842, nothing)).toBe(`${header}\n${source}\nEMC`)
+  })
+
+  test('tagged content that is released is marked as what it is said to be, and told what it paints', () => {
+    const asked: unknown[] = []
+    const source = '/Table <</MCID 0 >>BDC\n0 0 9 1 re\nf\nEMC\n/P <</MCID 1 >>BDC\nBT\n<01> Tj\nET\nEMC'
+    const marked = withArtifacts(source, 842, (content, painted) => { asked.push([content, painted]); return painted.text ? null : '/Artifact BMC' })
+    expect(marked).toBe(source.replace('/Table <</MCID 0 >>BDC', '/Artifact BMC'))
+    expect(asked).toEqual([[0, { text: false, image: false }], [1, { text: true, image: false }]])
   })
 })

@@ -1,10 +1,9 @@
 import type { Browser, Page } from 'puppeteer'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { openBrowser } from '../../../generator/print/open-browser.ts'
-import { cssString, runningHead } from '../../../generator/render/running-head.ts'
 import { render, type Rendering } from '../../../generator/render/render.ts'
 import { tablesOf } from '../../../generator/tables/tables-of.ts'
-import { axeSource, chartNames, sampleDocument, sampleRendering, sampleWords } from './sample-document.ts'
+import { axeSource, chartNames, sampleDocument, sampleRendering } from './sample-document.ts'
 import { stretchedFindings } from './stretched-findings.ts'
 
 let browser: Browser
@@ -114,13 +113,4 @@ test('a text alternative is written out once, escaped', () => {
 
 test('an unknown chart is named', async () => {
   await expect(render(sampleDocument(), { ...rendering, charts: new Map() })).rejects.toThrow('"opinion"')
-})
-
-describe('the running head', () => {
-  test('is worded by the catalogue, the numbers are the printer\u2019s', () => {
-    expect(runningHead('A title', sampleWords)).toContain('@bottom-right{content:"Page " counter(page) " of " counter(pages)}')
-  })
-  test('a title can end neither the string nor the element', () => {
-    expect(cssString('a"}</style><script>')).toBe('"a\\22 \\7d \\3c \\2f style\\3e \\3c script\\3e "')
-  })
 })

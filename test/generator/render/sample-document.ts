@@ -4,8 +4,9 @@ import type { Root } from 'hast'
 import { h } from 'hastscript'
 import type { Document } from '../../../generator/compose/document.ts'
 import { loadCharts } from '../../../generator/render/load-charts.ts'
+import { imprintOf } from '../../../generator/render/imprint.ts'
 import type { Rendering } from '../../../generator/render/render.ts'
-import { loadTheme } from '../../../generator/render/theme.ts'
+import { loadTheme } from '../../../generator/theme/load-theme.ts'
 import type { Table } from '../../../generator/tables/table.ts'
 import { tablesOf } from '../../../generator/tables/tables-of.ts'
 import { createWords, type Words } from '../../../generator/words/words.ts'
@@ -18,10 +19,10 @@ export const templates = fileURLToPath(new URL('../../../templates/', import.met
 /** A catalogue of this test's own, so that a change of the house's wording breaks no test of the page. */
 export const sampleWords: Words = createWords({
   'axis-points': 'Points', 'axis-points-change': 'Points of change', 'axis-points-offset': 'Points off', 'label-raw': 'Raw average', 'label-adjusted': 'Mix-adjusted',
-  'label-survey': 'Survey', 'label-posts': 'Posts', 'label-posts-later': 'Posts, moved … later', 'label-posts-earlier': 'Posts, moved … earlier', 'label-forecast': 'Forecast', 'label-observed': 'Found', 'axis-pull': 'Points a point', 'axis-points-correction': 'Points of correction', 'axis-times': 'Times as likely',
+  'label-survey': 'Survey: …', 'label-survey-percent': 'Survey: …, %', 'label-posts': 'Posts', 'label-posts-later': 'Posts, moved … later', 'label-posts-earlier': 'Posts, moved … earlier', 'label-forecast': 'Forecast', 'label-observed': 'Found', 'axis-pull': 'Points a point', 'axis-points-correction': 'Points of correction', 'axis-times': 'Times as likely', 'axis-more-authors': 'More authors',
   'label-customers': 'Customers', 'label-heard': 'Heard', 'label-importance': 'Importance', 'label-talk': 'Talk', 'label-reported': 'As reported', 'label-next': 'next', 'metric-segment': '{label}, {segment}', 'venue-raw': '{label}, raw',
   steps: '{steps} {grid}', 'mark-flagged': '*', 'span-base': 'Base', 'span-review': 'Period under review', 'when-base': 'Base', 'when-now': 'This period', 'part-factor_mix': 'Mix of {factor}',
-  'page-of': 'Page {page} of {pages}', 'skip-to-review': 'Skip to the review', 'cell-empty': '–', range: '{low} to {high}',
+  'page-of': 'Page {page} of {pages}', overline: 'Brand health review', 'cover-people': 'By {prepared}, {reviewed}', 'skip-to-review': 'Skip to the review', 'cell-empty': '–', range: '{low} to {high}',
   'probability-over': 'over {figure}', 'probability-under': 'under {figure}', 'not-known': 'not known',
 }, 'en', 'en-GB')
 
@@ -30,7 +31,7 @@ export const chartNames = ['opinion', 'decomposition', 'venues', 'venues-before'
   'staying', 'spread', 'pull', 'benchmark', 'importance', 'tipping', 'coder', 'hearing'] as const
 
 export async function sampleRendering(findings: Findings = sampleFindings()): Promise<Rendering> {
-  return { tables: tablesOf(findings), charts: await loadCharts(`${templates}charts`), words: sampleWords, theme: await loadTheme(`${templates}theme`) }
+  return { tables: tablesOf(findings), charts: await loadCharts(`${templates}charts`), words: sampleWords, theme: await loadTheme(`${templates}theme`), imprint: imprintOf(findings, sampleWords) }
 }
 
 /** A document with everything a page must hold well: contents, charts, a long table, a wide table, blocks, links. */

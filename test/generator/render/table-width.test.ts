@@ -1,7 +1,8 @@
 import { h } from 'hastscript'
 import { beforeAll, expect, test } from 'vitest'
 import { fitsPortrait } from '../../../generator/render/table-width.ts'
-import { loadTheme, type AdvanceTable } from '../../../generator/render/theme.ts'
+import { loadTheme } from '../../../generator/theme/load-theme.ts'
+import type { AdvanceTable } from '../../../generator/theme/theme.ts'
 import { templates } from './sample-document.ts'
 
 let advances: AdvanceTable

@@ -1,9 +1,10 @@
 import { createHash } from 'node:crypto'
 import { appendFile, cp, mkdir, mkdtemp, readFile, readdir, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
-import { join } from 'node:path'
+import { basename, join } from 'node:path'
 import axe from 'axe-core'
 import { PDFDocument, PDFName, PDFDict } from '@cantoo/pdf-lib'
+import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs'
 import type { Browser } from 'puppeteer'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { findingsSchema } from '../../../model/findings/schema.ts'
@@ -174,6 +175,15 @@ describe('the review itself', () => {
     } finally {
       await page.close()
     }
+  })
+
+  test('is a PDF to which findings and tables are attached, byte for byte', async () => {
+    const document = await getDocument({ data: new Uint8Array(await readFile(join(scratch, 'one/review.pdf'))), verbosity: 0 }).promise
+    const attached = await document.getAttachments() as Readonly<Record<string, { readonly content: Uint8Array }>>
+    const files = ['findings.json', ...(await readdir(join(scratch, 'one/tables'))).map((name) => `tables/${name}`)]
+    expect(Object.keys(attached).sort()).toEqual(files.map((file) => basename(file)).sort())
+    for (const file of files) expect(Buffer.from(attached[basename(file)].content).equals(await readFile(join(scratch, 'one', file))), file).toBe(true)
+    await document.destroy()
   })
 
   test('is a tagged PDF whose every figure has a text alternative', async () => {

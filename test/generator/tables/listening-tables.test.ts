@@ -44,9 +44,9 @@ describe('what is masked is null, and a dash where people read it', () => {
   })
 })
 
-test('customers: those of whom most are missing first; a margin is named where there are several; who can’t be reached is marked', () => {
+test('customers: those furthest below their share first; a margin is named where there are several; who can’t be reached is marked', () => {
   expect(rowsOf('benchmark').map(({ level }) => level)).toEqual(['islander', 'freight', 'school parties', 'commuter', 'holiday', '55 and over', '35 to 54', 'under 35'])
-  expect(rowsOf('benchmark')[0]).toMatchObject({ label: 'islander (segment)', authors_needed: 240, unreached: false })
+  expect(rowsOf('benchmark')[0]).toMatchObject({ label: 'islander (segment)', authors_needed: 240, authors_needed_jointly: 385, unreached: false })
   expect(rowsOf('benchmark').filter(({ unreached }) => unreached).map(({ level }) => level)).toEqual(['school parties'])
   const one = { ...findings, benchmark: { ...findings.benchmark!, margins: findings.benchmark!.margins.slice(0, 1) } }
   expect(rowsOf('benchmark', one)[0]).toMatchObject({ label: 'islander' })
@@ -73,8 +73,12 @@ test('pull of all classes together is named; the most important topic stands fir
   expect(rowsOf('advice').map(({ rank, code }) => [rank, code])).toEqual(findings.advice.map(({ code }, at) => [at + 1, code]))
 })
 
-test('the curve of the tipping point passes the reported change at 1 and rises', () => {
+test('the curve of the tipping point passes the reported change at 1, falls where the change was a rise, and comes to nothing at one marked row', () => {
   const curve = rowsOf('tipping')
   expect(curve.find(({ ratio }) => ratio === 1)?.['tipped_change']).toBeCloseTo(findings.opinion.change!.mean, 9)
-  expect(Number(curve.at(-1)?.['tipped_change'])).toBeGreaterThan(Number(curve[0]?.['tipped_change']))
+  expect(Number(curve.at(-1)?.['tipped_change'])).toBeLessThan(Number(curve[0]?.['tipped_change']))
+  const marked = curve.filter(({ tips }) => tips === true)
+  expect(marked).toHaveLength(1)
+  expect(marked[0]?.['ratio']).toBe(findings.tipping!.ratio.mean)
+  expect(marked[0]?.['tipped_change']).toBeCloseTo(0, 9)
 })

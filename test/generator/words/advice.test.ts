@@ -8,7 +8,7 @@ const words = await houseWords()
 const advised: Readonly<Record<string, Readonly<Record<string, string | number>>>> = {
   'hear-venue': { venue: 'Blogs', authors: 200, heard: 118, width_before: 3.6, width_after: 3, cost: 600 },
   'hear-topic': { topic: 'On board', authors: 150, talk: 0.16, importance: 0.27, width_before: 4.2, width_after: 3.7, cost: 150 },
-  'hear-segment': { margin: 'segment', segment: 'islander', authors: 240, heard: 0.21, customers: 0.34, effective_before: 611.6, effective_after: 940.8, cost: 240 },
+  'hear-segment': { margin: 'segment', segment: 'islander', authors: 240, jointly: 385, heard: 0.21, customers: 0.34, effective_before: 611.6, effective_after: 940.8, cost: 240 },
   'invite-everyone': { extremes: 0.61 }, 'standing-way-in': { share: 0.27 },
   'survey-start': { waves: 8 }, 'survey-waves': { waves: 11, waves_now: 30, correlation: 0.31 }, 'survey-interviews': { interviews: 900, interviews_now: 400, correlation: 0.31 },
   'audit-start': { codings: 1750, per_venue: 350, width: 2 }, 'audit-more': { venue: 'Blogs', codings: 22, needed: 50 },
@@ -37,7 +37,8 @@ describe('figures', () => {
     expect(evidence('audit-start')).toContain('about ±1.00 points')
   })
   test('what was heard is a share of a segment and a number of a venue', () => {
-    expect(evidence('hear-segment')).toBe('They are 34% of the customers and 21% of the authors heard. Counted by the customers’ shares, the authors are worth 612 equal voices; with so many more, 941.')
+    expect(evidence('hear-segment')).toBe('They are 34% of the customers and 21% of the authors heard. Counted by the customers’ shares, those heard are worth 612 effective authors; with so many more, 941. To bring all groups to their shares at once, 385 more of this one are needed.')
+    expect(evidence('hear-segment', { jointly: 0 })).not.toContain('at once')
   })
   test('what is not known is left out: no correlation yet, no mention at either end', () => {
     expect(evidence('survey-waves')).toContain('30 waves can be compared')
@@ -47,8 +48,8 @@ describe('figures', () => {
     expect(evidence('invite-everyone', { extremes: 0 })).toBe('Whoever asks only some people hears what these think, not what customers think.')
   })
   test('one is not many', () => {
-    expect(wordAdvice(words, 'hear-venue', { ...advised['hear-venue'], authors: 1 }).action).toBe('Hear 1 more author in Blogs.')
-    expect(wordAdvice(words, 'hear-topic', { ...advised['hear-topic'], authors: 1500 }).action).toBe('Ask 1,500 people about “On board”.')
+    expect(wordAdvice(words, 'hear-venue', { ...advised['hear-venue'], authors: 1 }).action).toBe('Hear 1 more author in Blogs: invite everyone to post there, never only the content.')
+    expect(wordAdvice(words, 'hear-topic', { ...advised['hear-topic'], authors: 1500 }).action).toBe('Ask 1,500 people, drawn at random, about “On board”.')
   })
 })
 

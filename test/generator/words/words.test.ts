@@ -1,5 +1,8 @@
 import { expect, test } from 'vitest'
-import { loadWords } from '../../../generator/words/load-words.ts'
+import { InputFault } from '../../../generator/faults/fault.ts'
+import { date } from '../../../generator/words/dates.ts'
+import { languagesIn, loadWords } from '../../../generator/words/load-words.ts'
+import { count } from '../../../generator/words/numbers.ts'
 import { createWords } from '../../../generator/words/words.ts'
 import { templatesFolder } from '../../support/house-words.ts'
 
@@ -29,6 +32,24 @@ test('an unknown message, a missing argument and a broken message are named', ()
   expect(() => createWords({ broken: '{n, plural, one {#}' }, 'en', 'en-GB')).toThrow('message "broken"')
 })
 
-test('a locale without a catalogue is a fault of the input, with the mend', async () => {
-  await expect(loadWords(`${templatesFolder}/words`, 'xx-GB')).rejects.toMatchObject({ faults: [{ code: 'language-unknown', place: 'templates/words/xx.yaml' }] })
+test('a locale without a catalogue is a fault of the input, which lists the languages that there are', async () => {
+  const refused = await loadWords(`${templatesFolder}/words`, 'xx-GB', undefined, 'account.yaml:4:1 locale').catch((error: unknown) => error)
+  expect(refused).toMatchObject({ faults: [{ code: 'language-unknown', place: 'account.yaml:4:1 locale' }] })
+  const [fault] = refused instanceof InputFault ? refused.faults : []
+  for (const language of await languagesIn(`${templatesFolder}/words`)) expect(fault?.message).toMatch(new RegExp(`\\b${language}\\b`))
+})
+
+test('a region writes its figures in the words of its language', async () => {
+  const says = async (locale: string) => {
+    const regional = await loadWords(`${templatesFolder}/words`, locale)
+    return [regional.language, regional.locale, count(1234567, regional.locale), date('2026-01-05', regional.locale)]
+  }
+  expect(await says('en-US')).toEqual(['en', 'en-US', '1,234,567', 'January 5, 2026'])
+  expect(await says('en-ZA')).toEqual(['en', 'en-ZA', '1\u00a0234\u00a0567', '5 January 2026'])
+})
+
+test('narrow and thin spaces of Intl become no-break spaces, which every typeface has', () => {
+  expect(createWords({ m: '{n, plural, other {# mentions}}' }, 'fr', 'fr-FR').say('m', { n: 12345 })).toBe('12\u00a0345 mentions')
+  // it can fail: Intl itself writes a narrow one
+  expect(new Intl.NumberFormat('fr-FR').format(12345)).toBe('12\u202f345')
 })

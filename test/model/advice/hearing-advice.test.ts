@@ -28,6 +28,15 @@ describe('where to hear more people', () => {
     }
     for (const { curve } of hearing!.venues) expect(curve.every(({ width }, i) => i === 0 || width < curve[i - 1].width)).toBe(true)
   })
+  test('what takes away a twentieth of the interval clearly helps and comes first; what does not hardly helps and comes last', async () => {
+    const { advice } = await analyseHere(simulated(5))
+    const venues = advice.filter(({ code }) => code === 'hear-venue')
+    for (const { helps, gain_share: part, figures } of venues) {
+      expect(helps).toBe(part! >= 0.05 ? 'clearly' : 'hardly')
+      expect(part).toBeCloseTo(1 - Number(figures['width_after']) / Number(figures['width_before']), 9)
+    }
+    expect(advice.map(({ helps }) => helps)).toEqual(['clearly', 'not-computed', 'not-computed', 'not-computed', 'hardly'])
+  })
   test('none where posts are so many that more of them tell next to nothing', async () => {
     const { advice } = await analyseHere(simulated(20_000))
     expect(advice.filter(({ code }) => code === 'hear-venue')).toEqual([])
@@ -36,6 +45,7 @@ describe('where to hear more people', () => {
     const { advice } = await analyseHere(segmented(simulated(40)), {}, { ...noInputs, benchmark: benchmark(0.5) })
     const [segment] = advice.filter(({ code }) => code === 'hear-segment')
     expect(segment).toMatchObject({ where: 'visitor', how_many: 160, gain_of: 'customer-mean' })
+    expect(segment).toMatchObject({ helps: 'clearly', figures: { jointly: 160 } })
     expect(segment.figures['effective_after']).toBeGreaterThan(segment.figures['effective_before'] as number)
   })
   test('none where they are heard as they are customers', async () => {

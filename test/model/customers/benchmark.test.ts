@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest'
-import { heardBy, neededAt, readBenchmark } from '../../../model/customers/benchmark.ts'
+import { heardBy, neededAt, neededJointly, readBenchmark } from '../../../model/customers/benchmark.ts'
 import type { SegmentTable } from '../../../model/intake/intake-tables.ts'
 
 const margins = [
@@ -39,8 +39,50 @@ describe('authors beside customers', () => {
     expect((100 + needed - 1) / (300 + needed - 1)).toBeLessThan(0.4)
     expect(neededAt(200, 300, 0.5)).toBe(0)
   })
-  test('levels of fewer authors than may be shown are not told', () => {
+  describe('the authors needed to bring all levels to their shares at once', () => {
+    const besides = (authors: readonly number[], shares: readonly number[]) => {
+      const needed = neededJointly(authors, shares)!
+      const all = authors.reduce((sum, count, l) => sum + count + needed[l], 0)
+      return { needed, all, reached: authors.map((count, l) => (count + needed[l]) / all) }
+    }
+    test('fill every level that is below its share, and no fewer in all would', () => {
+      const shares = [0.19, 0.14, 0.46, 0.21]
+      const authors = [967, 718, 963, 158]
+      const { needed, all, reached } = besides(authors, shares)
+      // commuters, 718 at a share of 0.14, set the size: 718 / 0.14 = 5128.57
+      expect(needed).toEqual([8, 0, 1397, 919])
+      expect(all).toBe(5130)
+      reached.forEach((share, l) => expect(share).toBeCloseTo(shares[l], 3))
+      // with one author less in all the commuters would be above their share by more than one author, so that others are short
+      expect(718 / 0.14).toBeGreaterThan(all - 2)
+    })
+    test('are more than for each level alone, if the others stay: those numbers hold one at a time', () => {
+      const authors = [967, 718, 963, 158]
+      const { needed } = besides(authors, [0.19, 0.14, 0.46, 0.21])
+      expect(needed[3]).toBeGreaterThan(neededAt(158, 2806, 0.21))
+      expect(needed[2]).toBeGreaterThan(neededAt(963, 2806, 0.46))
+    })
+    test('none where all are at their shares, nor can it be done where authors belong to a level without customers', () => {
+      expect(neededJointly([30, 70], [0.3, 0.7])).toEqual([0, 0])
+      expect(neededJointly([0, 0], [0.3, 0.7])).toEqual([0, 0])
+      expect(neededJointly([30, 70, 1], [0.3, 0.7, 0])).toBeNull()
+    })
+    test('stand by level and in all; a level short of its share is told by how much', () => {
+      const [segment] = found.margins
+      // islanders, 200 at a share of 0.5: 400 in all
+      expect(segment.levels.map(({ needed_jointly: needed }) => needed)).toEqual([0, 60, 40])
+      expect(segment.needed_jointly).toBe(100)
+      expect(segment.levels.map(({ shortfall }) => shortfall)).toEqual([0, expect.closeTo(100 / 15, 9), expect.closeTo(10, 9)])
+    })
+  })
+  test('levels of fewer authors than may be shown are not told, nor by a number worked out from theirs', () => {
     const few = readBenchmark(heardBy({ ...segments, rows: [row(0, 1, 100, 0), row(2, 0, 9, 0.5)] }, margins), 0.9, 10)
     expect(few.margins[0].levels[1]).toMatchObject({ heard: null, authors: null, gap: null })
+    const fewer = readBenchmark(heardBy({ ...segments, rows: [row(0, 1, 100, 0), row(2, 0, 3, 0.5)] }, margins), 0.9, 10)
+    const jointly = ({ margins: [of] }: typeof few) => [of.needed_jointly, ...of.levels.map((level) => level.needed_jointly)]
+    expect(jointly(few)).toEqual([100, 0, 80, 20])
+    expect(jointly(fewer)).toEqual(jointly(few))
+    expect(few.margins[0].levels[1].shortfall).toBeCloseTo(40, 9)
+    expect(readBenchmark(heardBy({ ...segments, rows: [row(0, 1, 4, 0), row(2, 0, 3, 0.5)] }, margins), 0.9, 10).margins[0].levels.map(({ shortfall }) => shortfall)).toEqual([null, null, null])
   })
 })

@@ -14,11 +14,23 @@ describe('how selective posting would have to be', () => {
     expect(ratio.mean).toBeCloseTo(1.5, 12)
     expect(curve.find((at) => at.ratio === 1)!.change.mean).toBeCloseTo(-20, 9)
     expect(curve.every((at, i) => i === 0 || at.change.mean > curve[i - 1].change.mean)).toBe(true)
+    expect(curve.find((at) => at.ratio === ratio.mean)!.change.mean).toBeCloseTo(0, 9)
   })
   test('for a rise, the content', () => {
-    const { who, ratio } = readTipping(reading([0, 0], [0.2, 0.2]), 0.9)!
+    const { who, ratio, curve } = readTipping(reading([0, 0], [0.2, 0.2]), 0.9)!
     expect(who).toBe('content')
     expect(ratio.mean).toBeCloseTo(1.5, 12)
+    // the curve is of the content too: what is left of the rise falls as they become likelier to post
+    expect(curve.find((at) => at.ratio === 1)!.change.mean).toBeCloseTo(20, 9)
+    expect(curve.every((at, i) => i === 0 || at.change.mean < curve[i - 1].change.mean)).toBe(true)
+    expect(curve.find((at) => at.ratio === ratio.mean)!.change.mean).toBeCloseTo(0, 9)
+  })
+  test('the curve reaches past the tipping point, little or much', () => {
+    for (const now of [0.02, 0.2, 0.6, 0.7]) {
+      const { ratio, curve } = readTipping(reading([0, 0], [now, now]), 0.9)!
+      expect(curve.at(-1)!.ratio).toBeGreaterThan(ratio.mean)
+      expect(curve[0].ratio).toBeLessThan(1)
+    }
   })
   test('is not told beyond the scale, or with nothing to compare', () => {
     expect(readTipping(reading([0, 0], [1.1, 0]), 0.9)).toBeNull()

@@ -1,7 +1,8 @@
 import { beforeAll, describe, expect, test } from 'vitest'
 import type { ChartSpec, JsonObject } from '../../../../generator/render/charts/chart-spec.ts'
 import { withStacked } from '../../../../generator/render/charts/stacked-panels.ts'
-import { loadTheme, type Theme } from '../../../../generator/render/theme.ts'
+import { loadTheme } from '../../../../generator/theme/load-theme.ts'
+import type { Theme } from '../../../../generator/theme/theme.ts'
 import { templates } from '../sample-document.ts'
 
 let theme: Theme

@@ -2,7 +2,8 @@ import { createRequire } from 'node:module'
 import { openSync } from 'fontkit'
 import { beforeAll, describe, expect, test } from 'vitest'
 import { textWidth, wrapLabel } from '../../../../generator/render/charts/text-metrics.ts'
-import { loadTheme, type AdvanceTable } from '../../../../generator/render/theme.ts'
+import { loadTheme } from '../../../../generator/theme/load-theme.ts'
+import type { AdvanceTable } from '../../../../generator/theme/theme.ts'
 import { templates } from '../sample-document.ts'
 
 let table: AdvanceTable

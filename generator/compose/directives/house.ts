@@ -1,0 +1,46 @@
+import type { RootContent } from 'mdast'
+import { nearest } from '../faults.ts'
+import type { Directive, Use } from './directive.ts'
+
+/**
+ * `::house{from="venues" to="survey" without="topics, coder"}`: the house's own sections in the house's order, so that a review has also those
+ * that a later version adds. A section that is a file of the account stands in the place of the house's.
+ */
+export const house: Directive = {
+  type: 'leafDirective', name: 'house', needs: [], may: ['from', 'to', 'without'],
+  check: (use, scope, context, reporter) => {
+    const { node, attributes } = use
+    const known = sectionsIn(context.house)
+    const { from, to } = attributes
+    const unknown = [from, to, ...leftOut(use)].filter((name) => name !== undefined).filter((name) => !known.includes(name))
+    for (const name of unknown) reporter.report(node, 'section-unknown', `section "${name}"`, 'a section of the house', nearest(name, known))
+    if (unknown.length > 0) return scope
+    if (context.inSection !== null) reporter.report(node, 'section-nested', 'sections of the house inside a section', 'them in the list of the review', 'Move it there.')
+    else if (from !== undefined && to !== undefined && known.indexOf(from) > known.indexOf(to)) reporter.fault(node, 'house-order', { from, to })
+    else context.check(chosen(use, context.house), scope, context, reporter.at(node))
+    return scope
+  },
+  fill: (use, scope, context) => context.fill(chosen(use, context.house), scope),
+}
+
+/** What stands between two sections of the house goes with the first of them. */
+function chosen(use: Use, review: readonly RootContent[]): readonly RootContent[] {
+  const { from, to } = use.attributes
+  const names = review.map(sectionOf)
+  const first = from === undefined ? 0 : names.indexOf(from)
+  const after = to === undefined ? -1 : names.findIndex((name, at) => name !== undefined && at > names.indexOf(to))
+  const left = leftOut(use)
+  return review.slice(first, after < 0 ? undefined : after).filter((node) => !left.some((name) => name === sectionOf(node)))
+}
+
+function sectionsIn(review: readonly RootContent[]): readonly string[] {
+  return review.map(sectionOf).filter((name) => name !== undefined)
+}
+
+function sectionOf(node: RootContent): string | undefined {
+  return node.type === 'leafDirective' && node.name === 'section' ? node.attributes?.['name'] ?? undefined : undefined
+}
+
+function leftOut({ attributes }: Use): readonly string[] {
+  return (attributes['without'] ?? '').split(',').map((name) => name.trim()).filter((name) => name !== '')
+}
