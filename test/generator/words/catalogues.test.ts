@@ -73,7 +73,7 @@ function unequal(words: Words): readonly string[] {
 test('it can fail: a message too few, one too many, an argument left out and a plural of a text are told', () => {
   const others = Object.fromEntries(Object.entries(english).filter(([key]) => key !== 'contents'))
   const words = createWords({ ...others, extra: 'x', title: '{brand}', 'keyfigure-change-label': '{previous, plural, other {#}}' }, 'en', 'en')
-  expect(unequal(words).sort()).toEqual(['contents: missing', 'extra: only here', 'keyfigure-change-label: plural of previous', 'title: brand for brand,period'])
+  expect([...unequal(words)].sort()).toEqual(['contents: missing', 'extra: only here', 'keyfigure-change-label: plural of previous', 'title: brand for brand,period'])
 })
 
 describe.each(translated)('the catalogue %s', (language) => {
