@@ -23,8 +23,8 @@ const fastestGrowth = 1.01
 
 type Lasting = Exclude<AuthorType, 'casual'>
 const meanActivity: Record<Lasting, number> = { regular: 2.8, prolific: 15 }
-const segments = ['islander', 'commuter', 'holiday', 'freight', ''] as const
-const segmentWeights = [30, 22, 30, 5, 13]
+const segments = ['islander', 'commuter', 'holiday', 'student', 'freight', ''] as const
+const segmentWeights = [30, 22, 27, 3, 5, 13]
 
 /** All authors of the demo, venue by venue: casual ones post once, the others stay for months. */
 export function gatherCrowd(draws: Draws): Crowd {

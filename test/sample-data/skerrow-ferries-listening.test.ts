@@ -34,12 +34,13 @@ describe('the customers', () => {
     expect(margin.levels.map(({ level }) => level).sort()).toEqual([...new Set(october.map(({ segment }) => segment))].filter((segment) => segment !== '').sort())
   })
 
-  test('are not those who post: holiday makers are heard too little, freight hardly at all, as TRUTH.md tells', () => {
+  test('are not those who post: holiday makers are heard too little, students and freight hardly at all, as TRUTH.md tells', () => {
     expect(heard('holiday') / share('holiday')).toBeLessThan(0.8)
     expect(heard('freight') / share('freight')).toBeLessThan(0.33)
+    expect(heard('student') / share('student')).toBeLessThan(0.5)
     const percent = (value: number) => `${Math.round(100 * value)} %`
-    expect(told).toContain(`${percent(share('islander'))} islanders, ${percent(share('commuter'))} commuters, ${percent(share('holiday'))} holiday makers, ${percent(share('freight'))} in freight`)
-    expect(told).toContain(`${percent(heard('islander'))} are islanders, ${percent(heard('commuter'))} commuters, ${percent(heard('holiday'))} holiday makers and ${percent(heard('freight'))} in freight`)
+    expect(told).toContain(`${percent(share('islander'))} islanders, ${percent(share('commuter'))} commuters, ${percent(share('holiday'))} holiday makers, ${percent(share('student'))} students, ${percent(share('freight'))} in freight`)
+    expect(told).toContain(`${percent(heard('islander'))} are islanders, ${percent(heard('commuter'))} commuters, ${percent(heard('holiday'))} holiday makers, ${percent(heard('student'))} students and ${percent(heard('freight'))} in freight`)
   })
 })
 
