@@ -31,7 +31,7 @@ const same: Readonly<Record<string, readonly string[]>> = {
   all: ['column-crps', 'column-gini'],
   de: ['column-base', 'column-segment', 'term-drift', 'term-segment', 'term-survey-base'],
   fr: ['column-date', 'column-direction', 'column-effective_base', 'column-importance', 'column-mentions', 'column-segment', 'importance-heading', 'label-importance', 'severity-notes', 'span-base', 'term-base', 'term-importance', 'term-mention', 'term-points', 'term-segment', 'when-base'],
-  pt: ['column-segment', 'term-segment'],
+  pt: ['span-base', 'term-base', 'when-base'],
 }
 
 /** Messages of the families that the program calls by a name, which nobody calls: no such chart, column, table, term or level. */
