@@ -93,7 +93,7 @@ export async function analyse(
     grid: timeline.grid, interval: spec.interval,
     accounting: readAccounting(tables, spec.facts),
     opinion,
-    decomposition: readDecomposition(reading),
+    decomposition: readDecomposition(reading, spec.interval),
     venues: readVenues(reading),
     topics: readLevels(reading, 'topic').map(({ name, ...rest }) => ({ topic: name, ...rest })),
     posters: readLevels(reading, 'poster').map(({ name, ...rest }) => ({ poster: name, ...rest })),

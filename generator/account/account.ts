@@ -39,6 +39,8 @@ export interface Account {
   readonly words: string | null
   readonly preparedBy: string | null
   readonly reviewedBy: string | null
+  /** Whether one person may both prepare a review and review it before it is sealed. */
+  readonly onePersonSeals: boolean
   /** Fewest authors of a group that may be shown. */
   readonly smallestGroup: number
   /** Keys that are given and checked but not used by this version. */

@@ -32,7 +32,7 @@ export function accountOf(folder: string, entries: Entries, found: Found, given:
     benchmark: table('benchmark'), customers: entries.customers ?? null, codingAudit: table('coding_audit'), importance: table('importance'),
     events: table('events'), outcome: table('outcome'),
     template: entries.template ?? null, theme: entries.theme ?? null, notes: entries.notes ?? null, words: entries.words ?? null,
-    preparedBy: entries.prepared_by ?? null, reviewedBy: entries.reviewed_by ?? null,
+    preparedBy: entries.prepared_by ?? null, reviewedBy: entries.reviewed_by ?? null, onePersonSeals: entries.one_person_seals,
     smallestGroup: entries.smallest_group,
     givenNotUsed: laterKeys.filter((key) => given.includes(key)),
     places,

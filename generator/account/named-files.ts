@@ -22,14 +22,19 @@ export interface NamedFiles {
   readonly faults: readonly Fault[]
 }
 
-/** Look for every file that the account names. */
-export async function findNamedFiles(folder: string, entries: SoundEntries, places: Readonly<Record<string, string>>): Promise<NamedFiles> {
+/**
+ * Look for every file that the account names.
+ *
+ * @param archived - as an archive keeps an account: without mentions, and without a folder of notes where the period had none
+ */
+export async function findNamedFiles(folder: string, entries: SoundEntries, places: Readonly<Record<string, string>>, archived: boolean): Promise<NamedFiles> {
   const found = new Map<string, readonly string[]>()
   const faults: Fault[] = []
-  for (const named of namedBy(entries)) {
+  for (const named of namedBy(entries).filter(({ path }) => !archived || path[0] !== 'mentions')) {
     const place = placeOf(places, named.path)
     const result: Found = named.what === 'folder' ? await findFolder(folder, named.pattern) : await findFiles(folder, named.pattern)
     if (result.kind === 'outside') faults.push(faultOf('account-path-outside', place, { path: result.path }))
+    else if (result.kind === 'none' && archived && named.what === 'folder') continue
     else if (result.kind === 'none') faults.push(faultOf('account-file-absent', place, { path: named.pattern, what: named.what }))
     else {
       const odd = result.files.filter((file) => named.kinds.length > 0 && !named.kinds.some((kind) => file.endsWith(kind)))

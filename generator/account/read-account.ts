@@ -15,9 +15,10 @@ import { readPlacedYaml } from './yaml-places.ts'
  * Read and check account.yaml of an account folder:
  * text → YAML with places → shape of each key → what hangs together → the files it names → Account.
  *
+ * @param options.archived - the folder is what an archive keeps of an account: the files of mentions are not there, nor looked for
  * @throws {InputFault} with every fault that the file has, not only the first
  */
-export async function readAccount(folder: string): Promise<Account> {
+export async function readAccount(folder: string, { archived = false }: { readonly archived?: boolean } = {}): Promise<Account> {
   const text = await accountText(folder)
   const { value, places, faults } = readPlacedYaml(text)
   if (faults.length > 0) throw new InputFault(faults)
@@ -26,7 +27,7 @@ export async function readAccount(folder: string): Promise<Account> {
   }
   const { entries, faults: wrongShapes } = soundEntries(value as Readonly<Record<string, unknown>>, places)
   const root = await realpath(folder)
-  const named = await findNamedFiles(root, entries, places)
+  const named = await findNamedFiles(root, entries, places, archived)
   const all: readonly Fault[] = [...wrongShapes, ...combinationFaults(entries, places), ...named.faults]
   if (all.length > 0) throw new InputFault(all)
   return accountOf(root, entries as Entries, named.found, Object.keys(value), places)

@@ -89,6 +89,7 @@ export const accountShape = {
   words: text.optional(),
   prepared_by: text.optional(),
   reviewed_by: text.optional(),
+  one_person_seals: z.boolean().default(false),
   smallest_group: z.number().int(expected.smallestGroup).min(10, expected.smallestGroup).default(10),
 } as const
 

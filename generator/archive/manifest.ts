@@ -9,6 +9,13 @@ export const keptFile = z.strictObject({ path: inside, bytes: z.int().min(0), sh
 /** A file that is kept, and the hash by which it is known again. */
 export type KeptFile = z.infer<typeof keptFile>
 
+/**
+ * What a review was made with: the same inputs give the same files with the same version, model, Node and browser. `runtime` is Node's version and
+ * the kind of machine; `browser` printed the PDF, null where none did.
+ */
+export const madeWith = z.strictObject({ version: z.string(), model: z.string(), runtime: z.string(), browser: z.string().nullable() })
+export type MadeWith = z.infer<typeof madeWith>
+
 /** What was sealed, when, by whom, made by which program from what, and what was sealed before it. */
 export const manifestSchema = z.strictObject({
   schema: z.literal('tareline-manifest/1'),
@@ -25,7 +32,7 @@ export const manifestSchema = z.strictObject({
   sealed_at: z.iso.datetime(),
   prepared_by: z.string(),
   reviewed_by: z.string(),
-  program: z.strictObject({ version: z.string(), model: sha256 }),
+  program: madeWith,
   seed: z.int().min(0),
   /** Every file of the folder but this one, sorted by path. */
   files: z.array(keptFile),

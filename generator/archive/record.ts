@@ -1,15 +1,15 @@
-import { readFile } from 'node:fs/promises'
+import { readFile, stat } from 'node:fs/promises'
 import { join } from 'node:path'
 import { z } from 'zod'
-import { filesOf } from './verify-archive.ts'
-import { keptFile, sha256Of, type KeptFile } from './manifest.ts'
+import { hashOf } from '../intake/input-file.ts'
+import { keptFile, madeWith, type KeptFile } from './manifest.ts'
 
 /** What a draft was made from and what it holds: without it nobody could say later that a seal holds what was reviewed. */
 export const recordSchema = z.strictObject({
   schema: z.literal('tareline-record/1'),
   account: z.string(),
   period: z.string(),
-  program: z.strictObject({ version: z.string(), model: z.string() }),
+  program: madeWith,
   seed: z.int().min(0),
   prepared_by: z.string().nullable(),
   reviewed_by: z.string().nullable(),
@@ -35,20 +35,24 @@ export async function readRecord(draft: string): Promise<BuildRecord | null> {
   }
 }
 
-/** A file as it is now. */
+/** A file as it is now. @throws {InputFault} `file-unreadable` */
 export async function fingerprint(folder: string, path: string): Promise<KeptFile> {
-  const content = await readFile(join(folder, path))
-  return { path, bytes: content.length, sha256: sha256Of(content) }
+  const sha256 = await hashOf(folder, path)
+  return { path, bytes: (await stat(join(folder, path))).size, sha256 }
 }
 
-/** Every file of a folder but the named ones, as they are now, sorted by path. */
-export async function fingerprints(folder: string, leftOut: (path: string) => boolean = () => false): Promise<readonly KeptFile[]> {
-  const paths = (await filesOf(folder)).filter((path) => !leftOut(path))
-  return Promise.all(paths.map((path) => fingerprint(folder, path)))
+/** Files as they are now, one after the other: there may be thousands, of any size. */
+export async function fingerprints(folder: string, paths: readonly string[]): Promise<readonly KeptFile[]> {
+  const found: KeptFile[] = []
+  for (const path of paths) found.push(await fingerprint(folder, path))
+  return found
 }
 
 /** Those of the recorded files that are not there any more, or not as they were. */
 export async function changedSince(folder: string, recorded: readonly KeptFile[]): Promise<readonly string[]> {
-  const now = await Promise.all(recorded.map(({ path }) => fingerprint(folder, path).catch(() => null)))
-  return recorded.filter(({ sha256 }, i) => now[i]?.sha256 !== sha256).map(({ path }) => path)
+  const changed: string[] = []
+  for (const { path, sha256 } of recorded) {
+    if (await hashOf(folder, path).catch(() => null) !== sha256) changed.push(path)
+  }
+  return changed
 }

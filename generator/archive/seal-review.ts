@@ -3,14 +3,18 @@ import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, type Fault } from '../faults/fault.ts'
 import type { Disk } from './disk.ts'
 import { chainEndName, manifestName, manifestSchema, sealName, sha256Of, writtenManifest, type ChainEnd, type KeptFile, type Manifest } from './manifest.ts'
-import { sealedInOrder, unfinishedPrefix } from './read-archive.ts'
-import { changedSince, fingerprints, readRecord, recordName, type BuildRecord } from './record.ts'
-import { verifyArchive, type Verified } from './verify-archive.ts'
+import { readArchive, sealedInOrder, unfinishedPrefix } from './read-archive.ts'
+import { changedSince, readRecord, recordName, type BuildRecord } from './record.ts'
+import { filesOf, verifyArchive, type Verified } from './verify-archive.ts'
 
 export interface SealRequest {
   /** Of the account, absolute. */
   readonly folder: string
+  /** Its name. */
+  readonly account: string
   readonly period: string
+  /** Every file of the account that a build of the period would read now. */
+  readonly inputs: readonly string[]
   /** Why a sealed period is sealed again; null for a first seal. */
   readonly reason: string | null
   /** Whether one person may both prepare and review. */
@@ -56,6 +60,7 @@ export async function sealReview(request: SealRequest): Promise<Sealed> {
   } satisfies Record<keyof Manifest, unknown>)
   const written = writtenManifest(manifest)
   await disk.write(join(beside, manifestName), written)
+  if (sealedInOrder(await readArchive(join(folder, 'archive'))).at(-1)?.hash !== order.at(-1)?.hash) throw new InputFault([faultOf('archive-busy', 'archive', {})])
   await disk.rename(beside, join(folder, 'archive', name))
   await moveEnd(join(folder, 'archive'), { schema: 'tareline-chain-end/1', sequence: manifest.sequence, manifest: sha256Of(written) }, disk)
   return { name, folder: join(folder, 'archive', name), manifest }
@@ -96,16 +101,18 @@ function revisionOf(order: readonly { readonly manifest: Manifest }[], period: s
   return order.filter(({ manifest }) => manifest.period === period).length + 1
 }
 
-async function draftFaults({ folder, period, onePerson, program }: SealRequest, draft: string, record: BuildRecord | null): Promise<readonly Fault[]> {
+async function draftFaults({ folder, account, period, inputs: readNow, onePerson, program }: SealRequest, draft: string, record: BuildRecord | null): Promise<readonly Fault[]> {
   const place = `drafts/${period}`
-  const there = await fingerprints(draft).catch(() => null)
+  const there = await filesOf(draft).catch(() => null)
   if (there === null || there.length === 0) return [faultOf('draft-absent', place, { period })]
   if (record === null) return [faultOf('draft-unrecorded', `${place}/${recordName}`, {})]
+  if (record.period !== period || record.account !== account) return [faultOf('draft-of-another', `${place}/${recordName}`, { account: record.account, period: record.period })]
   const faults: Fault[] = []
   const known = new Set([...record.files.map(({ path }) => path), recordName])
-  const changed = [...await changedSince(draft, record.files), ...there.map(({ path }) => path).filter((path) => !known.has(path))]
+  const changed = [...await changedSince(draft, record.files), ...there.filter((path) => !known.has(path))]
   if (changed.length > 0) faults.push(faultOf('draft-changed', place, { paths: changed }))
-  const inputs = await changedSince(folder, record.inputs)
+  const before = new Set(record.inputs.map(({ path }) => path))
+  const inputs = [...await changedSince(folder, record.inputs), ...readNow.filter((path) => !before.has(path))]
   if (inputs.length > 0) faults.push(faultOf('inputs-changed', place, { paths: inputs }))
   if (record.program.version !== program.version || record.program.model !== program.model) faults.push(faultOf('program-changed', place, { built: record.program.version }))
   if (!record.passed) faults.push(faultOf('checks-failed', place, {}))
@@ -115,8 +122,13 @@ async function draftFaults({ folder, period, onePerson, program }: SealRequest, 
 
 function peopleFaults({ prepared_by: prepared, reviewed_by: reviewed }: BuildRecord, onePerson: boolean): readonly Fault[] {
   const missing = [...(prepared === null ? ['prepared_by'] : []), ...(reviewed === null ? ['reviewed_by'] : [])]
-  if (prepared !== null && prepared === reviewed && !onePerson) return [faultOf('same-person', 'account.yaml', { person: prepared })]
+  if (prepared !== null && reviewed !== null && folded(prepared) === folded(reviewed) && !onePerson) return [faultOf('same-person', 'account.yaml', { person: prepared })]
   return missing.map((key) => faultOf('people-missing', 'account.yaml', { key }))
+}
+
+/** A name however it was typed. */
+function folded(name: string): string {
+  return name.normalize('NFKC').toLowerCase().replace(/\s+/g, ' ').trim()
 }
 
 function archiveFaults({ period, reason }: SealRequest, { archive, faults }: Verified): readonly Fault[] {

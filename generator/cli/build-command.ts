@@ -8,6 +8,7 @@ import type { Program } from '../program/program.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
 import { showProgress } from './show-progress.ts'
 import type { Speaker, SpeakerOptions } from './speaker.ts'
+import { runWatch } from './watch-command.ts'
 import { listenForStop } from './stop-signals.ts'
 
 export interface BuildFlags extends SpeakerOptions {
@@ -17,12 +18,19 @@ export interface BuildFlags extends SpeakerOptions {
   readonly seed: number
   readonly threads?: number
   readonly browser?: string
+  readonly watch?: boolean
 }
 
 /** `tareline build`: account by account; a faulty one does not stop the others. */
 export async function runBuild(program: Program, folders: readonly string[], flags: BuildFlags, speaker: Speaker): Promise<ExitCode> {
   if (flags.out !== undefined && folders.length > 1) {
     speaker.faults([{ code: 'usage', place: '--out', message: 'Unexpected --out with several accounts, expected one.', mend: 'Build one account at a time, or leave --out out.' }])
+    return 2
+  }
+  if (flags.watch === true) {
+    const unfit = folders.length > 1 ? 'several accounts' : flags.json === true ? '--json' : null
+    if (unfit === null) return runWatch(program, folders[0], flags, speaker)
+    speaker.faults([{ code: 'usage', place: '--watch', message: `Unexpected --watch with ${unfit}, expected one account and words for a person.`, mend: 'Watch one account, without --json.' }])
     return 2
   }
   const browsers = sharedBrowser(flags)

@@ -1,10 +1,11 @@
-import { basename, resolve } from 'node:path'
+import { basename, join, resolve } from 'node:path'
 import type { Accounting, Timeline } from '../../model/intake/intake-tables.ts'
 import { readAccount } from '../account/read-account.ts'
 import type { RawInputs } from '../inputs/raw-inputs.ts'
 import { sampleForAudit, type AuditPost } from '../intake/audit-sample.ts'
 import { csvField } from '../intake/rejects.ts'
 import { checkAccount } from '../review/check-account.ts'
+import { restoreDrafts } from '../review/restore-drafts.ts'
 import { unlessStopped } from '../review/stopping.ts'
 import type { Program } from '../program/program.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
@@ -23,6 +24,7 @@ export async function runCheck(program: Program, folder: string, flags: CheckFla
   const shown = showProgress(speaker, false, basename(resolve(folder)))
   const { stop, close } = listenForStop()
   try {
+    await restoreDrafts(join(folder, 'drafts'))
     const { tables: { accounting, timeline }, inputs } = await unlessStopped(stop, checkAccount(program, folder, flags.rejects, shown.progress))
     const sample = flags.auditSample === undefined ? null
       : await unlessStopped(stop, sampleForAudit(await readAccount(folder), { size: flags.auditSample, seed: flags.seed, progress: shown.progress.detail }))

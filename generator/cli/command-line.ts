@@ -3,8 +3,10 @@ import { thisProgram } from '../program/program.ts'
 import { runBuild, type BuildFlags } from './build-command.ts'
 import { runCheck, type CheckFlags } from './check-command.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
+import { runSeal, type SealFlags } from './seal-command.ts'
 import { createSpeaker, type Streams } from './speaker.ts'
 import { runStart, type StartFlags } from './start-command.ts'
+import { runVerify, type VerifyFlags } from './verify-command.ts'
 
 /**
  * Parse the arguments and run the command they name.
@@ -58,10 +60,24 @@ function describe(streams: Streams, done: (code: ExitCode) => void): Command {
     .option('--period <period>', 'e.g. 2026-10, 2026-Q4, 2026-W44; default: the last whole one that the mentions cover')
     .option('--out <dir>', 'folder of the draft; default: ACCOUNT/drafts/PERIOD')
     .option('--no-pdf', 'leave out the PDF')
+    .option('--watch', 'stay, and render a page beside the draft anew at each change of template, words, looks or notes')
     .option('--seed <number>', 'seed of the draws; the same seed gives the same review', wholeNumber, 1)
     .option('--threads <number>', 'threads to work with; the review does not depend on it', wholeNumber)
     .option('--browser <file>', 'browser that prints the PDF; default: the first that is found')
     .action(async (accounts: string[], flags: BuildFlags) => { done(await runBuild(program, accounts, flags, createSpeaker(flags, streams))) })
+
+  quietly(tareline.command('seal').argument('<account>', 'folder with an account.yaml'))
+    .description('sign the draft of a period off into ACCOUNT/archive, for good')
+    .requiredOption('--period <period>', 'whose draft, e.g. 2026-10, 2026-Q4, 2026-W44')
+    .option('--revise <reason>', 'why a sealed period is sealed again: the first seal stays, the new one stands beside it', someText)
+    .action(async (account: string, flags: SealFlags) => { done(await runSeal(program, account, flags, createSpeaker(flags, streams))) })
+
+  quietly(tareline.command('verify').argument('<account>', 'folder with an archive'))
+    .description('hash every sealed file again and walk the chain of seals')
+    .option('--rebuild', 'make every sealed review again from its own tables and inputs, and compare')
+    .option('--threads <number>', 'threads to work with; the reviews do not depend on it', wholeNumber)
+    .option('--browser <file>', 'browser that prints the PDFs again; default: the first that is found')
+    .action(async (account: string, flags: VerifyFlags) => { done(await runVerify(program, account, flags, createSpeaker(flags, streams))) })
   return tareline
 }
 
@@ -69,4 +85,9 @@ function wholeNumber(text: string): number {
   const value = Number(text)
   if (!/^\d+$/.test(text) || !Number.isSafeInteger(value)) throw new InvalidArgumentError('expected a whole number of 0 or more.')
   return value
+}
+
+function someText(text: string): string {
+  if (text.trim() === '') throw new InvalidArgumentError('expected a text.')
+  return text.trim()
 }

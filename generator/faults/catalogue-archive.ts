@@ -11,6 +11,9 @@ export const archiveWordings = {
   'draft-unrecorded': (_: object): Wording => ({
     unexpected: 'draft without a record of what it was made from', expected: 'record.json beside it', mend: 'Build the period again.',
   }),
+  'draft-of-another': (details: { readonly account: string; readonly period: string }): Wording => ({
+    unexpected: `draft of ${details.period} of ${details.account}`, expected: 'a draft of the account and period to be sealed', mend: 'Build the period again, without --out.',
+  }),
   'draft-without-pdf': (_: object): Wording => ({
     unexpected: 'draft without a PDF', expected: 'review.pdf beside review.html', mend: 'Build the period again without --no-pdf.',
   }),
@@ -44,6 +47,11 @@ export const archiveWordings = {
   'archive-unsound': (_: object): Wording => ({
     unexpected: 'archive that is not as it was sealed', expected: 'one that `tareline verify` finds sound', mend: 'Run `tareline verify`, mend what it names, then seal.',
   }),
+  'archive-busy': (_: object): Wording => ({ unexpected: 'seal that was put there meanwhile', expected: 'one seal at a time', mend: 'Seal again.' }),
+  'archive-unwritable': (details: { readonly reason: string }): Wording => ({
+    unexpected: `refusal to write (${details.reason})`, expected: 'an archive that can be written, with room for a seal',
+    mend: 'Give this user the right to write there, or make room: the archive is as it was.',
+  }),
   'archive-empty': (_: object): Wording => ({ unexpected: 'absence of any seal', expected: 'an archive', mend: 'Seal a draft first.' }),
   'archive-entry-unknown': (_: object): Wording => ({ unexpected: 'entry', expected: 'seals only', mend: 'Move it elsewhere: the archive holds seals and nothing else.' }),
   'manifest-unreadable': (details: { readonly absent: boolean }): Wording => ({
@@ -63,4 +71,11 @@ export const archiveWordings = {
   }),
   'chain-end-differs': (_: object): Wording => ({ unexpected: 'manifest', expected: 'the one that chain-end.json names: one of the two was changed', mend: restore }),
   'chain-end-unreadable': (_: object): Wording => ({ unexpected: 'content', expected: 'the end of the chain of seals', mend: restore }),
+  'rebuild-differs': (details: { readonly found: string; readonly expected: string }): Wording => ({
+    unexpected: details.found, expected: details.expected,
+    mend: 'The same program made something else of the archived tables and inputs: one of them is not what the review was made from. Compare with a copy of the archive.',
+  }),
+  'rebuild-failed': (details: { readonly reason: string }): Wording => ({
+    unexpected: `content that no review can be made from (${details.reason})`, expected: 'the tables and inputs that the review was made from', mend: restore,
+  }),
 }

@@ -10,6 +10,8 @@ export interface Program {
   readonly version: string
   /** SHA-256 of the model's code: two programs that compute alike have the same. */
   readonly model: string
+  /** Node and the kind of machine, on which the last digits of a figure and the form of a date may depend. */
+  readonly runtime: string
   /** Folder of the house template, words, charts and theme. */
   readonly templates: string
 }
@@ -20,7 +22,7 @@ export function thisProgram(): Program {
   let root = here
   while (!existsSync(join(root, 'package.json'))) root = dirname(root)
   const { version } = z.object({ version: z.string() }).parse(JSON.parse(readFileSync(join(root, 'package.json'), 'utf8')))
-  return { root, version, model: digestOf(join(here, '..', '..', 'model')), templates: join(root, 'templates') }
+  return { root, version, model: digestOf(join(here, '..', '..', 'model')), runtime: `node ${process.versions.node} ${process.platform} ${process.arch}`, templates: join(root, 'templates') }
 }
 
 function digestOf(folder: string): string {

@@ -9,6 +9,7 @@ import type { Theme } from '../theme/theme.ts'
 import type { Words } from '../words/words.ts'
 import { drawChart } from './charts/draw-chart.ts'
 import type { ChartSpec } from './charts/chart-spec.ts'
+import { drawEach, type Drawings } from './drawings.ts'
 import { fontFaces } from './embedded-fonts.ts'
 import { frontOf, type Imprint } from './imprint.ts'
 import { pageBoxes } from './page-boxes.ts'
@@ -21,6 +22,8 @@ export interface Rendering {
   readonly words: Words
   readonly theme: Theme
   readonly imprint: Imprint
+  /** Where pictures may have been drawn before; default: each is drawn. */
+  readonly drawings?: Drawings
 }
 
 /**
@@ -44,11 +47,11 @@ export async function render(document: Document, rendering: Rendering): Promise<
  * Both sizes, of which the style sheet shows one. Each is a picture of its own to assistive technology (and so a Figure with its alternative in
  * a tagged PDF); the text alternative is written once, on the wide one, and the narrow one refers to it.
  */
-async function bothSizes({ chart, id, alt }: DrawingPlace, { tables, charts, words, theme }: Rendering): Promise<string> {
+async function bothSizes({ chart, id, alt }: DrawingPlace, { tables, charts, words, theme, drawings = drawEach }: Rendering): Promise<string> {
   const spec = charts.get(chart)
   if (spec === undefined) throw new Error(`Unexpected chart "${chart}", expected one of ${[...charts.keys()].join(', ')}`)
-  const wide = await drawChart({ ...spec, name: id }, tables, words, theme, 'wide')
-  const narrow = await drawChart({ ...spec, name: id }, tables, words, theme, 'narrow')
+  const wide = await drawChart({ ...spec, name: id }, tables, words, theme, 'wide', drawings)
+  const narrow = await drawChart({ ...spec, name: id }, tables, words, theme, 'narrow', drawings)
   return wide.replace('<svg ', () => `<svg id="drawing-${id}" class="for-wide" role="img" aria-label="${attributeText(alt)}" `)
     + narrow.replace('<svg ', () => `<svg class="for-narrow" role="img" aria-labelledby="drawing-${id}" `)
 }

@@ -2,27 +2,23 @@ import { dirname, join } from 'node:path'
 import type { Browser } from 'puppeteer'
 import type { Findings } from '../../model/findings/schema.ts'
 import type { Account } from '../account/account.ts'
+import { flattenIntake } from '../archive/flatten-intake.ts'
 import { openCache } from '../cache/cache.ts'
-import { compose } from '../compose/compose.ts'
-import { firstForecast, marginsAsked, placeInputs } from '../inputs/place-inputs.ts'
+import { firstForecast, marginsAsked } from '../inputs/place-inputs.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
 import { readIntake } from '../intake/read-intake.ts'
-import { print } from '../print/print.ts'
 import type { Program } from '../program/program.ts'
-import { imprintOf } from '../render/imprint.ts'
-import { render } from '../render/render.ts'
-import { tablesOf } from '../tables/tables-of.ts'
-import { attachmentsOf, dataFiles } from './data-files.ts'
 import { loadHouse, type House } from './house.ts'
-import { makeFindings, requireSteps } from './make-findings.ts'
+import { makeReview, type ReviewMaterial } from './make-review.ts'
+import { fingerprintHouse, recordInputs } from './record-inputs.ts'
 import type { Progress } from './stages.ts'
 import { unlessStopped } from './stopping.ts'
 import { openDraft, requireDraft, type DraftContents } from './write-draft.ts'
 
 /*
- *   account ──▶ intake tables ──▶ findings ──▶ document ──▶ review.html ──▶ review.pdf
- *          │    (readIntake)    (makeFindings)  (compose)     (render)        (print)
- *          └──▶ small inputs ──────▲
+ *   account ──▶ intake tables ──▶ review ──▶ draft, with a record of what it was made from
+ *          │    (readIntake)   (makeReview)  (openDraft)
+ *          └──▶ small inputs ─────▲
  *               (readSmallInputs)
  */
 
@@ -64,28 +60,30 @@ export async function buildReview(program: Program, account: Account, options: B
 }
 
 async function makeContents(
-  program: Program, account: Account, house: House, rejects: string, browser: Promise<Browser> | null, { period, threads, seed, progress }: BuildOptions,
+  program: Program, account: Account, house: House, rejects: string, browser: Promise<Browser> | null, options: BuildOptions,
 ): Promise<DraftContents> {
+  const { seed, threads, progress } = options
   progress.stage('intake')
+  const ofHouse = await fingerprintHouse(account, house)
+  const material = await readMaterial(account, rejects, options)
+  const review = await makeReview(program, account, house, material, { seed, threads, cache: openCache(join(account.folder, 'cache'), program.model), browser, progress })
+  const { period, diagnostics } = review.findings
+  return {
+    ...review, intake: flattenIntake(material.tables),
+    record: {
+      schema: 'tareline-record/1', account: account.account, period: period.name,
+      program: { version: program.version, model: program.model, runtime: program.runtime, browser: browser === null ? null : await (await browser).version() },
+      seed, prepared_by: account.preparedBy, reviewed_by: account.reviewedBy, passed: diagnostics.passed,
+      inputs: await recordInputs(account, house, period.name, ofHouse, material),
+    },
+  }
+}
+
+async function readMaterial(account: Account, rejects: string, { period, threads, progress }: BuildOptions): Promise<ReviewMaterial> {
   const inputs = await readSmallInputs(account)
   const tables = await readIntake(account, {
     period, threads, rejects, hindsightFrom: firstForecast(inputs),
     labels: inputs.audit !== null, margins: marginsAsked(inputs), progress: progress.detail,
   })
-  requireSteps(account, tables)
-  const small = placeInputs(inputs, account, tables.timeline)
-  progress.stage('fit')
-  const findings = await makeFindings(account, { tables, small, files: inputs.files }, house.words, {
-    seed, version: program.version, threads, cache: openCache(join(account.folder, 'cache'), program.model), progress,
-  })
-  progress.stage('document')
-  const figures = tablesOf(findings)
-  const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })
-  const html = await render(document, { tables: figures, charts: house.charts, words: house.words, theme: house.theme, imprint: imprintOf(findings, house.words) })
-  const data = dataFiles(findings, figures)
-  if (browser !== null) progress.stage('print')
-  const pdf = browser === null ? null : await print(html, await browser, {
-    title: document.title, author: account.preparedBy ?? account.brand, date: findings.period.end, language: document.lang,
-  }, attachmentsOf(data, house.words))
-  return { findings, data, html, pdf }
+  return { tables, inputs }
 }

@@ -7,7 +7,7 @@ import { isRead, readOwnFile, unreadFault } from '../compose/own-file.ts'
 import type { Template } from '../compose/template.ts'
 import { InputFault } from '../faults/fault.ts'
 import type { Program } from '../program/program.ts'
-import type { ChartSpec } from '../render/charts/chart-spec.ts'
+import { ownPlace, type ChartSpec } from '../render/charts/chart-spec.ts'
 import { drawChart } from '../render/charts/draw-chart.ts'
 import { loadCharts, loadOwnCharts } from '../render/load-charts.ts'
 import { tablesOf } from '../tables/tables-of.ts'
@@ -22,25 +22,51 @@ export interface House {
   readonly template: Template
   readonly words: Words
   readonly charts: ReadonlyMap<string, ChartSpec>
+  /** Names of those that are the account's. */
+  readonly ownCharts: readonly string[]
   readonly theme: Theme
+  /** What was read of the account, notes left out: relative to its folder, sorted. */
+  readonly files: readonly string[]
 }
 
-/** @throws {InputFault} a language without a catalogue, whatever is wrong in the account's template, sections and charts, a theme that is refused */
-export async function loadHouse(program: Program, account: Account): Promise<House> {
+/**
+ * Read what a document is made with; whether template and charts fit the findings is looked at when they are used.
+ *
+ * @throws {InputFault} a language without a catalogue, files that can't be read, charts and a theme that are refused
+ */
+export async function readHouse(program: Program, account: Account): Promise<House> {
   const [template, words, houseCharts, theme] = await Promise.all([
     loadTemplate(program.templates, account),
     wordsOf(program, account),
     loadCharts(join(program.templates, 'charts')),
     loadTheme(join(program.templates, 'theme'), account.theme === null ? undefined : { folder: account.folder, path: account.theme, place: account.places['theme'] ?? 'account.yaml theme' }),
   ])
+  const own = await loadOwnCharts(account, { tables: tablesOf(blankFindings), words })
+  return { template, words, charts: new Map([...houseCharts, ...own]), ownCharts: [...own.keys()], theme, files: filesRead(account, template, words, own, theme) }
+}
+
+/**
+ * @param options.archived - the account is out of an archive, which has the notes of one period only: words that another's call may be there, and are no fault
+ * @throws {InputFault} a language without a catalogue, whatever is wrong in the account's template, sections and charts, a theme that is refused
+ */
+export async function loadHouse(program: Program, account: Account, { archived = false }: { readonly archived?: boolean } = {}): Promise<House> {
+  const house = await readHouse(program, account)
+  const { template, words, charts, theme } = house
   const tables = tablesOf(blankFindings)
-  const own = await loadOwnCharts(account, { tables, words })
-  const charts = new Map([...houseCharts, ...own])
-  requireUsed(words, template, charts, account)
+  if (!archived) requireUsed(words, template, charts, account)
   // a template that is wrong, or a chart that can't be drawn, is told before anything is computed
   compose({ template, findings: blankFindings, tables, charts: [...charts.keys()], words })
-  for (const chart of own.values()) await drawChart(chart, tables, words, theme)
-  return { template, words, charts, theme }
+  for (const name of house.ownCharts) await drawChart(charts.get(name) ?? { name }, tables, words, theme)
+  return house
+}
+
+function filesRead(account: Account, { review, sections, ownSections, included }: Template, words: Words, charts: ReadonlyMap<string, ChartSpec>, theme: Theme): readonly string[] {
+  return [...new Set([
+    ...(account.template === null ? [] : [review.place]), ...ownSections.map((name) => sections[name].place),
+    ...Object.values(included).filter(isRead).map(({ place }) => place),
+    ...[...charts.values()].flatMap((chart) => chart[ownPlace] ?? []),
+    ...(words.own === undefined ? [] : [words.own.place]), ...theme.files,
+  ])].sort()
 }
 
 async function wordsOf(program: Program, { folder, locale, words, places }: Account): Promise<Words> {

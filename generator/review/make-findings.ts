@@ -11,8 +11,7 @@ import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
 import { startFitThreads, type FitThreads } from '../threads/fit-threads.ts'
 import { startRefitThreads } from '../threads/refit-threads.ts'
-import { wordAdvice } from '../words/advice.ts'
-import { wordCaveat } from '../words/caveats.ts'
+import { wordFindings } from '../words/word-findings.ts'
 import type { Words } from '../words/words.ts'
 import type { Progress } from './stages.ts'
 
@@ -36,11 +35,9 @@ export interface FitOptions {
 /** Tables and inputs ──model──▶ analysis ──worded──▶ findings, checked against their schema. */
 export async function makeFindings(account: Account, inputs: ReviewInputs, words: Words, options: FitOptions): Promise<Findings> {
   const spec = specOf(account, options.seed)
-  const worded = ({ caveats, advice, ...computed }: Analysis): Findings => findingsSchema.parse({
-    ...computed,
+  const worded = (analysis: Analysis): Findings => findingsSchema.parse({
+    ...wordFindings(analysis, words),
     account: account.account, brand: account.brand, locale: account.locale,
-    caveats: caveats.map((caveat) => ({ ...caveat, ...wordCaveat(words, caveat.code, caveat.figures) })),
-    advice: advice.map((piece) => ({ ...piece, ...wordAdvice(words, piece.code, piece.figures) })),
     inputs: [...inputs.tables.accounting.inputs, ...inputs.files].map((input) => ({ ...input })),
     program: { version: options.version, seed: options.seed },
   })

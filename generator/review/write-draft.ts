@@ -1,20 +1,22 @@
 import { chmod, mkdir, mkdtemp, readdir, rename, rm, rmdir, stat, writeFile } from 'node:fs/promises'
-import { join } from 'node:path'
-import type { Findings } from '../../model/findings/schema.ts'
+import { basename, join } from 'node:path'
+import type { FlatIntake } from '../archive/flatten-intake.ts'
+import { writeIntake } from '../archive/intake-files.ts'
+import { fingerprints, recordName, type BuildRecord } from '../archive/record.ts'
+import { filesOf } from '../archive/verify-archive.ts'
 import { faultOf } from '../faults/catalogue.ts'
-import { InputFault, MachineFault } from '../faults/fault.ts'
-import type { DataFile } from './data-files.ts'
+import { InputFault } from '../faults/fault.ts'
+import { writeRefusal } from '../faults/write-refusal.ts'
+import type { MadeReview } from './make-review.ts'
+import { asideName, restoreDrafts } from './restore-drafts.ts'
 
 /** Everything a draft folder may hold: a folder with anything else in it is somebody's, and is left alone. */
-const ours = new Set(['review.html', 'review.pdf', 'findings.json', 'tables', 'rejects'])
+const ours = new Set(['review.html', 'review.pdf', 'findings.json', 'tables', 'rejects', 'intake', recordName])
 
-export interface DraftContents {
-  readonly findings: Findings
-  /** `findings.json` and the tables. */
-  readonly data: readonly DataFile[]
-  readonly html: string
-  /** null with `--no-pdf`. */
-  readonly pdf: Uint8Array | null
+export interface DraftContents extends MadeReview {
+  readonly intake: FlatIntake
+  /** All but the draft's own files. */
+  readonly record: Omit<BuildRecord, 'files'>
 }
 
 /** A folder beside the draft's, to be filled and then put in its place: a failure leaves what was there untouched. */
@@ -37,6 +39,7 @@ export async function openDraft(parent: string): Promise<UnfinishedDraft> {
   const made = await writing(parent, () => mkdir(parent, { recursive: true }))
   const unfinished = await writing(parent, () => mkdtemp(join(parent, '.unfinished-')))
   await sweep(parent)
+  await restoreDrafts(parent)
   return {
     rejects: join(unfinished, 'rejects'),
     finish: async (folder, contents) => {
@@ -55,20 +58,12 @@ export async function openDraft(parent: string): Promise<UnfinishedDraft> {
   }
 }
 
-/** What a file system says when it does not take a draft: no right, no room, no place. */
-const refusals: ReadonlySet<string> = new Set(['EACCES', 'EPERM', 'EROFS', 'ENOSPC', 'EDQUOT', 'ENOTDIR', 'EEXIST', 'ENAMETOOLONG', 'ENOENT'])
-
 async function writing<T>(parent: string, write: () => Promise<T>): Promise<T> {
   try {
     return await write()
   } catch (error) {
-    throw refused(parent, error)
+    throw writeRefusal('draft-unwritable', parent, error)
   }
-}
-
-function refused(folder: string, error: unknown): unknown {
-  const { code } = error as NodeJS.ErrnoException
-  return code !== undefined && refusals.has(code) ? new MachineFault(faultOf('draft-unwritable', folder, { reason: code })) : error
 }
 
 const dayLong = 24 * 60 * 60 * 1000
@@ -93,22 +88,26 @@ async function sweep(parent: string): Promise<void> {
 export async function requireDraft(folder: string): Promise<void> {
   const found = await readdir(folder).catch((error: NodeJS.ErrnoException) => {
     if (error.code === 'ENOENT') return []
-    throw error.code === 'ENOTDIR' ? new InputFault([faultOf('out-not-a-draft', folder, { entry: 'a file' })]) : refused(folder, error)
+    throw error.code === 'ENOTDIR' ? new InputFault([faultOf('out-not-a-draft', folder, { entry: 'a file' })]) : writeRefusal('draft-unwritable', folder, error)
   })
   const foreign = found.find((entry) => !ours.has(entry))
   if (foreign !== undefined) throw new InputFault([faultOf('out-not-a-draft', folder, { entry: foreign })])
 }
 
-async function fill(folder: string, { data, html, pdf }: DraftContents): Promise<void> {
+/** The record comes last: it says what everything else is. */
+async function fill(folder: string, { data, html, pdf, intake, record }: DraftContents): Promise<void> {
   await mkdir(join(folder, 'tables'))
   await writeFile(join(folder, 'review.html'), html)
   if (pdf !== null) await writeFile(join(folder, 'review.pdf'), pdf)
   for (const { path, bytes } of data) await writeFile(join(folder, path), bytes)
+  await writeIntake(join(folder, 'intake'), intake)
+  const whole: BuildRecord = { ...record, files: [...await fingerprints(folder, await filesOf(folder))] }
+  await writeFile(join(folder, recordName), `${JSON.stringify(whole, null, 2)}\n`)
 }
 
-/** The old folder steps aside before the new one takes its name, so that at every moment one of the two is whole. */
+/** The old folder steps aside before the new one takes its name, so that at every moment one of the two is whole; between the two, `restoreDrafts` knows where it is. */
 async function replace(folder: string, unfinished: string): Promise<void> {
-  const aside = `${unfinished}-before`
+  const aside = asideName(unfinished, basename(folder))
   const before = await rename(folder, aside).then(() => true, () => false)
   await rename(unfinished, folder)
   if (before) await rm(aside, { recursive: true, force: true })

@@ -27,4 +27,5 @@ export const furtherKeys = `# What follows is optional: take away the hash in fr
 # notes: notes                        # a folder with the analyst's words for a period, such as notes/2026-10.md
 # prepared_by: Name, desk
 # reviewed_by: Name, role
+# one_person_seals: true              # one person may do both; left out, a review is sealed by two
 `

@@ -15,14 +15,14 @@ export function opinionTable({ opinion, method }: Findings): Table {
   })))
 }
 
-/** The same, period by period. `start` is the period's first day, for a time axis. */
+/** The same, period by period. `start` is the period's first day, for a time axis. A period that is the base itself has no change since. */
 export function periodsTable({ opinion, method }: Findings): Table {
   return makeTable('periods', {
     period: 'text', start: 'date', adjusted: 'points', low: 'points', high: 'points', since_base: 'change', since_base_low: 'change', since_base_high: 'change',
     raw: 'points', mentions: 'count', authors: 'count',
   }, opinion.periods.map((of) => ({
     period: of.period, start: periodStart(of.period), adjusted: of.adjusted.mean, low: of.adjusted.low, high: of.adjusted.high,
-    ...estimateCells('since_base', of.since_base),
+    ...estimateCells('since_base', of.since_base.sd === 0 ? null : of.since_base),
     raw: withheldBelow(of.raw, of.authors, method.smallest_group), mentions: of.mentions, authors: of.authors,
   })))
 }

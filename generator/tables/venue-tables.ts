@@ -2,7 +2,7 @@ import type { Findings } from '../../model/findings/schema.ts'
 import { estimateCells, makeTable, withheldBelow } from './make-table.ts'
 import type { Table } from './table.ts'
 
-/** One row per venue, the period under review. */
+/** One row per venue, the period under review; where that is the base itself there is no drift since. */
 export function venuesTable({ venues, method }: Findings): Table {
   return makeTable('venues', {
     venue: 'text', label: 'text', mentions: 'count', authors: 'count', share: 'share', share_base: 'share', raw: 'points',
@@ -11,8 +11,8 @@ export function venuesTable({ venues, method }: Findings): Table {
   }, venues.map((of) => ({
     venue: of.venue, label: of.label, mentions: of.mentions, authors: of.authors, share: of.share, share_base: of.share_base,
     raw: withheldBelow(of.raw, of.authors, method.smallest_group),
-    ...estimateCells('level_base', of.level_base), ...estimateCells('level', of.level), ...estimateCells('drift', of.drift), ...estimateCells('slope', of.slope),
-    probability_drift_down: of.probability_drift_down,
+    ...estimateCells('level_base', of.level_base), ...estimateCells('level', of.level), ...estimateCells('drift', method.base_is_period ? null : of.drift), ...estimateCells('slope', of.slope),
+    probability_drift_down: method.base_is_period ? null : of.probability_drift_down,
     spread: withheldBelow(of.spread, of.authors, method.smallest_group),
   })))
 }

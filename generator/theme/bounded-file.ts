@@ -21,11 +21,8 @@ export interface NamedFile {
  * @param most - bytes
  * @throws {InputFault} a path that leaves the account folder, by a link too; that names no file, or several; another kind; more bytes
  */
-export async function readBounded({ folder, path, place }: NamedFile, kinds: readonly string[], most: number): Promise<Uint8Array> {
-  const found = await findFiles(folder, path)
-  if (found.kind === 'outside') throw new InputFault([faultOf('account-path-outside', place, { path: found.path })])
-  if (found.kind === 'none' || found.files.length !== 1) throw new InputFault([faultOf('account-file-absent', place, { path, what: 'file' })])
-  const [file] = found.files
+export async function readBounded(named: NamedFile, kinds: readonly string[], most: number): Promise<Uint8Array> {
+  const [{ folder, place }, file] = [named, await findNamed(named)]
   if (!kinds.some((kind) => file.toLowerCase().endsWith(kind))) throw new InputFault([faultOf('account-file-kind', place, { path: file, kinds })])
   const handle = await open(join(folder, file))
   try {
@@ -37,4 +34,16 @@ export async function readBounded({ folder, path, place }: NamedFile, kinds: rea
   } finally {
     await handle.close()
   }
+}
+
+/**
+ * The file that a path of a theme means, relative to the account folder.
+ *
+ * @throws {InputFault} a path that leaves the account folder, by a link too; that names no file, or several
+ */
+export async function findNamed({ folder, path, place }: NamedFile): Promise<string> {
+  const found = await findFiles(folder, path)
+  if (found.kind === 'outside') throw new InputFault([faultOf('account-path-outside', place, { path: found.path })])
+  if (found.kind === 'none' || found.files.length !== 1) throw new InputFault([faultOf('account-file-absent', place, { path, what: 'file' })])
+  return found.files[0]
 }

@@ -2,7 +2,7 @@ import { readFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import { parse } from 'yaml'
 import { InputFault } from '../faults/fault.ts'
-import type { NamedFile } from './bounded-file.ts'
+import { findNamed, type NamedFile } from './bounded-file.ts'
 import { customProperties } from './custom-properties.ts'
 import { chartThemeOf, houseLooks } from './house-looks.ts'
 import { readLogo } from './logo/read-logo.ts'
@@ -39,6 +39,7 @@ export async function loadTheme(folder: string, own?: NamedFile): Promise<Theme>
     faces: typeface.faces, advances: typeface.advances,
     chart: chartThemeOf(house, palette, typeface.family),
     paper, logo, cover, running: { head: running.head ?? null, foot: running.foot ?? null },
+    files: own === undefined ? [] : await Promise.all([own, ...logoFiles(file, root), ...typefaceFiles(file, root)].map(findNamed)),
   }
 }
 
@@ -49,15 +50,34 @@ function judged(palette: Palette, file: ThemeFile): Palette {
   return palette
 }
 
-async function typefaceOf({ entries, placeOf }: ThemeFile, folder: string, house: string): Promise<Typeface> {
-  const { typeface } = entries
+async function typefaceOf(file: ThemeFile, folder: string, house: string): Promise<Typeface> {
+  const { typeface } = file.entries
   if (typeof typeface === 'string') return shippedTypeface(typeface, house)
-  const named = (key: string, path: string): NamedFile => ({ folder, path, place: placeOf(['typeface', key]) })
+  const named = (key: FontKey, path: string): NamedFile => fontFile(file, folder, key, path)
   return ownTypeface({
     regular: named('regular', typeface.regular), semibold: typeface.semibold === undefined ? null : named('semibold', typeface.semibold), bold: named('bold', typeface.bold),
   })
 }
 
-async function logoOf({ entries: { logo }, placeOf }: ThemeFile, folder: string): Promise<Logo | null> {
-  return logo === undefined ? null : readLogo({ folder, path: logo.file, place: placeOf(['logo', 'file']) }, logo.alt, logo.height_mm)
+const fontKeys = ['regular', 'semibold', 'bold'] as const
+type FontKey = (typeof fontKeys)[number]
+
+function fontFile({ placeOf }: ThemeFile, folder: string, key: FontKey, path: string): NamedFile {
+  return { folder, path, place: placeOf(['typeface', key]) }
+}
+
+function typefaceFiles(file: ThemeFile, folder: string): readonly NamedFile[] {
+  const { typeface } = file.entries
+  if (typeof typeface === 'string') return []
+  return fontKeys.flatMap((key) => (typeface[key] === undefined ? [] : [fontFile(file, folder, key, typeface[key])]))
+}
+
+async function logoOf(file: ThemeFile, folder: string): Promise<Logo | null> {
+  const { logo } = file.entries
+  const [named] = logoFiles(file, folder)
+  return logo === undefined || named === undefined ? null : readLogo(named, logo.alt, logo.height_mm)
+}
+
+function logoFiles({ entries: { logo }, placeOf }: ThemeFile, folder: string): readonly NamedFile[] {
+  return logo === undefined ? [] : [{ folder, path: logo.file, place: placeOf(['logo', 'file']) }]
 }

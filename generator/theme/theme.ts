@@ -76,4 +76,6 @@ export interface Theme {
   readonly logo: Logo | null
   readonly cover: boolean
   readonly running: Running
+  /** What was read of the account: theme.yaml, logo and font files, relative to its folder. */
+  readonly files: readonly string[]
 }

@@ -1,5 +1,7 @@
+import type { Estimate } from '../findings/schema.ts'
 import { average, difference } from '../reading/draw-columns.ts'
 import { correlation } from '../statistics/correlation.ts'
+import { twoSidedQuantile } from '../statistics/wilson.ts'
 import { caveat, type CaveatRule } from './rule.ts'
 
 /** Change of a level's share of mentions, as a share, from which the mix is said to have moved. */
@@ -20,10 +22,9 @@ export const fitRules: readonly CaveatRule[] = [
     return [...failed].map((venue) => caveat('serious', 'model-misfit', { venue: labels.get(venue) ?? venue }))
   },
   ({ findings }) => {
-    const { raw_change: raw, change } = findings.opinion
-    if (raw === null || change === null) return []
-    // the raw change lies outside the interval of what opinion did: who reads the average reads something else
-    return raw < change.low || raw > change.high ? [caveat('serious', 'pooled-average-misleads', { raw_change: raw, change: change.mean })] : []
+    const { opinion: { raw_change: raw, change }, decomposition, interval } = findings
+    return raw !== null && change !== null && decomposition !== null && partsWays(raw, change, decomposition.chance_sd, interval)
+      ? [caveat('serious', 'pooled-average-misleads', { raw_change: raw, change: change.mean })] : []
   },
   ({ findings }) => {
     const top = findings.speaking.concentration.period?.top_share
@@ -54,6 +55,14 @@ export const fitRules: readonly CaveatRule[] = [
     return steps === 0 ? [] : [caveat('caution', 'sharp-move', { steps })]
   },
 ]
+
+/**
+ * Who reads the raw average reads something else than opinion: its change lies outside the interval of what opinion did, and its gap to that is more than
+ * sampling alone makes in so few mentions, |raw - opinion| > z chance_sd, with z the normal deviate of the interval (`rawChangeChance`).
+ */
+function partsWays(raw: number, { mean, low, high }: Estimate, chanceSd: number, interval: number): boolean {
+  return (raw < low || raw > high) && Math.abs(raw - mean) > twoSidedQuantile(interval) * chanceSd
+}
 
 /** The walk's own step is rarely further than this: a move that is may be larger still than it is shown. */
 function isSharp(before: number, now: number, stepSd: number): boolean {

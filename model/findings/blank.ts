@@ -8,7 +8,7 @@ export const blankFindings: Findings = {
   period: { name: '2000-01', start: '2000-01-01', end: '2000-01-31' }, previous_period: null,
   period_steps: { count: 0, start: '2000-01-03', end: '2000-01-30' }, grid: 'week', interval: 0.9,
   accounting: {
-    received: 0, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 0, reasons: {}, unmapped: [], given_not_used: [], authors: 'known', in_period: 0,
+    received: 0, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 0, reasons: {}, unmapped: [], given_not_used: [], authors: 'known', ready_made: 'none', in_period: 0,
     first_step: '2000-01-03', last_step: '2000-01-31', last_day: '2000-01-31',
   },
   opinion: {
@@ -24,7 +24,7 @@ export const blankFindings: Findings = {
   sensitivity: { scales: [], shift: 0, reliable: true }, hearing: null, caveats: [], advice: [],
   diagnostics: { method: '', pareto_k: 0, rhat: null, ess: 0, draws: 0, proposals: 0, converged: true, passed: true, checks: [] },
   method: {
-    base: { from: '2000-01-01', to: '2000-12-31' }, target_mix: [], target_source: {}, priors: {}, cells: 0, steps: 0, venues: [],
+    base: { from: '2000-01-01', to: '2000-12-31' }, base_is_period: false, target_mix: [], target_source: {}, priors: {}, cells: 0, steps: 0, venues: [],
     smallest_group: 10, poster_bounds: { occasional: 1, regular: 5 }, prepared_by: null, reviewed_by: null, time_zone: 'UTC', reporting: 'month',
   },
   inputs: [], program: { version: '', seed: 0 },

@@ -19,6 +19,8 @@ const accounting = z.strictObject({
   given_not_used: z.array(z.string()),
   /** How authors are counted: known by handle (those without one count each), summed over ready-made cells, or not known at all. */
   authors: z.enum(['known', 'summed', 'unknown']),
+  /** How much of it came as ready-made cells, whose mentions nobody has looked through for copies. */
+  ready_made: z.enum(['none', 'some', 'all']),
   /** Mentions in the period under review. */
   in_period: count,
   first_step: isoDate, last_step: isoDate,
@@ -56,8 +58,16 @@ const part = z.strictObject({
 })
 
 const decomposition = z.strictObject({
-  from: z.string(), to: z.string(), raw_change: z.number(), parts: z.array(part),
-  /** The part other than opinion with the largest absolute mean among those whose interval leaves zero; null if none. */
+  from: z.string(), to: z.string(), raw_change: z.number(),
+  /** Standard error of the raw change by sampling alone, in the same cells: a lower bound. */
+  chance_sd: z.number().min(0),
+  /** Whether the raw change goes beyond that: not-established where sampling alone may bring it about, at the review's interval. */
+  raw_movement: movement,
+  parts: z.array(part),
+  /**
+   * The part other than opinion with the largest absolute mean among those whose interval leaves zero; null if there is none, or if it is what the model
+   * does not explain and lies within the sampling error of the raw change.
+   */
   largest: z.string().nullable(),
 })
 
@@ -117,6 +127,8 @@ export type Caveat = z.infer<typeof caveat>
 
 const method = z.strictObject({
   base: z.strictObject({ from: isoDate, to: isoDate }),
+  /** True where the period under review is the base itself, step for step: nothing has moved since. */
+  base_is_period: z.boolean(),
   target_mix: z.array(z.strictObject({ factor: z.string(), level: z.string(), label: z.string(), share })),
   /** `base`: shares of mentions pooled over the base; `account`: margins the account gives. Per factor. */
   target_source: z.record(z.string(), z.enum(['base', 'account'])),

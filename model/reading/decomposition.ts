@@ -1,9 +1,11 @@
 import type { Findings } from '../findings/schema.ts'
 import { midpointSplit } from '../statistics/kitagawa.ts'
+import { twoSidedQuantile } from '../statistics/wilson.ts'
 import { average, combine, difference, sum } from './draw-columns.ts'
 import { periodCorrection } from './coder.ts'
 import { stepsOfPeriod, type Reading } from './context.ts'
 import { movementOf } from './movement.ts'
+import { rawChangeChance } from './raw-chance.ts'
 import { points } from './summarise.ts'
 
 /**
@@ -19,11 +21,17 @@ import { points } from './summarise.ts'
  *   coding        what the coder's errors did to the raw average, where an audit undoes them
  *   unexplained   raw less fitted
  *
+ * The largest part is what a reader is given as the reason. What the model does not explain is none where it lies within the sampling error of the raw
+ * average, |unexplained| <= z chance_sd with z the normal deviate of the interval (`rawChangeChance`): few mentions differ from the model by that much anyhow.
+ * A smaller part is no reason then either.
+ *
+ * @param interval - probability inside every interval
  * @returns null where there is no period before or one of the two holds no mention
  */
-export function readDecomposition(reading: Reading): Findings['decomposition'] {
+export function readDecomposition(reading: Reading, interval: number): Findings['decomposition'] {
   const parts = decompose(reading)
-  if (parts === null) return null
+  const chance = rawChangeChance(reading)
+  if (parts === null || chance === null) return null
   const { tables: { timeline }, summary } = reading
   const found = parts.columns.map(({ part, column, mix }) => {
     const estimate = summary.estimate(column)
@@ -31,9 +39,13 @@ export function readDecomposition(reading: Reading): Findings['decomposition'] {
   })
   const moved = found.filter(({ part, movement }) => part !== 'opinion' && movement !== 'not-established')
   const largest = moved.reduce<(typeof moved)[number] | null>((a, b) => (a === null || Math.abs(b.estimate.mean) > Math.abs(a.estimate.mean) ? b : a), null)
+  const rawChange = points * parts.rawChange
+  const reach = twoSidedQuantile(interval) * chance
+  const isChance = largest?.part === 'unexplained' && Math.abs(largest.estimate.mean) <= reach
   return {
     from: timeline.periods[timeline.current - 1].name, to: timeline.review.name,
-    raw_change: points * parts.rawChange, parts: found, largest: largest?.part ?? null,
+    raw_change: rawChange, chance_sd: chance, raw_movement: movementOf({ mean: rawChange, low: rawChange - reach, high: rawChange + reach, sd: chance }),
+    parts: found, largest: isChance ? null : largest?.part ?? null,
   }
 }
 

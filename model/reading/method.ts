@@ -26,7 +26,7 @@ export function readAccounting(tables: IntakeTables, facts: AccountFacts): Findi
     received: accounting.received, rejected: accounting.rejected, duplicates: accounting.duplicates,
     out_of_scope: accounting.outOfScope, modelled: accounting.modelled,
     reasons: { ...accounting.reasons }, unmapped: accounting.unmapped.map((row) => ({ ...row })),
-    given_not_used: [...facts.givenNotUsed], authors: authorsAre(tables), in_period: inPeriod,
+    given_not_used: [...facts.givenNotUsed], authors: authorsAre(tables), ready_made: readyMadeIs(tables), in_period: inPeriod,
     first_step: timeline.steps[0], last_step: timeline.steps[timeline.steps.length - 1],
     last_day: timeline.lastDays[timeline.steps.length - 1],
   }
@@ -37,6 +37,11 @@ function authorsAre({ accounting, authors }: IntakeTables): Findings['accounting
   return authors.exact ? 'known' : 'summed'
 }
 
+function readyMadeIs({ accounting, hindsight }: IntakeTables): Findings['accounting']['ready_made'] {
+  if (!accounting.readyMade) return 'none'
+  return hindsight === null ? 'all' : 'some'
+}
+
 /** Which days the period's figures are about: whole steps, cut at the end of what the review reads. */
 export function readPeriodSteps({ tables: { timeline }, periodSteps }: Reading): Findings['period_steps'] {
   const last = periodSteps[periodSteps.length - 1]
@@ -45,11 +50,12 @@ export function readPeriodSteps({ tables: { timeline }, periodSteps }: Reading):
 
 /** What a colleague needs to make the figures again: base, target mix, priors, sizes, design effects. */
 export function readMethod(reading: Reading, facts: AccountFacts): Findings['method'] {
-  const { tables, mix, sampling } = reading
+  const { tables, mix, sampling, baseSteps, periodSteps } = reading
   const { factors, timeline, cells } = tables
   const walk = walkFactor(timeline.stepDays)
   return {
     base: { ...timeline.base },
+    base_is_period: baseSteps.length === periodSteps.length && baseSteps.every((t, i) => t === periodSteps[i]),
     target_mix: factors.flatMap(({ name, levels }, f) => levels.map((level, l) => ({ factor: name, level: level.name, label: level.label, share: mix.shares[f][l] }))),
     target_source: Object.fromEntries(factors.map(({ name }, f) => [name, mix.source[f]])),
     priors: {

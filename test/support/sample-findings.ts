@@ -89,7 +89,7 @@ function decomposition(): NonNullable<Findings['decomposition']> {
   ]
   const rest = rawChange - means.reduce((sum, [, value]) => sum + value, 0)
   return {
-    from: '2026-09', to: '2026-10', raw_change: rawChange, largest: 'venue_mix',
+    from: '2026-09', to: '2026-10', raw_change: rawChange, chance_sd: 0.9, raw_movement: rawChange < 0 ? 'down' : 'up', largest: 'venue_mix',
     parts: [...means, ['unexplained', rest, 0.3, 'not-established'] as const].map(([part, value, half, movement]) => ({ part, estimate: around(value, half), movement, leading: leadingOf(part, value) })),
   }
 }
@@ -167,7 +167,7 @@ export function sampleFindings(): Findings {
     accounting: {
       received: modelled + 312 + 1204 + 2088, rejected: 312, duplicates: 1204, out_of_scope: 2088, modelled,
       reasons: { 'time-unreadable': 141, 'score-unreadable': 171, 'same-id': 380, repost: 824, 'other-brand': 2088, 'time-doubled': 9 },
-      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['competitors'], authors: 'known',
+      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['competitors'], authors: 'known', ready_made: 'none',
       in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1), last_day: '2026-10-31',
     },
     opinion: opinion(), decomposition: decomposition(), venues: venues(),
@@ -224,7 +224,7 @@ const ofInputs: readonly string[] = ['survey-bases-small', 'benchmark-mismatch',
 export function readyMade(): Findings {
   const findings = postsAlone()
   return {
-    ...findings, coder: { ...findings.coder, audit_size: null }, hearing: null, tipping: null, advice: [],
+    ...findings, accounting: { ...findings.accounting, authors: 'summed', ready_made: 'all' }, coder: { ...findings.coder, audit_size: null }, hearing: null, tipping: null, advice: [],
     speaking: { ...findings.speaking, staying: null, spread: [] },
   }
 }

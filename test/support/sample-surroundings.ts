@@ -38,7 +38,7 @@ export function sampleMethod(
   targetMix: Findings['method']['target_mix'], venues: readonly { readonly venue: string, readonly label: string }[],
 ): Findings['method'] {
   return {
-    base: { from: '2024-05-06', to: '2025-05-05' },
+    base: { from: '2024-05-06', to: '2025-05-05' }, base_is_period: false,
     target_mix: targetMix, target_source: { venue: 'base', topic: 'base', poster: 'base' },
     priors: { initial: 50, mu: 3, venue_drift: 2, fixed_factor: 30, tau: 20 },
     cells: 9104, steps: 130,

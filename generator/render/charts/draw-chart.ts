@@ -1,9 +1,10 @@
 import { Error as ErrorsOnly, parse, randomLCG, resetSVGDefIds, setRandom, View } from 'vega'
 import { expressionInterpreter } from 'vega-interpreter'
 import type { Loader } from 'vega'
-import { compile } from 'vega-lite'
+import { compile, type Config } from 'vega-lite'
 import { faultOf } from '../../faults/catalogue.ts'
 import { InputFault } from '../../faults/fault.ts'
+import { drawEach, type Drawings } from '../drawings.ts'
 import type { Table } from '../../tables/table.ts'
 import type { Words } from '../../words/words.ts'
 import type { DrawingSize, Theme } from '../../theme/theme.ts'
@@ -27,27 +28,33 @@ import { measureBy } from './text-metrics.ts'
  *
  * @param spec - a specification of templates/charts, or of an account
  * @param size - for the page and paper, or for a phone
+ * @param drawings - where the same picture may have been drawn before
  * @throws {Error} an unknown table or message, or whatever Vega-Lite warns of: a picture that is not as specified must not pass
  * @throws {InputFault} `chart-undrawable`: the same of a chart that is an account's own
  */
-export async function drawChart(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize = 'wide'): Promise<string> {
+export async function drawChart(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize = 'wide', drawings: Drawings = drawEach): Promise<string> {
   try {
-    return await draw(spec, tables, words, theme, size)
+    return await draw(spec, tables, words, theme, size, drawings)
   } catch (error) {
     const place = spec[ownPlace]
     throw place === undefined ? error : new InputFault([faultOf('chart-undrawable', place, { reason: error instanceof Error ? error.message : String(error) })])
   }
 }
 
-async function draw(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize): Promise<string> {
+async function draw(spec: ChartSpec, tables: readonly Table[], words: Words, theme: Theme, size: DrawingSize, drawings: Drawings): Promise<string> {
   const sized = worded(atSize(spec, size), words) as unknown as ChartSpec
   const read = readTables(sized, tables, words, theme, size)
   const { spec: roomy, datasets } = withStack(withRoom(laidOut(sized, read, theme, size), read), read)
-  const [warnings, errors]: [string[], string[]] = [[], []]
   const config = { ...chartConfig(theme.chart), locale: vegaLocale(words.locale) }
+  const whole = { ...roomy, datasets: datasets as unknown as Json }
+  return drawings.remember(JSON.stringify([whole, config, theme.advances, size]), () => drawWhole(whole, config, theme, size))
+}
+
+async function drawWhole(whole: ChartSpec, config: Config, theme: Theme, size: DrawingSize): Promise<string> {
+  const [warnings, errors]: [string[], string[]] = [[], []]
   measureBy(theme.advances)
-  const { spec: compiled } = compile(asVegaLite({ ...roomy, datasets: datasets as unknown as Json }), { config, logger: collector(warnings, warnings) })
-  if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${spec.name}: ${warnings.join('; ')}`)
+  const { spec: compiled } = compile(asVegaLite(whole), { config, logger: collector(warnings, warnings) })
+  if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${whole.name}: ${warnings.join('; ')}`)
   resetSVGDefIds()
   setRandom(randomLCG(1))
   // a layer without rows, such as labels' leaders where none had to move, has no extent, and vega would warn of it
@@ -55,8 +62,8 @@ async function draw(spec: ChartSpec, tables: readonly Table[], words: Words, the
   const view = new View(parse(compiled, undefined, { ast: true }), options)
   try {
     const svg = await view.toSVG()
-    if (errors.length > 0) throw new Error(`Unexpected error while drawing chart ${spec.name}: ${errors.join('; ')}`)
-    return cleanSvg(requirePlain(svg), `${spec.name}-${size}`)
+    if (errors.length > 0) throw new Error(`Unexpected error while drawing chart ${whole.name}: ${errors.join('; ')}`)
+    return cleanSvg(requirePlain(svg), `${whole.name}-${size}`)
   } finally {
     view.finalize()
   }

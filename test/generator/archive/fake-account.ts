@@ -2,10 +2,12 @@ import { mkdir, mkdtemp, rm, writeFile } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { theDisk } from '../../../generator/archive/disk.ts'
+import type { MadeWith } from '../../../generator/archive/manifest.ts'
 import { fingerprint, fingerprints, recordName, type BuildRecord } from '../../../generator/archive/record.ts'
 import type { SealRequest } from '../../../generator/archive/seal-review.ts'
+import { filesOf } from '../../../generator/archive/verify-archive.ts'
 
-export const program = { version: '1.2.3', model: 'a'.repeat(64) }
+export const program: MadeWith = { version: '1.2.3', model: 'a'.repeat(64), runtime: 'node 20', browser: 'Any/1.0' }
 
 /** An account folder with inputs and a draft of one period, as a build leaves them, of a few bytes each. */
 export async function fakeAccount(): Promise<{ readonly folder: string; readonly remove: () => Promise<void> }> {
@@ -35,7 +37,7 @@ export async function fakeDraft(folder: string, period: string, what = 'first', 
       { ...await fingerprint(folder, 'account.yaml'), kept: true }, { ...await fingerprint(folder, 'survey/waves.csv'), kept: true },
       { ...await fingerprint(folder, 'posts/posts.csv'), kept: false },
     ],
-    files: [...await fingerprints(draft)],
+    files: [...await fingerprints(draft, await filesOf(draft))],
     ...changes,
   }
   await writeFile(join(draft, recordName), JSON.stringify(record))
@@ -43,5 +45,5 @@ export async function fakeDraft(folder: string, period: string, what = 'first', 
 }
 
 export const requestOf = (folder: string, period: string, more: Partial<SealRequest> = {}): SealRequest => ({
-  folder, period, reason: null, onePerson: false, program, disk: theDisk, now: '2026-12-01T09:00:00.000Z', ...more,
+  folder, account: 'fake', period, inputs: ['account.yaml', 'posts/posts.csv', 'survey/waves.csv'], reason: null, onePerson: false, program, disk: theDisk, now: '2026-12-01T09:00:00.000Z', ...more,
 })

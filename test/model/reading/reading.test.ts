@@ -49,11 +49,11 @@ describe('decomposition of the change in the raw average', () => {
   })
 
   test('every part that the model has is there, once', () => {
-    expect(readDecomposition(reading)!.parts.map(({ part }) => part)).toEqual(['opinion', 'timing', 'venue_mix', 'venue_drift', 'topic_mix', 'poster_mix', 'unexplained'])
+    expect(readDecomposition(reading, 0.9)!.parts.map(({ part }) => part)).toEqual(['opinion', 'timing', 'venue_mix', 'venue_drift', 'topic_mix', 'poster_mix', 'unexplained'])
   })
 
   test('levels of a mix add up to its part, and the leading one is told', () => {
-    const { parts } = readDecomposition(reading)!
+    const { parts } = readDecomposition(reading, 0.9)!
     const { columns, mix, centre, tables: { factors } } = reading
     const topic = parts.find(({ part }) => part === 'topic_mix')!
     const level = factors[1].levels.findIndex(({ name }) => name === topic.leading!.level)
@@ -74,7 +74,7 @@ describe('decomposition of the change in the raw average', () => {
   })
 
   test('the opinion part is the change of adjusted opinion', () => {
-    const opinion = readDecomposition(reading)!.parts[0].estimate
+    const opinion = readDecomposition(reading, 0.9)!.parts[0].estimate
     const { change } = readOpinion(reading)
     expect(opinion.mean).toBeCloseTo(change!.mean, 9)
     expect(opinion.low).toBeCloseTo(change!.low, 9)
@@ -97,7 +97,7 @@ describe('decomposition of the change in the raw average', () => {
         clustering: pick(cells.clustering), deff: pick(cells.deff),
       },
     }
-    const parts = new Map(readDecomposition(await readingOf(copied))!.parts.map(({ part, estimate }) => [part, estimate]))
+    const parts = new Map(readDecomposition(await readingOf(copied), 0.9)!.parts.map(({ part, estimate }) => [part, estimate]))
     for (const part of ['venue_mix', 'topic_mix', 'poster_mix']) expect(Math.abs(parts.get(part)!.mean)).toBeLessThan(1e-9)
   })
 })
