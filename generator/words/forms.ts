@@ -105,7 +105,7 @@ export const forms = {
   'sum-change': ofList((value, words) => change(value.reduce<number>((sum, item) => (typeof item === 'number' ? sum + item : sum), 0), words.locale)),
   /** Smallest to largest of a list of counts: `382 to 417`. */
   'count-range': ofList((value, words) => countRange(value.filter((item) => typeof item === 'number'), words)),
-  list: ofList((value, words) => new Intl.ListFormat(words.locale, { style: 'long', type: 'conjunction' }).format(value.map(String))),
+  list: ofList((value, words) => joined(value.map(String), words.locale)),
   length: ofList((value) => value.length),
 } as const satisfies Readonly<Record<string, Form>>
 
@@ -120,6 +120,13 @@ export function needsUnit(name: FormName): boolean {
 
 export function isFormName(name: string): name is FormName {
   return Object.hasOwn(forms, name)
+}
+
+/** In a row; items that hold a comma, such as figures of most languages, are parted by semicolons. */
+function joined(items: readonly string[], locale: string): string {
+  const between = items.some((item) => item.includes(',')) ? ';' : ','
+  const parts = new Intl.ListFormat(locale, { style: 'long', type: 'conjunction' }).formatToParts(items)
+  return parts.map(({ type, value }) => (type === 'literal' ? value.replace(',', between) : value)).join('')
 }
 
 function shareDirection(from: number, to: number): 'up' | 'down' | 'flat' {

@@ -20,6 +20,12 @@ test('a form writes what it is made from', () => {
   expect([0.04, -0.06, 3].map((value) => write(value, 'sign', words))).toEqual(['flat', 'down', 'up'])
 })
 
+test('items that hold a comma are parted by semicolons', () => {
+  const german = { ...words, locale: 'de-DE' }
+  expect(write(['37,3', '31,0', '2,0'], 'list', german)).toBe('37,3; 31,0 und 2,0')
+  expect(write(['Blogs', 'Foren', 'Filme'], 'list', german)).toBe('Blogs, Foren und Filme')
+})
+
 test('null, and what a form is not made for, is "not known" in every form', () => {
   for (const form of formNames.filter((name) => name !== 'code')) {
     expect(write(null, form, words)).toBe('not known')
