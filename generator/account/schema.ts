@@ -30,6 +30,12 @@ const isLocale = (name: string): boolean => {
   }
 }
 
+/** What a locale with an underscore means is told: `de_DE` is de-DE. */
+function localeExpected(name: string): string {
+  const hyphened = name.replaceAll('_', '-')
+  return hyphened !== name && isLocale(hyphened) ? `${Intl.getCanonicalLocales(hyphened)[0]!}, with a hyphen` : expected.locale
+}
+
 const files = z.strictObject({ files: text })
 
 const score = z.strictObject({
@@ -57,7 +63,7 @@ export const accountShape = {
   account: z.string().regex(/^[A-Za-z0-9][A-Za-z0-9-]*$/, expected.accountName),
   brand: text,
   competitors: z.array(text).default([]),
-  locale: z.string().refine(isLocale, expected.locale).default('en-GB'),
+  locale: z.string().refine(isLocale, { error: ({ input }) => localeExpected(String(input)) }).default('en-GB'),
   time_zone: z.string().refine(isTimeZone, expected.timeZone).default('UTC'),
   grid: z.enum(['day', 'week', 'month']).default('week'),
   reporting: z.enum(['month', 'quarter', 'week']).default('month'),

@@ -3,7 +3,7 @@ import { real, rowsOfTable, tableOfRows, whole, type NumberTable } from './numbe
 
 /**
  * The intake tables as an archive keeps them: long tables as numbers, and everything that gives the numbers their meaning as `facts`, plain data
- * for JSON. Both directions are exact, bit for bit.
+ * for JSON. Both directions are exact, bit for bit, but for the values that could not be read, which are not kept.
  */
 export interface FlatIntake {
   readonly numbers: readonly NumberTable[]
@@ -56,7 +56,8 @@ export function flattenIntake(tables: IntakeTables): FlatIntake {
     facts: {
       factors: tables.factors, variation: tables.variation, hindsight: tables.hindsight, noLabels: tables.noLabels,
       timeline: { ...timeline, periodOf: [...timeline.periodOf], inBase: [...timeline.inBase] },
-      accounting: { ...accounting, withAuthor: [...accounting.withAuthor] },
+      // of a mistaken column these may be the words of a post: no figure rests on them
+      accounting: { ...accounting, unread: [], withAuthor: [...accounting.withAuthor] },
       labels: labels === null ? null : { names: labels.names, scores: [...labels.scores] },
       segments: segments === null ? null : { margins: segments.margins, levels: segments.levels },
       authors: { exact: authors.exact, byPeriod: [...authors.byPeriod], byPeriodLevel: authors.byPeriodLevel.map((counts) => [...counts]) },

@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto'
 import { z } from 'zod'
+import type { Program } from '../program/program.ts'
 
 const sha256 = z.string().regex(/^[0-9a-f]{64}$/)
 /** With forward slashes, inside its folder. */
@@ -10,11 +11,16 @@ export const keptFile = z.strictObject({ path: inside, bytes: z.int().min(0), sh
 export type KeptFile = z.infer<typeof keptFile>
 
 /**
- * What a review was made with: the same inputs give the same files with the same version, model, Node and browser. `runtime` is Node's version and
- * the kind of machine; `browser` printed the PDF, null where none did.
+ * What a review was made with: the same inputs give the same files with the same program, Node and browser. `model` and `code` are hashes of the code
+ * of the model and of everything else; `runtime` is Node's version and the kind of machine; `browser` printed the PDF, null where none did.
  */
-export const madeWith = z.strictObject({ version: z.string(), model: z.string(), runtime: z.string(), browser: z.string().nullable() })
+export const madeWith = z.strictObject({ version: z.string(), model: sha256, code: sha256, runtime: z.string(), browser: z.string().nullable() })
 export type MadeWith = z.infer<typeof madeWith>
+
+/** What this program makes reviews with, but the browser. */
+export function madeHere({ version, model, code, runtime }: Program): Omit<MadeWith, 'browser'> {
+  return { version, model, code, runtime }
+}
 
 /** What was sealed, when, by whom, made by which program from what, and what was sealed before it. */
 export const manifestSchema = z.strictObject({

@@ -7,13 +7,13 @@ import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, MachineFault, type Fault } from '../faults/fault.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
 import type { Program } from '../program/program.ts'
-import { loadHouse } from '../review/house.ts'
+import { readHouse } from '../review/house.ts'
 import { makeReview, type MadeReview } from '../review/make-review.ts'
 import type { Progress } from '../review/stages.ts'
 import { Stopped } from '../review/stopping.ts'
 import { compareFindings, largest, type Comparison, type Difference } from './compare-findings.ts'
 import { readIntakeFiles } from './intake-files.ts'
-import { sha256Of, type MadeWith, type Manifest } from './manifest.ts'
+import { madeHere, sha256Of, type MadeWith, type Manifest } from './manifest.ts'
 import type { SealFolder } from './read-archive.ts'
 
 export interface RebuildOptions {
@@ -26,7 +26,7 @@ export interface RebuildOptions {
 /** What became of a sealed review when it was made again. */
 export interface Rebuilt {
   readonly name: string
-  /** In what the program or machine here is another than the one that made it: `version`, `model`, `runtime`, `browser`. */
+  /** In what the program or machine here is another than the one that made it: `version`, `model`, `code`, `runtime`, `browser`. */
   readonly otherwise: readonly (keyof MadeWith)[]
   /** null where it could not be made again. */
   readonly findings: Comparison | null
@@ -49,7 +49,7 @@ export interface Rebuilt {
 export async function rebuildSeal(program: Program, seal: SealFolder & { readonly manifest: Manifest }, options: RebuildOptions): Promise<Rebuilt> {
   const { name, folder, manifest } = seal
   const printer = options.browser === null ? null : await (await options.browser).version()
-  const otherwise = othersOf(manifest.program, { version: program.version, model: program.model, runtime: program.runtime, browser: printer ?? manifest.program.browser })
+  const otherwise = othersOf(manifest.program, { ...madeHere(program), browser: printer ?? manifest.program.browser })
   const same = !otherwise.some((part) => part !== 'browser')
   const made = await madeAgain(program, folder, manifest.seed, options).catch((error: unknown) => reasonsOf(name, error))
   if (!('html' in made)) return { name, otherwise, findings: null, files: [], compared: 0, printed: false, faults: same ? made.reasons : [], refusals: same ? [] : made.reasons }
@@ -69,7 +69,7 @@ export async function rebuildSeal(program: Program, seal: SealFolder & { readonl
 
 async function madeAgain(program: Program, folder: string, seed: number, { browser, threads, progress }: RebuildOptions): Promise<MadeReview> {
   const account = await readAccount(join(folder, 'account'), { archived: true })
-  const house = await loadHouse(program, account, { archived: true })
+  const house = await readHouse(program, account)
   const material = { tables: await readIntakeFiles(join(folder, 'intake')), inputs: await readSmallInputs(account) }
   return makeReview(program, account, house, material, { seed, threads, cache: rememberNothing, browser, progress })
 }
@@ -84,7 +84,7 @@ function reasonsOf(name: string, error: unknown): { readonly reasons: readonly F
 }
 
 function othersOf(sealed: MadeWith, here: MadeWith): readonly (keyof MadeWith)[] {
-  return (['version', 'model', 'runtime', 'browser'] as const).filter((part) => sealed[part] !== here[part])
+  return (['version', 'model', 'code', 'runtime', 'browser'] as const).filter((part) => sealed[part] !== here[part])
 }
 
 /** What the program makes, apart from what it was made from. */

@@ -5,7 +5,7 @@ import { hashOf } from '../intake/input-file.ts'
 import { keptFile, madeWith, type KeptFile } from './manifest.ts'
 
 /** What a draft was made from and what it holds: without it nobody could say later that a seal holds what was reviewed. */
-export const recordSchema = z.strictObject({
+const recordSchema = z.strictObject({
   schema: z.literal('tareline-record/1'),
   account: z.string(),
   period: z.string(),

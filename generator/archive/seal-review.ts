@@ -2,7 +2,7 @@ import { join } from 'node:path'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, type Fault } from '../faults/fault.ts'
 import type { Disk } from './disk.ts'
-import { chainEndName, manifestName, manifestSchema, sealName, sha256Of, writtenManifest, type ChainEnd, type KeptFile, type Manifest } from './manifest.ts'
+import { chainEndName, manifestName, manifestSchema, sealName, sha256Of, writtenManifest, type ChainEnd, type KeptFile, type MadeWith, type Manifest } from './manifest.ts'
 import { readArchive, sealedInOrder, unfinishedPrefix } from './read-archive.ts'
 import { changedSince, readRecord, recordName, type BuildRecord } from './record.ts'
 import { filesOf, verifyArchive, type Verified } from './verify-archive.ts'
@@ -19,7 +19,7 @@ export interface SealRequest {
   readonly reason: string | null
   /** Whether one person may both prepare and review. */
   readonly onePerson: boolean
-  readonly program: { readonly version: string; readonly model: string }
+  readonly program: Pick<MadeWith, 'version' | 'model' | 'code'>
   readonly disk: Disk
   /** ISO instant of the seal. */
   readonly now: string
@@ -114,7 +114,7 @@ async function draftFaults({ folder, account, period, inputs: readNow, onePerson
   const before = new Set(record.inputs.map(({ path }) => path))
   const inputs = [...await changedSince(folder, record.inputs), ...readNow.filter((path) => !before.has(path))]
   if (inputs.length > 0) faults.push(faultOf('inputs-changed', place, { paths: inputs }))
-  if (record.program.version !== program.version || record.program.model !== program.model) faults.push(faultOf('program-changed', place, { built: record.program.version }))
+  if ((['version', 'model', 'code'] as const).some((part) => record.program[part] !== program[part])) faults.push(faultOf('program-changed', place, { built: record.program.version }))
   if (!record.passed) faults.push(faultOf('checks-failed', place, {}))
   if (!known.has('review.pdf')) faults.push(faultOf('draft-without-pdf', place, {}))
   return [...faults, ...peopleFaults(record, onePerson)]

@@ -5,9 +5,11 @@ import type { RawInputs } from '../inputs/raw-inputs.ts'
 import { sampleForAudit, type AuditPost } from '../intake/audit-sample.ts'
 import { csvField } from '../intake/rejects.ts'
 import { checkAccount } from '../review/check-account.ts'
+import type { PartRead } from '../review/parts-read.ts'
 import { restoreDrafts } from '../review/restore-drafts.ts'
 import { unlessStopped } from '../review/stopping.ts'
 import type { Program } from '../program/program.ts'
+import { describeAccounting } from './describe-accounting.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
 import { showProgress } from './show-progress.ts'
 import type { Speaker, SpeakerOptions } from './speaker.ts'
@@ -25,14 +27,14 @@ export async function runCheck(program: Program, folder: string, flags: CheckFla
   const { stop, close } = listenForStop()
   try {
     await restoreDrafts(join(folder, 'drafts'))
-    const { tables: { accounting, timeline }, inputs } = await unlessStopped(stop, checkAccount(program, folder, flags.rejects, shown.progress))
+    const { tables: { accounting, timeline }, inputs, read } = await unlessStopped(stop, checkAccount(program, folder, flags.rejects, shown.progress))
     const sample = flags.auditSample === undefined ? null
       : await unlessStopped(stop, sampleForAudit(await readAccount(folder), { size: flags.auditSample, seed: flags.seed, progress: shown.progress.detail }))
     // The ids are for a spreadsheet: nothing else goes to stdout beside them.
     const say = sample === null ? speaker.say : speaker.note
-    speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting), period: timeline.review.name, survey: surveyResult(inputs.survey), events: eventsResult(inputs.events, timeline), ...listeningResult(inputs), ...sampleResult(sample) })
+    speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting), period: timeline.review.name, survey: surveyResult(inputs.survey), events: eventsResult(inputs.events, timeline), ...listeningResult(inputs), read, ...sampleResult(sample) })
     say(describeAccounting(accounting))
-    for (const line of describeInputs(inputs, timeline)) say(line)
+    for (const line of [...describeInputs(inputs, timeline), ...describeParts(read)]) say(line)
     say(`mentions from ${timeline.steps[0]} to ${timeline.lastMention}; a build would review ${timeline.review.name}`)
     if (sample !== null) speaker.say(['venue,id', ...sample.map(({ venue, id }) => `${csvField(venue)},${csvField(id)}`)].join('\n'))
     return 0
@@ -112,24 +114,18 @@ function describeInputs(inputs: RawInputs, timeline: Timeline): readonly string[
   ]
 }
 
-function counted(count: number, noun: string): string {
-  return `${count} ${noun}${count === 1 ? '' : 's'}`
+const mostFiles = 6
+
+/** A line for each part that is the account's own, and one for those that are the house's. */
+function describeParts(read: readonly PartRead[]): readonly string[] {
+  const told = (files: readonly string[]): string => (files.length <= mostFiles ? files.join(', ') : `${files.length} files, ${files[0]} to ${files.at(-1)}`)
+  const house = read.filter(({ part, files }) => files.length === 0 && part !== 'notes').map(({ part }) => part)
+  return [
+    ...read.filter(({ files }) => files.length > 0).map(({ part, files }) => `${part}: ${told(files)}`),
+    ...(house.length === 0 ? [] : [`of the house: ${house.join(', ')}`]),
+  ]
 }
 
-function describeAccounting({ received, rejected, duplicates, outOfScope, modelled, reasons, unread, unmapped }: Accounting): string {
-  const rows: readonly (readonly [string, number])[] = [
-    ['received', received], ['rejected', rejected], ['duplicates', duplicates], ['out of scope', outOfScope], ['modelled', modelled],
-  ]
-  const because = Object.entries(reasons).map(([name, count]) => [`  ${name}`, count] as const)
-  const names = Math.max(...[...rows, ...because].map(([name]) => name.length)) + 2
-  const counts = String(received).length
-  const line = ([name, count]: readonly [string, number]) => `${name.padEnd(names)}${String(count).padStart(counts)}`
-  const unreadable = unread.map(({ column, value, rows: count }) => `  ${column} "${value}": ${count}`)
-  const kept = unmapped.map(({ factor, value, mentions }) => `  ${factor} "${value}": ${mentions}`)
-  return [
-    ...rows.map(line),
-    ...(because.length > 0 ? ['reasons', ...because.map(line)] : []),
-    ...(unreadable.length > 0 ? ['values that could not be read, the most frequent ones', ...unreadable] : []),
-    ...(kept.length > 0 ? ['values the account does not map, kept under their own name', ...kept] : []),
-  ].join('\n')
+function counted(count: number, noun: string): string {
+  return `${count} ${noun}${count === 1 ? '' : 's'}`
 }

@@ -6,7 +6,7 @@ import { sealReview, type Sealed } from '../archive/seal-review.ts'
 import { writeRefusal } from '../faults/write-refusal.ts'
 import { namedPeriod } from '../intake/review-period.ts'
 import type { Program } from '../program/program.ts'
-import { loadHouse } from '../review/house.ts'
+import { readHouse } from '../review/house.ts'
 import { inputPaths } from '../review/record-inputs.ts'
 import { restoreDrafts } from '../review/restore-drafts.ts'
 import { failureOf, type ExitCode } from './outcome.ts'
@@ -41,7 +41,7 @@ async function seal(program: Program, given: string, { period, revise }: SealFla
   const { folder } = account
   namedPeriod(account, period)
   await restoreDrafts(join(folder, 'drafts'))
-  const { kept, notKept } = inputPaths(account, await loadHouse(program, account), period)
+  const { kept, notKept } = inputPaths(account, await readHouse(program, account), period)
   stop.throwIfAborted()
   return sealReview({
     folder, account: account.account, period, inputs: [...kept, ...notKept], reason: revise ?? null, onePerson: account.onePersonSeals,

@@ -65,7 +65,9 @@ function describeProposal({ proposal, mentions }: StartedAccount): readonly stri
     ...(proposal.score === null && columns.some(({ role }) => role === 'score') ? ['can\'t be told: what the scores count'] : []),
     ...(proposal.tally.times?.rival == null ? [] : [`can't be told: day or month first; taken as '${proposal.tally.times.format}'`]),
     ...(proposal.score?.kind !== 'labels' || proposal.score.unknown.length === 0 ? [] : [`without a score: ${proposal.score.unknown.slice(0, 5).map(({ value, rows }) => `${shown(value)} (${rows})`).join(', ')}`]),
-    ...(unused.length === 0 ? [] : [`not used: ${unused.slice(0, 12).map(shown).join(', ')}${unused.length > 12 ? ` and ${unused.length - 12} more` : ''}`]),
+    ...(proposal.locale.locale === 'en-GB' ? [] : [`locale ${proposal.locale.locale}: ${shown(proposal.locale.reason)}`]),
+    ...unused.slice(0, 12).map(({ name, reason }) => `not used: ${shown(name)}, ${shown(reason)}`),
+    ...(unused.length > 12 ? [`not used either: ${unused.length - 12} more`] : []),
   ]
 }
 
@@ -83,7 +85,7 @@ function proposalResult({ proposal, mentions }: StartedAccount): object {
       columns: columns.map(({ role, column, reason, sure, alternatives }) => ({ ours: role, theirs: column.name, reason, sure, alternatives })), unused,
       score: score?.kind === 'labels' ? { labels: Object.fromEntries(score.labels.map(({ label, score: value }) => [label, value])), unknown: score.unknown.map(({ value }) => value) }
         : score === null ? null : { range: [score.low, score.high] },
-      time_format: tally.times?.format ?? null, other_time_format: tally.times?.rival ?? null, grid: axis.grid, reporting: axis.reporting, brand: brand?.name ?? null,
+      time_format: tally.times?.format ?? null, other_time_format: tally.times?.rival ?? null, grid: axis.grid, reporting: axis.reporting, locale: proposal.locale.locale, brand: brand?.name ?? null,
     },
     undecided,
   }

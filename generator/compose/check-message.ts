@@ -1,4 +1,4 @@
-import { checkForm, checkItem, checkSelection, checkUnit } from './check-paths.ts'
+import { checkForm, checkItem, checkPicked, checkSelection, checkUnit } from './check-paths.ts'
 import type { CheckContext } from './directives/directive.ts'
 import { nearest } from './faults.ts'
 import type { Placed, Reporter } from './faults.ts'
@@ -35,6 +35,7 @@ function checkArgument(argument: Argument, scope: TypeScope, at: Placed | undefi
   checkUnit([argument.as, argument.write ?? argument.as], argument.unit, { ...scope, item }, at, reporter)
   if (argument.pick) checkForm(argument.pick, argument.write ?? 'code', { ...scope, item }, at, reporter)
   else if (argument.write) checkItem(item, argument.write, at, reporter)
+  if (argument.pick && !argument.write) checkPicked(argument.pick, argument.as, { ...scope, item }, at, reporter)
   if (forms[argument.as].from !== 'list') {
     reporter.report(at, 'form-unfit', `form "${argument.as}" of a selection`, 'list or length', `Write as: list, or name one ${kindOf(item)} by its path.`)
   }

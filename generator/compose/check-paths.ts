@@ -1,10 +1,11 @@
 import type { FormName } from '../words/forms.ts'
-import { forms, needsUnit } from '../words/forms.ts'
+import { forms, formsFor, needsUnit, takesUnit } from '../words/forms.ts'
 import type { Clause, Condition } from './condition.ts'
 import type { Placed, Reporter } from './faults.ts'
 import type { Path } from './path.ts'
-import { isOfKind, kindOf, typeAt, withoutNull } from './path-types.ts'
+import { isOfKind, kindOf, typeAt, unitOf, withoutNull } from './path-types.ts'
 import type { TypeNode, TypeScope } from './path-types.ts'
+import { kindWords, unitWords } from './unit-words.ts'
 import type { Selection } from './selection.ts'
 
 type At = Placed | undefined
@@ -13,8 +14,7 @@ type At = Placed | undefined
 export function checkPath(path: Path, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {
   const found = typeAt(path, scope)
   if (found.known) return found.type
-  const mend = found.nearest === undefined ? 'See the schema of the findings for what there is.' : `Write "${found.nearest}", if that is meant.`
-  reporter.report(at, 'path-unknown', `name "${found.unknown}" in path "${written(path)}"`, 'a path of the findings', mend)
+  reporter.report(at, 'path-unknown', `name "${found.unknown}" in path "${written(path)}"`, 'a path of the findings', found.mend)
   return undefined
 }
 
@@ -59,26 +59,43 @@ function checkList(path: Path, scope: TypeScope, at: At, reporter: Reporter): Ty
 
 /** Check that a value can be written in a form. */
 export function checkForm(path: Path, form: FormName, scope: TypeScope, at: At, reporter: Reporter): void {
-  checkKind(path, forms[form].from, scope, at, reporter)
+  const type = checkKind(path, forms[form].from, scope, at, reporter)
+  if (type) checkCounted(type, written(path), form, at, reporter)
 }
 
 /** Check that an item of a list can itself be written in a form. */
 export function checkItem(item: TypeNode, form: FormName, at: At, reporter: Reporter): void {
-  if (isOfKind(item, forms[form].from)) return
-  reporter.report(at, 'form-unfit', `${kindOf(item)} of the list`, `a ${forms[form].from} for this form`, 'Pick a part of it, or name another form.')
+  if (isOfKind(item, forms[form].from)) checkCounted(item, 'of the list', form, at, reporter)
+  else reporter.report(at, 'form-unfit', `${kindWords(kindOf(item))} of the list`, `${kindWords(forms[form].from)} for this form`, 'Pick a part of it, or name another form.')
+}
+
+/** Check that a form of a list can be made from what is picked of each item, such as the sum of counts. */
+export function checkPicked(pick: Path, form: FormName, scope: TypeScope, at: At, reporter: Reporter): void {
+  const found = typeAt(pick, scope)
+  if (found.known) checkCounted(found.type, written(pick), form, at, reporter)
+}
+
+/** A figure in points is no share, and so on: a form that would print something wrong is refused. */
+function checkCounted(type: TypeNode, figure: string, form: FormName, at: At, reporter: Reporter): void {
+  const unit = unitOf(type)
+  if (unit === undefined || takesUnit(form, unit)) return
+  const fitting = formsFor(forms[form].from, unit)
+  reporter.fault(at, 'form-unit', { form, figure, unit: unitWords(unit), fitting, unitNeeded: fitting.some(needsUnit) })
 }
 
 /** Check that a form which asks what its figure is counted in is told, by a path that there is. */
 export function checkUnit(named: readonly FormName[], unit: Path | undefined, scope: TypeScope, at: At, reporter: Reporter): void {
   if (unit) checkKind(unit, 'string', scope, at, reporter)
   const asking = named.find(needsUnit)
-  if (asking && !unit) reporter.report(at, 'unit-missing', `form "${asking}" without a unit`, 'the path to what it is counted in', 'Add unit: the kind of the metric, or grid.')
+  if (asking && !unit) reporter.report(at, 'unit-missing', `form "${asking}" without a unit`, 'the path to what it is counted in', 'Add unit with the path to it: that to the kind of the metric, such as survey.kind, or grid.')
 }
 
-function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter: Reporter): void {
+/** The type at a path that leads to something of a kind; undefined after a report. */
+function checkKind(path: Path, kind: string, scope: TypeScope, at: At, reporter: Reporter): TypeNode | undefined {
   const type = checkPath(path, scope, at, reporter)
-  if (!type || kind === 'any' || isOfKind(type, kind)) return
-  reporter.report(at, 'form-unfit', `${kindOf(type)} "${written(path)}"`, `a ${kind} for this form`, 'Name another path, or another form.')
+  if (!type || kind === 'any' || isOfKind(type, kind)) return type
+  reporter.report(at, 'form-unfit', `${kindWords(kindOf(type))} "${written(path)}"`, `${kindWords(kind)} for this form`, 'Name another path, or another form.')
+  return undefined
 }
 
 function written(path: Path): string {

@@ -1,6 +1,6 @@
 import type { Root, RootContent } from 'mdast'
 import type { Fault } from '../faults/fault.ts'
-import { directiveOf, namesOf } from './directives/all.ts'
+import { directiveOf, formOf, namesOf } from './directives/all.ts'
 import type { CheckContext, Directive, DirectiveNode } from './directives/directive.ts'
 import { createReporter, nearest } from './faults.ts'
 import type { Reporter } from './faults.ts'
@@ -42,7 +42,8 @@ function checkAddress(node: RootContent & { readonly url: string }, context: Che
   const { url } = node
   if (url.startsWith('#')) {
     const anchor = url.slice(1)
-    if (!context.anchors.has(anchor)) reporter.report(node, 'anchor-unknown', `anchor "${anchor}"`, 'the message of a heading or the name of a section', nearest(anchor, [...context.anchors]))
+    if (context.leftOut.has(anchor)) reporter.fault(node, 'anchor-left-out', { anchor })
+    else if (!context.anchors.has(anchor)) reporter.report(node, 'anchor-unknown', `anchor "${anchor}"`, 'the message of a heading or the name of a section', nearest(anchor, [...context.anchors]))
   } else if (!/^(https?:\/\/|mailto:)/i.test(url)) {
     reporter.report(node, 'address-unfit', `address "${url}"`, 'https:, http:, mailto: or a place in the document', 'Give a whole https address.')
   }
@@ -51,7 +52,9 @@ function checkAddress(node: RootContent & { readonly url: string }, context: Che
 function checkDirective(node: DirectiveNode, scope: TypeScope, context: CheckContext, reporter: Reporter): TypeScope {
   const directive = directiveOf(node)
   if (!directive) {
-    reporter.report(node, 'directive-unknown', `directive "${node.name}"`, `a ${typeWords[node.type]}`, nearest(node.name, namesOf(node.type)))
+    const form = formOf(node.name)
+    const mend = form === undefined ? nearest(node.name, namesOf(node.type)) : `Write ${form}: the number of colons says whether it stands in a line, on a line of its own, or around a block.`
+    reporter.report(node, 'directive-unknown', `directive "${node.name}"`, `a ${typeWords[node.type]}`, mend)
     return scope
   }
   if (context.inNote && node.name !== 'figure') {

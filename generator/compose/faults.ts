@@ -1,4 +1,4 @@
-import { closest, distance } from 'fastest-levenshtein'
+import { distance } from 'fastest-levenshtein'
 import { faultOf, type FaultCode } from '../faults/catalogue.ts'
 import type { Fault } from '../faults/fault.ts'
 
@@ -44,10 +44,20 @@ function reporterOf(faults: Fault[], placeOf: (at: Placed | undefined) => string
 const mostTold = 12
 const nearestTold = 5
 
-/** The mend for a misspelt name: the nearest of those known. */
+/** The mend for a misspelt name: the nearest of those known, where one is near. */
 export function nearest(name: string, known: readonly string[]): string {
   if (known.length === 0) return `Remove "${name}": none is known.`
-  if (known.length <= mostTold) return `Write "${closest(name, known)}", if that is meant; known are ${known.join(', ')}.`
-  const near = [...known].sort((a, b) => distance(name, a) - distance(name, b)).slice(0, nearestTold)
-  return `Write "${near[0]}", if that is meant; near are ${near.slice(1).join(', ')}, and ${known.length - nearestTold} more are known.`
+  const near = nearOnes(name, known)
+  const meant = near[0] === undefined ? undefined : `Write "${near[0]}", if that is meant`
+  if (known.length <= mostTold) return `${meant === undefined ? 'Known' : `${meant}; known`} are ${known.join(', ')}.`
+  if (meant === undefined) return `None of the ${known.length} names known is near; templates/TEMPLATES.md says where they are listed.`
+  const others = near.slice(1, nearestTold)
+  return others.length === 0 ? `${meant}; ${known.length - 1} more are known.` : `${meant}; near are ${others.join(', ')}, and ${known.length - 1 - others.length} more are known.`
+}
+
+/** Known names that one may be the misspelling of, nearest first: at most a third of the letters differ. */
+export function nearOnes(name: string, known: readonly string[]): readonly string[] {
+  const far = (other: string) => distance(name.toLowerCase(), other.toLowerCase())
+  const isNear = (other: string) => far(other) <= Math.max(1, Math.round(Math.max(name.length, other.length) / 3))
+  return known.filter(isNear).sort((a, b) => far(a) - far(b))
 }

@@ -1,4 +1,4 @@
-import type { Element, ElementContent, Root as HtmlRoot } from 'hast'
+import type { Element, ElementContent, Root as HtmlRoot, RootContent as HtmlContent } from 'hast'
 import { h } from 'hastscript'
 import { toString } from 'hast-util-to-string'
 import type { Heading as MarkdownHeading, Root, RootContent } from 'mdast'
@@ -74,16 +74,37 @@ export function rehypeContents() {
   }
 }
 
-/** A link to a place that did not appear this time becomes plain text. */
+/**
+ * A link to a place that did not appear this time becomes plain text; where it is all that its paragraph says, or only says where something is made, it
+ * falls away.
+ */
 export function rehypeNoDanglingLinks() {
   return (tree: HtmlRoot): undefined => {
     const ids = new Set<unknown>()
     visit(tree, 'element', (element) => void ids.add(element.properties['id']))
-    visit(tree, 'element', (element) => {
-      const { href } = element.properties
-      if (element.tagName !== 'a' || typeof href !== 'string' || !href.startsWith('#') || ids.has(href.slice(1))) return
+    const dangles = (node: HtmlContent) => {
+      const href = node.type === 'element' && node.tagName === 'a' ? node.properties['href'] : undefined
+      return typeof href === 'string' && href.startsWith('#') && !ids.has(href.slice(1))
+    }
+    const pointsOnly = (node: HtmlContent) => dangles(node) && node.type === 'element' && [node.properties['className']].flat().includes('made')
+    visit(tree, 'element', (element, index, parent) => {
+      const fallen = element.children.filter(pointsOnly)
+      const blank = (node: HtmlContent) => node.type === 'text' && node.value.trim() === ''
+      if (element.tagName === 'p' && element.children.some(dangles) && element.children.every((node) => dangles(node) || blank(node)) && parent && index !== undefined) {
+        parent.children.splice(index, 1)
+        return index
+      }
+      if (fallen.length > 0) element.children = withoutSpaceAtEnd(element.children.filter((node) => !pointsOnly(node)))
+      if (!dangles(element)) return undefined
       element.tagName = 'span'
       element.properties = {}
+      return undefined
     })
   }
+}
+
+/** The space before a link that has fallen away. */
+function withoutSpaceAtEnd(nodes: readonly ElementContent[]): ElementContent[] {
+  const last = nodes.at(-1)
+  return last?.type === 'text' ? [...nodes.slice(0, -1), { ...last, value: last.value.trimEnd() }] : [...nodes]
 }

@@ -1,6 +1,6 @@
-import { closest } from 'fastest-levenshtein'
 import { z } from 'zod'
 import { findingsSchema } from '../../model/findings/schema.ts'
+import { nearOnes } from './faults.ts'
 import type { Path, Step } from './path.ts'
 
 /**
@@ -15,6 +15,8 @@ export interface TypeNode {
   readonly additionalProperties?: TypeNode | boolean
   readonly items?: TypeNode
   readonly anyOf?: readonly TypeNode[]
+  /** What a number is counted in, where the schema says so. */
+  readonly unit?: string
 }
 
 /** Like `Scope`, with types for values. */
@@ -27,15 +29,15 @@ export interface TypeScope {
 /** The scope outside any block. */
 export const findingsScope: TypeScope = { findings: z.toJSONSchema(findingsSchema) as TypeNode, names: {} }
 
-export type PathType = { readonly known: true, readonly type: TypeNode } | { readonly known: false, readonly unknown: string, readonly nearest: string | undefined }
+export type PathType = { readonly known: true, readonly type: TypeNode } | { readonly known: false, readonly unknown: string, readonly mend: string }
 
-/** The type at a path; or the first of its names that is unknown, and the known name nearest to it. */
+/** The type at a path; or the first of its names that is unknown, and how to mend it. */
 export function typeAt(path: Path, scope: TypeScope): PathType {
   const [first, ...rest] = path
-  if (!first) return { known: false, unknown: '', nearest: undefined }
+  if (!first) return { known: false, unknown: '', mend: seeSchema }
   const starts = [scope.item, { properties: scope.names }, scope.findings].filter((start) => start !== undefined)
   const start = starts.find((node) => child(node, first.key)) ?? { properties: Object.fromEntries(starts.flatMap((node) => Object.entries(node.properties ?? {}))) }
-  const found = [first, ...rest].reduce<PathType>((at, step) => at.known ? follow(at.type, step, scope) : at, { known: true, type: start })
+  const found = [first, ...rest].reduce<PathType>((before, step, at) => before.known ? throughList(before.type, path, at) ?? follow(before.type, step, scope) : before, { known: true, type: start })
   return found.known && path.some(({ all }) => all) && !withoutNull(found.type).items ? { known: true, type: { type: 'array', items: found.type } } : found
 }
 
@@ -47,13 +49,35 @@ function follow(node: TypeNode, step: Step, scope: TypeScope): PathType {
   if (!item) return unknown(`${step.key}[${step.all ? 'all' : step.end ?? `${step.pick?.field}=`}]`, node)
   if (!step.pick) return { known: true, type: withoutNull(item) }
   if (!child(item, step.pick.field)) return unknown(step.pick.field, item)
+  const choices = withoutNull(child(item, step.pick.field) ?? {}).enum
+  if (choices && typeof step.pick.value === 'string' && !choices.includes(step.pick.value)) return unknown(step.pick.value, item, `Known for ${step.pick.field} are ${choices.join(', ')}.`)
   const wanted = typeof step.pick.value === 'string' ? undefined : typeAt(step.pick.value, scope)
   return wanted && !wanted.known ? wanted : { known: true, type: withoutNull(item) }
 }
 
-function unknown(name: string, node: TypeNode): PathType {
+const seeSchema = 'See model/findings/findings.schema.json for what there is.'
+
+function unknown(name: string, node: TypeNode, mend?: string): PathType {
   const names = Object.keys(withoutNull(node).properties ?? {})
-  return { known: false, unknown: name, nearest: names.length > 0 ? closest(name, names) : undefined }
+  const [near] = nearOnes(name, names)
+  const known = names.length > 0 && names.length <= mostNames ? `Known here are ${names.join(', ')}.` : seeSchema
+  return { known: false, unknown: name, mend: mend ?? (near === undefined ? known : `Write "${near}", if that is meant.`) }
+}
+
+/** So many names are told where none is near. */
+const mostNames = 20
+
+/** A name that the items of a list have, and the list has not. */
+function throughList(list: TypeNode, path: Path, at: number): PathType | undefined {
+  const { items } = withoutNull(list)
+  const [before, step] = [path[at - 1], path[at]]
+  if (!items || !before || !step || !child(items, step.key)) return undefined
+  return unknown(step.key, list, `"${before.key}" is a list: write ${before.key}[first].${step.key}, name an item as in ${before.key}[${idOf(items)}=...].${step.key}, or repeat a block over it by :::each.`)
+}
+
+/** The field by which an item is best picked: the first one that is a text. */
+function idOf(item: TypeNode): string {
+  return Object.entries(withoutNull(item).properties ?? {}).find(([, node]) => kindOf(node) === 'string')?.[0] ?? 'label'
 }
 
 function child(node: TypeNode, key: string): TypeNode | undefined {
@@ -70,10 +94,17 @@ export function withoutNull(node: TypeNode): TypeNode {
 /** Whether a value of the type can be written by a form made from `kind`. */
 export function isOfKind(node: TypeNode, kind: string): boolean {
   const { properties = {} } = withoutNull(node)
+  if (isAnything(node)) return true
   if (kind === 'shift') return 'share_from' in properties && 'share_to' in properties
   if (kind === 'fieldwork') return 'field_start' in properties && 'field_end' in properties
   if (kind === 'spans') return 'best_lag' in properties && 'span_days' in properties
   return kind === 'event' ? 'label' in properties && 'date' in properties : kindOf(node) === kind
+}
+
+/** After a fault nothing is known of what follows from it, and nothing is held against it. */
+function isAnything(node: TypeNode): boolean {
+  const { type, properties, items, anyOf, enum: choices } = node
+  return [type, properties, items, anyOf, choices].every((part) => part === undefined) && !('const' in node)
 }
 
 /** What a value of the type can be written as: see the forms of generator/words. */
@@ -85,4 +116,12 @@ export function kindOf(node: TypeNode): string {
   if (properties && 'start' in properties && 'end' in properties) return 'span'
   const [named = 'nothing'] = [type ?? []].flat().filter((name) => name !== 'null')
   return named === 'integer' ? 'number' : named
+}
+
+/** What a figure, the bounds of an interval or the figures of a list are counted in; undefined where the schema does not say. */
+export function unitOf(node: TypeNode): string | undefined {
+  const { unit, properties, items } = withoutNull(node)
+  if (unit !== undefined) return unit
+  const inner = items ?? (properties?.['low'] && withoutNull(properties['low']))
+  return inner && unitOf(inner)
 }

@@ -43,6 +43,20 @@ function parseStep(text: string): Step | undefined {
   return wanted === undefined ? undefined : { key, pick: { field, value: wanted } }
 }
 
+/** The first item of a path that its list does not hold; undefined where every list has what is picked of it, or where something before it is missing. */
+export function missingItem(path: Path, scope: Scope): { readonly list: string, readonly sought: string, readonly items: readonly string[] } | undefined {
+  for (const [at, step] of path.entries()) {
+    if (!step.pick || path.slice(0, at).some(({ all }) => all)) continue
+    const { field, value: wanted } = step.pick
+    const list = lookUp([...path.slice(0, at), { key: step.key }], scope)
+    const sought = typeof wanted === 'string' ? wanted : lookUp(wanted, scope)
+    if (!Array.isArray(list) || (typeof sought !== 'string' && typeof sought !== 'number')) return undefined
+    const items = list.flatMap((item: unknown) => hasOwn(item, field) ? [String(item[field])] : [])
+    if (!items.includes(String(sought))) return { list: step.key, sought: String(sought), items }
+  }
+  return undefined
+}
+
 /** The value at a path; undefined where there is none. Total: it never throws. */
 export function lookUp(path: Path, scope: Scope): unknown {
   const [first] = path

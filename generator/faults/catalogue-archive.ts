@@ -73,7 +73,7 @@ export const archiveWordings = {
   'chain-end-unreadable': (_: object): Wording => ({ unexpected: 'content', expected: 'the end of the chain of seals', mend: restore }),
   'rebuild-differs': (details: { readonly found: string; readonly expected: string }): Wording => ({
     unexpected: details.found, expected: details.expected,
-    mend: 'The same program made something else of the archived tables and inputs: one of them is not what the review was made from. Compare with a copy of the archive.',
+    mend: 'The same program, to the byte, made something else of the archived tables and inputs: one of them is not what the review was made from. Compare with a copy of the archive.',
   }),
   'rebuild-failed': (details: { readonly reason: string }): Wording => ({
     unexpected: `content that no review can be made from (${details.reason})`, expected: 'the tables and inputs that the review was made from', mend: restore,

@@ -26,9 +26,9 @@ export const intakeWordings = {
     unexpected: `mentions from ${details.first} to ${details.last} only`, expected: `a whole ${details.kind}`,
     mend: 'Name the period to review with --period, or wait until the first one is over.',
   }),
-  'period-unknown': (details: { readonly name: string; readonly pattern: string }): Wording => ({
+  'period-unknown': (details: { readonly name: string; readonly pattern: string; readonly meant: string | null }): Wording => ({
     unexpected: `period \`${details.name}\``, expected: `a name such as ${details.pattern}`,
-    mend: 'Name a period of the kind that `reporting` of the account says.',
+    mend: details.meant === null ? 'Name a period of the kind that `reporting` of the account says.' : `Write \`${details.meant}\`.`,
   }),
   'target-mix-level': (details: { readonly level: string; readonly known: readonly string[] }): Wording => ({
     unexpected: `level \`${details.level}\``, expected: `a level that mentions are in: ${details.known.join(', ')}`,

@@ -2,6 +2,41 @@ import { shortened, type Wording } from './wording.ts'
 
 /** Faults of an account's own template, charts and notes. */
 export const templateWordings = {
+  'form-unit': (details: { readonly form: string; readonly figure: string; readonly unit: string; readonly fitting: readonly string[]; readonly unitNeeded: boolean }): Wording => ({
+    unexpected: `form "${details.form}" for "${shortened(details.figure)}", which is in ${details.unit}`, expected: 'a form for that',
+    mend: `Fitting forms: ${details.fitting.join(', ')}${details.unitNeeded ? '; those of measures and steps need unit="PATH", such as survey.kind or grid' : ''}.`,
+  }),
+  'directive-slip': (details: { readonly text: string; readonly name: string | null; readonly colons: string }): Wording => ({
+    unexpected: `text "${shortened(details.text)}" that looks like a directive`, expected: 'a directive, or text',
+    mend: details.name === null ? `Text that begins with "::" is written "\\::".`
+      : `Write ${details.colons}${details.name}{...} without a space before the name or the brace, values in quotes, and on a line of its own where it has two colons or more.`,
+  }),
+  'block-open': (details: { readonly name: string; readonly colons: number; readonly line: number }): Wording => ({
+    unexpected: `block "${shortened(details.name)}" opened at line ${details.line} and not closed`, expected: `a line "${':'.repeat(details.colons)}" where it ends`,
+    mend: `Add that line, with exactly ${details.colons} colons: all that follows stands inside the block otherwise.`,
+  }),
+  'block-colons': (details: { readonly inner: { readonly name: string; readonly colons: number }; readonly outer: { readonly name: string; readonly colons: number; readonly line: number } }): Wording => ({
+    unexpected: `block "${shortened(details.inner.name)}" with ${details.inner.colons} colons inside block "${shortened(details.outer.name)}" that line ${details.outer.line} opened with ${details.outer.colons}`,
+    expected: 'fewer colons than the block around it has',
+    mend: `Open and close "${shortened(details.outer.name)}" with "${':'.repeat(details.inner.colons + 1)}": the outer block needs one colon more than the inner.`,
+  }),
+  'fence-stray': (details: { readonly line: string }): Wording => ({
+    unexpected: `line "${shortened(details.line)}" that closes nothing`, expected: 'a block opened before it',
+    mend: 'Take it out; where blocks stand inside one another, the outer block needs one colon more than the inner.',
+  }),
+  'item-absent': (details: { readonly path: string; readonly sought: string; readonly list: string; readonly items: readonly string[] }): Wording => ({
+    unexpected: `"${shortened(details.sought)}" in path "${shortened(details.path)}"`, expected: `an item of ${details.list}`,
+    mend: details.items.length === 0 ? 'There is none this time; put the figure into a block :::when that asks whether it exists.'
+      : `There are ${details.items.map((item) => shortened(item)).join(', ')}; a figure that is not always there stands in a block :::when that asks whether it exists.`,
+  }),
+  'anchor-left-out': (details: { readonly anchor: string }): Wording => ({
+    unexpected: `anchor "${shortened(details.anchor)}" of a section that this review leaves out`, expected: 'a place in this review',
+    mend: 'Take the link out, or put its section into the review.',
+  }),
+  'chart-unused': (details: { readonly name: string }): Wording => ({
+    unexpected: `chart "${details.name}" that the review does not call`, expected: 'a chart that stands in the review',
+    mend: `Call it by \`::chart{name="${details.name}"}\`, or take the file away.`,
+  }),
   'template-missing': (details: { readonly path: string }): Wording => ({
     unexpected: `absence of \`${shortened(details.path)}\``, expected: 'a file of the account folder, named from there',
     mend: 'Put the file there, or mend the name; upper and lower case matter.',
@@ -35,7 +70,7 @@ export const templateWordings = {
     mend: 'Put texts that belong together into one file.',
   }),
   'section-twice': (details: { readonly name: string }): Wording => ({
-    unexpected: `section "${details.name}" a second time`, expected: 'every section once in a review',
+    unexpected: `${details.name.includes(',') ? 'sections' : 'section'} "${details.name}" a second time`, expected: 'every section once in a review',
     mend: `Take it out here; a line \`::house\` leaves it out with \`without="${details.name}"\`.`,
   }),
   'section-unused': (details: { readonly name: string; readonly nearest: string }): Wording => ({
@@ -94,6 +129,20 @@ export const templateWordings = {
     unexpected: `key \`${shortened(details.key)}\``, expected: 'marks drawn from tables of the findings, without links, pictures and addresses',
     mend: 'Take it out.',
   }),
+  'chart-key-unknown': (details: { readonly key: string; readonly nearest: string }): Wording => ({
+    unexpected: `key \`${shortened(details.key)}\``, expected: 'one that Vega-Lite knows in this place', mend: details.nearest,
+  }),
+  'chart-value': (details: { readonly value: string; readonly expected: string }): Wording => ({
+    unexpected: `value ${shortened(details.value)}`, expected: 'one that Vega-Lite takes in this place', mend: details.expected,
+  }),
+  'chart-format': (details: { readonly format: string; readonly kind: 'figure' | 'date' }): Wording => ({
+    unexpected: `format "${shortened(details.format)}"`, expected: details.kind === 'date' ? 'one for dates' : 'one for figures',
+    mend: details.kind === 'date' ? 'Write it from directives such as %-d (day), %b (short month) and %Y (year): "%b %Y".' : 'Write it as "d" (whole), ".1f" (one decimal), ".0%" (per cent) or ",d" (thousands apart).',
+  }),
+  'chart-sort': (_: object): Wording => ({
+    unexpected: 'another `sort` than that of a layer before', expected: 'one order of all layers on an axis that they share',
+    mend: 'Give every layer the same sort, such as { "field": "rank" }, or leave it out in all but one; or write "sort": null in every layer.',
+  }),
   'chart-mark': (details: { readonly mark: string }): Wording => ({
     unexpected: `mark \`${details.mark}\``, expected: 'lines, bars, points, areas, rules, ticks, text',
     mend: 'Draw with another mark: a review holds no picture and no map from elsewhere.',
@@ -105,6 +154,14 @@ export const templateWordings = {
   'chart-expression': (details: { readonly name: string }): Wording => ({
     unexpected: `\`${details.name}()\` in an expression`, expected: 'one that gives the same whenever it is asked',
     mend: 'Take it out: the same findings must give the same review.',
+  }),
+  'chart-expression-invalid': (details: { readonly reason: string }): Wording => ({
+    unexpected: `expression (${shortened(details.reason)})`, expected: 'one of Vega\'s expression language',
+    mend: 'Mend it; texts in it stand in single quotes, and a field is written `datum.share`.',
+  }),
+  'chart-function': (details: { readonly name: string }): Wording => ({
+    unexpected: `function \`${shortened(details.name)}()\` in an expression`, expected: 'one of Vega\'s expression language',
+    mend: 'Mend its name, or do without it.',
   }),
   'chart-table': (details: { readonly name: string; readonly nearest: string }): Wording => ({
     unexpected: `table "${shortened(details.name)}"`, expected: 'a table of the findings', mend: details.nearest,

@@ -1,7 +1,7 @@
 import type { Element, Properties, Root } from 'hast'
 import { h } from 'hastscript'
 import { visit } from 'unist-util-visit'
-import { fitsPortrait } from './table-width.ts'
+import { hasLongWords, tableForm } from './table-width.ts'
 import type { Theme } from '../theme/theme.ts'
 
 const fewColumns = 4
@@ -43,14 +43,19 @@ function frameDrawing(figure: Element, chart: string, before: readonly DrawingPl
   return { chart, id, alt: typeof dataAlt === 'string' ? dataAlt : '' }
 }
 
-/** What the style sheet cannot count: columns that need a landscape page, so few that they stand closer, so few rows that no page break is needed. */
+const formClasses = { portrait: [], tight: ['tight'], landscape: ['wide'] } as const
+
+/** What the style sheet cannot count: columns that need smaller type or a landscape page, so few that they stand closer, so few rows that no page break is needed, words that have to be cut. */
 function classesOf(region: Element, theme: Pick<Theme, 'advances' | 'paper'>): readonly string[] {
   let [columns, rows] = [0, 0]
   visit(region, 'element', (element) => {
     if (element.tagName === 'th' && element.properties.scope === 'col') columns += 1
     if (element.tagName === 'tr') rows += 1
   })
-  return [...(fitsPortrait(region, theme.advances, theme.paper) ? [] : ['wide']), ...(columns <= fewColumns ? ['few-columns'] : []), ...(rows <= fewRows ? ['few-rows'] : [])]
+  return [
+    ...formClasses[tableForm(region, theme.advances, theme.paper)], ...(columns <= fewColumns ? ['few-columns'] : []), ...(rows <= fewRows ? ['few-rows'] : []),
+    ...(hasLongWords(region, theme.advances) ? ['long-words'] : []),
+  ]
 }
 
 function markTable(region: Element, theme: Pick<Theme, 'advances' | 'paper'>): void {

@@ -3,12 +3,13 @@ import type { Browser } from 'puppeteer'
 import type { Findings } from '../../model/findings/schema.ts'
 import type { Account } from '../account/account.ts'
 import { flattenIntake } from '../archive/flatten-intake.ts'
+import { madeHere, type KeptFile } from '../archive/manifest.ts'
 import { openCache } from '../cache/cache.ts'
 import { firstForecast, marginsAsked } from '../inputs/place-inputs.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
 import { readIntake } from '../intake/read-intake.ts'
 import type { Program } from '../program/program.ts'
-import { loadHouse, type House } from './house.ts'
+import { checkHouse, readHouse, type House } from './house.ts'
 import { makeReview, type ReviewMaterial } from './make-review.ts'
 import { fingerprintHouse, recordInputs } from './record-inputs.ts'
 import type { Progress } from './stages.ts'
@@ -42,14 +43,16 @@ export interface Draft {
 
 /** Make the draft review of one account and period. What was there before stays until the new draft is whole. */
 export async function buildReview(program: Program, account: Account, options: BuildOptions): Promise<Draft> {
-  const house = await loadHouse(program, account)
+  const house = await readHouse(program, account)
+  const ofHouse = await fingerprintHouse(account, house)
+  await checkHouse(house, account)
   const browser = options.browser === null ? null : options.browser()
   // a machine without a browser is told at once, not after the fit; the answer is awaited where it is needed
   browser?.catch(() => undefined)
   if (options.out !== undefined) await requireDraft(options.out)
   const draft = await openDraft(options.out === undefined ? join(account.folder, 'drafts') : dirname(options.out))
   try {
-    const contents = await unlessStopped(options.stop, makeContents(program, account, house, draft.rejects, browser, options))
+    const contents = await unlessStopped(options.stop, makeContents(program, account, { house, ofHouse }, draft.rejects, browser, options))
     const folder = options.out ?? join(account.folder, 'drafts', contents.findings.period.name)
     await draft.finish(folder, contents)
     return { folder, findings: contents.findings }
@@ -60,11 +63,10 @@ export async function buildReview(program: Program, account: Account, options: B
 }
 
 async function makeContents(
-  program: Program, account: Account, house: House, rejects: string, browser: Promise<Browser> | null, options: BuildOptions,
+  program: Program, account: Account, { house, ofHouse }: { readonly house: House; readonly ofHouse: readonly KeptFile[] }, rejects: string, browser: Promise<Browser> | null, options: BuildOptions,
 ): Promise<DraftContents> {
   const { seed, threads, progress } = options
   progress.stage('intake')
-  const ofHouse = await fingerprintHouse(account, house)
   const material = await readMaterial(account, rejects, options)
   const review = await makeReview(program, account, house, material, { seed, threads, cache: openCache(join(account.folder, 'cache'), program.model), browser, progress })
   const { period, diagnostics } = review.findings
@@ -72,7 +74,7 @@ async function makeContents(
     ...review, intake: flattenIntake(material.tables),
     record: {
       schema: 'tareline-record/1', account: account.account, period: period.name,
-      program: { version: program.version, model: program.model, runtime: program.runtime, browser: browser === null ? null : await (await browser).version() },
+      program: { ...madeHere(program), browser: browser === null ? null : await (await browser).version() },
       seed, prepared_by: account.preparedBy, reviewed_by: account.reviewedBy, passed: diagnostics.passed,
       inputs: await recordInputs(account, house, period.name, ofHouse, material),
     },

@@ -11,12 +11,15 @@ import type { Program } from '../program/program.ts'
 import { tablesOf } from '../tables/tables-of.ts'
 import { loadHouse } from './house.ts'
 import { requireSteps } from './make-findings.ts'
+import { partsRead, type PartRead } from './parts-read.ts'
 import type { Progress } from './stages.ts'
 
 /** What a check has read. */
 export interface Checked {
   readonly tables: IntakeTables
   readonly inputs: RawInputs
+  /** What the review would be made with. */
+  readonly read: readonly PartRead[]
 }
 
 /**
@@ -31,7 +34,7 @@ export async function checkAccount(program: Program, folder: string, rejects: st
   requireSound({ template: house.template, findings: blankFindings, tables: tablesOf(blankFindings), charts: [...house.charts.keys()], words: house.words })
   progress.stage('intake')
   const [inputs, tables] = await Promise.allSettled([readSmallInputs(account), readMentions(account, rejects, progress)])
-  if (inputs.status === 'fulfilled' && tables.status === 'fulfilled') return { tables: tables.value, inputs: inputs.value }
+  if (inputs.status === 'fulfilled' && tables.status === 'fulfilled') return { tables: tables.value, inputs: inputs.value, read: partsRead(account, house) }
   throw joined([inputs, tables].flatMap((result) => (result.status === 'rejected' ? [result.reason as unknown] : [])))
 }
 

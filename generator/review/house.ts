@@ -45,19 +45,28 @@ export async function readHouse(program: Program, account: Account): Promise<Hou
   return { template, words, charts: new Map([...houseCharts, ...own]), ownCharts: [...own.keys()], theme, files: filesRead(account, template, words, own, theme) }
 }
 
-/**
- * @param options.archived - the account is out of an archive, which has the notes of one period only: words that another's call may be there, and are no fault
- * @throws {InputFault} a language without a catalogue, whatever is wrong in the account's template, sections and charts, a theme that is refused
- */
-export async function loadHouse(program: Program, account: Account, { archived = false }: { readonly archived?: boolean } = {}): Promise<House> {
+/** @throws {InputFault} what `readHouse` and `checkHouse` do */
+export async function loadHouse(program: Program, account: Account): Promise<House> {
   const house = await readHouse(program, account)
-  const { template, words, charts, theme } = house
-  const tables = tablesOf(blankFindings)
-  if (!archived) requireUsed(words, template, charts, account)
-  // a template that is wrong, or a chart that can't be drawn, is told before anything is computed
-  compose({ template, findings: blankFindings, tables, charts: [...charts.keys()], words })
-  for (const name of house.ownCharts) await drawChart(charts.get(name) ?? { name }, tables, words, theme)
+  await checkHouse(house, account)
   return house
+}
+
+/**
+ * A template that is wrong, a chart that can't be drawn, or words that nothing calls are told before anything is computed.
+ *
+ * @throws {InputFault} with whatever is wrong in the account's own part of it
+ */
+export async function checkHouse({ template, words, charts, ownCharts, theme }: House, account: Account): Promise<void> {
+  const tables = tablesOf(blankFindings)
+  requireUsed(words, template, charts, account)
+  compose({ template, findings: blankFindings, tables, charts: [...charts.keys()], ownCharts: ownChartPlaces({ charts, ownCharts }), words })
+  for (const name of ownCharts) await drawChart(charts.get(name) ?? { name }, tables, words, theme)
+}
+
+/** Name and file of each chart that is the account's. */
+function ownChartPlaces({ charts, ownCharts }: Pick<House, 'charts' | 'ownCharts'>): ReadonlyMap<string, string> {
+  return new Map(ownCharts.map((name) => [name, charts.get(name)?.[ownPlace] ?? name]))
 }
 
 function filesRead(account: Account, { review, sections, ownSections, included }: Template, words: Words, charts: ReadonlyMap<string, ChartSpec>, theme: Theme): readonly string[] {

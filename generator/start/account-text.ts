@@ -1,4 +1,3 @@
-import { firstOfMonth, dayNumber, isoDate, monthOf } from '../calendar/days.ts'
 import { neededRoles, roles, type Role } from './column-names.ts'
 import { furtherKeys } from './further-keys.ts'
 import type { AccountProposal, LevelProposal } from './propose-account.ts'
@@ -27,7 +26,7 @@ export interface TextOptions {
 
 /** account.yaml for a proposal: every line with its reason, keys that are not used as comments. */
 export function accountText(proposal: AccountProposal, options: TextOptions): string {
-  const { axis, tally, venues, topics } = proposal
+  const { axis, base, locale, tally, venues, topics } = proposal
   return [
     `# Proposed from ${inComment(options.from)} (${counted(tally.rows, 'row')}): read it line by line, mend what is wrong,`,
     '# and run `tareline check` until it says what you expect. Paths are relative to this folder.',
@@ -36,12 +35,13 @@ export function accountText(proposal: AccountProposal, options: TextOptions): st
       [`account: ${options.account}`, 'a short name: letters, digits, hyphens'],
       brandLine(proposal, options),
       ...otherBrands(proposal).map((comment): Line => [`# ${comment}`]),
-      ['locale: en-GB', 'language of the review, and how figures and dates are written'],
+      [`locale: ${locale.locale}`, inComment(locale.reason, 200)],
       ['time_zone: UTC', zoneComment(tally.times, tally.rows)],
       [`grid: ${axis.grid}`, `the step of the time axis: ${axis.reason}`],
       [`reporting: ${axis.reporting}`, 'what one review covers: month, quarter or week'],
     ]),
-    baseLine(tally.times),
+    base === null ? '# base: { from: 2025-01-01, to: 2025-12-31 }   # what "since base" compares with; left out, the first 12 months of mentions'
+      : `# base: { from: ${base.from}, to: ${base.to} }   # what "since base" compares with; left out, these first 12 months of mentions, or as much of them as there is`,
     'interval: 0.9   # probability inside every interval of the review',
     '',
     '# Our name on the left, the file\'s on the right. Only posted_at, venue and score are required.',
@@ -77,12 +77,7 @@ function zoneComment(times: TimeTally | null, rows: number): string {
     : `how the times without offset are read (${without === rows ? 'all of them' : `${count(without)} of ${count(rows)}`}), and ${usual}`
 }
 
-function baseLine(times: TimeTally | null): string {
-  const first = times === null ? dayNumber('2025-01-01') : dayNumber(times.most.first)
-  const { year, month } = monthOf(first)
-  const last = firstOfMonth(year + 1, month) - 1
-  return `# base: { from: ${isoDate(first)}, to: ${isoDate(last)} }   # what "since base" compares with; left out, the first 12 months of mentions`
-}
+const mostUnused = 12
 
 function sourceLines({ columns, tally, score }: AccountProposal, { files, form }: TextOptions): readonly string[] {
   const proposed = columns.columns
@@ -95,7 +90,8 @@ function sourceLines({ columns, tally, score }: AccountProposal, { files, form }
   ]
   return [
     withComments(lines),
-    ...(columns.unused.length === 0 ? [] : [`      # not used: ${columns.unused.slice(0, 12).map((name) => `\`${inComment(name)}\``).join(', ')}${columns.unused.length > 12 ? ` and ${columns.unused.length - 12} more` : ''}`]),
+    ...columns.unused.slice(0, mostUnused).map(({ name, reason }) => `      # not used: \`${inComment(name)}\`, ${inLine(reason)}`),
+    ...(columns.unused.length <= mostUnused ? [] : [`      # not used either: ${counted(columns.unused.length - mostUnused, 'more column')}`]),
     ...(form === null ? [] : [`    delimiter: ${yamlText(form.delimiter)}`, `    quote: ${yamlText(form.quote)}`]),
     ...timeLines(tally.times),
     ...scoreLines(score, proposed.some(({ role }) => role === 'score')),

@@ -1,8 +1,10 @@
 import type { Grid } from '../calendar/grid.ts'
 import { dayNumber } from '../calendar/days.ts'
 import { lastWholePeriod, type Reporting } from '../calendar/periods.ts'
+import { timeline, type DateRange } from '../calendar/timeline.ts'
 import { foldValue, tidyValue } from '../intake/level-names.ts'
 import { numbersOf } from './column-profile.ts'
+import { proposeLocale, type LocaleProposal } from './language.ts'
 import type { ColumnProposals } from './propose-columns.ts'
 import { counted } from './role-rules.ts'
 import { readLabels, readRange, type LabelReading, type RangeReading, type Tally } from './score-forms.ts'
@@ -20,6 +22,9 @@ export interface AccountProposal {
   /** Empty also where there are too many to be listed. */
   readonly topics: readonly LevelProposal[]
   readonly axis: AxisProposal
+  /** What the program takes where the account says nothing; null where no whole period is there yet. */
+  readonly base: DateRange | null
+  readonly locale: LocaleProposal
 }
 
 /** A venue or topic: the spellings that differ in case and spacing alone are one. */
@@ -43,11 +48,21 @@ const mostListed = { venue: 60, topic: 40 } as const
 /** Everything that the file says about its account, once it has been counted whole. */
 export function proposeAccount(columns: ColumnProposals, tally: FileTally, decimalCommas: boolean): AccountProposal {
   const { values, times, rows } = tally
+  const score = scoreOf(values.get('score'), decimalCommas)
+  const axis = chooseAxis(times === null ? null : { first: dayNumber(times.most.first), last: dayNumber(times.most.last) }, rows)
+  const names = [...columns.columns.map(({ column }) => column.name), ...columns.unused.map(({ name }) => name)]
   return {
-    columns, tally, score: scoreOf(values.get('score'), decimalCommas), brand: brandOf(values.get('brand')),
+    columns, tally, score, brand: brandOf(values.get('brand')),
     venues: listed(values.get('venue'), mostListed.venue), topics: listed(values.get('topic'), mostListed.topic),
-    axis: chooseAxis(times === null ? null : { first: dayNumber(times.most.first), last: dayNumber(times.most.last) }, rows),
+    axis, base: times === null ? null : baseOf(axis, dayNumber(times.first), dayNumber(times.last)),
+    locale: proposeLocale(names, score?.kind === 'labels' ? score.labels.map(({ label }) => label) : [], times?.format ?? null),
   }
+}
+
+function baseOf({ grid, reporting }: AxisProposal, firstDay: number, last: number): DateRange | null {
+  const review = lastWholePeriod(reporting, last)
+  const end = dayNumber(review.end)
+  return end < firstDay ? null : timeline({ grid, reporting, base: null, firstDay, lastDay: Math.min(last, end), review }).base
 }
 
 function scoreOf(values: ValueTally | undefined, decimalCommas: boolean): LabelReading | RangeReading | null {

@@ -19,8 +19,14 @@ export interface ColumnProposals {
   readonly columns: readonly ColumnProposal[]
   /** Needed ones for which no column is likely enough, with those that come nearest. */
   readonly undecided: readonly { readonly role: Role; readonly candidates: readonly string[] }[]
-  /** Columns of the file that nothing is proposed for. */
-  readonly unused: readonly string[]
+  /** Columns of the file that nothing is proposed for, and why. */
+  readonly unused: readonly UnusedColumn[]
+}
+
+export interface UnusedColumn {
+  readonly name: string
+  /** In words, for the account file. */
+  readonly reason: string
 }
 
 interface Candidate {
@@ -74,8 +80,20 @@ export function proposeColumns(head: readonly HeadColumn[], { account, decimalCo
     columns: roles.flatMap((role) => chosen.filter((candidate) => candidate.role === role).map(({ column, reason, total }): ColumnProposal => (
       { role, column, reason, sure: total >= threshold, alternatives: others(role) }))),
     undecided: neededRoles.filter((role) => !chosen.some((candidate) => candidate.role === role)).map((role) => ({ role, candidates: others(role) })),
-    unused: columns.filter((column) => !chosen.some((candidate) => candidate.column === column)).map(({ name }) => name),
+    unused: columns.filter((column) => !chosen.some((candidate) => candidate.column === column)).map((column) => ({ name: column.name, reason: whyUnused(column, all, chosen) })),
   }
+}
+
+function whyUnused(column: ColumnProfile, all: readonly Candidate[], chosen: readonly Candidate[]): string {
+  if (column.filled === 0) return 'without any value'
+  if (column.names.later && column.time !== null) return 'times of something else than posting'
+  if (column.names.foreign) return 'none of ours; to adjust for it, map it and name it under `factors`'
+  const likely = all.filter((candidate) => candidate.column === column && candidate.total >= guess).sort(byTotal)
+  for (const { role } of likely) {
+    const taken = chosen.find((candidate) => candidate.role === role)
+    if (taken !== undefined) return `\`${taken.column.name}\` is likelier as ${role}`
+  }
+  return likely.length === 0 ? 'its values are like none of what an account reads' : `too unlike ${likely[0]!.role} to be proposed`
 }
 
 const byTotal = (a: Candidate, b: Candidate): number => b.total - a.total || roles.indexOf(a.role) - roles.indexOf(b.role)

@@ -17,10 +17,10 @@ const unseen = /[\u007f-\u009f\u00ad\u061c\u200b-\u200f\u2028-\u202f\u2060-\u206
 const mostTold = 60
 
 /** A text from the data as it stands in a comment: on one line, short, nothing unseen in it. */
-export function inComment(text: string): string {
+export function inComment(text: string, most = mostTold): string {
   const plain = text.replace(/\p{C}+|[\u2028\u2029]+/gu, ' ').replace(/\s+/g, ' ').trim()
   const characters = [...plain]
-  return characters.length > mostTold ? `${characters.slice(0, mostTold - 3).join('')}...` : plain
+  return characters.length > most ? `${characters.slice(0, most - 3).join('')}...` : plain
 }
 
 /** A line longer than this does not push the comments of the others aside. */

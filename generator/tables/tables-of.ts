@@ -44,5 +44,15 @@ function withSpeakingInOrder(speaking: Findings['speaking'], sorted: Sorted): Fi
  */
 export function tablesOf(findings: Findings): readonly Table[] {
   const ordered = withVenuesInOrder(findings)
-  return makers.map((make) => make(ordered))
+  const tables = makers.map((make) => make(ordered))
+  return findings.accounting.authors === 'unknown' ? tables.map(withoutAuthors) : tables
+}
+
+/** What is counted in authors. */
+const ofAuthors = ['authors', 'top_share', 'gini', 'effective_authors']
+
+/** Where nobody's name is known, every mention is taken for an author's only one: no count of authors to be shown. */
+function withoutAuthors(table: Table): Table {
+  const unknown = Object.fromEntries(table.columns.filter(({ key }) => ofAuthors.includes(key)).map(({ key }) => [key, null]))
+  return { ...table, rows: table.rows.map((row) => ({ ...row, ...unknown })) }
 }

@@ -5,7 +5,7 @@ import { leastDifference } from './colour/dichromacy.ts'
 import { nearestPassing } from './colour/nearest-passing.ts'
 import { oklabOf } from './colour/oklab.ts'
 import { linearOf } from './colour/srgb.ts'
-import { type GivenColours, givenMarks, grounds, type Palette, type Role } from './palette.ts'
+import { type GivenColours, givenMarks, type GivenRole, givenRoles, grounds, type Palette, type Role, shades } from './palette.ts'
 
 const texts = ['ink', 'quiet', 'accent'] as const satisfies readonly Role[]
 /** On paper. Bands, spans, hairlines and leaders carry nothing that a line or label does not. */
@@ -27,7 +27,7 @@ const leastApart = 0.1
 const lightestOf = 0.93
 
 /** Where each given colour stands in the file. */
-type PlaceOf = (role: Role) => string
+type PlaceOf = (role: GivenRole) => string
 
 /**
  * What is wrong with a palette: text and marks that fall short of WCAG 2.2 AA, and colours in one chart that not everyone can tell apart.
@@ -39,9 +39,9 @@ export function paletteFaults(palette: Palette, given: GivenColours, placeOf: Pl
   const [lightness] = oklabOf(linearOf(palette.paper))
   if (lightness < lightestOf) return [faultOf('theme-paper-dark', placeOf('paper'), { colour: palette.paper, lightness, least: lightestOf })]
   // a ground that makes the house's own text faint is the one to be mended
-  const blamed = (role: Role, ground: Role): string => placeOf(Object.hasOwn(given, role) || !Object.hasOwn(given, ground) ? role : ground)
+  const blamed = (role: Role, ground: Role): string => placeOf(givenOf(keyOf(role), keyOf(ground), given))
   const faint = [...texts.map((role) => faintness(palette, role, grounds, 'text', blamed)), ...marks.map((role) => faintness(palette, role, ['paper'], 'mark', blamed))].flat()
-  return faint.length > 0 ? faint : apart.flatMap(([one, other]) => likeness(palette, one, other, placeOf))
+  return faint.length > 0 ? faint : apart.flatMap(([one, other]) => likeness(palette, one, other, given, placeOf))
 }
 
 function faintness(palette: Palette, role: Role, on: readonly Role[], kind: 'text' | 'mark', blamed: (role: Role, ground: Role) => string): readonly Fault[] {
@@ -52,8 +52,23 @@ function faintness(palette: Palette, role: Role, on: readonly Role[], kind: 'tex
   return [faultOf('theme-contrast', blamed(role, worst.ground), { role, colour: palette[role], ground: worst.ground, on: palette[worst.ground], ratio: worst.ratio, least, kind, nearest })]
 }
 
-function likeness(palette: Palette, one: Role, other: Role, placeOf: PlaceOf): readonly Fault[] {
+/** The key that an account can give to move a colour: companions of the raw average are made from `raw`, grounds and hairlines from `paper`. */
+function keyOf(role: Role): GivenRole {
+  if (isOneOf(givenRoles, role)) return role
+  return isOneOf(shades, role) ? 'raw' : 'paper'
+}
+
+/** Of two keys that which the account has given; the first where it gives both or neither. */
+function givenOf(one: GivenRole, other: GivenRole, given: GivenColours): GivenRole {
+  return Object.hasOwn(given, one) || !Object.hasOwn(given, other) ? one : other
+}
+
+function isOneOf<R extends Role>(some: readonly R[], role: Role): role is R {
+  return (some as readonly Role[]).includes(role)
+}
+
+function likeness(palette: Palette, one: Role, other: Role, given: GivenColours, placeOf: PlaceOf): readonly Fault[] {
   const { difference, vision } = leastDifference(palette[one], palette[other])
   if (difference >= leastApart) return []
-  return [faultOf('theme-alike', placeOf(one), { one, other, colours: [palette[one], palette[other]], difference, least: leastApart, vision })]
+  return [faultOf('theme-alike', placeOf(givenOf(keyOf(one), keyOf(other), given)), { one, other, colours: [palette[one], palette[other]], difference, least: leastApart, vision })]
 }

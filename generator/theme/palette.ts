@@ -11,7 +11,7 @@ export type GivenRole = typeof givenRoles[number]
 /** Grounds and hairlines between paper and ink: they keep their place on the way from one to the other. */
 const tints = ['rule', 'wash', 'base_span', 'leader'] as const
 /** Companions of the raw average's grey: they keep their distance to it. */
-const shades = ['bar', 'raw_line', 'share_dark', 'share_middle'] as const
+export const shades = ['bar', 'raw_line', 'share_dark', 'share_middle'] as const
 
 export const roles = [...givenRoles, ...tints, ...shades] as const
 export type Role = typeof roles[number]

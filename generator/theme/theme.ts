@@ -11,6 +11,10 @@ export interface ChartTheme {
   readonly quiet: string
   readonly rule: string
   readonly paper: string
+  /** Of a mark that names no look. */
+  readonly accent: string
+  /** Of series that name no looks, in turn. */
+  readonly series: readonly string[]
   /** Levels of a mix, from dark to light. */
   readonly shares: readonly string[]
   /** Looks by name, as Vega-Lite's `style` takes them. */

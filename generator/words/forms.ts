@@ -1,3 +1,4 @@
+import type { Unit } from '../../model/findings/parts-schema.ts'
 import { date, days, period, shortDate, when } from './dates.ts'
 import { factorName, levelLabel, partName } from './labels.ts'
 import { measure, measureChange, measureInterval, measureSize, steps } from './measures.ts'
@@ -11,16 +12,24 @@ export interface Form {
   readonly from: Kind
   /** Whether its figure is counted in a unit that another one names. */
   readonly needsUnit?: true
+  /** What its figure, its bounds or its items may be counted in; absent: anything. */
+  readonly takes?: readonly Unit[]
   /** The value has been found to be of the kind `from`, or is null; `unit` is what another figure says it is counted in, else empty. */
   readonly write: (value: never, words: Words, unit: string) => WordArgument
 }
 
-const ofNumber = (write: (value: number, words: Words) => WordArgument): Form => ({ from: 'number', write })
+const ofNumber = (write: (value: number, words: Words) => WordArgument, takes?: readonly Unit[]): Form => ({ from: 'number', write, ...(takes && { takes }) })
 const ofString = (write: (value: string, words: Words) => WordArgument): Form => ({ from: 'string', write })
-const ofBounds = (write: (value: Bounds, words: Words) => WordArgument): Form => ({ from: 'estimate', write })
-const ofMeasure = (write: (value: number, unit: string, words: Words) => WordArgument): Form => ({ from: 'number', needsUnit: true, write: (value: number, words: Words, unit: string) => write(value, unit, words) })
-const ofMeasures = (format: typeof measure): Form => ({ from: 'estimate', needsUnit: true, write: (value: Bounds, words: Words, unit: string) => measureInterval(value, unit, format, words) })
-const ofList = (write: (value: readonly unknown[], words: Words) => WordArgument): Form => ({ from: 'list', write })
+const ofBounds = (write: (value: Bounds, words: Words) => WordArgument, takes?: readonly Unit[]): Form => ({ from: 'estimate', write, ...(takes && { takes }) })
+const ofMeasure = (write: (value: number, unit: string, words: Words) => WordArgument, takes: readonly Unit[] = ['metric']): Form => ({ from: 'number', needsUnit: true, takes, write: (value: number, words: Words, unit: string) => write(value, unit, words) })
+const ofMeasures = (format: typeof measure): Form => ({ from: 'estimate', needsUnit: true, takes: ['metric'], write: (value: Bounds, words: Words, unit: string) => measureInterval(value, unit, format, words) })
+const ofList = (write: (value: readonly unknown[], words: Words) => WordArgument, takes?: readonly Unit[]): Form => ({ from: 'list', write, ...(takes && { takes }) })
+
+/** Scores and percentages of 100 are written alike: with one decimal, and without a unit. */
+const hundredths: readonly Unit[] = ['points', 'percent']
+const counts: readonly Unit[] = ['count', 'steps', 'days']
+/** A plain decimal says nothing wrong of these, though another form may say it better. */
+const decimals: readonly Unit[] = ['number', 'points', 'percent', 'share', 'probability', 'p', 'metric']
 
 interface Bounds { readonly low: number, readonly high: number }
 interface Spans { readonly best_lag: number, readonly span_days: number }
@@ -28,27 +37,27 @@ interface Shift { readonly share_from: number, readonly share_to: number }
 
 /** Every form that a figure can take; a template names one by `as`. */
 export const forms = {
-  points: ofNumber((value, words) => points(value, words.locale)),
-  change: ofNumber((value, words) => change(value, words.locale)),
-  size: ofNumber(size),
-  count: ofNumber((value, words) => count(value, words.locale)),
-  number: ofNumber((value, words) => number(value, words.locale)),
-  'tiny-number': ofNumber((value, words) => tinyNumber(value, words.locale)),
+  points: ofNumber((value, words) => points(value, words.locale), hundredths),
+  change: ofNumber((value, words) => change(value, words.locale), hundredths),
+  size: ofNumber(size, hundredths),
+  count: ofNumber((value, words) => count(value, words.locale), counts),
+  number: ofNumber((value, words) => number(value, words.locale), decimals),
+  'tiny-number': ofNumber((value, words) => tinyNumber(value, words.locale), decimals),
   /** Half the width of an interval, for `plus or minus`: 3.6 is `1.80`. */
-  'half-width': ofNumber((value, words) => number(value / 2, words.locale)),
-  share: ofNumber(share),
-  probability: ofNumber(probability),
-  'probability-words': ofNumber((value, words) => words.say('probability-words', { band: probabilityBand(value) })),
-  'probability-figure': ofNumber(probabilityFigure),
+  'half-width': ofNumber((value, words) => number(value / 2, words.locale), ['points']),
+  share: ofNumber(share, ['share', 'probability', 'p']),
+  probability: ofNumber(probability, ['probability']),
+  'probability-words': ofNumber((value, words) => words.say('probability-words', { band: probabilityBand(value) }), ['probability']),
+  'probability-figure': ofNumber(probabilityFigure, ['probability']),
   /** How large a small figure is, without its sign: `0.13`. */
-  'number-size': ofNumber((value, words) => number(Math.abs(value), words.locale)),
+  'number-size': ofNumber((value, words) => number(Math.abs(value), words.locale), decimals),
   /** For choosing a case: `up`, `down`, or `flat` where one decimal shows nothing. */
   sign: ofNumber(signOf),
   /** The bare number, for plurals and exact cases. */
-  plain: ofNumber((value) => value),
-  interval: ofBounds((value, words) => interval(value, points, words)),
-  'change-interval': ofBounds((value, words) => interval(value, change, words)),
-  'size-interval': ofBounds(sizeInterval),
+  plain: ofNumber((value) => value, counts),
+  interval: ofBounds((value, words) => interval(value, points, words), hundredths),
+  'change-interval': ofBounds((value, words) => interval(value, change, words), hundredths),
+  'size-interval': ofBounds(sizeInterval, hundredths),
   /** A metric of the survey; needs `unit`, the path to its kind: a share in percent or a mean. */
   measure: ofMeasure((value, unit, words) => measure(value, unit, words.locale)),
   'measure-change': ofMeasure((value, unit, words) => measureChange(value, unit, words.locale)),
@@ -56,21 +65,21 @@ export const forms = {
   'measure-interval': ofMeasures(measure),
   'measure-change-interval': ofMeasures(measureChange),
   /** Steps of the grid, without sign; needs `unit`, the path to the grid. */
-  steps: ofMeasure(steps),
-  'number-interval': ofBounds((value, words) => interval(value, number, words)),
-  'p-value': ofNumber(pValue),
+  steps: ofMeasure(steps, ['steps']),
+  'number-interval': ofBounds((value, words) => interval(value, number, words), decimals),
+  'p-value': ofNumber(pValue, ['p']),
   /** For choosing a case: whether chance is a poor explanation (`clear`, p at most 0.05, the level of the verdict's rule) or may do (`open`). */
-  chance: ofNumber((p) => (p <= 0.05 ? 'clear' : 'open')),
+  chance: ofNumber((p) => (p <= 0.05 ? 'clear' : 'open'), ['p']),
   /** What an interval leaves outside, as a p-value: 0.90 leaves `0.10`. */
-  outside: ofNumber((value, words) => pValue(1 - value, words)),
+  outside: ofNumber((value, words) => pValue(1 - value, words), ['share']),
   /** Something that goes with 10 points, as it goes with 1: `+0.21`. */
-  'per-point': ofNumber((value, words) => measureChange(value / 10, 'mean', words.locale)),
-  'per-point-size': ofNumber((value, words) => measureSize(value / 10, 'mean', words.locale)),
-  'per-point-interval': ofBounds(({ low, high }, words) => measureInterval({ low: low / 10, high: high / 10 }, 'mean', measureChange, words)),
+  'per-point': ofNumber((value, words) => measureChange(value / 10, 'mean', words.locale), ['percent']),
+  'per-point-size': ofNumber((value, words) => measureSize(value / 10, 'mean', words.locale), ['percent']),
+  'per-point-interval': ofBounds(({ low, high }, words) => measureInterval({ low: low / 10, high: high / 10 }, 'mean', measureChange, words), ['percent']),
   /** How long after opinion the outcome follows: in months where its spans are months, else in days. */
   'span-lag': { from: 'spans', write: (value: Spans, words: Words) => spanLag(value, words) } satisfies Form,
   /** For choosing a case: whether a ratio lies above 1 (`up`), below (`down`) or is 1 (`flat`); exact, since a verdict rests on it. */
-  'ratio-sign': ofNumber((value) => (value === 1 ? 'flat' : value > 1 ? 'up' : 'down')),
+  'ratio-sign': ofNumber((value) => (value === 1 ? 'flat' : value > 1 ? 'up' : 'down'), ['number']),
   date: ofString((value, words) => date(value, words.locale)),
   'short-date': ofString((value, words) => shortDate(value, words.locale)),
   period: ofString(period),
@@ -83,7 +92,7 @@ export const forms = {
   /** Something that happened, with its day. */
   event: { from: 'event', write: (value: { readonly label: string, readonly date: string }, words: Words) => words.say('event', { label: value.label, date: date(value.date, words.locale) }) } satisfies Form,
   /** A number that names something, ungrouped: a seed. */
-  digits: ofNumber((value) => String(value)),
+  digits: ofNumber((value) => String(value), counts),
   text: ofString((value) => value),
   /** A name at the start of a line: with a capital, as levels are written in tables. */
   name: ofString((value, words) => levelLabel({ label: value }, words)),
@@ -100,17 +109,30 @@ export const forms = {
   /** Of a level whose share moved: `up`, `down`, or `flat` where whole percentages show nothing. */
   'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => shareDirection(from, to) } satisfies Form,
   /** Smallest to largest size in a list of numbers. */
-  'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words)),
+  'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words), hundredths),
   /** The sum of a list of changes: `+0.5`. */
-  'sum-change': ofList((value, words) => change(value.reduce<number>((sum, item) => (typeof item === 'number' ? sum + item : sum), 0), words.locale)),
+  'sum-change': ofList((value, words) => change(value.reduce<number>((sum, item) => (typeof item === 'number' ? sum + item : sum), 0), words.locale), hundredths),
   /** Smallest to largest of a list of counts: `382 to 417`. */
-  'count-range': ofList((value, words) => countRange(value.filter((item) => typeof item === 'number'), words)),
+  'count-range': ofList((value, words) => countRange(value.filter((item) => typeof item === 'number'), words), counts),
   list: ofList((value, words) => joined(value.map(String), words.locale)),
   length: ofList((value) => value.length),
 } as const satisfies Readonly<Record<string, Form>>
 
 export type FormName = keyof typeof forms
 export const formNames = Object.keys(forms) as readonly FormName[]
+
+/** The forms that can write what is made from `kind` and counted in `unit`, those made for that unit first. */
+export function formsFor(kind: string, unit: string): readonly FormName[] {
+  const all: Readonly<Record<string, Form>> = forms
+  const breadth = (name: FormName) => all[name]?.takes?.length ?? Infinity
+  return formNames.filter((name) => all[name]?.from === kind && takesUnit(name, unit) && breadth(name) < Infinity).sort((a, b) => breadth(a) - breadth(b))
+}
+
+/** Whether a figure counted in `unit` can be written in a form. */
+export function takesUnit(name: FormName, unit: string): boolean {
+  const { takes }: Form = forms[name]
+  return takes === undefined || takes.some((taken) => taken === unit)
+}
 
 /** Whether a form asks what its figure is counted in. */
 export function needsUnit(name: FormName): boolean {

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { count, estimate, movement, share } from './parts-schema.ts'
+import { count, effectiveCount, estimate, movement, percent, plain, plainEstimate, points, share } from './parts-schema.ts'
 
 /*
  * Who is speaking, how far they stand for customers, what the coder adds, and what to do to hear more kinds of people. A figure that
@@ -11,9 +11,9 @@ const concentration = z.strictObject({
   authors: count, mentions: count,
   /** Share of mentions by the most prolific 1 % of authors (at least one author). */
   top_share: share,
-  gini: share,
+  gini: plain.min(0).max(1),
   /** Inverse Simpson: how many equally active authors would be as concentrated. */
-  effective_authors: z.number().min(0),
+  effective_authors: effectiveCount,
 })
 
 const stances = ['negative', 'middle', 'positive'] as const
@@ -25,14 +25,14 @@ const staying = z.strictObject({
   share: share.nullable(), low: share.nullable(), high: share.nullable(),
 })
 
-const movedShare = z.strictObject({ difference: z.number(), low: z.number(), high: z.number(), movement })
+const movedShare = z.strictObject({ difference: percent, low: percent, high: percent, movement })
 
 const spreadOfVenue = z.strictObject({
   venue: z.string(), label: z.string(),
   /** Standard deviation of scores inside the venue, in points: the period under review, the base, and their difference. */
-  now: z.number().nullable(), base: z.number().nullable(), change: estimate.nullable(), movement: movement.nullable(),
+  now: points.nullable(), base: points.nullable(), change: estimate.nullable(), movement: movement.nullable(),
   series: z.array(z.strictObject({
-    period: z.string(), mentions: count, spread: z.number().nullable(),
+    period: z.string(), mentions: count, spread: points.nullable(),
     /** Share of scores at either end of the scale; null where they are not known (ready-made cells). */
     extremes: share.nullable(),
   })),
@@ -44,7 +44,7 @@ const pull = z.strictObject({
   poster: z.string().nullable(), poster_label: z.string().nullable(),
   replies: count, authors: count,
   /** Points of a reply per point of the thread before it, both less what their venue, topic and period would lead one to expect. */
-  slope: estimate, movement,
+  slope: plainEstimate, movement,
 })
 
 export const speaking = z.strictObject({
@@ -71,9 +71,9 @@ const benchmarkLevel = z.strictObject({
   customers: share, heard: share.nullable(),
   authors: count.nullable(),
   /** heard less customers, in percentage points. */
-  gap: z.number().nullable(),
+  gap: percent.nullable(),
   /** Percentage points by which its share of the authors stays below that of customers, 0 if it does not; a level too small to show counts as unheard. Null where too few authors of the margin are known. */
-  shortfall: z.number().min(0).nullable(),
+  shortfall: percent.min(0).nullable(),
   /** Authors of this level that would be needed besides, for its share to be that of customers: if it alone were heard more, and if all levels were brought to their shares at once (null where that can't be done). */
   needed: count, needed_jointly: count.nullable(),
 })
@@ -91,35 +91,35 @@ export const benchmark = z.strictObject({
   })),
   /** Weights that bring the authors to the margins (Deming and Stephan 1940); null where it can't be done at all. */
   raking: z.strictObject({
-    converged: z.boolean(), cycles: count, lowest: z.number(), highest: z.number(),
+    converged: z.boolean(), cycles: count, lowest: plain, highest: plain,
     /** Authors whose weight was held at the bounds. */
     bounded: count,
-    design_effect: z.number().min(1), authors: count, effective_authors: z.number().min(0),
+    design_effect: plain.min(1), authors: count, effective_authors: effectiveCount,
   }).nullable(),
   /** Levels with customers of whom no author was heard: no weight can bring them in. */
   unreachable: z.array(z.strictObject({ margin: z.string(), level: z.string(), customers: share })),
   /** Mean over authors of their mean score, in points: as heard, and weighted to the customers. */
-  as_heard: z.number().nullable(), weighted: estimate.nullable(),
+  as_heard: points.nullable(), weighted: estimate.nullable(),
 })
 
 export const volume = z.strictObject({
   wave: z.string(), metric: z.string(), label: z.string(),
   /** Percent: content voices by the raw average, a neutral one counted half; and what the survey found. */
-  posts: z.number(), survey: z.number(), gap: z.number(),
+  posts: percent, survey: percent, gap: percent,
   authors: count,
   /** From the account; null where it does not say. */
   customers: count.nullable(),
   /** Correlation between posting and being favourable that the gap implies (Meng 2018, eq. 1.2); null without the number of customers. */
-  defect_correlation: z.number().nullable(),
+  defect_correlation: plain.nullable(),
   /** Interviews of a simple random sample whose expected error is as large as the gap; null where the survey's own error is as large. */
-  equal_sample: z.number().min(0).nullable(),
+  equal_sample: effectiveCount.nullable(),
 })
 
 export const tipping = z.strictObject({
   /** How many times likelier to post, against before, the `who` must have become for the reported change of opinion to vanish. */
-  ratio: estimate, who: z.enum(['content', 'unhappy']),
+  ratio: plainEstimate, who: z.enum(['content', 'unhappy']),
   /** Change of opinion that would be left, in points, if the `who` had become so many times likelier to post; one row stands at the mean of `ratio`. */
-  curve: z.array(z.strictObject({ ratio: z.number(), change: estimate })),
+  curve: z.array(z.strictObject({ ratio: plain, change: estimate })),
 })
 
 export const coder = z.strictObject({
@@ -130,7 +130,7 @@ export const coder = z.strictObject({
     venue: z.string(), label: z.string(), codings: count,
     /** Share of the hand-coded posts that the coder labelled alike. */
     agreement: share,
-    smallest_singular_value: z.number().min(0),
+    smallest_singular_value: plain.min(0),
     /** Why the venue's scores stay as coded; null where they are corrected. */
     refused: z.enum(['too-few', 'too-poor', 'ranges', 'ready-made', 'no-audit']).nullable(),
     /** What correcting does to the venue's mean score in the period, in points. */
@@ -139,7 +139,7 @@ export const coder = z.strictObject({
   /** What correcting does to the period's mean of all mentions, in points. */
   correction: estimate.nullable(), movement: movement.nullable(),
   /** Codings a venue that would bring the audit's own part of a level's interval to `width` points, if the coder were right as often as `accuracy`. */
-  audit_size: z.strictObject({ width: z.number(), accuracy: share, codings_per_venue: count, codings: count }).nullable(),
+  audit_size: z.strictObject({ width: points, accuracy: share, codings_per_venue: count, codings: count }).nullable(),
 })
 
 export const importance = z.strictObject({
@@ -150,7 +150,7 @@ export const importance = z.strictObject({
   topics: z.array(z.strictObject({
     topic: z.string(), label: z.string(), importance: share,
     /** Share of the period's mentions of topics with an importance; authors; null where too few to show. */
-    talk: share.nullable(), authors: count.nullable(), gap: z.number().nullable(),
+    talk: share.nullable(), authors: count.nullable(), gap: percent.nullable(),
   })),
   /** Half the sum of the absolute gaps: the share of talk that would have to be about something else. */
   dissimilarity: share,
@@ -160,9 +160,9 @@ export const importance = z.strictObject({
 
 export const sensitivity = z.strictObject({
   /** Prior of each standard deviation raised to the power 0.5 and 2 by re-weighting: how far the change of opinion moves, in its posterior sd. */
-  scales: z.array(z.strictObject({ scale: z.string(), shift: z.number().min(0) })),
+  scales: z.array(z.strictObject({ scale: z.string(), shift: plain.min(0) })),
   /** The largest. */
-  shift: z.number().min(0),
+  shift: plain.min(0),
   /** Whether the weights can be relied on: Pareto k at most 0.7 in all. */
   reliable: z.boolean(),
 })
@@ -170,10 +170,10 @@ export const sensitivity = z.strictObject({
 /** What more authors of one venue, heard in the next period, would do to the interval of its change of opinion. */
 export const hearing = z.strictObject({
   /** Width of that interval if as many are heard as now, in points. */
-  width: z.number().min(0),
+  width: points.min(0),
   venues: z.array(z.strictObject({
     venue: z.string(), label: z.string(), cost_per_author: z.number(), cost_given: z.boolean(),
-    curve: z.array(z.strictObject({ authors: count, width: z.number().min(0) })),
+    curve: z.array(z.strictObject({ authors: count, width: points.min(0) })),
   })),
 })
 

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { count, estimate, isoDate, movement, share } from './parts-schema.ts'
+import { bareEstimate, count, estimate, isoDate, movement, plain, points, probability, pValue, share } from './parts-schema.ts'
 import { advice, benchmark, coder, hearing, importance, sensitivity, speaking, tipping, volume } from './listening-schema.ts'
 import { event, outcome, survey } from './survey-schema.ts'
 
@@ -32,19 +32,19 @@ const opinion = z.strictObject({
   series: z.array(z.strictObject({
     step: isoDate, adjusted: estimate, since_base: estimate,
     /** null where the step holds no mention. */
-    raw: z.number().nullable(), mentions: count, authors: count,
+    raw: points.nullable(), mentions: count, authors: count,
     /** True where the step belongs to the period under review. */
     in_period: z.boolean(),
   })),
   /** Every period up to the one under review, oldest first. */
-  periods: z.array(z.strictObject({ period: z.string(), adjusted: estimate, since_base: estimate, raw: z.number().nullable(), mentions: count, authors: count })),
+  periods: z.array(z.strictObject({ period: z.string(), adjusted: estimate, since_base: estimate, raw: points.nullable(), mentions: count, authors: count })),
   period: estimate,
   /** null where there is no period before. */
-  previous: estimate.nullable(), change: estimate.nullable(), probability_up: share.nullable(),
+  previous: estimate.nullable(), change: estimate.nullable(), probability_up: probability.nullable(),
   movement: movement.nullable(),
   since_base: estimate, movement_since_base: movement,
   /** Pooled raw average of all mentions; null where there is none. */
-  raw: z.number().nullable(), raw_previous: z.number().nullable(), raw_change: z.number().nullable(),
+  raw: points.nullable(), raw_previous: points.nullable(), raw_change: points.nullable(),
   mentions: count, mentions_previous: count, authors: count,
 })
 
@@ -58,9 +58,9 @@ const part = z.strictObject({
 })
 
 const decomposition = z.strictObject({
-  from: z.string(), to: z.string(), raw_change: z.number(),
+  from: z.string(), to: z.string(), raw_change: points,
   /** Standard error of the raw change by sampling alone, in the same cells: a lower bound. */
-  chance_sd: z.number().min(0),
+  chance_sd: points.min(0),
   /** Whether the raw change goes beyond that: not-established where sampling alone may bring it about, at the review's interval. */
   raw_movement: movement,
   parts: z.array(part),
@@ -77,34 +77,34 @@ const venue = z.strictObject({
   share, share_previous: share.nullable(), share_base: share,
   /** Share of the venue's mentions, over the whole history, whose author is known. */
   authors_known: share,
-  raw: z.number().nullable(), raw_previous: z.number().nullable(),
+  raw: points.nullable(), raw_previous: points.nullable(),
   /** Mean over the period's steps, at the target mix of the other factors. */
   level: estimate, level_previous: estimate.nullable(), level_base: estimate,
   /** Mean of d over the period less its mean over the base. */
   drift: estimate, movement: movement,
   /** Least-squares slope of the level over the last 13 weeks, points per 4 weeks; null with fewer than three steps. */
   slope: estimate.nullable(), slope_movement: movement.nullable(),
-  probability_drift_down: share,
+  probability_drift_down: probability,
   /** Standard deviation of scores inside the venue; null with fewer than two mentions. */
-  spread: z.number().nullable(), spread_change: z.number().nullable(),
+  spread: points.nullable(), spread_change: points.nullable(),
   /** alpha[v] less its mean at the target mix. */
   offset: estimate,
   first_step: isoDate, last_step: isoDate,
   /** `drift` is d itself. */
-  series: z.array(z.strictObject({ step: isoDate, level: estimate, drift: estimate, raw: z.number().nullable(), mentions: count })),
+  series: z.array(z.strictObject({ step: isoDate, level: estimate, drift: estimate, raw: points.nullable(), mentions: count })),
 })
 
 const levelFinding = {
   label: z.string(), offset: estimate, mentions: count, mentions_previous: count,
-  share, share_previous: share.nullable(), share_base: share, authors: count, raw: z.number().nullable(), raw_previous: z.number().nullable(),
+  share, share_previous: share.nullable(), share_base: share, authors: count, raw: points.nullable(), raw_previous: points.nullable(),
 }
 
-const check = z.strictObject({ name: z.string(), venue: z.string().nullable(), observed: z.number(), predicted: estimate, p: share, passed: z.boolean() })
+const check = z.strictObject({ name: z.string(), venue: z.string().nullable(), observed: z.number(), predicted: bareEstimate, p: pValue, passed: z.boolean() })
 
 const diagnostics = z.strictObject({
   method: z.string(),
   /** Of the largest importance weights; null where so few outweigh the rest that it can't be told. */
-  pareto_k: z.number().nullable(), rhat: z.number().nullable(),
+  pareto_k: plain.nullable(), rhat: plain.nullable(),
   /** Effective independent draws of the standard deviations. */
   ess: z.number(),
   draws: count, proposals: count,
@@ -132,10 +132,10 @@ const method = z.strictObject({
   target_mix: z.array(z.strictObject({ factor: z.string(), level: z.string(), label: z.string(), share })),
   /** `base`: shares of mentions pooled over the base; `account`: margins the account gives. Per factor. */
   target_source: z.record(z.string(), z.enum(['base', 'account'])),
-  priors: z.record(z.string(), z.number()),
+  priors: z.record(z.string(), points),
   cells: count, steps: count,
   /** Pooled within-cell standard deviation and intraclass correlation by author, per venue. */
-  venues: z.array(z.strictObject({ venue: z.string(), label: z.string(), standard_deviation: z.number(), intraclass: z.number().nullable(), mean_design_effect: z.number() })),
+  venues: z.array(z.strictObject({ venue: z.string(), label: z.string(), standard_deviation: points, intraclass: plain.nullable(), mean_design_effect: plain })),
   smallest_group: count,
   /** Most mentions in 90 days of an occasional and of a regular author; above, an author is prolific. */
   poster_bounds: z.strictObject({ occasional: count, regular: count }),
@@ -149,7 +149,7 @@ export const findingsSchema = z.strictObject({
   period, previous_period: period.nullable(),
   /** The steps that count as the period, those whose middle lies in it: how many, first and last day. */
   period_steps: z.strictObject({ count, start: isoDate, end: isoDate }),
-  grid: z.enum(['day', 'week', 'month']), interval: z.number().min(0.5).max(0.99),
+  grid: z.enum(['day', 'week', 'month']), interval: share.min(0.5).max(0.99),
   accounting, opinion,
   /** null where there is no period before, or one of the two holds no mention. */
   decomposition: decomposition.nullable(),

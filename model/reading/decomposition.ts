@@ -56,8 +56,11 @@ export interface Decomposition {
   readonly columns: readonly DecompositionPart[]
 }
 
+/** Parts that are no factor's mix. */
+export const otherParts = ['opinion', 'timing', 'venue_drift', 'coding', 'unexplained'] as const
+
 export interface DecompositionPart {
-  readonly part: string
+  readonly part: (typeof otherParts)[number] | `${string}_mix`
   readonly column: Float64Array
   /** Of a mix: what its levels did; null for other parts. */
   readonly mix: MixChange | null
@@ -84,7 +87,7 @@ export function decompose(reading: Reading): Decomposition | null {
   const venue = splitVenues(offset[0], before, after, count)
   const mixOf = (factor: number, rates: readonly Float64Array[]): MixChange => ({ factor, before: before.shares[factor], after: after.shares[factor], rates })
   const venueRates = offset[0].map((alpha, v) => sum(alpha, average([before.drift[v], after.drift[v]])))
-  const others = factors.slice(1).map(({ name }, i) => ({
+  const others = factors.slice(1).map(({ name }, i): DecompositionPart => ({
     part: `${name}_mix`, mix: mixOf(i + 1, offset[i + 1]),
     column: combine(offset[i + 1], difference(after.shares[i + 1], before.shares[i + 1]), count),
   }))

@@ -6,6 +6,7 @@ import { spawnSync } from 'node:child_process'
 const parts: readonly (readonly [what: string, command: string, ...args: string[]])[] = [
   ['the ferry demo, HTML and PDF', 'npm', 'run', '--silent', 'tareline', '--', 'build', 'sample-data/skerrow-ferries', '--out', 'demo/skerrow-ferries', '--quiet'],
   ['printing', 'npx', 'tsx', 'test/bench/print.ts'],
+  ['watching', 'npx', 'tsx', 'test/bench/watch.ts'],
   ['a fit on one core', 'npx', 'tsx', 'test/bench/fit.ts'],
   ['ten times the steps', 'npx', 'tsx', 'test/bench/fit.ts', 'steps'],
   ['intake of 5,000,000 posts', 'npx', 'tsx', 'test/bench/intake.ts'],

@@ -2,11 +2,14 @@ import { cp, mkdtemp, readFile, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { basename, join } from 'node:path'
 import { afterAll, beforeAll, expect, test } from 'vitest'
+import { parse } from 'yaml'
 import { readAccount } from '../../generator/account/read-account.ts'
 import { thisProgram } from '../../generator/program/program.ts'
 import { buildReview } from '../../generator/review/build-review.ts'
 import { silent } from '../../generator/review/stages.ts'
 import type { Findings } from '../../model/findings/schema.ts'
+import { englishFragments, trigrams } from '../support/english-fragments.ts'
+import { templatesFolder } from '../support/house-words.ts'
 
 const folder = join(import.meta.dirname, '../../sample-data/pellwick-cycles')
 let scratch: string
@@ -54,6 +57,47 @@ test('what is true lies in the intervals: opinion rose by 1.5 points since Septe
   expect(change!.low < 0 && 0 < change!.high && since_base.low < 0 && 0 < since_base.high).toBe(true)
 })
 
+test('that the raw average rose by seven points is no reason to be alarmed: chance alone does as much among so few', () => {
+  const { raw_change, chance_sd, raw_movement, largest } = findings.decomposition!
+  expect(raw_change).toBeGreaterThan(7)
+  expect(chance_sd).toBeGreaterThan(7)
+  expect([raw_movement, largest]).toEqual(['not-established', null])
+  expect(findings.caveats.filter(({ severity }) => severity === 'serious')).toEqual([])
+  expect(text()).toContain('Bei dieser Zahl von Erwähnungen kann schon der Zufall ihn so weit bewegen.')
+})
+
+test('cells that came ready-made are spoken of as such', () => {
+  expect(findings.accounting).toMatchObject({ authors: 'summed', ready_made: 'all' })
+  expect(text()).toContain('92 Erwähnungen in diesem Zeitraum von höchstens 91 Autoren')
+  expect(text()).toContain('Die Zeilen sind fertige Zellen')
+  expect(text()).not.toMatch(/Die Autoren dieses Zeitraums sind nicht bekannt|kopierter Beitrag/)
+})
+
+/** What the review says in so many English words: in its text and in what stands for its pictures. */
+async function englishIn(said: string): Promise<readonly string[]> {
+  const english = englishFragments(parse(await readFile(join(templatesFolder, 'words/en.yaml'), 'utf8')) as Record<string, string>)
+  return [...new Set(trigrams(said).filter((three) => english.has(three)))]
+}
+
+const drawn = () => [...html.matchAll(/aria-label="([^"]*)"|<text[^>]*>([^<]*)<\/text>/g)].map(([, label, word]) => label ?? word).join(' | ')
+
+test('it is German throughout, its pictures too, with figures as Germans write them', async () => {
+  expect(html).toContain('<html lang="de-DE">')
+  expect(await englishIn(text())).toEqual([])
+  expect(await englishIn(drawn())).toEqual([])
+  expect(text()).toMatch(/1\.021 von 1\.021/)
+  expect(text()).toMatch(/liegt zwischen −2,7 und \+2,5 Punkten \(90\u00a0?\s?%-Intervall\)/)
+  // no figure with a point for decimals, none with % set close
+  expect(text().match(/(?<![\d.])\d+\.\d{1,2} ?(Punkte|%)|\d%/g) ?? []).toEqual([])
+  // months and the words of pictures are single words: none of those that only English has; a British law keeps its name
+  const said = `${text()} ${drawn()}`.replace('Digital Markets, Competition and Consumers Act', '')
+  expect(said.match(/\b(May|Oct|Dec|Mar|March|October|The|and|of|with|interval|mentions?|authors?|yes)\b/g) ?? []).toEqual([])
+})
+
+test('it can fail: an English sentence is found', async () => {
+  expect((await englishIn('Since the base, no change in opinion of Pellwick can be established.')).length).toBeGreaterThan(3)
+})
+
 test('the review has the order of its own template, and none of what that leaves out', () => {
   expect(sections()).toEqual(['first-page', 'contents', 'auf-einen-blick', 'survey', 'opinion', 'venues', 'topics', 'speaking', 'moved', 'advice', 'caveats', 'made', 'glossary', 'tables'])
 })
@@ -67,5 +111,7 @@ test('own words, figures in them, the file that is put in, the own chart and the
 })
 
 test('nothing that could not be computed shows as a machine writes it', () => {
-  expect(text()).not.toMatch(/\b(NaN|undefined|null|Infinity|not-established|too-few-waves)\b|\[object/)
+  // `null` is a German word
+  expect(html).not.toMatch(/>\s*null\s*</)
+  expect(text()).not.toMatch(/\b(NaN|undefined|Infinity|not-established|too-few-waves)\b|\[object/)
 })

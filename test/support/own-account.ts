@@ -4,12 +4,15 @@ import { dirname, join } from 'node:path'
 import { compose, requireSound } from '../../generator/compose/compose.ts'
 import type { Document } from '../../generator/compose/document.ts'
 import { loadTemplate } from '../../generator/compose/load-template.ts'
+import { isRead, readOwnFile } from '../../generator/compose/own-file.ts'
 import { InputFault } from '../../generator/faults/fault.ts'
 import type { Fault } from '../../generator/faults/fault.ts'
+import { ownPlace } from '../../generator/render/charts/chart-spec.ts'
 import { loadOwnCharts } from '../../generator/render/load-charts.ts'
 import { tablesOf } from '../../generator/tables/tables-of.ts'
+import { loadWords } from '../../generator/words/load-words.ts'
 import { houseCharts } from './house-composition.ts'
-import { houseWords, templatesFolder } from './house-words.ts'
+import { templatesFolder } from './house-words.ts'
 import { sampleFindings } from './sample-findings.ts'
 
 type Files = Readonly<Record<string, string>>
@@ -33,10 +36,12 @@ const tables = tablesOf(findings)
 
 /** Compose what stands in an account folder, for the sample findings. */
 async function composeFolder(folder: string, notes: string | null = 'notes'): Promise<Document> {
-  const words = await houseWords()
+  const ownWords = await readOwnFile(folder, 'words.yaml')
+  const words = await loadWords(`${templatesFolder}/words`, 'en-GB', isRead(ownWords) ? ownWords : undefined)
   const own = { folder, template: 'template.md', notes, reporting: 'month' as const }
   const [template, charts] = [await loadTemplate(templatesFolder, own), await loadOwnCharts(own, { tables, words })]
-  const composition = { template, words, findings, tables, charts: [...houseCharts, ...charts.keys()] }
+  const ownCharts = new Map([...charts].map(([name, chart]) => [name, chart[ownPlace] ?? name]))
+  const composition = { template, words, findings, tables, charts: [...houseCharts, ...charts.keys()], ownCharts }
   requireSound(composition)
   return compose(composition)
 }

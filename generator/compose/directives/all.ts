@@ -22,6 +22,17 @@ export function directiveOf(node: DirectiveNode): Directive | undefined {
   return directives.find(({ type, name }) => type === node.type && name === node.name)
 }
 
+/** Every name, whatever its type. */
+export const allNames: readonly string[] = [...new Set(directives.map(({ name }) => name))]
+
+/** How a directive of a name is begun: `:figure`, `::chart`, `:::note`; undefined where there is none. */
+export function formOf(name: string): string | undefined {
+  const found = directives.find((directive) => directive.name === name)
+  return found && `${colonsOf[found.type]}${name}`
+}
+
+const colonsOf = { textDirective: ':', leafDirective: '::', containerDirective: ':::' } as const
+
 /** Names that a directive of the type may have. */
 export function namesOf(type: Directive['type']): readonly string[] {
   return directives.filter((directive) => directive.type === type).map(({ name }) => name)

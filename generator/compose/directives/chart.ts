@@ -20,6 +20,7 @@ export const chart: Directive = {
   check: (use, scope, context, reporter) => {
     const { node, attributes } = use
     const name = attributes['name'] ?? ''
+    context.calls.charts.add(name)
     if (!context.charts.includes(name)) reporter.report(node, 'chart-unknown', `chart "${name}"`, 'a chart of the house or of the account', nearest(name, context.charts))
     else {
       for (const part of parts) {

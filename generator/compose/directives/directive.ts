@@ -24,6 +24,7 @@ export interface Included {
 /** What the review calls; filled while it is checked, from its first line to its last. */
 export interface Calls {
   readonly sections: Set<string>
+  readonly charts: Set<string>
   /** Where `::notes` stands: in which section, or null for the review itself. */
   readonly notes: (string | null)[]
   inclusions: number
@@ -41,6 +42,8 @@ export interface CheckContext {
   readonly included: ReadonlyMap<string, Included | Unread>
   /** Ids that a link inside the document may lead to. */
   readonly anchors: ReadonlySet<string>
+  /** Those of sections that the review leaves out: what the house says of them falls away with them, a link of the account's own is a fault. */
+  readonly leftOut: ReadonlySet<string>
   readonly calls: Calls
   /** The section that is being checked; null in the review itself. */
   readonly inSection: string | null
@@ -62,7 +65,10 @@ export interface FillContext {
   readonly section: (name: string) => readonly RootContent[]
   /** The analyst's note beside a section, or the general one (null): a block, or nothing. */
   readonly note: (section: string | null) => readonly RootContent[]
-  readonly fill: (nodes: readonly RootContent[], scope: Scope) => readonly RootContent[]
+  /** Of the file that is being filled; what only the figures of a period can show to be wrong is told by it. */
+  readonly reporter: Reporter
+  /** Fill nodes of this file, or of another one that stands in its place. */
+  readonly fill: (nodes: readonly RootContent[], scope: Scope, reporter: Reporter) => readonly RootContent[]
 }
 
 /** One use of a directive in a template. */

@@ -1,6 +1,8 @@
 import type { RootContent } from 'mdast'
 import { nearest } from '../faults.ts'
-import type { Directive, Use } from './directive.ts'
+import type { Reporter } from '../faults.ts'
+import type { TypeScope } from '../path-types.ts'
+import type { CheckContext, Directive, Use } from './directive.ts'
 
 /**
  * `::house{from="venues" to="survey" without="topics, coder"}`: the house's own sections in the house's order, so that a review has also those
@@ -17,10 +19,18 @@ export const house: Directive = {
     if (unknown.length > 0) return scope
     if (context.inSection !== null) reporter.report(node, 'section-nested', 'sections of the house inside a section', 'them in the list of the review', 'Move it there.')
     else if (from !== undefined && to !== undefined && known.indexOf(from) > known.indexOf(to)) reporter.fault(node, 'house-order', { from, to })
-    else context.check(chosen(use, context.house), scope, context, reporter.at(node))
+    else checkChosen(chosen(use, context.house), use, scope, context, reporter)
     return scope
   },
-  fill: (use, scope, context) => context.fill(chosen(use, context.house), scope),
+  fill: (use, scope, context) => context.fill(chosen(use, context.house), scope, context.reporter),
+}
+
+/** Sections that stand in the review already are told in one fault, and nothing else of them. */
+function checkChosen(nodes: readonly RootContent[], { node }: Use, scope: TypeScope, context: CheckContext, reporter: Reporter): void {
+  const twice = sectionsIn(nodes).filter((name) => context.calls.sections.has(name))
+  if (twice.length > 0) reporter.fault(node, 'section-twice', { name: twice.join(', ') })
+  const isTold = (part: RootContent) => twice.some((name) => name === sectionOf(part)) || (twice.length > 0 && part.type === 'leafDirective' && part.name === 'notes')
+  context.check(nodes.filter((part) => !isTold(part)), scope, context, reporter.at(node))
 }
 
 /** What stands between two sections of the house goes with the first of them. */

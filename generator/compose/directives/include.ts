@@ -22,6 +22,6 @@ export const include: Directive = {
   },
   fill: ({ attributes }, scope, context) => {
     const found = context.included.get(attributes['file'] ?? '')
-    return found === undefined || 'unread' in found ? [] : context.fill(found.tree.children, scope)
+    return found === undefined || 'unread' in found ? [] : context.fill(found.tree.children, scope, context.reporter.of(found.place))
   },
 }

@@ -8,6 +8,10 @@ import type { CheckContext, DirectiveNode } from './directive.ts'
 /** Check that `made` names a place of the document. */
 export function checkMade(made: string | undefined, node: DirectiveNode, context: CheckContext, reporter: Reporter): void {
   if (made === undefined || context.anchors.has(made)) return
+  if (context.leftOut.has(made)) {
+    reporter.fault(node, 'anchor-left-out', { anchor: made })
+    return
+  }
   reporter.report(node, 'anchor-unknown', `anchor "${made}"`, 'the message of a heading or the name of a section', nearest(made, [...context.anchors]))
 }
 

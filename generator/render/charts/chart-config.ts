@@ -14,6 +14,7 @@ export function chartConfig(theme: ChartTheme): Config {
     view: { stroke: null },
     axis,
     axisX: { grid: false, ticks: true, tickSize: 4, domain: true, domainColor: theme.quiet, tickColor: theme.quiet, labelFlush: false },
+    axisXQuantitative: { tickCount: { signal: 'ceil(width / 80)' } },
     axisY: { grid: true, titleAngle: 0, titleAlign: 'left', titleAnchor: 'end', titleBaseline: 'bottom', titleX: 0, titleY: -9 },
     header: {
       labelFont: theme.font, labelFontSize: theme.font_size, labelFontWeight: 600, labelColor: theme.ink, labelAnchor: 'start', labelAlign: 'left',
@@ -22,9 +23,10 @@ export function chartConfig(theme: ChartTheme): Config {
     legend: { labelFont: theme.font, labelFontSize: theme.font_size, labelColor: theme.ink, title: null, symbolStrokeWidth: 2, orient: 'top', direction: 'horizontal', offset: 8, padding: 0 },
     text: { ...text, color: theme.ink, lineBreak: '\n', lineHeight: theme.font_size * 1.12 },
     facet: { spacing: 20 },
-    range: { ramp: [...theme.shares] },
+    range: { ramp: [...theme.shares], category: [...theme.series] },
     style: theme.styles,
+    rule: { color: theme.ink },
     area: { opacity: 1 }, bar: { opacity: 1 }, point: { opacity: 1 }, rect: { opacity: 1 }, tick: { opacity: 1 },
-    mark: { invalid: 'break-paths-show-path-domains' },
+    mark: { color: theme.accent, invalid: 'break-paths-show-path-domains' },
   }
 }

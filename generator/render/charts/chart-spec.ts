@@ -52,6 +52,8 @@ export function layoutProblems(usermeta: Json): readonly { readonly path: readon
 export function atSize(spec: ChartSpec, size: DrawingSize): ChartSpec {
   const patched = size === 'narrow' ? mergePatch(spec, layoutOf(spec).narrow ?? {}) as ChartSpec : spec
   const params = Array.isArray(patched.params) ? patched.params as readonly Json[] : []
+  // some marks, such as a boxplot, take no parameters: none is given where nothing asks for it
+  if (!JSON.stringify({ ...patched, usermeta: null }).includes('narrow')) return patched
   return { ...patched, params: [{ name: 'narrow', value: size === 'narrow' }, ...params] }
 }
 

@@ -2,14 +2,15 @@ import { LineCounter, isNode, parseDocument } from 'yaml'
 import { faultOf } from '../../faults/catalogue.ts'
 import { InputFault } from '../../faults/fault.ts'
 import { type ChartContext, type JsonPath, ownChartFaults } from './check-own-chart.ts'
-import { type ChartSpec, isObject, type Json, ownPlace } from './chart-spec.ts'
+import { sortLayersAlike } from './layer-sorts.ts'
+import { type ChartSpec, isObject, type Json, type JsonObject, ownPlace } from './chart-spec.ts'
 
 /**
  * Read a chart of an account.
  *
  * @param name - the file's, without `.json`
  * @param place - how faults name the file
- * @returns the specification in UTC, which is what the dates of all tables are in
+ * @returns the specification in UTC, which is what the dates of all tables are in, its layers ordered alike
  * @throws {InputFault} with everything that is wrong in it
  */
 export function readOwnChart(name: string, place: string, text: string, context: ChartContext): ChartSpec {
@@ -19,7 +20,7 @@ export function readOwnChart(name: string, place: string, text: string, context:
   if (deeperThan(deepest, spec)) throw new InputFault([faultOf('chart-deep', place, {})])
   const faults = ownChartFaults(spec, context, placesIn(text, place))
   if (faults.length > 0) throw new InputFault(faults)
-  return { ...inUtc(spec), name, [ownPlace]: place }
+  return { ...inUtc(sortLayersAlike(spec) as JsonObject), name, [ownPlace]: place }
 }
 
 const deepest = 60

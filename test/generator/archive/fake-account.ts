@@ -7,7 +7,7 @@ import { fingerprint, fingerprints, recordName, type BuildRecord } from '../../.
 import type { SealRequest } from '../../../generator/archive/seal-review.ts'
 import { filesOf } from '../../../generator/archive/verify-archive.ts'
 
-export const program: MadeWith = { version: '1.2.3', model: 'a'.repeat(64), runtime: 'node 20', browser: 'Any/1.0' }
+export const program: MadeWith = { version: '1.2.3', model: 'a'.repeat(64), code: 'b'.repeat(64), runtime: 'node 20', browser: 'Any/1.0' }
 
 /** An account folder with inputs and a draft of one period, as a build leaves them, of a few bytes each. */
 export async function fakeAccount(): Promise<{ readonly folder: string; readonly remove: () => Promise<void> }> {

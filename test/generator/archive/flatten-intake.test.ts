@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import fc from 'fast-check'
 import { afterAll, beforeAll, expect, test } from 'vitest'
+import { readFacts } from '../../../generator/archive/facts.ts'
 import { flattenIntake, unflattenIntake, type FlatIntake, type IntakeFacts } from '../../../generator/archive/flatten-intake.ts'
 import { readParquet, writeParquet } from '../../../generator/archive/parquet.ts'
 import type { IntakeTables } from '../../../model/intake/intake-tables.ts'
@@ -73,4 +74,20 @@ test('a table with no row comes back with none', async () => {
 test('a missing table is named', () => {
   const flat = flattenIntake(tablesWith(5, true))
   expect(() => unflattenIntake({ ...flat, numbers: flat.numbers.filter(({ name }) => name !== 'pull') })).toThrow('the table pull')
+})
+
+test('values that could not be read, which may be the words of a post, do not go into the archive', () => {
+  const tables = tablesWith(6, true)
+  const unread = [{ column: 'score' as const, value: 'I met the captain yesterday', rows: 3 }]
+  const flat = flattenIntake({ ...tables, accounting: { ...tables.accounting, unread } })
+  expect(JSON.stringify(flat)).not.toContain('captain')
+  expect(unflattenIntake(flat).accounting.unread).toEqual([])
+})
+
+test('facts of another make are refused, at the key that is wrong', () => {
+  const { facts } = flattenIntake(tablesWith(7, true))
+  expect(readFacts(JSON.stringify(facts))).toEqual(facts)
+  expect(() => readFacts(JSON.stringify({ ...facts, timeline: { ...facts.timeline, current: 1.5 } }))).toThrow('current')
+  expect(() => readFacts(JSON.stringify({ ...facts, author: 'x' }))).toThrow('author')
+  expect(() => readFacts('{')).toThrow(SyntaxError)
 })

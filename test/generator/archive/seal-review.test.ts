@@ -6,7 +6,7 @@ import { recordName, type BuildRecord } from '../../../generator/archive/record.
 import { sealReview, type SealRequest } from '../../../generator/archive/seal-review.ts'
 import { verifyArchive } from '../../../generator/archive/verify-archive.ts'
 import { InputFault } from '../../../generator/faults/fault.ts'
-import { fakeAccount, fakeDraft, requestOf } from './fake-account.ts'
+import { fakeAccount, fakeDraft, program, requestOf } from './fake-account.ts'
 
 let folder: string
 let remove: () => Promise<void>
@@ -52,7 +52,10 @@ const refusals: readonly (readonly [string, (draft: string) => Promise<unknown>,
   ['a survey that changed since', () => appendFile(join(folder, 'survey', 'waves.csv'), '2,0.5\n'), {}, ['inputs-changed']],
   ['posts that changed since', () => appendFile(join(folder, 'posts', 'posts.csv'), '2,x\n'), {}, ['inputs-changed']],
   ['an input that is gone', () => rm(join(folder, 'account.yaml')), {}, ['inputs-changed']],
-  ['another program', () => Promise.resolve(), { program: { version: '2.0.0', model: 'a'.repeat(64) } }, ['program-changed']],
+  ['another program', () => Promise.resolve(), { program: { ...program, version: '2.0.0' } }, ['program-changed']],
+  ['another program under the same version', () => Promise.resolve(), { program: { ...program, code: 'c'.repeat(64) } }, ['program-changed']],
+  ['an input that has come since', () => Promise.resolve(), { inputs: ['account.yaml', 'posts/late.csv'] }, ['inputs-changed']],
+  ['a draft of another account', () => Promise.resolve(), { account: 'other' }, ['draft-of-another']],
   ['nothing to revise', () => Promise.resolve(), { reason: 'because' }, ['nothing-to-revise']],
 ]
 test.each(refusals)('%s: refused, and the archive is as it was', async (_, spoil, request, expected) => {
@@ -66,6 +69,7 @@ const records: readonly (readonly [string, Partial<BuildRecord>, readonly string
   ['a fit that failed its checks', { passed: false }, ['checks-failed']],
   ['nobody named', { prepared_by: null, reviewed_by: null }, ['people-missing', 'people-missing']],
   ['one person for both', { reviewed_by: 'Ana' }, ['same-person']],
+  ['one person for both, typed otherwise', { reviewed_by: ' aNA' }, ['same-person']],
 ]
 test.each(records)('%s: refused', async (_, changes, expected) => {
   await fakeDraft(folder, '2026-10', 'first', changes)

@@ -23,6 +23,14 @@ describe('check', () => {
     expect(JSON.parse(out)).toMatchObject({ ok: true, faults: [], accounting: { received: 424, rejected: 0, duplicates: 0, out_of_scope: 0, modelled: 424 } })
   })
 
+  test('says what it read of the account to make the review with, and what is the house\'s', async () => {
+    const own = join(import.meta.dirname, '../../../sample-data/pellwick-cycles')
+    const { out } = await run('check', own)
+    expect(out).toMatch(/\ntemplate: template\.md, texte\/herkunft\.md\nsections: .*sections\/first-page\.md.*\ncharts: charts\/erwaehnungen\.json\ntheme: .*theme\.yaml.*\nnotes: notes\/2026-10\.md\nof the house: words\n/)
+    expect((JSON.parse((await run('check', own, '--json')).out) as { readonly read: unknown }).read).toContainEqual({ part: 'charts', files: ['charts/erwaehnungen.json'] })
+    expect((await run('check', account)).out).toContain('of the house: template, sections, charts, words, theme\n')
+  })
+
   test('tells what the survey, the events and the outcome hold', async () => {
     const demo = join(import.meta.dirname, '../../../sample-data/skerrow-ferries')
     const { code, out } = await run('check', demo)
@@ -99,7 +107,7 @@ describe('build', () => {
 })
 
 describe('usage', () => {
-  test.each([[['bild']], [['build']], [['check', account, '--no-such']], [['build', account, '--seed', 'x']], [['build', account, account, '--out', 'x']]])('%j: exit code 2', async (args) => {
+  test.each([[['bild']], [['build']], [['check', account, '--no-such']], [['build', account, '--seed', 'x']], [['build', account, account, '--out', 'x']], [['seal', account]], [['seal', account, '--period', '2025-08', '--revise', ' ']], [['verify']]])('%j: exit code 2', async (args) => {
     expect((await run(...args)).code).toBe(2)
   })
 

@@ -43,7 +43,7 @@ test.each([
   ['attribute-missing', 'see :say now', 'review.md:1:5', 'message='],
   ['attribute-unknown', ':figure{of="brand" as="text" style="red"}', 'review.md:1:1', ''],
   ['attribute-invalid', ':::each{of="venues" as="venue" most="many"}\nx\n:::', 'review.md:1:1', 'most=3'],
-  ['attribute-invalid', ':::each{of="venues" as="venue" order="top"}\nx\n:::', 'review.md:1:1', '"most"'],
+  ['attribute-invalid', ':::each{of="venues" as="venue" order="top"}\nx\n:::', 'review.md:1:1', 'Known are most,'],
   ['attribute-invalid', ':::each{of="venues" as="opinion"}\nx\n:::', 'review.md:1:1', 'venue'],
   ['attribute-invalid', ':::each{of="caveats" as="it"}\n:caveat{of="it" part="titel"}\n:::', 'review.md:2:1', '"title"'],
   ['anchor-unknown', '## :say{message="plain"}\n\n[x](#plane)', 'review.md:3:1', '"plain"'],

@@ -32,7 +32,7 @@ test('the two ends of a list', () => {
   expect(['waves[first].name', 'waves[last].name', 'waves[first].parts[last]'].map(found)).toEqual(['first', 'second', 2])
   for (const text of ['none[last]', 'none[first].name', 'waves[last].parts[last]', 'one[last]', 'absent[first]']) expect(found(text), text).toBeUndefined()
   expect(typeAt(parsePath('survey.waves[last].change.movement')!, findingsScope)).toMatchObject({ known: true })
-  expect(typeAt(parsePath('survey.waves[last].chnge')!, findingsScope)).toEqual({ known: false, unknown: 'chnge', nearest: 'change' })
+  expect(typeAt(parsePath('survey.waves[last].chnge')!, findingsScope)).toEqual({ known: false, unknown: 'chnge', mend: 'Write "change", if that is meant.' })
   expect(typeAt(parsePath('brand[last]')!, findingsScope)).toMatchObject({ known: false, unknown: 'brand[last]' })
 })
 
@@ -67,7 +67,7 @@ test('the type of the findings knows each path that the sample has', () => {
     if (typeof value === 'object' && value !== null && !Array.isArray(value)) for (const [key, inner] of Object.entries(value)) walk(inner, [...path, key])
   }
   walk(sampleFindings(), [])
-  expect(typeAt(parsePath('opinion.chang')!, scope)).toEqual({ known: false, unknown: 'chang', nearest: 'change' })
+  expect(typeAt(parsePath('opinion.chang')!, scope)).toEqual({ known: false, unknown: 'chang', mend: 'Write "change", if that is meant.' })
 })
 
 test('kinds: what a value may be written as, null left aside', () => {

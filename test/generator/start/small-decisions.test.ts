@@ -2,6 +2,7 @@ import { describe, expect, test } from 'vitest'
 import { dayNumber } from '../../../generator/calendar/days.ts'
 import { nameEvidence } from '../../../generator/start/column-names.ts'
 import { chooseAxis } from '../../../generator/start/propose-account.ts'
+import { proposeLocale } from '../../../generator/start/language.ts'
 import { namesFrom } from '../../../generator/start/start-account.ts'
 import { likelyCut } from '../../../generator/start/table-head.ts'
 
@@ -44,4 +45,26 @@ test.each([
   ['postedAt', 'posted_at', 1], ['Datum', 'posted_at', 1], ['Veröffentlicht', 'posted_at', 1], ['date_added', 'posted_at', 0.6], ['Quelle', 'venue', 1], ['Étoiles', 'score', 1], ['usuário', 'author', 1], ['colour', 'venue', 0],
 ] as const)('the name %s speaks for %s with %d', (name, role, weight) => {
   expect(nameEvidence(name).weight[role]).toBe(weight)
+})
+
+describe('the language of a file', () => {
+  test.each([
+    ['German', ['Datum', 'Quelle', 'Verfasser'], [], null, 'de-DE'],
+    ['English names, German labels', ['date', 'site'], ['gut', 'schlecht', 'positiv'], null, 'de-DE'],
+    ['one word of German and its dates', ['Zeitpunkt', 'x'], [], '%d.%m.%Y %H:%M', 'de-DE'],
+    ['one word alone', ['Datum', 'x'], [], null, 'en-GB'],
+    ['French', ['Publié', 'Plateforme', 'Auteur'], ['négatif', 'neutre', 'positif'], null, 'fr-FR'],
+    ['Portuguese', ['Data', 'Fonte', 'Utilizador'], ['negativo', 'neutro', 'positivo'], null, 'pt-PT'],
+    ['Portuguese of Brazil', ['Data', 'Fonte', 'Usuário', 'Avaliação'], [], null, 'pt-BR'],
+    ['Spanish, which has no catalogue', ['Fecha', 'Fuente', 'Usuario'], ['negativo', 'neutro', 'positivo'], null, 'en-GB'],
+    ['Dutch', ['Datum', 'Bron', 'Gebruiker'], [], null, 'en-GB'],
+    ['what Portuguese and Spanish share', ['canal', 'autor', 'texto'], [], null, 'en-GB'],
+    ['English', ['date', 'source', 'author', 'sentiment'], ['negative', 'neutral', 'positive'], '%d/%m/%Y', 'en-GB'],
+  ] as const)('%s', (_, columns, labels, format, locale) => {
+    expect(proposeLocale(columns, labels, format).locale).toBe(locale)
+  })
+
+  test('the reason quotes the file', () => {
+    expect(proposeLocale(['Datum', 'Quelle'], ['gut'], '%d.%m.%Y').reason).toContain('Datum, Quelle, gut, dates such as 31.12.')
+  })
 })

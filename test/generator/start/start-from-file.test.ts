@@ -73,6 +73,26 @@ describe('what is proposed from', () => {
     })
   })
 
+  test('the language of the file is proposed, and the base is what the program takes by itself', async () => {
+    await startedFrom('x.csv', german(';'), async ({ text, yaml, folder }) => {
+      expect(yaml.locale).toBe('de-DE')
+      const { timeline: { base } } = await readIntake(await readAccount(folder))
+      expect(text).toContain(`# base: { from: ${base.from}, to: ${base.to} }`)
+      expect(base.to < iso(posts.at(-1)!.at)).toBe(true)
+    })
+  })
+
+  test('columns that are not used say why', async () => {
+    const columns = ['posted', 'site', 'sentiment', 'country', 'collected', 'empty', 'stuff']
+    const rows = posts.map((post) => [iso(post.at), post.venue, post.tone, ['Portugal', 'Norway'][post.number % 2]!, iso(post.at + 86_400_000), '', `${(post.number * 7919) % 1000}.25 x y z`])
+    await startedFrom('x.csv', separated(',', columns, rows), ({ text }) => {
+      expect(text).toContain('# not used: `country`, none of ours; to adjust for it')
+      expect(text).toContain('# not used: `collected`, times of something else than posting')
+      expect(text).toContain('# not used: `empty`, without any value')
+      expect(text).toMatch(/# not used: `stuff`, \w/)
+    })
+  })
+
   test('windows-1252', async () => {
     await startedFrom('x.csv', Buffer.from(german(';').replaceAll('fares', 'Gebühren'), 'latin1'), ({ yaml }) => {
       expect(yaml.mentions[0]!.columns).toEqual(germanMapping)

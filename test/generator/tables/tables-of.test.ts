@@ -71,3 +71,10 @@ test('a row that lacks a column is refused', () => {
   const broken = [{ a: 1 }] as unknown as readonly { a: number; b: number }[]
   expect(() => makeTable<'a' | 'b'>('t', { a: 'count', b: 'count' }, broken)).toThrow('lacks b')
 })
+
+test('where no author is known none is counted; where they are, they stay', () => {
+  const findings = sampleFindings()
+  const counted = (tables: ReturnType<typeof tablesOf>) => tables.flatMap(({ name, rows }) => rows.flatMap((row) => (['authors', 'gini', 'top_share', 'effective_authors'].some((key) => typeof row[key] === 'number') ? [name] : [])))
+  expect(counted(tablesOf({ ...findings, accounting: { ...findings.accounting, authors: 'unknown' } }))).toEqual([])
+  expect(counted(tablesOf(findings))).toContain('venues')
+})

@@ -75,6 +75,12 @@ describe('the rules', () => {
     expect(faultsOf(given).map(({ message }) => message).join()).toMatch(/nearness of `accent` #a3552c and `loss` #6d7a00 as seen with (protanopia|deuteranopia)/)
   })
 
+  test.each(['#5f6d66', '#1c2a33'])('of a colour that no account can give the key that moves it is named: raw %s', (raw) => {
+    const faults = faultsOf({ raw }).filter(({ code }) => code === 'theme-alike')
+    expect(faults.map(({ message }) => message).join()).toContain('`bar`')
+    expect(new Set(faults.map(({ place }) => place))).toEqual(new Set(['theme.yaml colours.raw']))
+  })
+
   test('an accent as dark as ink stands out for nobody', () => {
     expect(faultsOf({ accent: '#1c2a33' }).map(({ code, message }) => [code, /`accent`.*`ink`/.test(message)])).toContainEqual(['theme-alike', true])
   })

@@ -10,6 +10,7 @@ import { createWords } from '../../../generator/words/words.ts'
 import type { WordArguments, Words } from '../../../generator/words/words.ts'
 import type { Findings } from '../../../model/findings/schema.ts'
 import { tablesOf } from '../../../generator/tables/tables-of.ts'
+import { englishFragments, trigrams } from '../../support/english-fragments.ts'
 import { houseCharts, houseTemplate } from '../../support/house-composition.ts'
 import { templatesFolder } from '../../support/house-words.ts'
 import { literalsOf, pseudoWords } from '../../support/pseudo-words.ts'
@@ -112,14 +113,7 @@ function textIn(document: Document): readonly string[] {
   return found
 }
 
-const trigrams = (text: string): readonly string[] => {
-  const wordsIn = text.match(/\p{L}+(?:’\p{L}+)?/gu) ?? []
-  return wordsIn.slice(2).map((_, at) => wordsIn.slice(at, at + 3).join(' ').toLowerCase())
-}
-
-/** Three words in a row that only the English catalogue says; names of laws and authorities are left. */
-const englishOnly = new Set(Object.values(english).flatMap(literalsOf).flatMap(trigrams).filter((three) => three.length >= 10))
-for (const name of ['Federal Trade Commission', 'Digital Markets Competition and Consumers Act', 'Unfair Commercial Practices Directive', 'Bayley and Hammersley', 'Unfair Commercial Practices']) for (const three of trigrams(name)) englishOnly.delete(three)
+const englishOnly = englishFragments(english)
 
 function englishIn(document: Document): readonly string[] {
   return textIn(document).flatMap(trigrams).filter((three) => englishOnly.has(three))

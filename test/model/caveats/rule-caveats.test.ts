@@ -121,6 +121,26 @@ describe('every rule has an occasion, and keeps silent without it', () => {
   })
 })
 
+describe('pooled-average-misleads asks what chance does', () => {
+  const parted = (gap: number, chanceSd: number): Change => withFindings((findings) => ({
+    opinion: { ...findings.opinion, raw_change: findings.opinion.change!.mean + gap }, decomposition: { ...findings.decomposition!, chance_sd: chanceSd },
+  }))
+  const found = (change: Change) => codesOf(change(calm)).includes('pooled-average-misleads')
+  test('a gap of seven points is told on much data, not where sampling alone moves the average by eight', () => {
+    expect(found(parted(7.2, 0.9))).toBe(true)
+    expect(found(parted(7.2, 7.7))).toBe(false)
+    expect(found(parted(-7.2, 7.7))).toBe(false)
+  })
+  test('the bound is the interval’s: 1.645 standard errors at 90 %', () => {
+    expect(found(parted(1.66 * 4, 4))).toBe(true)
+    expect(found(parted(1.63 * 4, 4))).toBe(false)
+  })
+  test('nothing is told where the raw average lies inside opinion’s interval, or is withheld', () => {
+    expect(found(parted(0, 0))).toBe(false)
+    expect(found((grounds) => withFindings(() => ({ decomposition: null }))(parted(7.2, 0.9)(grounds)))).toBe(false)
+  })
+})
+
 /** What stands in every review of posts that lacks an input, and when it must not. */
 const standing: readonly (readonly [string, Change])[] = [
   ['no-sampling-error', withFindings(({ accounting }) => ({ accounting: { ...accounting, modelled: 0 } }))],
