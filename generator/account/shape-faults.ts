@@ -53,7 +53,7 @@ function expectation(issue: Issue): string {
   if (issue.code === 'invalid_value') return issue.values.map(String).join(', ').replace(/, ([^,]*)$/, ' or $1')
   if (issue.code !== 'invalid_type') return issue.message
   const kinds: Readonly<Record<string, string>> = {
-    string: 'text', number: 'a number', int: 'a whole number', array: 'a list', tuple: 'a list of two', object: 'a map', record: 'a map',
+    string: 'text', number: 'a number', int: 'a whole number', array: 'a list', tuple: 'a list of two', object: 'a map', record: 'a map', boolean: 'true or false',
   }
   return kinds[issue.expected] ?? issue.expected
 }

@@ -34,8 +34,9 @@ export async function runCheck(program: Program, folder: string, flags: CheckFla
     const say = sample === null ? speaker.say : speaker.note
     speaker.give({ ok: true, faults: [], accounting: accountingResult(accounting), period: timeline.review.name, survey: surveyResult(inputs.survey), events: eventsResult(inputs.events, timeline), ...listeningResult(inputs), read, ...sampleResult(sample) })
     say(describeAccounting(accounting))
-    for (const line of [...describeInputs(inputs, timeline), ...describeParts(read)]) say(line)
+    for (const line of describeInputs(inputs, timeline)) say(line)
     say(`mentions from ${timeline.steps[0]} to ${timeline.lastMention}; a build would review ${timeline.review.name}`)
+    for (const line of describeParts(read)) say(line)
     if (sample !== null) speaker.say(['venue,id', ...sample.map(({ venue, id }) => `${csvField(venue)},${csvField(id)}`)].join('\n'))
     return 0
   } catch (error) {

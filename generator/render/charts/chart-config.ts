@@ -25,7 +25,7 @@ export function chartConfig(theme: ChartTheme): Config {
     facet: { spacing: 20 },
     range: { ramp: [...theme.shares], category: [...theme.series] },
     style: theme.styles,
-    rule: { color: theme.ink },
+    rule: { color: theme.ink }, boxplot: { box: { color: theme.accent } }, errorband: { band: { color: theme.accent } },
     area: { opacity: 1 }, bar: { opacity: 1 }, point: { opacity: 1 }, rect: { opacity: 1 }, tick: { opacity: 1 },
     mark: { color: theme.accent, invalid: 'break-paths-show-path-domains' },
   }

@@ -36,9 +36,9 @@ describe('check', () => {
     const { code, out } = await run('check', demo)
     expect(code).toBe(0)
     expect(out).toContain('survey: 30 waves, 4 metrics, 2024-05-16 to 2026-10-29\nevents: 9, 2024-06-10 to 2026-10-13\noutcome: 30 values, 2024-05-01 to 2026-10-01\n'
-      + 'benchmark: 1 margin, 4 levels\ncoding audit: 1440 codings in 4 venues\nimportance: 6 topics, 387 respondents, 13 rows left out for want of an answer\n')
+      + 'benchmark: 1 margin, 5 levels\ncoding audit: 1440 codings in 4 venues\nimportance: 6 topics, 387 respondents, 13 rows left out for want of an answer\n')
     expect(JSON.parse((await run('check', demo, '--json')).out)).toMatchObject({
-      ok: true, survey: { waves: 30, metrics: 4 }, benchmark: { margins: 1, levels: 4 }, coding_audit: { venues: 4, codings: 1440 },
+      ok: true, survey: { waves: 30, metrics: 4 }, benchmark: { margins: 1, levels: 5 }, coding_audit: { venues: 4, codings: 1440 },
       importance: { kind: 'respondents', topics: 6, respondents: 387, incomplete: 13 },
     })
     expect(JSON.parse((await run('check', account, '--json')).out)).toMatchObject({ ok: true, survey: null, benchmark: null, coding_audit: null, importance: null })

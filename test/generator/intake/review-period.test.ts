@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
 import type { Account } from '../../../generator/account/account.ts'
-import { InputFault } from '../../../generator/faults/fault.ts'
+import type { InputFault } from '../../../generator/faults/fault.ts'
 import { namedPeriod } from '../../../generator/intake/review-period.ts'
 
 test.each([

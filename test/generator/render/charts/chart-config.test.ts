@@ -16,9 +16,9 @@ const foreign = /#4c78a8|#f58518|#e45756|#72b7b2|#54a24b|#eeca3b|#b279a2|#ff9da6
 
 const { ink, accent, styles } = rendering.theme.chart
 /** A look that is called as a mark is that mark's. */
-const colours: Readonly<Record<string, string>> = { rule: ink, bar: String(styles['bar']!['color']), boxplot: ink }
+const colours: Readonly<Record<string, string>> = { rule: ink, bar: String(styles['bar']!['color']), boxplot: accent }
 
-test.each(['bar', 'tick', 'rect', 'line', 'point', 'circle', 'square', 'area', 'trail', 'rule', 'boxplot'])('a %s without looks has a colour of the theme', async (mark) => {
+test.each(['bar', 'tick', 'rect', 'line', 'point', 'circle', 'square', 'area', 'trail', 'rule', 'boxplot', 'errorband'])('a %s without looks has a colour of the theme', async (mark) => {
   const svg = await draw(mark === 'rect' ? chart(mark, { x2: { datum: 0 } }) : chart(mark))
   expect(svg).not.toMatch(foreign)
   expect(svg.toLowerCase()).toContain(colours[mark] ?? accent)

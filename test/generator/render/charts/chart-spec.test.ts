@@ -14,8 +14,10 @@ describe('a specification', () => {
   const spec = { name: 'c', height: 10, usermeta: { narrow: { height: 20 } }, mark: { type: 'text', text: '@label-raw' }, layer: [{ data: { name: 'opinion' } }, { data: { name: 'spans' } }, { data: { name: 'opinion' } }] }
 
   test('differs on a phone as it says, and tells its expressions', () => {
-    expect(atSize(spec, 'wide')).toMatchObject({ height: 10, params: [{ name: 'narrow', value: false }] })
-    expect(atSize(spec, 'narrow')).toMatchObject({ height: 20, params: [{ name: 'narrow', value: true }] })
+    const asking = { ...spec, width: { expr: 'narrow ? 1 : 2' } }
+    expect(atSize(asking, 'wide')).toMatchObject({ height: 10, params: [{ name: 'narrow', value: false }] })
+    expect(atSize(asking, 'narrow')).toMatchObject({ height: 20, params: [{ name: 'narrow', value: true }] })
+    expect(atSize(spec, 'narrow')).not.toHaveProperty('params')
   })
   test('gets its words from the catalogue', () => { expect(worded(spec, sampleWords)).toMatchObject({ mark: { type: 'text', text: 'Raw average' } }) })
   test('an unknown message is named', () => { expect(() => worded({ text: '@nothing-such' }, sampleWords)).toThrow('nothing-such') })

@@ -118,7 +118,7 @@ test('layers are in the order that one of them gives', async () => {
 })
 
 test('nothing is wrong with the charts of the house but that some draw values of their own', () => {
-  for (const [name, { name: _, ...spec }] of rendering.charts) {
+  for (const [name, spec] of rendering.charts) {
     const codes = new Set(ownChartFaults(spec, rendering, (path) => path.join('.')).map(({ code, place }) => `${code} ${place}`))
     expect([...codes].filter((told) => !/^chart-data layer\.\d+\.data$|^chart-key usermeta\.narrow\.usermeta$/.test(told)), name).toEqual([])
   }
