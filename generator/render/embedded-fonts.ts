@@ -5,7 +5,7 @@ const mediaTypes = { woff2: 'woff2', truetype: 'ttf', opentype: 'otf' } as const
 
 /** `@font-face` rules with the faces inside, only those that the text needs. */
 export function fontFaces(text: string, theme: Theme): string {
-  const characters = new Set([...text].map((character) => character.codePointAt(0) ?? 0))
+  const characters = new Set(Array.from(new Set(text), (character) => character.codePointAt(0) ?? 0))
   return theme.faces.filter((face) => needed(face, characters)).map((face) => (
     `@font-face{font-family:"${theme.chart.font}";font-style:normal;font-weight:${face.weight};font-display:block;` +
     `src:url(data:font/${mediaTypes[face.form]};base64,${Buffer.from(face.bytes).toString('base64')}) format("${face.form}");unicode-range:${face.range}}`

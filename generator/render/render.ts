@@ -24,6 +24,8 @@ export interface Rendering {
   readonly imprint: Imprint
   /** Where pictures may have been drawn before; default: each is drawn. */
   readonly drawings?: Drawings
+  /** `wide` leaves out the pictures for a phone, and shows those for a page there too; default: both. */
+  readonly pictures?: 'both' | 'wide'
 }
 
 /**
@@ -47,12 +49,14 @@ export async function render(document: Document, rendering: Rendering): Promise<
  * Both sizes, of which the style sheet shows one. Each is a picture of its own to assistive technology (and so a Figure with its alternative in
  * a tagged PDF); the text alternative is written once, on the wide one, and the narrow one refers to it.
  */
-async function bothSizes({ chart, id, alt }: DrawingPlace, { tables, charts, words, theme, drawings = drawEach }: Rendering): Promise<string> {
+async function bothSizes({ chart, id, alt }: DrawingPlace, { tables, charts, words, theme, drawings = drawEach, pictures = 'both' }: Rendering): Promise<string> {
   const spec = charts.get(chart)
   if (spec === undefined) throw new Error(`Unexpected chart "${chart}", expected one of ${[...charts.keys()].join(', ')}`)
   const wide = await drawChart({ ...spec, name: id }, tables, words, theme, 'wide', drawings)
+  const named = (look: string) => wide.replace('<svg ', () => `<svg id="drawing-${id}" ${look}role="img" aria-label="${attributeText(alt)}" `)
+  if (pictures === 'wide') return named('')
   const narrow = await drawChart({ ...spec, name: id }, tables, words, theme, 'narrow', drawings)
-  return wide.replace('<svg ', () => `<svg id="drawing-${id}" class="for-wide" role="img" aria-label="${attributeText(alt)}" `)
+  return named('class="for-wide" ')
     + narrow.replace('<svg ', () => `<svg class="for-narrow" role="img" aria-labelledby="drawing-${id}" `)
 }
 

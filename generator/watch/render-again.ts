@@ -32,7 +32,7 @@ export async function renderAgain(program: Program, account: Account, findings: 
     const tables = tablesOf(worded)
     const { document, faults, unshown } = composed(house, worded)
     const { charts, words, theme } = house
-    return { html: document === null ? null : await render(document, { tables, charts, words, theme, imprint: imprintOf(worded, words), drawings }), faults, unshown, files: house.files }
+    return { html: document === null ? null : await render(document, { tables, charts, words, theme, imprint: imprintOf(worded, words), drawings, pictures: 'wide' }), faults, unshown, files: house.files }
   } catch (error) {
     const faults = faultsOf(error)
     return { html: null, faults, unshown: faults, files: null }

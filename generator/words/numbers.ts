@@ -7,9 +7,19 @@ import type { Words } from './words.ts'
  */
 type Style = Pick<Intl.NumberFormatOptions, 'style' | 'signDisplay' | 'minimumFractionDigits' | 'maximumFractionDigits' | 'maximumSignificantDigits' | 'roundingPriority'>
 
+/** Formats by what they are made from: they never change, and one costs more to make than a hundred figures to write. */
+const formats = new Map<string, Intl.NumberFormat>()
+
+function formatOf(locale: string, style: Style): Intl.NumberFormat {
+  const key = `${locale} ${JSON.stringify(style)}`
+  const known = formats.get(key) ?? new Intl.NumberFormat(locale, { signDisplay: 'negative', ...style })
+  formats.set(key, known)
+  return known
+}
+
 /** A figure in a style of Intl's. */
 export function figure(value: number, locale: string, style: Style): string {
-  const parts = new Intl.NumberFormat(locale, { signDisplay: 'negative', ...style }).formatToParts(value)
+  const parts = formatOf(locale, style).formatToParts(value)
   return plainSpaces(parts.map((part) => part.type === 'minusSign' ? '\u2212' : part.value).join(''))
 }
 
