@@ -107,7 +107,7 @@ describe('build', () => {
 })
 
 describe('usage', () => {
-  test.each([[['bild']], [['build']], [['check', account, '--no-such']], [['build', account, '--seed', 'x']], [['build', account, account, '--out', 'x']], [['seal', account]], [['seal', account, '--period', '2025-08', '--revise', ' ']], [['verify']]])('%j: exit code 2', async (args) => {
+  test.each([[['bild']], [['build']], [['check', account, '--no-such']], [['build', account, '--seed', 'x']], [['build', account, account, '--out', 'x']], [['build', account, account, '--watch']], [['build', account, '--watch', '--json']], [['seal', account]], [['seal', account, '--period', '2025-08', '--revise', ' ']], [['verify']]])('%j: exit code 2', async (args) => {
     expect((await run(...args)).code).toBe(2)
   })
 
