@@ -1,5 +1,4 @@
-import { watch, type FSWatcher } from 'node:fs'
-import { existsSync } from 'node:fs'
+import { existsSync, watch, type FSWatcher } from 'node:fs'
 import { posix, join } from 'node:path'
 import type { Account } from '../account/account.ts'
 
