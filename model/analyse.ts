@@ -1,16 +1,13 @@
 import type { GivenMargins } from './cells/target-mix.ts'
 import { targetMix } from './cells/target-mix.ts'
-import { samplingVariance } from './cells/sampling-variance.ts'
 import { ruleCaveats } from './caveats/rule-caveats.ts'
 import type { RuledCaveat, Unruled } from './caveats/rule.ts'
 import { createOutlook, readHearing } from './advice/hearing.ts'
 import { readAdvice } from './advice/read-advice.ts'
-import { readAudit } from './coder/audit.ts'
-import { rescoredTables } from './coder/rescore.ts'
-import { buildProblem } from './fit/build-problem.ts'
 import { effortFor } from './fit/effort.ts'
 import type { FitExecutor } from './fit/executor.ts'
 import { samplePosterior } from './fit/posterior.ts'
+import { prepareFit } from './fit/prepare-fit.ts'
 import type { FitProblem } from './fit/problem.ts'
 import type { IntakeTables } from './intake/intake-tables.ts'
 import { createReading } from './reading/context.ts'
@@ -29,14 +26,19 @@ import { heardBy, readBenchmark } from './customers/benchmark.ts'
 import { readImportance } from './customers/importance.ts'
 import { readTipping } from './customers/tipping.ts'
 import { readVolume } from './customers/volume.ts'
+import type { CompetitorTables } from './competitors/competitor-tables.ts'
+import { readCompetitors } from './competitors/read-competitors.ts'
 import { maskSmallGroups } from './findings/mask.ts'
 import { readOutcome } from './outcome/read-outcome.ts'
+import type { Past } from './past/past.ts'
+import { lookBack } from './past/look-back.ts'
 import { readSurvey } from './survey/read-survey.ts'
 import { mostForecasts, type Refit } from './survey/rolling-forecast.ts'
 
 /*
  *   intake tables ──▶ sampling variance ──▶ problem ──▶ posterior ──▶ reading ──▶ opinion, decomposition, venues, ...
  *                └──▶ target mix ─────────────────────────────────────────┘ └──▶ survey, outcome ──▶ caveats
+ *   competitors ──▶ a fit each, as the brand's ──▶ beside the brand's reading
  *   small inputs ───────────────────────────────────────────────────────────────────┘
  */
 
@@ -45,6 +47,10 @@ export interface AnalysisSpec {
   readonly interval: number
   readonly seed: number
   readonly targetMix: GivenMargins
+  /** What was sealed before; null before the first seal. */
+  readonly past: Past | null
+  /** null where the account gives none. */
+  readonly competitors: CompetitorTables | null
   readonly facts: AccountFacts
 }
 
@@ -72,13 +78,8 @@ export type Analysis = Unruled & { readonly caveats: readonly RuledCaveat[] }
 export async function analyse(
   tables: IntakeTables, inputs: SmallInputs, spec: AnalysisSpec, workers: Workers, progress: AnalysisProgress = {},
 ): Promise<Analysis> {
-  const audited = inputs.audit === null ? null : readAudit(tables, inputs.audit)
-  // an audit that is refused everywhere changes nothing, and costs nothing
-  const applied = audited !== null && audited.weights.some((weights) => weights !== null) ? audited : null
-  const fitted = applied === null ? tables : rescoredTables(tables, applied)
-  const sampling = samplingVariance(fitted)
+  const { audited, fitted, sampling, problem } = prepareFit(tables, inputs.audit)
   const mix = targetMix(tables, spec.targetMix)
-  const problem = buildProblem(fitted, sampling.variance, applied)
   const posterior = await samplePosterior(problem, workers.executorFor(problem), { seed: spec.seed, ...effortFor(problem), ...(progress.draws && { progress: progress.draws }) })
   const reading = createReading(tables, fitted, mix, sampling, posterior, spec.interval)
   const { timeline } = tables
@@ -86,7 +87,7 @@ export async function analyse(
   const opinion = readOpinion(reading)
   const outlook = createOutlook(reading, spec.interval)
   const { smallestGroup } = spec.facts
-  const findings: Omit<Unruled, 'advice'> = {
+  const findings: Omit<Unruled, 'advice' | 'revisions' | 'follow_up'> = {
     schema: 'tareline-findings/1',
     period: timeline.review, previous_period: reading.previousSteps === null ? null : timeline.periods[timeline.current - 1],
     period_steps: readPeriodSteps(reading),
@@ -109,13 +110,15 @@ export async function analyse(
     volume: readVolume(opinion, survey, inputs.customers, smallestGroup),
     tipping: readTipping(reading, spec.interval),
     coder: readCoder(reading, audited, inputs.audit !== null, spec.facts.labelScores, spec.interval),
+    competitors: spec.competitors === null ? null : await readCompetitors(reading, spec.competitors, inputs.audit, { ...spec, smallestGroup }, workers.executorFor),
     sensitivity: readSensitivity(reading), hearing: readHearing(outlook),
     diagnostics: readDiagnostics(reading, spec.seed, spec.interval),
     method: readMethod(reading, spec.facts),
   }
   const advice = readAdvice(outlook, findings, inputs.benchmark, smallestGroup)
-  const unruled: Unruled = maskSmallGroups({ ...findings, advice }, tables, smallestGroup)
-  return { ...unruled, caveats: ruleCaveats({ findings: unruled, reading, givenNotUsed: spec.facts.givenNotUsed }) }
+  const masked = maskSmallGroups({ ...findings, advice, revisions: null, follow_up: null }, tables, smallestGroup)
+  const unruled: Unruled = { ...masked, ...lookBack(spec.past, reading, masked, inputs.audit) }
+  return { ...unruled, caveats: ruleCaveats({ findings: unruled, reading }) }
 }
 
 /** The same refits, told as they are done. */

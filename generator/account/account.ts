@@ -8,6 +8,7 @@ export interface Account {
   readonly folder: string
   readonly account: string
   readonly brand: string
+  /** Other brands whose rows the same files hold. */
   readonly competitors: readonly string[]
   readonly locale: string
   readonly timeZone: string
@@ -43,8 +44,6 @@ export interface Account {
   readonly onePersonSeals: boolean
   /** Fewest authors of a group that may be shown. */
   readonly smallestGroup: number
-  /** Keys that are given and checked but not used by this version. */
-  readonly givenNotUsed: readonly string[]
   /** Place of every key, by its path: `venues.boards` is at `account.yaml:12:3 venues.boards`. */
   readonly places: Readonly<Record<string, string>>
 }

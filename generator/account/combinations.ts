@@ -28,6 +28,7 @@ export function combinationFaults(entries: SoundEntries, places: Places): readon
     ...valueFaults('venues', entries.venues ?? {}, wrong),
     ...valueFaults('topics', entries.topics ?? {}, wrong),
     ...targetFaults(entries, wrong),
+    ...competitorFaults(entries, wrong),
     ...(entries.grid === 'month' && entries.reporting === 'week' ? [wrong(['reporting'], 'weeks on a grid of months', expected.reportingCoarser)] : []),
   ]
 }
@@ -102,4 +103,13 @@ function targetFaults(entries: SoundEntries, wrong: Wrong): readonly Fault[] {
         .map((level) => wrong([...path, level], `level \`${level}\``, expected.posterLevel)) : []),
     ]
   })
+}
+
+/** Names are compared as those of rows are: without regard to case and the spaces around them. */
+function competitorFaults({ brand, competitors = [] }: SoundEntries, wrong: Wrong): readonly Fault[] {
+  const names = competitors.map((name) => name.trim().toLowerCase())
+  return competitors.flatMap((name, index) => [
+    ...(names[index] === brand?.trim().toLowerCase() ? [wrong(['competitors', index], `\`${name}\`, the brand itself`, expected.competitorOther)] : []),
+    ...(names.indexOf(names[index]!) < index ? [wrong(['competitors', index], `\`${name}\`, which is listed already`, expected.competitorOnce)] : []),
+  ])
 }

@@ -1,6 +1,6 @@
 import type { Grid } from '../calendar/grid.ts'
 import type { Account, FileSet, LevelEntry, ScoreReading, Source } from './account.ts'
-import { laterKeys, type Entries, type SourceEntry } from './schema.ts'
+import type { Entries, SourceEntry } from './schema.ts'
 import { dotted, type KeyPath } from './yaml-places.ts'
 
 type Found = ReadonlyMap<string, readonly string[]>
@@ -10,7 +10,7 @@ type Level = Entries['venues'][string]
 const usualLags: Readonly<Record<Grid, readonly [number, number]>> = { day: [-56, 112], week: [-8, 16], month: [-2, 4] }
 
 /** The account from entries that are sound, each and together, and the files found for them. */
-export function accountOf(folder: string, entries: Entries, found: Found, given: readonly string[], places: Readonly<Record<string, string>>): Account {
+export function accountOf(folder: string, entries: Entries, found: Found, places: Readonly<Record<string, string>>): Account {
   const table = (key: 'benchmark' | 'coding_audit' | 'importance' | 'events' | 'outcome'): FileSet | null =>
     entries[key] === undefined ? null : fileSet([key, 'files'], entries[key].files, found)
   return {
@@ -34,7 +34,6 @@ export function accountOf(folder: string, entries: Entries, found: Found, given:
     template: entries.template ?? null, theme: entries.theme ?? null, notes: entries.notes ?? null, words: entries.words ?? null,
     preparedBy: entries.prepared_by ?? null, reviewedBy: entries.reviewed_by ?? null, onePersonSeals: entries.one_person_seals,
     smallestGroup: entries.smallest_group,
-    givenNotUsed: laterKeys.filter((key) => given.includes(key)),
     places,
   }
 }

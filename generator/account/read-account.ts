@@ -30,7 +30,7 @@ export async function readAccount(folder: string, { archived = false }: { readon
   const named = await findNamedFiles(root, entries, places, archived)
   const all: readonly Fault[] = [...wrongShapes, ...combinationFaults(entries, places), ...named.faults]
   if (all.length > 0) throw new InputFault(all)
-  return accountOf(root, entries as Entries, named.found, Object.keys(value), places)
+  return accountOf(root, entries as Entries, named.found, places)
 }
 
 async function accountText(folder: string): Promise<string> {

@@ -58,11 +58,13 @@ const venue = level.extend({ cost_per_author: number.gt(0, expected.cost).option
 const whole = z.number().int(expected.lags)
 /** More would be looking until something is found. */
 const mostLags = 200
+/** Each is fitted as the brand itself is. */
+const mostCompetitors = 12
 
 export const accountShape = {
   account: z.string().regex(/^[A-Za-z0-9][A-Za-z0-9-]*$/, expected.accountName),
   brand: text,
-  competitors: z.array(text).default([]),
+  competitors: z.array(text.refine((name) => !isLongName(name), expected.shortText(mostCharacters))).max(mostCompetitors, expected.mostCompetitors(mostCompetitors)).default([]),
   locale: z.string().refine(isLocale, { error: ({ input }) => localeExpected(String(input)) }).default('en-GB'),
   time_zone: z.string().refine(isTimeZone, expected.timeZone).default('UTC'),
   grid: z.enum(['day', 'week', 'month']).default('week'),
@@ -102,6 +104,4 @@ export const accountShape = {
 export type Entries = { readonly [K in keyof typeof accountShape]: z.output<(typeof accountShape)[K]> }
 export type SourceEntry = z.output<typeof source>
 
-/** Keys that this version checks but does not use. */
-export const laterKeys = ['competitors'] as const
 export type AccountKey = keyof typeof accountShape

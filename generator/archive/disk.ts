@@ -3,7 +3,7 @@ import { copyFile, mkdir, open, rename, rm } from 'node:fs/promises'
 import { dirname } from 'node:path'
 
 /**
- * Everything that sealing does to a disk, one call at a time: a test can stop it between any two. What a call has done is on the disk when it
+ * Everything that sealing, and finishing a draft, does to a disk, one call at a time: a test can stop it between any two. What a call has done is on the disk when it
  * returns, not only in the machine's memory.
  */
 export interface Disk {

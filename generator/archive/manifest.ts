@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto'
 import { z } from 'zod'
 import type { Program } from '../program/program.ts'
 
-const sha256 = z.string().regex(/^[0-9a-f]{64}$/)
+export const sha256 = z.string().regex(/^[0-9a-f]{64}$/)
 /** With forward slashes, inside its folder. */
 const inside = z.string().min(1).refine((path) => !path.startsWith('/') && !path.split('/').some((part) => part === '' || part === '.' || part === '..') && !path.includes('\\'))
 

@@ -6,20 +6,24 @@ import type { Cache } from '../cache/cache.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, MachineFault, type Fault } from '../faults/fault.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
+import { sealedBefore } from '../past/read-past.ts'
 import type { Program } from '../program/program.ts'
 import { readHouse } from '../review/house.ts'
 import { makeReview, type MadeReview } from '../review/make-review.ts'
 import type { Progress } from '../review/stages.ts'
 import { Stopped } from '../review/stopping.ts'
 import { compareFindings, largest, type Comparison, type Difference } from './compare-findings.ts'
+import { readCompetitorFiles } from './competitor-files.ts'
 import { readIntakeFiles } from './intake-files.ts'
 import { madeHere, sha256Of, type MadeWith, type Manifest } from './manifest.ts'
-import type { SealFolder } from './read-archive.ts'
+import type { Archive, SealFolder } from './read-archive.ts'
 
 export interface RebuildOptions {
   /** null: PDFs are not printed again. */
   readonly browser: Promise<Browser> | null
   readonly threads?: number | undefined
+  /** The archive that the seal is in: a review looks back at what was sealed before it. */
+  readonly archive: Archive
   readonly progress: Progress
 }
 
@@ -51,7 +55,7 @@ export async function rebuildSeal(program: Program, seal: SealFolder & { readonl
   const printer = options.browser === null ? null : await (await options.browser).version()
   const otherwise = othersOf(manifest.program, { ...madeHere(program), browser: printer ?? manifest.program.browser })
   const same = !otherwise.some((part) => part !== 'browser')
-  const made = await madeAgain(program, folder, manifest.seed, options).catch((error: unknown) => reasonsOf(name, error))
+  const made = await madeAgain(program, folder, manifest, options).catch((error: unknown) => reasonsOf(name, error))
   if (!('html' in made)) return { name, otherwise, findings: null, files: [], compared: 0, printed: false, faults: same ? made.reasons : [], refusals: same ? [] : made.reasons }
   const compared = compareFindings(JSON.parse(await readFile(join(folder, 'findings.json'), 'utf8')), JSON.parse(textOf(made, 'findings.json')))
   // the version stands in the findings: of another program it is no news
@@ -67,10 +71,11 @@ export async function rebuildSeal(program: Program, seal: SealFolder & { readonl
   }
 }
 
-async function madeAgain(program: Program, folder: string, seed: number, { browser, threads, progress }: RebuildOptions): Promise<MadeReview> {
+async function madeAgain(program: Program, folder: string, { seed, sequence }: Manifest, { archive, browser, threads, progress }: RebuildOptions): Promise<MadeReview> {
   const account = await readAccount(join(folder, 'account'), { archived: true })
   const house = await readHouse(program, account)
-  const material = { tables: await readIntakeFiles(join(folder, 'intake')), inputs: await readSmallInputs(account) }
+  const intake = join(folder, 'intake')
+  const material = { tables: await readIntakeFiles(intake), competitors: await readCompetitorFiles(intake), inputs: await readSmallInputs(account), sealed: sealedBefore(archive, sequence) }
   return makeReview(program, account, house, material, { seed, threads, cache: rememberNothing, browser, progress })
 }
 

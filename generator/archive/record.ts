@@ -2,17 +2,21 @@ import { readFile, stat } from 'node:fs/promises'
 import { join } from 'node:path'
 import { z } from 'zod'
 import { hashOf } from '../intake/input-file.ts'
-import { keptFile, madeWith, type KeptFile } from './manifest.ts'
+import { keptFile, madeWith, sha256, type KeptFile } from './manifest.ts'
 
 /** What a draft was made from and what it holds: without it nobody could say later that a seal holds what was reviewed. */
 const recordSchema = z.strictObject({
   schema: z.literal('tareline-record/1'),
   account: z.string(),
   period: z.string(),
+  /** Whether that is the last whole period that the mentions cover, whatever was asked for: then a build that names none would make this draft. */
+  default_period: z.boolean(),
   program: madeWith,
   seed: z.int().min(0),
   prepared_by: z.string().nullable(),
   reviewed_by: z.string().nullable(),
+  /** Hash of the last manifest of the archive that the review looked back at; null before the first seal. */
+  past: sha256.nullable(),
   /** Whether the fit passed its checks. */
   passed: z.boolean(),
   /** Files of the account folder that were read. Those with mentions in them are not kept: the intake tables stand for them, with no person in them. */
@@ -51,8 +55,9 @@ export async function fingerprints(folder: string, paths: readonly string[]): Pr
 /** Those of the recorded files that are not there any more, or not as they were. */
 export async function changedSince(folder: string, recorded: readonly KeptFile[]): Promise<readonly string[]> {
   const changed: string[] = []
-  for (const { path, sha256 } of recorded) {
-    if (await hashOf(folder, path).catch(() => null) !== sha256) changed.push(path)
+  for (const { path, bytes, sha256 } of recorded) {
+    const sameSize = await stat(join(folder, path)).then(({ size }) => size === bytes, () => false)
+    if (!sameSize || await hashOf(folder, path).catch(() => null) !== sha256) changed.push(path)
   }
   return changed
 }

@@ -2,6 +2,7 @@ import { join } from 'node:path'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault, type Fault } from '../faults/fault.ts'
 import type { Disk } from './disk.ts'
+import { draftChanges } from './draft-changes.ts'
 import { chainEndName, manifestName, manifestSchema, sealName, sha256Of, writtenManifest, type ChainEnd, type KeptFile, type MadeWith, type Manifest } from './manifest.ts'
 import { readArchive, sealedInOrder, unfinishedPrefix } from './read-archive.ts'
 import { changedSince, readRecord, recordName, type BuildRecord } from './record.ts'
@@ -44,7 +45,7 @@ export async function sealReview(request: SealRequest): Promise<Sealed> {
   const draft = join(folder, 'drafts', period)
   const record = await readRecord(draft)
   const verified = await verifyArchive(join(folder, 'archive'))
-  const faults = [...await draftFaults(request, draft, record), ...archiveFaults(request, verified)]
+  const faults = [...await draftFaults(request, draft, record), ...archiveFaults(request, verified, record)]
   if (faults.length > 0 || record === null) throw new InputFault(faults)
 
   const order = sealedInOrder(verified.archive)
@@ -101,22 +102,19 @@ function revisionOf(order: readonly { readonly manifest: Manifest }[], period: s
   return order.filter(({ manifest }) => manifest.period === period).length + 1
 }
 
-async function draftFaults({ folder, account, period, inputs: readNow, onePerson, program }: SealRequest, draft: string, record: BuildRecord | null): Promise<readonly Fault[]> {
+async function draftFaults({ folder, account, period, inputs, onePerson, program }: SealRequest, draft: string, record: BuildRecord | null): Promise<readonly Fault[]> {
   const place = `drafts/${period}`
   const there = await filesOf(draft).catch(() => null)
   if (there === null || there.length === 0) return [faultOf('draft-absent', place, { period })]
   if (record === null) return [faultOf('draft-unrecorded', `${place}/${recordName}`, {})]
   if (record.period !== period || record.account !== account) return [faultOf('draft-of-another', `${place}/${recordName}`, { account: record.account, period: record.period })]
   const faults: Fault[] = []
-  const known = new Set([...record.files.map(({ path }) => path), recordName])
-  const changed = [...await changedSince(draft, record.files), ...there.filter((path) => !known.has(path))]
-  if (changed.length > 0) faults.push(faultOf('draft-changed', place, { paths: changed }))
-  const before = new Set(record.inputs.map(({ path }) => path))
-  const inputs = [...await changedSince(folder, record.inputs), ...readNow.filter((path) => !before.has(path))]
-  if (inputs.length > 0) faults.push(faultOf('inputs-changed', place, { paths: inputs }))
+  const changed = await draftChanges({ folder, draft, inputs }, record)
+  if (changed.draft.length > 0) faults.push(faultOf('draft-changed', place, { paths: changed.draft }))
+  if (changed.inputs.length > 0) faults.push(faultOf('inputs-changed', place, { paths: changed.inputs }))
   if ((['version', 'model', 'code'] as const).some((part) => record.program[part] !== program[part])) faults.push(faultOf('program-changed', place, { built: record.program.version }))
   if (!record.passed) faults.push(faultOf('checks-failed', place, {}))
-  if (!known.has('review.pdf')) faults.push(faultOf('draft-without-pdf', place, {}))
+  if (!record.files.some(({ path }) => path === 'review.pdf')) faults.push(faultOf('draft-without-pdf', place, {}))
   return [...faults, ...peopleFaults(record, onePerson)]
 }
 
@@ -131,9 +129,11 @@ function folded(name: string): string {
   return name.normalize('NFKC').toLowerCase().replace(/\s+/g, ' ').trim()
 }
 
-function archiveFaults({ period, reason }: SealRequest, { archive, faults }: Verified): readonly Fault[] {
+function archiveFaults({ period, reason }: SealRequest, { archive, faults }: Verified, record: BuildRecord | null): readonly Fault[] {
   if (faults.length > 0) return [faultOf('archive-unsound', 'archive', {}), ...faults]
-  const sealed = revisionOf(sealedInOrder(archive), period) > 1
+  const order = sealedInOrder(archive)
+  const sealed = revisionOf(order, period) > 1
   if (sealed && reason === null) return [faultOf('sealed-already', `archive/${period}`, { period })]
-  return !sealed && reason !== null ? [faultOf('nothing-to-revise', `archive/${period}`, { period })] : []
+  if (!sealed && reason !== null) return [faultOf('nothing-to-revise', `archive/${period}`, { period })]
+  return record === null || record.past === (order.at(-1)?.hash ?? null) ? [] : [faultOf('archive-moved-on', `drafts/${period}`, { last: order.at(-1)?.name ?? null })]
 }

@@ -1,19 +1,19 @@
-import { basename, relative, resolve } from 'node:path'
-import type { Browser } from 'puppeteer'
-import { readAccount } from '../account/read-account.ts'
-import { buildReview, type Draft } from '../review/build-review.ts'
+import { basename, resolve } from 'node:path'
 import type { Fault } from '../faults/fault.ts'
-import { openBrowser } from '../print/open-browser.ts'
 import type { Program } from '../program/program.ts'
-import { failureOf, type ExitCode } from './outcome.ts'
+import { buildAccount, describeDraft, draftResult, type DraftResult } from './build-account.ts'
+import { runBuildAll } from './build-all.ts'
+import { failureOf, worstOf, type ExitCode } from './outcome.ts'
+import { sharedBrowser, type SharedBrowser } from './shared-browser.ts'
 import { showProgress } from './show-progress.ts'
 import type { Speaker, SpeakerOptions } from './speaker.ts'
-import { runWatch } from './watch-command.ts'
 import { listenForStop } from './stop-signals.ts'
+import { runWatch } from './watch-command.ts'
 
 export interface BuildFlags extends SpeakerOptions {
   readonly period?: string
   readonly out?: string
+  readonly all?: string
   readonly pdf: boolean
   readonly seed: number
   readonly threads?: number
@@ -23,83 +23,73 @@ export interface BuildFlags extends SpeakerOptions {
 
 /** `tareline build`: account by account; a faulty one does not stop the others. */
 export async function runBuild(program: Program, folders: readonly string[], flags: BuildFlags, speaker: Speaker): Promise<ExitCode> {
-  if (flags.out !== undefined && folders.length > 1) {
-    speaker.faults([{ code: 'usage', place: '--out', message: 'Unexpected --out with several accounts, expected one.', mend: 'Build one account at a time, or leave --out out.' }])
+  const wrong = usageFault(folders, flags)
+  if (wrong !== null) {
+    speaker.faults([wrong])
     return 2
   }
-  if (flags.watch === true) {
-    const unfit = folders.length > 1 ? 'several accounts' : flags.json === true ? '--json' : null
-    if (unfit === null) return runWatch(program, folders[0], flags, speaker)
-    speaker.faults([{ code: 'usage', place: '--watch', message: `Unexpected --watch with ${unfit}, expected one account and words for a person.`, mend: 'Watch one account, without --json.' }])
-    return 2
+  if (flags.watch === true) return runWatch(program, folders[0], flags, speaker)
+  return flags.all === undefined ? buildEach(program, folders, flags, speaker) : runBuildAll(program, flags.all, flags, speaker)
+}
+
+/** What does not go together. */
+function usageFault(folders: readonly string[], { all, out, watch, json }: BuildFlags): Fault | null {
+  const usage = (place: string, unexpected: string, expected: string, mend: string): Fault => ({ code: 'usage', place, message: `Unexpected ${unexpected}, expected ${expected}.`, mend })
+  if (all !== undefined) {
+    const beside = folders.length > 0 ? 'accounts' : out !== undefined ? '--out' : watch === true ? '--watch' : null
+    return beside === null ? null : usage('--all', `${beside} beside --all`, 'one or the other', 'Build all accounts of a folder, or name the accounts without --all.')
   }
-  const browsers = sharedBrowser(flags)
+  if (folders.length === 0) return usage('build', 'build of nothing', 'an account', 'Name the folders of accounts, or with --all the folder around them.')
+  if (out !== undefined && folders.length > 1) return usage('--out', '--out with several accounts', 'one', 'Build one account at a time, or leave --out out.')
+  const unfit = watch !== true ? null : folders.length > 1 ? 'several accounts' : json === true ? '--json' : null
+  return unfit === null ? null : usage('--watch', `--watch with ${unfit}`, 'one account and words for a person', 'Watch one account, without --json.')
+}
+
+async function buildEach(program: Program, folders: readonly string[], flags: BuildFlags, speaker: Speaker): Promise<ExitCode> {
+  const browser = sharedBrowser(flags.browser)
   const signals = listenForStop()
   try {
     const outcomes: Outcome[] = []
     for (const folder of folders) {
-      const outcome = await buildOne(program, folder, flags, { browser: browsers.open, stop: signals.stop }, speaker)
+      const outcome = await buildOne(program, folder, flags, { browser, stop: signals.stop, told: folders.length > 1 }, speaker)
       outcomes.push(outcome)
       if (outcome.exitCode > 128) break
     }
-    const exitCode = outcomes.reduce<ExitCode>((worst, outcome) => (outcome.exitCode > worst ? outcome.exitCode : worst), 0)
-    speaker.give({ ok: exitCode === 0, drafts: outcomes.flatMap(({ draft }) => (draft === null ? [] : [draftResult(draft)])), faults: outcomes.flatMap(({ faults }) => faults) })
+    const exitCode = worstOf(outcomes)
+    speaker.give({ ok: exitCode === 0, drafts: outcomes.flatMap(({ draft }) => draft ?? []), faults: outcomes.flatMap(({ faults }) => faults) })
     return exitCode
   } finally {
-    await browsers.close()
+    await browser.close()
     signals.close()
   }
 }
 
 interface Outcome {
   readonly exitCode: ExitCode
-  readonly draft: Draft | null
+  readonly draft: DraftResult | null
   readonly faults: readonly Fault[]
 }
 
 /** What all accounts of a run have in common. */
 interface Shared {
-  readonly browser: () => Promise<Browser>
+  readonly browser: SharedBrowser
   readonly stop: AbortSignal
+  /** Whether faults are told with the account's name. */
+  readonly told: boolean
 }
 
-async function buildOne(program: Program, folder: string, flags: BuildFlags, { browser, stop }: Shared, speaker: Speaker): Promise<Outcome> {
-  const shown = showProgress(speaker, process.stderr.isTTY && flags.json !== true, basename(resolve(folder)))
+async function buildOne(program: Program, folder: string, { period, out, pdf, seed, threads, json }: BuildFlags, { browser, stop, told }: Shared, speaker: Speaker): Promise<Outcome> {
+  const name = basename(resolve(folder))
+  const shown = showProgress(speaker, process.stderr.isTTY && json !== true, name)
   try {
-    stop.throwIfAborted()
-    const account = await readAccount(folder)
-    const draft = await buildReview(program, account, {
-      period: flags.period, out: flags.out === undefined ? undefined : resolve(flags.out), seed: flags.seed, threads: flags.threads,
-      browser: flags.pdf ? browser : null, progress: shown.progress, stop,
-    })
+    const { draft } = await buildAccount(program, folder, { period, out, seed, threads, browser: pdf ? browser.open : null, stop, keep: false }, shown.progress)
     await shown.end()
     speaker.say(describeDraft(draft))
-    return { exitCode: 0, draft, faults: [] }
+    return { exitCode: 0, draft: draftResult(draft), faults: [] }
   } catch (error) {
     await shown.end(error)
     const { exitCode, faults } = failureOf(error)
-    speaker.faults(faults)
+    speaker.faults(faults, told ? name : undefined)
     return { exitCode, draft: null, faults }
   }
-}
-
-/** One browser for all accounts, started when it is first asked for. */
-function sharedBrowser(flags: BuildFlags): { open: () => Promise<Browser>; close: () => Promise<void> } {
-  let opened: Promise<Browser> | undefined
-  return {
-    open: () => (opened ??= openBrowser({ browser: flags.browser })),
-    close: async () => { await opened?.then((browser) => browser.close(), () => undefined) },
-  }
-}
-
-function draftResult({ folder, findings }: Draft) {
-  return {
-    account: findings.account, period: findings.period.name, folder,
-    movement: findings.opinion.movement, change: findings.opinion.change, serious: findings.caveats.filter(({ severity }) => severity === 'serious').map(({ code }) => code),
-  }
-}
-
-function describeDraft({ folder, findings }: Draft): string {
-  const place = relative(process.cwd(), folder)
-  return `${findings.brand}, ${findings.period.name}: draft in ${place.startsWith('..') ? folder : place === '' ? '.' : place}`
 }

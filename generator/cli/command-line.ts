@@ -55,10 +55,11 @@ function describe(streams: Streams, done: (code: ExitCode) => void): Command {
     .option('--seed <number>', 'seed of that draw; the same seed draws the same posts', wholeNumber, 1)
     .action(async (account: string, flags: CheckFlags) => { done(await runCheck(program, account, flags, createSpeaker(flags, streams))) })
 
-  quietly(tareline.command('build').argument('<account...>', 'folders with an account.yaml'))
+  quietly(tareline.command('build').argument('[account...]', 'folders with an account.yaml'))
     .description('fit the model and make the draft review of a period: review.html, review.pdf, findings.json, tables')
     .option('--period <period>', 'e.g. 2026-10, 2026-Q4, 2026-W44; default: the last whole one that the mentions cover')
     .option('--out <dir>', 'folder of the draft; default: ACCOUNT/drafts/PERIOD')
+    .option('--all <folder>', 'every account in a folder: several at once, one browser, a table at the end; drafts that are what would be built stay')
     .option('--no-pdf', 'leave out the PDF')
     .option('--watch', 'stay, and render a page beside the draft anew at each change of template, words, looks or notes')
     .option('--seed <number>', 'seed of the draws; the same seed gives the same review', wholeNumber, 1)

@@ -15,6 +15,11 @@ export interface Failure {
   readonly faults: readonly Fault[]
 }
 
+/** The exit code of several outcomes: the largest. */
+export function worstOf(outcomes: readonly { readonly exitCode: ExitCode }[]): ExitCode {
+  return outcomes.reduce<ExitCode>((worst, { exitCode }) => (exitCode > worst ? exitCode : worst), 0)
+}
+
 /** Sort an error by who must mend it. */
 export function failureOf(error: unknown): Failure {
   if (error instanceof InputFault) return { exitCode: 1, faults: error.faults }

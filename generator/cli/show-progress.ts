@@ -1,11 +1,14 @@
 import { Listr, type ListrTaskWrapper, type DefaultRenderer, type SimpleRenderer } from 'listr2'
 import { silent, type Progress, type Stage } from '../review/stages.ts'
+import { deferred } from './deferred.ts'
+import { plainText } from './plain-text.ts'
 import type { Speaker } from './speaker.ts'
 
-const titles: Readonly<Record<Stage, string>> = {
+/** What is being done, in words. */
+export const stageTitles: Readonly<Record<Stage, string>> = {
   intake: 'Reading the mentions', fit: 'Fitting the model', document: 'Composing the review', print: 'Printing the PDF',
 }
-const stages = Object.keys(titles) as Stage[]
+const stages = Object.keys(stageTitles) as Stage[]
 
 export interface ShownProgress {
   readonly progress: Progress
@@ -16,10 +19,12 @@ export interface ShownProgress {
 /** Live stages on a terminal, plain lines elsewhere, nothing with `--quiet`. */
 export function showProgress(speaker: Speaker, terminal: boolean, what: string): ShownProgress {
   if (speaker.quiet) return { progress: silent, end: () => Promise.resolve() }
-  return terminal ? showLive(what) : showLines(speaker, what)
+  return terminal ? showLive(plainText(what)) : { progress: progressLines(speaker, what), end: () => Promise.resolve() }
 }
 
-function showLines(speaker: Speaker, what: string): ShownProgress {
+/** A line for each step of the work, for a log. @param given - whose work it is */
+export function progressLines(speaker: Speaker, given: string): Progress {
+  const what = plainText(given)
   const inQuarters = (name: string) => {
     let told = 0
     return (share: number) => {
@@ -29,12 +34,9 @@ function showLines(speaker: Speaker, what: string): ShownProgress {
     }
   }
   return {
-    progress: {
-      stage: (stage) => { speaker.note(`${what}: ${titles[stage]}`) },
-      detail: (text) => { speaker.note(`${what}:   ${text}`) },
-      draws: inQuarters('draws'), forecasts: inQuarters('forecasts of the survey'),
-    },
-    end: () => Promise.resolve(),
+    stage: (stage) => { speaker.note(`${what}: ${stageTitles[stage]}`) },
+    detail: (text) => { speaker.note(`${what}:   ${text}`) },
+    draws: inQuarters('draws'), forecasts: inQuarters('forecasts of the survey'),
   }
 }
 
@@ -45,7 +47,7 @@ function showLive(what: string): ShownProgress {
   const marks = new Map(stages.map((stage) => [stage, deferred()]))
   let current: LiveTask | undefined
   const list = new Listr<unknown>(stages.map((stage) => ({
-    title: `${what}: ${titles[stage]}`,
+    title: `${what}: ${stageTitles[stage]}`,
     task: (_, task) => {
       current = task
       return marks.get(stage)?.promise
@@ -68,15 +70,4 @@ function showLive(what: string): ShownProgress {
       await shown
     },
   }
-}
-
-function deferred(): { readonly promise: Promise<void>; resolve: () => void; reject: (error: Error) => void } {
-  let resolve: () => void = () => undefined
-  let reject: (error: Error) => void = () => undefined
-  const promise = new Promise<void>((yes, no) => {
-    resolve = yes
-    reject = no
-  })
-  promise.catch(() => undefined)
-  return { promise, resolve, reject }
 }

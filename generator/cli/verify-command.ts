@@ -50,7 +50,7 @@ async function rebuildAll(program: Program, verified: Verified, { browser: asked
     const rebuilt: Rebuilt[] = []
     for (const seal of sound) {
       const { progress, end } = showProgress(speaker, false, seal.name)
-      rebuilt.push(await unlessStopped(stop, rebuildSeal(program, seal, { browser: browser === null ? null : Promise.resolve(browser), threads, progress })))
+      rebuilt.push(await unlessStopped(stop, rebuildSeal(program, seal, { archive: verified.archive, browser: browser === null ? null : Promise.resolve(browser), threads, progress })))
       await end()
     }
     return rebuilt

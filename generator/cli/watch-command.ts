@@ -5,6 +5,7 @@ import type { Account } from '../account/account.ts'
 import { readAccount } from '../account/read-account.ts'
 import { openBrowser } from '../print/open-browser.ts'
 import type { Program } from '../program/program.ts'
+import { withAccountLock } from '../review/account-lock.ts'
 import { buildReview, type Draft } from '../review/build-review.ts'
 import { watchReview } from '../watch/watch-review.ts'
 import type { BuildFlags } from './build-command.ts'
@@ -53,9 +54,9 @@ function builderOf(program: Program, { period, out, seed, threads }: BuildFlags,
     const shown = showProgress(speaker, process.stderr.isTTY, account.account)
     const browser = open === null ? null : open()
     try {
-      const draft = await buildReview(program, account, {
+      const draft = await withAccountLock(account.folder, 'build --watch', () => buildReview(program, account, {
         period, out: out === undefined ? undefined : resolve(out), seed, threads, browser: browser === null ? null : () => browser, progress: shown.progress, stop,
-      })
+      }))
       await shown.end()
       speaker.say(`${draft.findings.brand}, ${draft.findings.period.name}: draft in ${here(draft.folder)}${browser === null ? ', without its PDF; press Enter to make it' : ''}`)
       return draft

@@ -97,6 +97,7 @@ export function isOfKind(node: TypeNode, kind: string): boolean {
   if (isAnything(node)) return true
   if (kind === 'shift') return 'share_from' in properties && 'share_to' in properties
   if (kind === 'fieldwork') return 'field_start' in properties && 'field_end' in properties
+  if (kind === 'restatable') return 'previous' in properties && 'previous_sealed' in properties
   if (kind === 'spans') return 'best_lag' in properties && 'span_days' in properties
   return kind === 'event' ? 'label' in properties && 'date' in properties : kindOf(node) === kind
 }

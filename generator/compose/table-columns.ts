@@ -11,8 +11,9 @@ export function parseColumns(text: string): readonly PrintedColumn[] {
   })
 }
 
-/** The message that words a column's header: `column-mentions`; every interval has the same, save that of a change beside one of a level. */
+/** The message that words a column's header: `column-mentions`; every interval has the same, save that of a change beside one of a level and one that was told earlier. */
 export function columnHeader({ keys }: PrintedColumn): string {
   if (keys[0] === 'change_low') return 'column-change-interval'
+  if (keys[0] === 'told_low') return 'column-told-interval'
   return keys.length === 2 ? 'column-interval' : `column-${keys[0]}`
 }

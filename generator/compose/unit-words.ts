@@ -2,7 +2,7 @@ import type { Unit } from '../../model/findings/parts-schema.ts'
 import type { Kind } from '../words/forms.ts'
 
 const kinds: Readonly<Record<Exclude<Kind, 'any'> | 'object' | 'boolean', string>> = {
-  number: 'a number', string: 'a text', estimate: 'an interval', list: 'a list', level: 'an item with a label', shift: 'a share that moved', span: 'a stretch of days',
+  number: 'a number', string: 'a text', estimate: 'an interval', list: 'a list', level: 'an item with a label', shift: 'a share that moved', span: 'a stretch of days', restatable: 'opinion with the period before',
   fieldwork: 'a wave with its fieldwork', event: 'an event', spans: 'the outcome', object: 'a group of figures', boolean: 'true or false',
 }
 

@@ -45,12 +45,19 @@ export const archiveWordings = {
     unexpected: '--revise', expected: `a seal of ${details.period} to revise`, mend: 'Leave --revise out: this is the first seal of the period.',
   }),
   'archive-unsound': (_: object): Wording => ({
-    unexpected: 'archive that is not as it was sealed', expected: 'one that `tareline verify` finds sound', mend: 'Run `tareline verify`, mend what it names, then seal.',
+    unexpected: 'archive that is not as it was sealed', expected: 'one that `tareline verify` finds sound', mend: 'Run `tareline verify` and mend what it names: no figure is taken from such an archive, and nothing added to it.',
+  }),
+  'archive-moved-on': (details: { readonly last: string | null }): Wording => ({
+    unexpected: details.last === null ? 'draft that looks back at an archive that is gone' : `draft from before ${details.last} was sealed`,
+    expected: 'one that looks back at everything sealed', mend: 'Build the period again: what it says of earlier figures comes from the archive.',
   }),
   'archive-busy': (_: object): Wording => ({ unexpected: 'seal that was put there meanwhile', expected: 'one seal at a time', mend: 'Seal again.' }),
   'archive-unwritable': (details: { readonly reason: string }): Wording => ({
     unexpected: `refusal to write (${details.reason})`, expected: 'an archive that can be written, with room for a seal',
     mend: 'Give this user the right to write there, or make room: the archive is as it was.',
+  }),
+  'archive-page-unwritten': (details: { readonly reason: string }): Wording => ({
+    unexpected: `failure to write the page of the archive (${details.reason})`, expected: 'a page with the new seal in it', mend: 'The seal stands and needs nothing; the next seal writes the page anew.',
   }),
   'archive-empty': (_: object): Wording => ({ unexpected: 'absence of any seal', expected: 'an archive', mend: 'Seal a draft first.' }),
   'archive-entry-unknown': (_: object): Wording => ({ unexpected: 'entry', expected: 'seals only', mend: 'Move it elsewhere: the archive holds seals and nothing else.' }),

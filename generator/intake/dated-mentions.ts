@@ -31,11 +31,17 @@ interface Clocks {
 
 /** Read the clocks of the account's zone over the stretch of time that `scanned` covers. */
 export async function dateMentions(database: Database, account: Account): Promise<Dated> {
-  const [range, inScope] = await Promise.all([`scanned WHERE ${readable}`, 'scanned WHERE fate = 0'].map((which) => clocksOf(database, which)))
-  const zone = zoneSql(zoneClock(account.timeZone, Number(range!.low ?? 0) / second - margin, Number(range!.high ?? 0) / second + margin))
+  const range = await clocksOf(database, `scanned WHERE ${readable}`)
+  const zone = zoneSql(zoneClock(account.timeZone, Number(range.low ?? 0) / second - margin, Number(range.high ?? 0) / second + margin))
   const [ruled] = await database.rows<{ nonexistent: bigint; doubled: bigint }>(
     `SELECT count(*) FILTER (${zone.nonexistent}) AS nonexistent, count(*) FILTER (${zone.doubled}) AS doubled FROM scanned WHERE ${readable}`)
-  return { zone, span: await spanOf(database, zone, 'scanned WHERE fate = 0', inScope!), nonexistent: Number(ruled!.nonexistent), doubled: Number(ruled!.doubled) }
+  return { zone, span: await spanOfFate(database, zone, 0), nonexistent: Number(ruled!.nonexistent), doubled: Number(ruled!.doubled) }
+}
+
+/** Day numbers of the first and the last mention of a fate, duplicates included; null where there is none. */
+export async function spanOfFate(database: Database, zone: ZoneSql, fate: number): Promise<Span | null> {
+  const which = `scanned WHERE fate = ${fate}`
+  return spanOf(database, zone, which, await clocksOf(database, which))
 }
 
 /** Day numbers of the first and the last mention of `kept`, of which there is at least one. */

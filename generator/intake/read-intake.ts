@@ -1,9 +1,11 @@
 import { mkdtemp, rm } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
-import type { IntakeTables } from '../../model/intake/intake-tables.ts'
+import type { IntakeTables, Period } from '../../model/intake/intake-tables.ts'
+import type { CompetitorTables } from '../../model/competitors/competitor-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
+import { readCompetitors } from './competitors.ts'
 import { tablesOf, type Material } from './tables.ts'
 import { openDatabase, type Database } from './database.ts'
 import { dateMentions } from './dated-mentions.ts'
@@ -14,9 +16,10 @@ import { traitsOf, type MarginWish } from './margins.ts'
 import { settleMentions } from './read-mentions.ts'
 import { cellsWithin, daysOf, readReadyMade } from './ready-made.ts'
 import { countRejects, writeRejects } from './rejects.ts'
-import { coveredPeriod, namedPeriod } from './review-period.ts'
+import { coveredPeriod, namedPeriod, noWholePeriod } from './review-period.ts'
 import { createScanned, sampleFile, scanFile, type ScannedFile, type ScanPlace } from './scan-mentions.ts'
 import { joinSpellings, type Spellings } from './spellings.ts'
+import { joinUnread } from './unread-values.ts'
 
 export interface IntakeOptions {
   /** Name of the period under review; default: the last whole one that the mentions cover. */
@@ -31,6 +34,8 @@ export interface IntakeOptions {
   readonly labels?: boolean | undefined
   /** Count the authors of the period under review by these traits together, for a benchmark. */
   readonly margins?: readonly MarginWish[] | undefined
+  /** Read the competitors of the account as well. */
+  readonly competitors?: boolean | undefined
 }
 
 /**
@@ -45,12 +50,29 @@ export interface IntakeOptions {
  * @throws {InputFault} see the catalogues of faults
  */
 export async function readIntake(account: Account, options: IntakeOptions = {}): Promise<IntakeTables> {
+  return (await readIntakeAndCover(account, options)).tables
+}
+
+/** What was read, and what the mentions cover, whatever period was asked for. */
+export interface IntakeAndCover {
+  readonly tables: IntakeTables
+  /** The last whole period that the mentions cover; null where they cover none. */
+  readonly covered: Period | null
+  /** null where the account gives none, or nobody asks for them. */
+  readonly competitors: CompetitorTables | null
+}
+
+/** As `readIntake`. */
+export async function readIntakeAndCover(account: Account, options: IntakeOptions = {}): Promise<IntakeAndCover> {
   return withFiles(account, options, async (place, files) => {
     // Files are hashed while the database works.
     const hashing = hashAll(account, files.keys())
     try {
       const [material, hashes] = await Promise.all([gather(place, files, options), hashing])
-      return tablesOf(account, { ...material, inputs: material.inputs.map(({ path: file, rows }) => ({ path: file, sha256: hashes.get(file)!, rows })) })
+      const inputs = material.inputs.map(({ path: file, rows }) => ({ path: file, sha256: hashes.get(file)!, rows }))
+      const tables = tablesOf(account, { ...material, inputs })
+      const after = { ...material, zone: material.dated.zone, progress: options.progress ?? ((): void => undefined) }
+      return { tables, covered: material.covered, competitors: options.competitors === true ? await readCompetitors(place.database, account, tables, after) : null }
     } finally {
       await hashing.catch(() => undefined)
     }
@@ -115,20 +137,31 @@ export async function gather(place: IntakePlace, files: ReadonlyMap<string, Inpu
   const rejected = await countRejects(database, scanned)
   if (options.rejects !== undefined) await writeRejects(database, scanned, options.rejects)
   const dated = await dateMentions(database, account)
-  const spans = [dated.span, daysOf(ready.parts, account.grid)].filter((span) => span !== null)
-  const review = asked ?? (spans.length === 0 ? null
-    : coveredPeriod(account, Math.min(...spans.map((span) => span.first)), Math.max(...spans.map((span) => span.last))))
+  const span = joined([dated.span, daysOf(ready.parts, account.grid)])
+  const covered = span === null ? null : coveredPeriod(account.reporting, span.first, span.last)
+  if (asked === null && span !== null && covered === null) throw noWholePeriod(account.reporting, span.first, span.last)
+  const review = asked ?? covered
   const settled = review === null ? null : await settleMentions(database, widened, dated,
-    { review, hindsightFrom, naming: { spellings, levelOf: names.levelOf, traits }, labels, margins, progress })
+    { fate: 0, review, hindsightFrom, naming: { spellings, levelOf: names.levelOf, traits }, labels, margins, progress })
   return {
-    review, scanned, rejected, dated, settled, unmapped: names.unmapped(), labels: counted, margins,
+    covered, review, scanned, spellings, received: receivedOf(scanned) + ready.parts.length, unread: joinUnread(scanned.map((file) => file.unread)), rejected, dated, settled, unmapped: names.unmapped(), labels: counted, margins,
     ready: review === null ? [] : cellsWithin(ready.parts, account.grid, review),
     readyAfter: review === null ? 0 : ready.parts.length - cellsWithin(ready.parts, account.grid, review).length,
     inputs: [...files.values()].map(({ path: name }) => ({ path: name, rows: ready.rows.get(name) ?? rowsOf(scanned, name) })),
   }
 }
 
-type Gathered = Omit<Material, 'inputs'> & { readonly inputs: readonly { readonly path: string; readonly rows: number }[] }
+type Gathered = Omit<Material, 'inputs'> & Scan & { readonly covered: Period | null; readonly inputs: readonly { readonly path: string; readonly rows: number }[] }
+
+interface DaySpan {
+  readonly first: number
+  readonly last: number
+}
+
+function joined(spans: readonly (DaySpan | null)[]): DaySpan | null {
+  const some = spans.filter((span) => span !== null)
+  return some.length === 0 ? null : { first: Math.min(...some.map(({ first }) => first)), last: Math.max(...some.map(({ last }) => last)) }
+}
 
 interface Scan {
   readonly scanned: readonly ScannedFile[]
@@ -153,5 +186,9 @@ async function scanAll(place: ScanPlace, files: ReadonlyMap<string, InputFile>, 
 }
 
 function rowsOf(scanned: readonly ScannedFile[], name: string): number {
-  return scanned.filter(({ file }) => file.path === name).reduce((total, { sound, malformed }) => total + sound + malformed.length, 0)
+  return receivedOf(scanned.filter(({ file }) => file.path === name))
+}
+
+function receivedOf(scanned: readonly ScannedFile[]): number {
+  return scanned.reduce((total, { sound, malformed }) => total + sound + malformed.length, 0)
 }

@@ -17,7 +17,7 @@ import type { MarginWish } from './margins.ts'
 import { viewMentions, type MentionNames, type Naming } from './mention-table.ts'
 import { findOpenings } from './openings.ts'
 import { classifyPosters } from './poster-classes.ts'
-import { filledColumns, lastReject, otherBrandReasons } from './scan-mentions.ts'
+import { filledColumns, lastReject, otherBrandReason } from './scan-mentions.ts'
 
 /** Everything that is grouped from mentions: no row of it stands for a person. */
 export interface GroupedMentions {
@@ -46,6 +46,8 @@ export interface SettledMentions {
 
 /** What is to be settled and counted. */
 export interface SettleOptions {
+  /** Of the rows that are settled: 0 is the brand itself, see `competitorFate`. */
+  readonly fate: number
   readonly review: Period
   /** Day number of the first day as of which a forecast is to be made; null where none is. */
   readonly hindsightFrom: number | null
@@ -62,14 +64,14 @@ export interface SettleOptions {
  * @param account - its factors followed by the columns that only margins ask for, which are the traits of `naming`
  */
 export async function settleMentions(
-  database: Database, account: Account, { zone, span }: Dated, { review, hindsightFrom, naming, labels, margins, progress }: SettleOptions,
+  database: Database, account: Account, { zone, span }: Dated, { fate, review, hindsightFrom, naming, labels, margins, progress }: SettleOptions,
 ): Promise<SettledMentions> {
   const filled = filledColumns(account)
   const end = dayNumber(review.end)
-  const eligible = `fate = 0 AND ${zone.until(end)}`
+  const eligible = `fate = ${fate} AND ${zone.until(end)}`
   progress('Looking for duplicates')
   const duplicates = await findDuplicates(database, zone, eligible, filled)
-  const outOfScope = await countOutOfScope(database, `NOT (${zone.until(end)})`)
+  const outOfScope = await countOutOfScope(database, fate, `NOT (${zone.until(end)})`)
   if (span === null || span.first > end) return { duplicates, outOfScope, grouped: null }
   progress('Naming and classing mentions')
   const threaded = filled.thread ? ['thread', ...(filled.place ? ['place'] : [])] : []
@@ -92,8 +94,15 @@ export async function settleMentions(
   return { duplicates, outOfScope, grouped }
 }
 
-async function countOutOfScope(database: Database, after: string): Promise<Readonly<Record<string, number>>> {
-  const rows = await database.rows<{ fate: number; rows: bigint }>(
-    `SELECT fate, count(*) AS rows FROM scanned WHERE fate > ${lastReject} OR (fate = 0 AND ${after}) GROUP BY fate ORDER BY fate`)
-  return Object.fromEntries(rows.map(({ fate, rows: count }) => [fate === 0 ? 'after-period' : otherBrandReasons[fate - lastReject - 1]!, Number(count)]))
+/** Rows that are not modelled by reason: of the brand itself, those of other brands among them; of a competitor, its own alone. */
+async function countOutOfScope(database: Database, fate: number, after: string): Promise<Readonly<Record<string, number>>> {
+  const others = fate === 0 ? `fate > ${lastReject} OR ` : ''
+  const rows = await database.rows<{ other: number | null; rows: bigint }>(
+    `SELECT CASE WHEN fate <> ${fate} THEN fate END AS other, count(*) AS rows FROM scanned WHERE ${others}(fate = ${fate} AND ${after}) GROUP BY other ORDER BY other`)
+  const counts: Record<string, number> = {}
+  for (const { other, rows: count } of rows) {
+    const reason = other === null ? 'after-period' : otherBrandReason(other)
+    counts[reason] = (counts[reason] ?? 0) + Number(count)
+  }
+  return counts
 }

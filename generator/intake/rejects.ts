@@ -1,5 +1,6 @@
 import { mkdir, open } from 'node:fs/promises'
 import path from 'node:path'
+import { writeRefusal } from '../faults/write-refusal.ts'
 import type { Database } from './database.ts'
 import { lineNumbers } from './record-lines.ts'
 import { lastReject, rejectReasons, type ScannedFile } from './scan-mentions.ts'
@@ -13,8 +14,16 @@ export async function countRejects(database: Database, files: readonly ScannedFi
   return Object.fromEntries(counts)
 }
 
-/** Write `mentions.csv` into a folder: file, line and reason of every rejected row, and nothing of what it said. */
+/**
+ * Write `mentions.csv` into a folder: file, line and reason of every rejected row, and nothing of what it said.
+ *
+ * @throws {MachineFault} `rejects-unwritable`
+ */
 export async function writeRejects(database: Database, files: readonly ScannedFile[], folder: string): Promise<void> {
+  await fillRejects(database, files, folder).catch((error: unknown) => { throw writeRefusal('rejects-unwritable', folder, error) })
+}
+
+async function fillRejects(database: Database, files: readonly ScannedFile[], folder: string): Promise<void> {
   await mkdir(folder, { recursive: true })
   const output = await open(path.join(folder, 'mentions.csv'), 'w')
   try {

@@ -22,16 +22,17 @@ function periodMeant(reporting: Reporting, name: string): string | null {
 }
 
 /**
- * The last whole period that the mentions cover: the last whose last day is not after the last mention's.
- * The clock has no say.
+ * The last whole period that mentions cover: the last whose last day is not after the last mention's. The clock has no say.
  *
  * @param first, last - day numbers of the first and the last mention in scope
- * @throws {InputFault} `no-whole-period`
+ * @returns null where they cover none
  */
-export function coveredPeriod(account: Account, first: number, last: number): Period {
-  const period = lastWholePeriod(account.reporting, last)
-  if (dayNumber(period.end) < first) {
-    throw new InputFault([faultOf('no-whole-period', 'mentions', { first: isoDate(first), last: isoDate(last), kind: account.reporting })])
-  }
-  return period
+export function coveredPeriod(reporting: Reporting, first: number, last: number): Period | null {
+  const period = lastWholePeriod(reporting, last)
+  return dayNumber(period.end) < first ? null : period
+}
+
+/** The fault of mentions that cover no period. */
+export function noWholePeriod(reporting: Reporting, first: number, last: number): InputFault {
+  return new InputFault([faultOf('no-whole-period', 'mentions', { first: isoDate(first), last: isoDate(last), kind: reporting })])
 }

@@ -13,11 +13,17 @@ import { timeSql, timeText } from './time-sql.ts'
 /** Why a row cannot be read, in the order in which reasons are looked for; `scanned.fate` is 1 for the first. */
 export const rejectReasons = ['row-malformed', 'time-unreadable', 'score-unreadable', 'score-outside-range', 'venue-missing'] as const
 
-/** Why a readable row is not about the brand; `scanned.fate` goes on from the reasons of rejection. */
-export const otherBrandReasons = ['other-brand', 'brand-missing'] as const
+/** Why a readable row is not about the brand; `scanned.fate` goes on from the reasons of rejection. Fates after these are competitors, other brands too. */
+const otherBrandReasons = ['other-brand', 'brand-missing'] as const
 
 /** Fates up to this one are rejections; 0 is none. */
 export const lastReject = rejectReasons.length
+
+/** The fate of rows of the N-th competitor of the account. */
+export const competitorFate = (competitor: number): number => lastReject + otherBrandReasons.length + 1 + competitor
+
+/** Why a row of a fate is out of scope. */
+export const otherBrandReason = (fate: number): (typeof otherBrandReasons)[number] => otherBrandReasons[fate - lastReject - 1] ?? 'other-brand'
 
 /** What the scan of one file found. */
 export interface ScannedFile {
@@ -164,8 +170,9 @@ function fieldsSql(account: Account, source: MentionSource, relation: Relation):
     return theirs === undefined ? 'NULL::VARCHAR' : relation.column(theirs)
   }
   const brand = `lower(trim(${field('brand')}))`
+  const competitors = account.competitors.map((name, index) => `WHEN ${literal(name.toLowerCase())} THEN ${competitorFate(index)} `).join('')
   const other = source.columns.brand === undefined ? '0'
-    : `CASE WHEN ${brand} = ${literal(account.brand.toLowerCase())} THEN 0 WHEN ${brand} <> '' THEN ${lastReject + 1} ELSE ${lastReject + 2} END`
+    : `CASE ${brand} WHEN ${literal(account.brand.toLowerCase())} THEN 0 ${competitors}ELSE CASE WHEN ${brand} <> '' THEN ${lastReject + 1} ELSE ${lastReject + 2} END END`
   return [
     `${timeText(field('posted_at'))} AS posted`, `${field('score')} AS scored`, `${relation.sound} AS sound`, `${other} AS other`, `${field('id')} AS id`, `${field('author')} AS handle`,
     `${field('thread')} AS thread`, `${field('thread_position')} AS place`,

@@ -1,7 +1,6 @@
 import type { Accounting, Factor, IntakeTables, NoLabels, Period, SegmentTable } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { dayNumber } from '../calendar/days.ts'
-import { joinUnread } from './unread-values.ts'
 import { timeline } from '../calendar/timeline.ts'
 import { faultOf } from '../faults/catalogue.ts'
 import { InputFault } from '../faults/fault.ts'
@@ -16,13 +15,14 @@ import { factorOf, mostLevels } from './level-names.ts'
 import type { MarginWish } from './margins.ts'
 import { daysOf } from './ready-made.ts'
 import type { SettledMentions } from './read-mentions.ts'
-import type { ScannedFile } from './scan-mentions.ts'
 
 /** What was gathered from all sources, for the tables to be put together from. */
 export interface Material {
   /** null where no mention is in scope and no period was asked for. */
   readonly review: Period | null
-  readonly scanned: readonly ScannedFile[]
+  /** Rows of all sources, later than the period too; and what of them could not be read, where that is much. */
+  readonly received: number
+  readonly unread: Accounting['unread']
   /** Rows of mentions by reason. */
   readonly rejected: Readonly<Record<string, number>>
   readonly dated: Dated
@@ -96,9 +96,8 @@ function withoutAuthors(margins: readonly MarginWish[]): SegmentTable {
 }
 
 /** Every row of every source, in one of four places. @throws if one is lost: a fault of the program */
-function accountingOf({ scanned, rejected, dated, settled, unmapped, ready, readyAfter, inputs }: Material): Omit<Accounting, 'withAuthor' | 'readyMade'> {
+function accountingOf({ received, unread, rejected, dated, settled, unmapped, ready, readyAfter, inputs }: Material): Omit<Accounting, 'withAuthor' | 'readyMade'> {
   const total = (counts: Readonly<Record<string, number>>): number => Object.values(counts).reduce((sum, rows) => sum + rows, 0)
-  const received = scanned.reduce((sum, file) => sum + file.sound + file.malformed.length, 0) + ready.length + readyAfter
   const duplicates = settled?.duplicates ?? { sameId: 0, repost: 0 }
   const outOfScope = { ...settled?.outOfScope, 'after-period': (settled?.outOfScope['after-period'] ?? 0) + readyAfter }
   const modelled = (settled?.grouped?.parts ?? []).reduce((sum, part) => sum + part.mentions, 0) + ready.length
@@ -110,7 +109,7 @@ function accountingOf({ scanned, rejected, dated, settled, unmapped, ready, read
     ...rejected, ...outOfScope, 'same-id': duplicates.sameId, 'repost': duplicates.repost,
     'time-nonexistent': dated.nonexistent, 'time-doubled': dated.doubled,
   }
-  return { received, ...counts, unread: joinUnread(scanned.map((file) => file.unread)), reasons: Object.fromEntries(Object.entries(reasons).filter(([, rows]) => rows > 0)), unmapped, inputs }
+  return { received, ...counts, unread, reasons: Object.fromEntries(Object.entries(reasons).filter(([, rows]) => rows > 0)), unmapped, inputs }
 }
 
 function checkLevels(factors: readonly Factor[]): void {

@@ -8,7 +8,7 @@ import type { Table } from '../tables/table.ts'
 import type { Theme } from '../theme/theme.ts'
 import type { Words } from '../words/words.ts'
 import { drawChart } from './charts/draw-chart.ts'
-import type { ChartSpec } from './charts/chart-spec.ts'
+import { type ChartSpec, layoutOf } from './charts/chart-spec.ts'
 import { drawEach, type Drawings } from './drawings.ts'
 import { fontFaces } from './embedded-fonts.ts'
 import { frontOf, type Imprint } from './imprint.ts'
@@ -26,6 +26,8 @@ export interface Rendering {
   readonly drawings?: Drawings
   /** `wide` leaves out the pictures for a phone, and shows those for a page there too; default: both. */
   readonly pictures?: 'both' | 'wide'
+  /** The message of the first link, which leads past what stands before the document; default: to a review. */
+  readonly skip?: string
 }
 
 /**
@@ -41,7 +43,8 @@ export interface Rendering {
 export async function render(document: Document, rendering: Rendering): Promise<string> {
   const { tree, places } = prepareTree(document.tree, rendering.theme)
   const drawings = new Map(await inTurn(places, async (place) => [place.id, await bothSizes(place, rendering)] as const))
-  const body = toHtml(tree).replace(/ data-drawing="([^"]+)">/g, (_whole, id: string) => `>${drawings.get(id) ?? ''}`)
+  // from the tag's beginning: a text may say the rest of it
+  const body = toHtml(tree).replace(/<div class="drawing" data-drawing="([^"]+)">/g, (_whole, id: string) => `<div class="drawing">${drawings.get(id) ?? ''}`)
   return page(document, body, rendering)
 }
 
@@ -54,7 +57,7 @@ async function bothSizes({ chart, id, alt }: DrawingPlace, { tables, charts, wor
   if (spec === undefined) throw new Error(`Unexpected chart "${chart}", expected one of ${[...charts.keys()].join(', ')}`)
   const wide = await drawChart({ ...spec, name: id }, tables, words, theme, 'wide', drawings)
   const named = (look: string) => wide.replace('<svg ', () => `<svg id="drawing-${id}" ${look}role="img" aria-label="${attributeText(alt)}" `)
-  if (pictures === 'wide') return named('')
+  if (pictures === 'wide' || layoutOf(spec).width !== undefined) return named('')
   const narrow = await drawChart({ ...spec, name: id }, tables, words, theme, 'narrow', drawings)
   return named('class="for-wide" ')
     + narrow.replace('<svg ', () => `<svg class="for-narrow" role="img" aria-labelledby="drawing-${id}" `)
@@ -71,7 +74,7 @@ async function inTurn<T, R>(items: readonly T[], work: (item: T) => Promise<R>):
   return results
 }
 
-function page({ title, lang }: Document, body: string, { words, theme, imprint }: Rendering): string {
+function page({ title, lang }: Document, body: string, { words, theme, imprint, skip: past = 'skip-to-review' }: Rendering): string {
   const front = frontOf(theme, imprint, words).map((element) => `${toHtml({ type: 'root', children: [element] })}\n`).join('')
   const boxes = pageBoxes(theme, words, title, imprint)
   const style = [fontFaces(title + JSON.stringify([imprint, theme.running]) + front + body, theme), theme.css, boxes].join('\n')
@@ -86,7 +89,7 @@ function page({ title, lang }: Document, body: string, { words, theme, imprint }
     h('meta', { name: 'referrer', content: 'no-referrer' }),
     h('title', title),
   ] })
-  const skip = toHtml({ type: 'root', children: [h('a.skip', { href: '#review' }, words.say('skip-to-review'))] })
+  const skip = toHtml({ type: 'root', children: [h('a.skip', { href: '#review' }, words.say(past))] })
   const [opening] = toHtml({ type: 'root', children: [h('html', { lang })] }).split('</html>')
   return `<!doctype html>\n${opening}<head>${head}<style>${style}</style></head>\n<body>${skip}\n<main id="review" tabindex="-1">\n${front}${body}\n</main></body></html>\n`
 }

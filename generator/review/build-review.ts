@@ -1,13 +1,15 @@
 import { dirname, join } from 'node:path'
 import type { Browser } from 'puppeteer'
 import type { Findings } from '../../model/findings/schema.ts'
+import type { Period } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
 import { flattenIntake } from '../archive/flatten-intake.ts'
 import { madeHere, type KeptFile } from '../archive/manifest.ts'
 import { openCache } from '../cache/cache.ts'
 import { firstForecast, marginsAsked } from '../inputs/place-inputs.ts'
 import { readSmallInputs } from '../inputs/read-small-inputs.ts'
-import { readIntake } from '../intake/read-intake.ts'
+import { readIntakeAndCover } from '../intake/read-intake.ts'
+import { soundArchive } from '../past/read-past.ts'
 import type { Program } from '../program/program.ts'
 import { checkHouse, readHouse, type House } from './house.ts'
 import { makeReview, type ReviewMaterial } from './make-review.ts'
@@ -67,25 +69,26 @@ async function makeContents(
 ): Promise<DraftContents> {
   const { seed, threads, progress } = options
   progress.stage('intake')
-  const material = await readMaterial(account, rejects, options)
+  const { material, covered } = await readMaterial(account, rejects, options)
   const review = await makeReview(program, account, house, material, { seed, threads, cache: openCache(join(account.folder, 'cache'), program.model), browser, progress })
   const { period, diagnostics } = review.findings
   return {
-    ...review, intake: flattenIntake(material.tables),
+    ...review, intake: flattenIntake(material.tables), competitors: material.competitors,
     record: {
-      schema: 'tareline-record/1', account: account.account, period: period.name,
+      schema: 'tareline-record/1', account: account.account, period: period.name, default_period: period.name === covered?.name,
       program: { ...madeHere(program), browser: browser === null ? null : await (await browser).version() },
-      seed, prepared_by: account.preparedBy, reviewed_by: account.reviewedBy, passed: diagnostics.passed,
+      seed, prepared_by: account.preparedBy, reviewed_by: account.reviewedBy, past: material.sealed.end, passed: diagnostics.passed,
       inputs: await recordInputs(account, house, period.name, ofHouse, material),
     },
   }
 }
 
-async function readMaterial(account: Account, rejects: string, { period, threads, progress }: BuildOptions): Promise<ReviewMaterial> {
+async function readMaterial(account: Account, rejects: string, { period, threads, progress }: BuildOptions): Promise<{ readonly material: ReviewMaterial; readonly covered: Period | null }> {
+  const sealed = await soundArchive(account.folder)
   const inputs = await readSmallInputs(account)
-  const tables = await readIntake(account, {
+  const { tables, competitors, covered } = await readIntakeAndCover(account, {
     period, threads, rejects, hindsightFrom: firstForecast(inputs),
-    labels: inputs.audit !== null, margins: marginsAsked(inputs), progress: progress.detail,
+    labels: inputs.audit !== null, margins: marginsAsked(inputs), competitors: true, progress: progress.detail,
   })
-  return { tables, inputs }
+  return { material: { tables, competitors, inputs, sealed }, covered }
 }

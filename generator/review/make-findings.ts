@@ -1,7 +1,9 @@
 import { availableParallelism } from 'node:os'
 import { analyse, type Analysis, type AnalysisSpec } from '../../model/analyse.ts'
+import type { CompetitorTables } from '../../model/competitors/competitor-tables.ts'
 import type { FitProblem } from '../../model/fit/problem.ts'
 import { findingsSchema, type Findings } from '../../model/findings/schema.ts'
+import type { Past } from '../../model/past/past.ts'
 import type { SmallInputs } from '../../model/inputs/small-inputs.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 import type { Refit } from '../../model/survey/rolling-forecast.ts'
@@ -19,6 +21,10 @@ import type { Progress } from './stages.ts'
 export interface ReviewInputs {
   readonly tables: IntakeTables
   readonly small: SmallInputs
+  /** What was sealed before; null before the first seal. */
+  readonly past: Past | null
+  /** null where the account gives none. */
+  readonly competitors: CompetitorTables | null
   /** The files that the small inputs were read from. */
   readonly files: readonly Findings['inputs'][number][]
 }
@@ -34,7 +40,7 @@ export interface FitOptions {
 
 /** Tables and inputs ──model──▶ analysis ──worded──▶ findings, checked against their schema. */
 export async function makeFindings(account: Account, inputs: ReviewInputs, words: Words, options: FitOptions): Promise<Findings> {
-  const spec = specOf(account, options.seed)
+  const spec = specOf(account, options.seed, inputs)
   const worded = (analysis: Analysis): Findings => findingsSchema.parse({
     ...wordFindings(analysis, words),
     account: account.account, brand: account.brand, locale: account.locale,
@@ -42,13 +48,18 @@ export async function makeFindings(account: Account, inputs: ReviewInputs, words
     program: { version: options.version, seed: options.seed },
   })
   // whatever template, words and theme say, the figures are the same
-  const analysis = await options.cache.remember('analyses', [inputs, spec], () => compute(inputs, spec, options), (written) => {
+  const analysis = await options.cache.remember('analyses', [inputs.tables, inputs.small, inputs.files, keyOf(spec)], () => compute(inputs, spec, options), (written) => {
     const restored = analysisOf(written)
     // one that can't be worded is none: what this throws leads to a fresh one
     if (restored !== null) worded(restored)
     return restored
   })
   return worded(analysis)
+}
+
+/** A sealed review is known by its manifest, which holds the hash of all that is read of it. */
+function keyOf({ past, ...spec }: AnalysisSpec) {
+  return [spec, past === null ? null : [past.definition, past.program, past.reviews.map(({ manifest }) => manifest)]]
 }
 
 const analysisShape = findingsSchema.omit({ account: true, brand: true, locale: true, inputs: true, program: true, caveats: true, advice: true }).extend({
@@ -61,12 +72,12 @@ function analysisOf(written: unknown): Analysis | null {
   return analysisShape.safeParse(written).data ?? null
 }
 
-function specOf(account: Account, seed: number): AnalysisSpec {
+function specOf(account: Account, seed: number, { past, competitors }: Pick<ReviewInputs, 'past' | 'competitors'>): AnalysisSpec {
   return {
-    interval: account.interval, seed,
+    interval: account.interval, seed, past, competitors,
     targetMix: Object.fromEntries(account.targetMix.map(({ factor, shares }) => [factor, Object.fromEntries(shares.map(({ level, share }) => [level, share]))])),
     facts: {
-      givenNotUsed: account.givenNotUsed, smallestGroup: account.smallestGroup, posterBounds: account.posters, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
+      smallestGroup: account.smallestGroup, posterBounds: account.posters, preparedBy: account.preparedBy, reviewedBy: account.reviewedBy,
       timeZone: account.timeZone, reporting: account.reporting, labelScores: labelScoresOf(account),
     },
   }
@@ -82,8 +93,11 @@ function labelScoresOf({ mentions }: Account): readonly number[] | null {
 
 async function compute({ tables, small }: ReviewInputs, spec: AnalysisSpec, { threads = Math.min(8, availableParallelism()), cache, progress }: FitOptions): Promise<Analysis> {
   const fits: FitThreads[] = []
+  const closing: Promise<void>[] = []
   const refits = startRefitThreads(threads)
   const executorFor = (problem: FitProblem) => {
+    // one fit after another: the threads of the one before have done their work
+    closing.push(...fits.splice(0).map((before) => before.close()))
     const started = startFitThreads(problem, threads)
     fits.push(started)
     return started.executor
@@ -92,7 +106,7 @@ async function compute({ tables, small }: ReviewInputs, spec: AnalysisSpec, { th
   try {
     return await analyse(tables, small, spec, { executorFor, refit }, { draws: progress.draws, forecasts: progress.forecasts })
   } finally {
-    await Promise.all([...fits, refits].map((started) => started.close()))
+    await Promise.all([...closing, ...[...fits, refits].map((started) => started.close())])
   }
 }
 

@@ -1,4 +1,5 @@
 import type { Browser } from 'puppeteer'
+import type { CompetitorTables } from '../../model/competitors/competitor-tables.ts'
 import type { Findings } from '../../model/findings/schema.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 import type { Account } from '../account/account.ts'
@@ -6,6 +7,7 @@ import type { Cache } from '../cache/cache.ts'
 import { compose } from '../compose/compose.ts'
 import { placeInputs } from '../inputs/place-inputs.ts'
 import type { RawInputs } from '../inputs/raw-inputs.ts'
+import { readPast, type SealedBefore } from '../past/read-past.ts'
 import { print } from '../print/print.ts'
 import type { Program } from '../program/program.ts'
 import { imprintOf } from '../render/imprint.ts'
@@ -19,7 +21,11 @@ import type { Progress } from './stages.ts'
 /** What was read of an account, or out of an archive: no person is in it. */
 export interface ReviewMaterial {
   readonly tables: IntakeTables
+  /** null where the account gives none. */
+  readonly competitors: CompetitorTables | null
   readonly inputs: RawInputs
+  /** What was sealed before, to look back at. */
+  readonly sealed: SealedBefore
 }
 
 export interface MakeOptions {
@@ -49,12 +55,12 @@ export interface MadeReview {
  *
  * @throws {InputFault} `period-empty`, `base-empty`
  */
-export async function makeReview(program: Program, account: Account, house: House, { tables, inputs }: ReviewMaterial, options: MakeOptions): Promise<MadeReview> {
+export async function makeReview(program: Program, account: Account, house: House, { tables, competitors, inputs, sealed }: ReviewMaterial, options: MakeOptions): Promise<MadeReview> {
   const { seed, threads, cache, browser, progress } = options
   requireSteps(account, tables)
   progress.stage('fit')
   const small = placeInputs(inputs, account, tables.timeline)
-  const findings = await makeFindings(account, { tables, small, files: inputs.files }, house.words, { seed, version: program.version, threads, cache, progress })
+  const findings = await makeFindings(account, { tables, competitors, small, past: await readPast(program, account, tables, sealed), files: inputs.files }, house.words, { seed, version: program.version, threads, cache, progress })
   progress.stage('document')
   const figures = tablesOf(findings)
   const document = compose({ template: house.template, findings, tables: figures, charts: [...house.charts.keys()], words: house.words })

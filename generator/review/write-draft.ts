@@ -1,5 +1,8 @@
-import { chmod, mkdir, mkdtemp, readdir, rename, rm, rmdir, stat, writeFile } from 'node:fs/promises'
+import { chmod, mkdir, mkdtemp, readdir, rm, rmdir, stat } from 'node:fs/promises'
 import { basename, join } from 'node:path'
+import type { CompetitorTables } from '../../model/competitors/competitor-tables.ts'
+import { writeCompetitors } from '../archive/competitor-files.ts'
+import { theDisk, type Disk } from '../archive/disk.ts'
 import type { FlatIntake } from '../archive/flatten-intake.ts'
 import { writeIntake } from '../archive/intake-files.ts'
 import { fingerprints, recordName, type BuildRecord } from '../archive/record.ts'
@@ -15,6 +18,7 @@ const ours = new Set(['review.html', 'review.pdf', 'findings.json', 'tables', 'r
 
 export interface DraftContents extends MadeReview {
   readonly intake: FlatIntake
+  readonly competitors: CompetitorTables | null
   /** All but the draft's own files. */
   readonly record: Omit<BuildRecord, 'files'>
 }
@@ -33,9 +37,10 @@ export interface UnfinishedDraft {
  * Begin a draft; unfinished ones that a killed build left behind more than a day ago go.
  *
  * @param parent - the folder in which the draft's own will stand; made where it is absent
+ * @param disk - what the draft is written through, once it is finished
  * @throws {MachineFault} `draft-unwritable`, then and when the draft is finished
  */
-export async function openDraft(parent: string): Promise<UnfinishedDraft> {
+export async function openDraft(parent: string, disk: Disk = theDisk): Promise<UnfinishedDraft> {
   const made = await writing(parent, () => mkdir(parent, { recursive: true }))
   const unfinished = await writing(parent, () => mkdtemp(join(parent, '.unfinished-')))
   await sweep(parent)
@@ -45,14 +50,15 @@ export async function openDraft(parent: string): Promise<UnfinishedDraft> {
     finish: async (folder, contents) => {
       await requireDraft(folder)
       await writing(parent, async () => {
-        await fill(unfinished, contents)
+        await fill(unfinished, contents, disk)
         await chmod(unfinished, 0o755)
-        await replace(folder, unfinished)
+        await replace(folder, unfinished, disk)
       })
     },
     abandon: async () => {
       // what could not be written may not be removable either; why it was abandoned is told, not that
       await rm(unfinished, { recursive: true, force: true }).catch(() => undefined)
+      await restoreDrafts(parent)
       if (made !== undefined) await rmdir(made).catch(() => undefined)
     },
   }
@@ -95,20 +101,22 @@ export async function requireDraft(folder: string): Promise<void> {
 }
 
 /** The record comes last: it says what everything else is. */
-async function fill(folder: string, { data, html, pdf, intake, record }: DraftContents): Promise<void> {
-  await mkdir(join(folder, 'tables'))
-  await writeFile(join(folder, 'review.html'), html)
-  if (pdf !== null) await writeFile(join(folder, 'review.pdf'), pdf)
-  for (const { path, bytes } of data) await writeFile(join(folder, path), bytes)
+async function fill(folder: string, { data, html, pdf, intake, competitors, record }: DraftContents, disk: Disk): Promise<void> {
+  await disk.makeFolder(join(folder, 'tables'))
+  await disk.write(join(folder, 'review.html'), html)
+  if (pdf !== null) await disk.write(join(folder, 'review.pdf'), pdf)
+  for (const { path, bytes } of data) await disk.write(join(folder, path), bytes)
   await writeIntake(join(folder, 'intake'), intake)
+  await writeCompetitors(join(folder, 'intake'), competitors)
   const whole: BuildRecord = { ...record, files: [...await fingerprints(folder, await filesOf(folder))] }
-  await writeFile(join(folder, recordName), `${JSON.stringify(whole, null, 2)}\n`)
+  await disk.write(join(folder, recordName), `${JSON.stringify(whole, null, 2)}\n`)
 }
 
 /** The old folder steps aside before the new one takes its name, so that at every moment one of the two is whole; between the two, `restoreDrafts` knows where it is. */
-async function replace(folder: string, unfinished: string): Promise<void> {
+async function replace(folder: string, unfinished: string, disk: Disk): Promise<void> {
   const aside = asideName(unfinished, basename(folder))
-  const before = await rename(folder, aside).then(() => true, () => false)
-  await rename(unfinished, folder)
-  if (before) await rm(aside, { recursive: true, force: true })
+  const before = await stat(folder).then(() => true, () => false)
+  if (before) await disk.rename(folder, aside)
+  await disk.rename(unfinished, folder)
+  if (before) await disk.remove(aside)
 }

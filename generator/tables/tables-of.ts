@@ -5,8 +5,10 @@ import { concentrationTable, mixTable, offsetsTable } from './speaking-tables.ts
 import { departuresTable, eventsTable, lagWeightsTable, nextWaveTable, outcomeLagsTable, surveyForecastsTable, surveyRivalsTable } from './survey-forecast-tables.ts'
 import { agreementTable, surveyCandidatesTable, surveyLagsTable, surveyWavesTable, trackerTable } from './survey-tables.ts'
 import { adviceTable, hearingTable } from './advice-tables.ts'
+import { competitorSeriesTable, competitorsTable, competitorVenuesTable, mentionSharesTable } from './competitor-tables.ts'
 import { benchmarkMarginsTable, benchmarkTable, coderTable, importanceTable, tippingTable } from './customer-tables.ts'
 import { inOrder, levelOrder } from './level-order.ts'
+import { breaksTable, followUpTable, revisionsTable } from './past-tables.ts'
 import { pullTable, spreadSeriesTable, spreadTable, stayingTable } from './staying-tables.ts'
 import type { Table } from './table.ts'
 import { venueSeriesTable, venuesBeforeTable, venuesTable } from './venue-tables.ts'
@@ -17,6 +19,8 @@ const makers = [
   trackerTable, surveyWavesTable, agreementTable, surveyLagsTable, surveyCandidatesTable, surveyForecastsTable, nextWaveTable, surveyRivalsTable, lagWeightsTable, departuresTable,
   outcomeLagsTable, eventsTable,
   stayingTable, spreadTable, spreadSeriesTable, pullTable, benchmarkTable, benchmarkMarginsTable, tippingTable, coderTable, importanceTable, hearingTable, adviceTable,
+  competitorsTable, competitorSeriesTable, mentionSharesTable, competitorVenuesTable,
+  revisionsTable, breaksTable, followUpTable,
 ] as const
 
 /** Tables list venues as they find them: in the one order of the document. */
@@ -28,6 +32,7 @@ function withVenuesInOrder(findings: Findings): Findings {
   return {
     ...findings, venues: sorted(findings.venues), speaking: withSpeakingInOrder(findings.speaking, sorted),
     coder: { ...findings.coder, venues: sorted(findings.coder.venues) }, hearing: findings.hearing && { ...findings.hearing, venues: sorted(findings.hearing.venues) },
+    competitors: findings.competitors && { ...findings.competitors, venues: sorted(findings.competitors.venues) },
     survey: findings.survey && { ...findings.survey, candidates: [...first('adjusted'), ...first('raw'), ...first('venue')] },
   }
 }

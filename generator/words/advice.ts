@@ -4,7 +4,7 @@ import type { WordArgument, Words } from './words.ts'
 /** How each figure of a piece of advice is written, by its name: widths are those of whole intervals and are worded as plus or minus half. */
 const formOf: Readonly<Record<string, FormName>> = {
   authors: 'plain', heard: 'plain', width_before: 'half-width', width_after: 'half-width', width: 'half-width', cost: 'count',
-  jointly: 'plain', talk: 'share', importance: 'share', customers: 'share', share: 'share', extremes: 'share', effective_before: 'count', effective_after: 'count',
+  alone: 'plain', talk: 'share', importance: 'share', customers: 'share', share: 'share', extremes: 'share', effective_before: 'count', effective_after: 'count',
   waves: 'plain', waves_now: 'plain', interviews: 'plain', interviews_now: 'plain', correlation: 'number', codings: 'plain', per_venue: 'plain', needed: 'plain',
 }
 
@@ -17,7 +17,7 @@ export type AdvicePart = (typeof adviceParts)[number]
 type Figures = Readonly<Record<string, number | string>>
 
 /** Figures of which 0 says that there is nothing to tell: `has_correlation` is then `no`. */
-const nothingAtZero = ['correlation', 'extremes', 'jointly'] as const
+const nothingAtZero = ['correlation', 'extremes', 'alone'] as const
 
 /** A piece's figures as arguments of its messages; `narrows` tells whether the two widths differ as they are written. */
 export function adviceArguments(code: string, figures: Figures, words: Words): Record<string, WordArgument> {

@@ -10,7 +10,11 @@ const formOf: Readonly<Record<string, FormName>> = {
   mentions: 'plain', authors: 'plain', steps: 'plain', count: 'plain', least: 'plain', most: 'count',
   correction: 'change', gap: 'change', reason: 'code', now: 'points', base: 'points', usual: 'count', unreached: 'plain', slope: 'number-size', shift: 'number',
   pairs: 'plain', needed: 'plain', waves: 'plain', hidden: 'plain', flagged: 'plain', observed: 'measure', expected: 'measure',
+  typical: 'size', half: 'points', of: 'code', part: 'definition', after: 'period', before: 'period', bridged: 'code', late: 'plain', gone: 'plain', periods: 'plain',
 }
+
+/** Forms of texts; what is a text where its name is that of a number stays as it is. */
+const textForms: readonly FormName[] = ['factor', 'code', 'definition', 'period']
 
 export const caveatParts = ['title', 'evidence', 'meaning', 'remedy'] as const
 export type CaveatPart = (typeof caveatParts)[number]
@@ -29,7 +33,7 @@ function writeFigure(name: string, value: string | number, words: Words, kind: s
   if (typeof value === 'number') return write(value, form === undefined || form === 'factor' || form === 'date' ? 'number' : form, words, kind)
   if (name === 'level') return levelLabel({ label: value, level: value }, words)
   if (form === 'date' && /^\d{4}-\d{2}-\d{2}$/.test(value)) return write(value, 'date', words)
-  return form === 'factor' || form === 'code' ? write(value, form, words) : value
+  return form !== undefined && textForms.includes(form) ? write(value, form, words) : value
 }
 
 /**

@@ -70,9 +70,12 @@ const driftScale = 'venue_drift.'
 /** So many characters tell two files apart where people compare them; the whole fingerprint is in the CSV and the findings. */
 const fingerprintShown = 12
 
+/** Columns that name a period. */
+const ofPeriods = ['period', 'next_period', 'after', 'before']
+
 function writeText(key: string, value: string, row: Row, words: Words, labels: Labels): string {
   if (key === 'label') return rowLabel(row, words) ?? value
-  if (key === 'period' || key === 'next_period') return String(write(value, 'period', words))
+  if (ofPeriods.includes(key)) return String(write(value, 'period', words))
   if (key === 'factor') return String(write(value, 'factor', words))
   if (key === 'sha256') return value.slice(0, fingerprintShown)
   if (key === 'venue') return labels.get(value) ?? value

@@ -2,11 +2,11 @@ import type { Unit } from '../../model/findings/parts-schema.ts'
 import { date, days, period, shortDate, when } from './dates.ts'
 import { factorName, levelLabel, partName } from './labels.ts'
 import { measure, measureChange, measureInterval, measureSize, steps } from './measures.ts'
-import { change, count, countRange, interval, number, pValue, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange, tinyNumber } from './numbers.ts'
+import { change, count, countRange, interval, minorShare, number, pValue, points, probability, probabilityBand, probabilityFigure, share, size, sizeInterval, sizeRange, tinyNumber } from './numbers.ts'
 import type { WordArgument, Words } from './words.ts'
 
 /** What a form is made from. */
-export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'fieldwork' | 'event' | 'spans' | 'any'
+export type Kind = 'number' | 'string' | 'estimate' | 'list' | 'level' | 'shift' | 'span' | 'restatable' | 'fieldwork' | 'event' | 'spans' | 'any'
 
 export interface Form {
   readonly from: Kind
@@ -33,6 +33,8 @@ const decimals: readonly Unit[] = ['number', 'points', 'percent', 'share', 'prob
 
 interface Bounds { readonly low: number, readonly high: number }
 interface Spans { readonly best_lag: number, readonly span_days: number }
+interface Restatable { readonly previous: Level, readonly previous_sealed: Level }
+interface Level { readonly mean: number }
 interface Shift { readonly share_from: number, readonly share_to: number }
 
 /** Every form that a figure can take; a template names one by `as`. */
@@ -46,6 +48,8 @@ export const forms = {
   /** Half the width of an interval, for `plus or minus`: 3.6 is `1.80`. */
   'half-width': ofNumber((value, words) => number(value / 2, words.locale), ['points']),
   share: ofNumber(share, ['share', 'probability', 'p']),
+  /** A share that is told as being below 5%. */
+  'minor-share': ofNumber(minorShare, ['share']),
   probability: ofNumber(probability, ['probability']),
   'probability-words': ofNumber((value, words) => words.say('probability-words', { band: probabilityBand(value) }), ['probability']),
   'probability-figure': ofNumber(probabilityFigure, ['probability']),
@@ -70,8 +74,8 @@ export const forms = {
   'p-value': ofNumber(pValue, ['p']),
   /** For choosing a case: whether chance is a poor explanation (`clear`, p at most 0.05, the level of the verdict's rule) or may do (`open`). */
   chance: ofNumber((p) => (p <= 0.05 ? 'clear' : 'open'), ['p']),
-  /** What an interval leaves outside, as a p-value: 0.90 leaves `0.10`. */
-  outside: ofNumber((value, words) => pValue(1 - value, words), ['share']),
+  /** What an interval leaves outside: 0.90 leaves `10%`. */
+  outside: ofNumber((value, words) => share(1 - value, words), ['share']),
   /** Something that goes with 10 points, as it goes with 1: `+0.21`. */
   'per-point': ofNumber((value, words) => measureChange(value / 10, 'mean', words.locale), ['percent']),
   'per-point-size': ofNumber((value, words) => measureSize(value / 10, 'mean', words.locale), ['percent']),
@@ -102,12 +106,16 @@ export const forms = {
   part: ofString(partName),
   /** The factor that a part of a decomposition is the mix of: `segment_mix` is that of segment. */
   'mix-factor': ofString((value, words) => factorName(value.replace(/_mix$/, ''), words)),
+  /** A part of what the figures mean: `target_mix` is `the fixed mix`. */
+  definition: ofString((value, words) => words.say(`definition-${value}`)),
   /** A value of the findings that chooses a case of a message: text, truth or nothing (`none`); ICU allows no hyphen there. */
   code: { from: 'any', write: (value: unknown) => value === null || value === undefined ? 'none' : String(value).replaceAll('-', '_') } satisfies Form,
   /** The label of a venue, topic, poster class or other level. */
   label: { from: 'level', write: (value: Parameters<typeof levelLabel>[0], words: Words) => levelLabel(value, words) } satisfies Form,
   /** Of a level whose share moved: `up`, `down`, or `flat` where whole percentages show nothing. */
   'share-direction': { from: 'shift', write: ({ share_from: from, share_to: to }: Shift) => shareDirection(from, to) } satisfies Form,
+  /** For choosing a case: `yes` where the period before stands otherwise now than it was sealed, as one decimal shows; else `no`. */
+  restated: { from: 'restatable', write: (value: Restatable, words: Words) => (isRestated(value, words.locale) ? 'yes' : 'no') } satisfies Form,
   /** Smallest to largest size in a list of numbers. */
   'size-range': ofList((value, words) => sizeRange(value.filter((item) => typeof item === 'number'), words), hundredths),
   /** The sum of a list of changes: `+0.5`. */
@@ -156,6 +164,11 @@ function shareDirection(from: number, to: number): 'up' | 'down' | 'flat' {
   return to > from ? 'up' : 'down'
 }
 
+/** At least half of the last digit shown, and shown: 24.04 and 24.06 are no two figures. */
+function isRestated({ previous, previous_sealed: sealed }: Restatable, locale: string): boolean {
+  return Math.abs(previous.mean - sealed.mean) >= 0.05 && points(previous.mean, locale) !== points(sealed.mean, locale)
+}
+
 /** Lengths of a calendar month, in days. */
 const [shortestMonth, longestMonth] = [28, 31]
 
@@ -180,7 +193,7 @@ export function write(value: unknown, form: FormName, words: Words, unit = ''): 
   return fits(value, from) ? toWords(value as never, words, unit) : words.say('not-known')
 }
 
-const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'], fieldwork: ['field_start', 'field_end'], event: ['label', 'date'], spans: ['best_lag', 'span_days'] } as const
+const keysOf = { estimate: ['low', 'high'], level: ['label'], shift: ['share_from', 'share_to'], span: ['start', 'end'], restatable: ['previous', 'previous_sealed'], fieldwork: ['field_start', 'field_end'], event: ['label', 'date'], spans: ['best_lag', 'span_days'] } as const
 
 function fits(value: unknown, kind: Kind): boolean {
   if (kind === 'any') return true

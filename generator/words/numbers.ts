@@ -64,6 +64,12 @@ export function share(value: number, words: Words): string {
   return percent(value)
 }
 
+/** A share that is told as being below 5%, so that rounding does not lift it there: `3%`; from 4.5% on `under 5%`. */
+export function minorShare(value: number, words: Words): string {
+  const [shown, limit] = [share(value, words), share(0.05, words)]
+  return value < 0.05 && shown === limit ? words.say('probability-under', { figure: limit }) : shown
+}
+
 /** A p-value: `0.031`, two decimals from 0.1 on; `under 0.001`. */
 export function pValue(value: number, words: Words): string {
   if (value < 0.001) return words.say('probability-under', { figure: figure(0.001, words.locale, { maximumFractionDigits: 3 }) })

@@ -1,4 +1,5 @@
 import { buildProblem } from '../fit/build-problem.ts'
+import { levelAt } from '../fit/level-at.ts'
 import type { FitProblem } from '../fit/problem.ts'
 import { conditionalCovariance, createStateWorkspace, stateWidth, type StateWorkspace } from '../fit/states.ts'
 import type { FitTables } from '../intake/intake-tables.ts'
@@ -31,18 +32,7 @@ export function nextChange({ problem }: Expectation, { nowSteps, nextSteps }: Ex
  * @param shares - one array per factor, venue first
  */
 export function nextLevel({ problem }: Expectation, { nextSteps, tables }: ExpectedCells, shares: readonly Float64Array[]): Float64Array {
-  const weights = new Float64Array(stateWidth(problem))
-  const block = 1 + problem.walks
-  const fixedFrom = problem.steps * block
-  for (const t of nextSteps) weights[t * block] += 1 / nextSteps.length
-  // a walking venue's offset is its walk's first step
-  problem.venueWalk.forEach((w, v) => { if (w > 0) weights[w] += shares[0][v] })
-  problem.venueFixed.forEach((column, v) => { if (column >= 0) weights[fixedFrom + column] += shares[0][v] })
-  tables.factors.slice(1).forEach(({ name, levels }, i) => {
-    const group = problem.groups.find((candidate) => candidate.name === name)
-    if (group !== undefined) levels.forEach((_, l) => { weights[fixedFrom + group.from + l] += shares[i + 1][l] })
-  })
-  return weights
+  return levelAt(problem, tables.factors, nextSteps, shares)
 }
 
 /** Posterior standard deviation of a function of the states, given the standard deviations: from the precision alone, exactly. On the score's own scale. */

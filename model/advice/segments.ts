@@ -1,4 +1,4 @@
-import { heardBy, neededAt, neededJointly, rakeHeard, type Heard } from '../customers/benchmark.ts'
+import { heardBy, leastHeard, rakeHeard, type Heard } from '../customers/benchmark.ts'
 import type { BenchmarkMargin } from '../inputs/small-inputs.ts'
 import type { Reading } from '../reading/context.ts'
 import { points } from '../reading/summarise.ts'
@@ -11,8 +11,8 @@ import { usualCost } from './usual-cost.ts'
 const littleHeard = 0.03
 
 /**
- * Which customers to hear: for every segment heard too little, the authors that would bring its share to that of customers, and what that does to the
- * standard error of the mean weighted to customers, sd / sqrt(effective authors).
+ * Which customers to hear: for every segment heard too little, the authors to plan for, and what they do to the standard error of the mean weighted to
+ * customers, sd / sqrt(effective authors). To hear a segment that is among the least heard is worth it whatever they do to that: it is otherwise not heard.
  */
 export function adviseSegments(reading: Reading, margins: readonly BenchmarkMargin[] | null, { benchmark, interval }: Grounds, smallestGroup: number): RuledAdvice[] {
   const { segments } = reading.tables
@@ -21,25 +21,26 @@ export function adviseSegments(reading: Reading, margins: readonly BenchmarkMarg
   const before = effectiveOf(heard)
   const sd = spreadOf(heard)
   const cost = usualCost(reading)
+  const least = leastHeard(benchmark)
   return margins.flatMap(({ margin, levels }, m) => levels.flatMap(({ level, share }, l): RuledAdvice[] => {
     const counts = levels.map((_, of) => heard.authors.reduce((sum, count, i) => sum + (heard.levels[i][m] === of ? count : 0), 0))
     const known = counts.reduce((sum, count) => sum + count, 0)
     if (known === 0 || share - counts[l] / known < littleHeard) return []
-    // of a group too small to be shown as if it were as large as may be shown, and needed as if nobody of it were heard
-    const few = counts[l] < smallestGroup
-    const authors = neededAt(few ? 0 : counts[l], known, share)
+    const told = benchmark.margins[m].levels[l]
+    const authors = told.planned
     const after = effectiveOf(withMore(heard, m, l, authors))
     const fall = points * sd * (1 / Math.sqrt(Math.max(1, before)) - 1 / Math.sqrt(Math.max(1, after)))
     if (fall <= 0) return []
     const gainShare = 1 - Math.sqrt(Math.max(1, before) / Math.max(1, after))
-    const jointly = neededJointly(counts.map((count) => (count < smallestGroup ? 0 : count)), levels.map((of) => of.share))
+    // a group too small to be shown is told as if it were as large as may be shown
+    const shown = counts[l] < smallestGroup ? Math.min(smallestGroup, known) : counts[l]
     // of a standard deviation known from so many authors
     const spread = fall / Math.sqrt(2 * Math.max(1, known - 1))
     const reach = twoSidedQuantile(interval) * spread
     return [{
-      code: 'hear-segment', where: level, where_kind: 'segment', how_many: authors, helps: helpsBy(gainShare), gain_share: gainShare, gain: { mean: fall, low: fall - reach, high: fall + reach, sd: spread }, gain_of: 'customer-mean',
+      code: 'hear-segment', where: level, where_kind: 'segment', how_many: authors, helps: least.has(told) ? 'clearly' : helpsBy(gainShare), gain_share: gainShare, gain: { mean: fall, low: fall - reach, high: fall + reach, sd: spread }, gain_of: 'customer-mean',
       cost: authors * cost.each, cost_given: cost.given, gain_per_cost: fall / (authors * cost.each),
-      figures: { margin, segment: level, authors, jointly: jointly?.[l] ?? 0, heard: Math.max(counts[l], few ? Math.min(smallestGroup, known) : 0) / known, customers: share, effective_before: Math.round(before), effective_after: Math.round(after), cost: authors * cost.each },
+      figures: { margin, segment: level, authors, alone: told.needed < authors ? told.needed : 0, heard: shown / known, customers: share, effective_before: Math.round(before), effective_after: Math.round(after), cost: authors * cost.each },
     }]
   }))
 }

@@ -1,4 +1,5 @@
 import type { Reading } from '../reading/context.ts'
+import { extremeShare } from '../speaking/extremes.ts'
 import { leastCodings } from '../coder/audit.ts'
 import { normalQuantile } from '../statistics/normal.ts'
 import type { Grounds } from './read-advice.ts'
@@ -76,10 +77,8 @@ export function adviseCoder({ coder }: Grounds): RuledAdvice[] {
 }
 
 /** Ask everyone, wherever anyone is asked; a standing way in where few speak for many or the middling leave. */
-export function adviseEveryone({ tables: { extremes, timeline } }: Reading, { speaking }: Grounds, asking: boolean): RuledAdvice[] {
-  const now = extremes.filter(({ period }) => period === timeline.current)
-  const mentions = now.reduce((sum, row) => sum + row.mentions, 0)
-  const share = mentions === 0 ? 0 : now.reduce((sum, row) => sum + row.extremes, 0) / mentions
+export function adviseEveryone({ tables }: Reading, { speaking }: Grounds, asking: boolean): RuledAdvice[] {
+  const share = extremeShare(tables) ?? 0
   const top = speaking.concentration.period?.top_share ?? 0
   const leaving = speaking.staying?.middle_gap?.movement === 'down' || speaking.staying?.middle_gap_change?.movement === 'down'
   return [

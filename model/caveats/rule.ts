@@ -11,7 +11,6 @@ export type Unruled = Omit<Findings, 'caveats' | 'advice' | 'inputs' | 'program'
 export interface CaveatGrounds {
   readonly findings: Unruled
   readonly reading: Reading
-  readonly givenNotUsed: readonly string[]
 }
 
 /** One rule: the caveats it finds grounds for. Each code has one rule and each rule its test. */

@@ -8,6 +8,5 @@ export const standingRules: readonly CaveatRule[] = [
   ({ findings }) => (findings.coder.status === 'absent' ? [caveat('caution', 'coder-unaudited')] : []),
   ({ findings }) => (findings.survey === null ? [caveat('caution', 'survey-absent')] : []),
   ({ findings }) => (findings.benchmark === null ? [caveat('caution', 'benchmark-absent')] : []),
-  ({ givenNotUsed }) => (givenNotUsed.length === 0 ? [] : [caveat('note', 'given-not-used', { keys: givenNotUsed.join(', ') })]),
   ({ findings }) => (findings.opinion.previous === null ? [caveat('note', 'no-previous-period')] : []),
 ]

@@ -8,10 +8,15 @@ import { twoSidedQuantile } from '../statistics/wilson.ts'
 
 type Benchmark = NonNullable<Findings['benchmark']>
 type Margin = Benchmark['margins'][number]
+type Level = Margin['levels'][number]
 
 /** No author counts for more than five, or less than a fifth, of the usual one. */
 const bounds = { lower: 0.2, upper: 5 } as const
 const percent = 100
+/** Percentage points below its share of the customers from which a level is named as heard too little: what whole percentages show. templates/sections/customers.md goes by the same. */
+const shortFrom = 0.5
+/** Levels that are named as the least heard. */
+const mostNamed = 3
 
 /** Authors by the levels of the benchmark's margins: the table that is weighted. */
 export interface Heard {
@@ -73,7 +78,7 @@ function readMargin(heard: Heard, { margin, levels }: BenchmarkMargin, m: number
     margin, authors: known, all_authors: heard.authors.reduce((sum, count) => sum + count, 0),
     dissimilarity: known < smallestGroup ? null : dissimilarityIndex(counts.map((count) => count / known), levels.map(({ share }) => share)),
     needed_jointly: jointly === null ? null : jointly.reduce((sum, count) => sum + count, 0),
-    levels: levels.map(({ level, share }, l) => {
+    levels: planned(levels.map(({ level, share }, l) => {
       const shown = shownOf[l]
       return {
         level, customers: share, heard: shown ? counts[l] / known : null, authors: shown ? counts[l] : null,
@@ -81,8 +86,24 @@ function readMargin(heard: Heard, { margin, levels }: BenchmarkMargin, m: number
         shortfall: known < smallestGroup ? null : percent * Math.max(0, share - told[l] / known),
         needed: neededAt(told[l], known, share), needed_jointly: jointly === null ? null : jointly[l],
       }
-    }),
+    })),
   }
+}
+
+/** The levels with the authors to plan for: where several are heard too little, more are asked of all of them, and each then needs more than it would alone. */
+function planned(levels: readonly Omit<Level, 'planned'>[]): Level[] {
+  const several = levels.filter(isShort).length > 1
+  return levels.map((level) => ({ ...level, planned: several ? level.needed_jointly ?? level.needed : level.needed }))
+}
+
+function isShort({ shortfall }: Pick<Level, 'shortfall'>): boolean {
+  return shortfall !== null && shortfall >= shortFrom
+}
+
+/** The levels, over all margins, that are named as the least heard for their share of the customers: three at most. */
+export function leastHeard({ margins }: Pick<Benchmark, 'margins'>): ReadonlySet<Level> {
+  const short = margins.flatMap(({ levels }) => levels.filter(isShort))
+  return new Set(short.sort((a, b) => (b.shortfall ?? 0) - (a.shortfall ?? 0)).slice(0, mostNamed))
 }
 
 /** Authors of a level besides, for its share to be that of customers: (a + x) / (n + x) = share. */

@@ -76,6 +76,8 @@ const benchmarkLevel = z.strictObject({
   shortfall: percent.min(0).nullable(),
   /** Authors of this level that would be needed besides, for its share to be that of customers: if it alone were heard more, and if all levels were brought to their shares at once (null where that can't be done). */
   needed: count, needed_jointly: count.nullable(),
+  /** Authors to plan for: those needed jointly where several levels of the margin are heard too little, since more are then asked of all of them; else those needed. */
+  planned: count,
 })
 
 export const benchmark = z.strictObject({
@@ -183,7 +185,7 @@ export const advice = z.strictObject({
   /** Which venue, segment or topic; empty where it concerns all. */
   where: z.string(), where_kind: z.enum(['venue', 'segment', 'topic', 'survey', 'coder', 'all']),
   how_many: count,
-  /** Whether it narrows its interval by enough to be worth doing (`clearly`) or not (`hardly`), where that can be computed. */
+  /** Whether it is worth doing, since it narrows its interval by enough or lets a group be heard that is among the least heard (`clearly`), or not (`hardly`), where a gain can be computed. */
   helps: z.enum(['clearly', 'hardly', 'not-computed']),
   /** The part of the interval's width that it takes away. */
   gain_share: share.nullable(),

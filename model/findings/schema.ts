@@ -1,6 +1,8 @@
 import { z } from 'zod'
 import { bareEstimate, count, estimate, isoDate, movement, plain, points, probability, pValue, share } from './parts-schema.ts'
 import { advice, benchmark, coder, hearing, importance, sensitivity, speaking, tipping, volume } from './listening-schema.ts'
+import { competitors } from './competitors-schema.ts'
+import { followUp, revisions } from './past-schema.ts'
 import { event, outcome, survey } from './survey-schema.ts'
 
 export type { Estimate, Movement } from './parts-schema.ts'
@@ -16,7 +18,6 @@ const accounting = z.strictObject({
   received: count, rejected: count, duplicates: count, out_of_scope: count, modelled: count,
   reasons: z.record(z.string(), count),
   unmapped: z.array(z.strictObject({ factor: z.string(), value: z.string(), mentions: count })),
-  given_not_used: z.array(z.string()),
   /** How authors are counted: known by handle (those without one count each), summed over ready-made cells, or not known at all. */
   authors: z.enum(['known', 'summed', 'unknown']),
   /** How much of it came as ready-made cells, whose mentions nobody has looked through for copies. */
@@ -36,11 +37,12 @@ const opinion = z.strictObject({
     /** True where the step belongs to the period under review. */
     in_period: z.boolean(),
   })),
-  /** Every period up to the one under review, oldest first. */
-  periods: z.array(z.strictObject({ period: z.string(), adjusted: estimate, since_base: estimate, raw: points.nullable(), mentions: count, authors: count })),
+  /** Every period up to the one under review, oldest first; `change` is against the one before it. */
+  periods: z.array(z.strictObject({ period: z.string(), adjusted: estimate, since_base: estimate, change: estimate.nullable(), raw: points.nullable(), mentions: count, authors: count })),
   period: estimate,
-  /** null where there is no period before. */
-  previous: estimate.nullable(), change: estimate.nullable(), probability_up: probability.nullable(),
+  /** The period before as it stands now, null where there is none; and as it was sealed last, null where it was not. */
+  previous: estimate.nullable(), previous_sealed: estimate.nullable(),
+  change: estimate.nullable(), probability_up: probability.nullable(),
   movement: movement.nullable(),
   since_base: estimate, movement_since_base: movement,
   /** Pooled raw average of all mentions; null where there is none. */
@@ -171,6 +173,10 @@ export const findingsSchema = z.strictObject({
   /** null without a survey of shares or without known authors; without a period before. */
   volume: volume.nullable(), tipping: tipping.nullable(),
   coder, sensitivity, hearing: hearing.nullable(),
+  /** null where the account gives none. */
+  competitors: competitors.nullable(),
+  /** null before the first seal; without advice in the last sealed review. */
+  revisions: revisions.nullable(), follow_up: followUp.nullable(),
   caveats: z.array(caveat), advice: z.array(advice),
   diagnostics, method,
   inputs: z.array(z.strictObject({ path: z.string(), sha256: z.string(), rows: count })),

@@ -6,7 +6,6 @@ import { points } from './summarise.ts'
 
 /** What the account says of itself and the review repeats. */
 export interface AccountFacts {
-  readonly givenNotUsed: readonly string[]
   readonly smallestGroup: number
   /** Scores of the labels that mentions are coded by; null where none are. */
   readonly labelScores: readonly number[] | null
@@ -26,7 +25,7 @@ export function readAccounting(tables: IntakeTables, facts: AccountFacts): Findi
     received: accounting.received, rejected: accounting.rejected, duplicates: accounting.duplicates,
     out_of_scope: accounting.outOfScope, modelled: accounting.modelled,
     reasons: { ...accounting.reasons }, unmapped: accounting.unmapped.map((row) => ({ ...row })),
-    given_not_used: [...facts.givenNotUsed], authors: authorsAre(tables), ready_made: readyMadeIs(tables), in_period: inPeriod,
+    authors: authorsAre(tables), ready_made: readyMadeIs(tables), in_period: inPeriod,
     first_step: timeline.steps[0], last_step: timeline.steps[timeline.steps.length - 1],
     last_day: timeline.lastDays[timeline.steps.length - 1],
   }

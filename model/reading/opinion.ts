@@ -26,10 +26,11 @@ export function readOpinion(reading: Reading): Findings['opinion'] {
     const steps = stepsOfPeriod(tables, p)
     if (steps.length === 0) return []
     const level = pick(steps)
+    const before = p === 0 ? [] : stepsOfPeriod(tables, p - 1)
     const sums = sumCells(tables, (c) => timeline.periodOf[tables.cells.step[c]] === p)
     return [{
       period: period.name, adjusted: summary.estimate(level), since_base: summary.estimate(difference(level, base)),
-      raw: scaled(sums.raw), mentions: sums.mentions, authors: authors.byPeriod[p],
+      change: before.length === 0 ? null : summary.estimate(difference(level, pick(before))), raw: scaled(sums.raw), mentions: sums.mentions, authors: authors.byPeriod[p],
     }]
   })
   const now = pick(periodSteps)
@@ -42,6 +43,7 @@ export function readOpinion(reading: Reading): Findings['opinion'] {
     series, periods,
     period: summary.estimate(now),
     previous: previousSteps === null ? null : summary.estimate(pick(previousSteps)),
+    previous_sealed: null,
     change: changeEstimate,
     probability_up: change === null ? null : summary.probabilityAbove(change),
     movement: changeEstimate === null ? null : movementOf(changeEstimate),

@@ -9,6 +9,7 @@ const parts: readonly (readonly [what: string, command: string, ...args: string[
   ['watching', 'npx', 'tsx', 'test/bench/watch.ts'],
   ['a fit on one core', 'npx', 'tsx', 'test/bench/fit.ts'],
   ['ten times the steps', 'npx', 'tsx', 'test/bench/fit.ts', 'steps'],
+  ['many accounts, sealing and verifying', 'npx', 'tsx', 'test/bench/batch.ts'],
   ['intake of 5,000,000 posts', 'npx', 'tsx', 'test/bench/intake.ts'],
   ...(spawnSync('Rscript', ['--version']).status === 0 ? [['against JAGS', 'npx', 'tsx', 'test/bench/fit.ts', 'jags'] as const] : []),
 ]

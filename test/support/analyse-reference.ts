@@ -5,8 +5,8 @@ import type { SmallInputs } from '../../model/inputs/small-inputs.ts'
 import type { IntakeTables } from '../../model/intake/intake-tables.ts'
 
 const plainSpec: AnalysisSpec = {
-  interval: 0.9, seed: 1, targetMix: {},
-  facts: { givenNotUsed: [], smallestGroup: 10, labelScores: [-1, 0, 1], posterBounds: { occasional: 1, regular: 5 }, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
+  interval: 0.9, seed: 1, targetMix: {}, past: null, competitors: null,
+  facts: { smallestGroup: 10, labelScores: [-1, 0, 1], posterBounds: { occasional: 1, regular: 5 }, preparedBy: null, reviewedBy: null, timeZone: 'UTC', reporting: 'month' },
 }
 
 export const noInputs: SmallInputs = { survey: null, events: null, outcome: null, benchmark: null, audit: null, importance: null, customers: null }

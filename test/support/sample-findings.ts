@@ -1,8 +1,10 @@
+import { sampleCompetitors } from './sample-competitors.ts'
 import type { Findings } from '../../model/findings/schema.ts'
 import { type CoderState, sampleAdvice, sampleBenchmark, sampleCoder, sampleHearing, sampleImportance, sampleSensitivity, sampleStaying, sampleTipping, sampleVolume } from './sample-listening.ts'
 import { around, average, baseSteps, opinionAt, periodNames, periodOf, ripple, stepDate, steps, stepsOf } from './sample-series.ts'
 import { sampleEvents, sampleOutcome, sampleSurvey } from './sample-survey.ts'
 import type { Verdict } from './sample-survey.ts'
+import { sampleFollowUp, sampleRevisions } from './sample-past.ts'
 import { sampleCaveats, sampleDiagnostics, sampleMethod } from './sample-surroundings.ts'
 
 interface SampleVenue { readonly venue: string, readonly label: string, readonly offset: number, readonly drift: number, readonly from: number, readonly to: number }
@@ -56,6 +58,10 @@ function rawOf(list: readonly number[]): number {
 
 function opinion(): Findings['opinion'] {
   const baseLevel = mean(baseSteps, opinionAt)
+  const changeInto = (period: string) => {
+    const earlier = periodNames[periodNames.indexOf(period) - 1]
+    return earlier === undefined ? null : around(mean(stepsOf(period), opinionAt) - mean(stepsOf(earlier), opinionAt), 1.4)
+  }
   const mentions = (list: readonly number[]) => total(list, mentionsAt)
   const authors = (list: readonly number[]) => Math.round(mentions(list) * 0.62)
   return {
@@ -68,10 +74,10 @@ function opinion(): Findings['opinion'] {
       const own = stepsOf(period)
       return {
         period, adjusted: around(mean(own, opinionAt), 3.9), since_base: around(mean(own, opinionAt) - baseLevel, 1.9),
-        raw: rawOf(own), mentions: mentions(own), authors: authors(own),
+        change: changeInto(period), raw: rawOf(own), mentions: mentions(own), authors: authors(own),
       }
     }),
-    period: around(mean(now, opinionAt), 3.9), previous: around(mean(before, opinionAt), 3.9),
+    period: around(mean(now, opinionAt), 3.9), previous: around(mean(before, opinionAt), 3.9), previous_sealed: sampleRevisions().periods.at(-1)!.level,
     change: around(mean(now, opinionAt) - mean(before, opinionAt), 1.4), probability_up: 0.9987, movement: 'up',
     since_base: around(mean(now, opinionAt) - baseLevel, 1.9), movement_since_base: 'up',
     raw: rawOf(now), raw_previous: rawOf(before), raw_change: rawOf(now) - rawOf(before),
@@ -167,7 +173,7 @@ export function sampleFindings(): Findings {
     accounting: {
       received: modelled + 312 + 1204 + 2088, rejected: 312, duplicates: 1204, out_of_scope: 2088, modelled,
       reasons: { 'time-unreadable': 141, 'score-unreadable': 171, 'same-id': 380, repost: 824, 'other-brand': 2088, 'time-doubled': 9 },
-      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], given_not_used: ['competitors'], authors: 'known', ready_made: 'none',
+      unmapped: [{ factor: 'topic', value: 'harbour works', mentions: 118 }], authors: 'known', ready_made: 'none',
       in_period: total(now, mentionsAt), first_step: stepDate(0), last_step: stepDate(steps.length - 1), last_day: '2026-10-31',
     },
     opinion: opinion(), decomposition: decomposition(), venues: venues(),
@@ -181,7 +187,8 @@ export function sampleFindings(): Findings {
     },
     survey: sampleSurvey(), events: sampleEvents(), outcome: sampleOutcome(), speaking: speaking(),
     benchmark: sampleBenchmark(), importance: sampleImportance(topics()), volume: sampleVolume(), tipping: sampleTipping(mean(before, opinionAt), mean(now, opinionAt)),
-    coder: sampleCoder('applied', venuesGiven), sensitivity: sampleSensitivity(), hearing: sampleHearing(venuesGiven),
+    coder: sampleCoder('applied', venuesGiven), sensitivity: sampleSensitivity(), hearing: sampleHearing(venuesGiven), competitors: sampleCompetitors(),
+    revisions: sampleRevisions(), follow_up: sampleFollowUp(),
     caveats: sampleCaveats(), advice: sampleAdvice(), diagnostics: sampleDiagnostics(venuesGiven.map((venue) => venue.venue)),
     method: sampleMethod([
       ...venuesGiven.map((venue) => ({ factor: 'venue', level: venue.venue, label: venue.label, share: meanOf(baseSteps, venue) })),
@@ -211,7 +218,7 @@ export function postsAlone(): Findings {
   const findings = withCoder('absent')
   const absent = ['survey-absent', 'benchmark-absent', 'coder-unaudited'].map((code) => ({ code, severity: 'caution' as const, figures: {}, evidence: '', meaning: '', remedy: '' }))
   return {
-    ...findings, survey: null, events: null, outcome: null, benchmark: null, importance: null, volume: null, speaking: { ...findings.speaking, pull: [] },
+    ...findings, competitors: null, survey: null, events: null, outcome: null, benchmark: null, importance: null, volume: null, speaking: { ...findings.speaking, pull: [] },
     caveats: [...findings.caveats.filter(({ code }) => !ofInputs.includes(code)), ...absent],
     advice: findings.advice.filter(({ code }) => ['hear-venue', 'invite-everyone', 'standing-way-in'].includes(code)),
   }

@@ -70,10 +70,13 @@ export function sampleStaying(venues: readonly Venue[]): Pick<Speaking, 'staying
 
 const authorsKnown = 1212
 
-/** @param jointly - authors needed besides if all levels are brought to their shares at once */
-function level(name: string, customers: number, authors: number | null, needed: number, jointly: number): Benchmark['margins'][number]['levels'][number] {
+/**
+ * @param jointly - authors needed besides if all levels are brought to their shares at once
+ * @param planned - as many, if several levels are short
+ */
+function level(name: string, customers: number, authors: number | null, needed: number, jointly: number, planned = jointly): Benchmark['margins'][number]['levels'][number] {
   const heard = authors === null ? null : authors / authorsKnown
-  return { level: name, customers, heard, authors, gap: heard === null ? null : 100 * (heard - customers), shortfall: 100 * Math.max(0, customers - (heard ?? 0)), needed, needed_jointly: jointly }
+  return { level: name, customers, heard, authors, gap: heard === null ? null : 100 * (heard - customers), shortfall: 100 * Math.max(0, customers - (heard ?? 0)), needed, needed_jointly: jointly, planned }
 }
 
 /** Customers by two traits; freight customers are too few to show, of school parties nobody was heard. */
@@ -86,7 +89,7 @@ export function sampleBenchmark(): Benchmark {
       },
       {
         margin: 'age', dissimilarity: 0.19, authors: 1187, all_authors: 1490, needed_jointly: 366 + 691,
-        levels: [level('under 35', 0.22, 499, 0, 0), level('35 to 54', 0.35, 428, 0, 366), level('55 and over', 0.43, 285, 416, 691)],
+        levels: [level('under 35', 0.22, 499, 0, 0), level('35 to 54', 0.35, 428, 0, 366, 0), level('55 and over', 0.43, 285, 416, 691, 416)],
       },
     ],
     raking: { converged: true, cycles: 9, lowest: 0.31, highest: 4.2, bounded: 14, design_effect: 1.94, authors: 1187, effective_authors: 612 },
@@ -161,7 +164,7 @@ export function sampleAdvice(): Findings['advice'] {
   return [
     piece('hear-venue', 'Video comments', 'venue', 200, { venue: 'Video comments', authors: 200, heard: 118, width_before: 3.6, width_after: 3.18, cost: 200 }, 0.13, 'next-change', 200, 0.117),
     piece('hear-topic', 'On board', 'topic', 150, { topic: 'On board', authors: 150, talk: 0.16, importance: 0.27, width_before: 4.2, width_after: 3.7, cost: 150 }, 0.15, 'importance-level', 150, 0.119),
-    piece('hear-segment', 'islander', 'segment', 240, { margin: 'segment', segment: 'islander', authors: 240, jointly: 385, heard: 0.21, customers: 0.34, effective_before: 612, effective_after: 941, cost: 240 }, 0.2, 'customer-mean', 240, 0.194),
+    piece('hear-segment', 'islander', 'segment', 385, { margin: 'segment', segment: 'islander', authors: 385, alone: 240, heard: 0.21, customers: 0.34, effective_before: 612, effective_after: 941, cost: 385 }, 0.2, 'customer-mean', 385, 0.194),
     piece('audit-more', 'Microblogs', 'coder', 28, { venue: 'Microblogs', codings: 22, needed: 50 }),
     piece('survey-waves', 'Favourability', 'survey', 11, { waves: 11, waves_now: 30, correlation: 0.31 }),
     piece('invite-everyone', '', 'all', 0, { extremes: 0.61 }),

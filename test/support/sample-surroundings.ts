@@ -14,7 +14,6 @@ export function sampleCaveats(): Caveat[] {
     raise('authors-partly-unknown', 'caution', { venue: 'Video comments', share: 0.29 }),
     raise('empty-steps', 'caution', { steps: 1 }),
     raise('values-unmapped', 'note', { factor: 'topic', values: 'harbour works', mentions: 118 }),
-    raise('given-not-used', 'note', { keys: 'competitors' }),
     raise('mix-moved', 'note', { factor: 'venue', level: 'Discussion boards', from: 0.24, to: 0.41 }),
     raise('no-sampling-error', 'note'),
     raise('survey-bases-small', 'note', { hidden: 1, flagged: 26 }),

@@ -15,7 +15,8 @@ export const ownPlace: unique symbol = Symbol('place of an own chart')
  * - `panels`: small multiples, one per value of `by` in `table`, at most `columns` beside each other;
  * - `stacked`: panels below each other on one axis of time, of which one without rows is left out; `axis` and `labels` say what room the axis
  *   on the left and the longest label on the right need, `alone` how high a panel is that is left alone;
- * - `ends`: labels at the right end of a stack of shares of `factor`.
+ * - `ends`: labels at the right end of a stack of shares of `factor`;
+ * - `width`: of a small picture, px; it is drawn but once, for page and phone alike.
  */
 export interface ChartSpec {
   readonly name: string
@@ -33,6 +34,7 @@ const layout = z.strictObject({
   panels: z.strictObject({ table: z.string(), by: z.string(), columns: z.number().int(), gap: z.number(), axis: z.number() }).optional(),
   stacked: z.strictObject({ axis: z.number(), gap: z.number(), labels: z.array(z.string()), alone: z.number().optional() }).optional(),
   ends: z.strictObject({ factor: z.string(), height: z.number() }).optional(),
+  width: z.number().min(40).max(350).optional(),
 })
 export type Layout = z.infer<typeof layout>
 

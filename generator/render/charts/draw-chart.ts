@@ -92,8 +92,8 @@ function readTables(spec: ChartSpec, tables: readonly Table[], words: Words, the
 }
 
 function laidOut(spec: ChartSpec, datasets: Datasets, theme: Theme, size: DrawingSize): ChartSpec {
-  const width = theme.chart.widths[size]
-  return layoutOf(spec).stacked === undefined ? withPanels(spec, datasets, width) : withStacked(spec, datasets, width, theme)
+  const { stacked, width = theme.chart.widths[size] } = layoutOf(spec)
+  return stacked === undefined ? withPanels(spec, datasets, width) : withStacked(spec, datasets, width, theme)
 }
 
 /** A stack of shares gets its data, and the height that its labels need. */

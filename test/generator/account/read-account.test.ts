@@ -30,7 +30,7 @@ describe('an account file that is right', () => {
     const account = await read(sound)
     expect(account).toMatchObject({
       account: 'demo', brand: 'Skerrow Ferries', competitors: [], locale: 'en-GB', timeZone: 'UTC', grid: 'week', reporting: 'month', base: null, interval: 0.9,
-      factors: ['venue', 'topic', 'poster'], posters: { occasional: 1, regular: 5 }, smallestGroup: 10, customers: null, template: null, givenNotUsed: [],
+      factors: ['venue', 'topic', 'poster'], posters: { occasional: 1, regular: 5 }, smallestGroup: 10, customers: null, template: null,
       mentions: [{ kind: 'mentions', files: ['posts/a.csv'], columns: { posted_at: 'published', venue: 'source', score: 'tone' }, timeFormat: null,
         score: { kind: 'labels', labels: [{ label: 'negative', score: -1 }, { label: 'positive', score: 1 }] } }],
     })
@@ -78,7 +78,7 @@ smallest_group: 12
     expect(account.targetMix).toEqual([{ factor: 'venue', shares: [{ level: 'boards', share: 0.25 }, { level: 'panel', share: 0.75 }] }])
     const table = { pattern: 'survey/w.csv', files: ['survey/w.csv'] }
     expect(account).toMatchObject({ benchmark: table, codingAudit: table, importance: table, customers: 310_000 })
-    expect(account.givenNotUsed).toEqual(['competitors'])
+    expect(account.competitors).toEqual(['Tarrin Line'])
   })
 
   test.each([['day', [-56, 112]], ['week', [-8, 16]], ['month', [-2, 4]]])('looks at lags from two months behind to four ahead on a grid by the %s', async (grid, lags) => {

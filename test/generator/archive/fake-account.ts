@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { theDisk } from '../../../generator/archive/disk.ts'
 import type { MadeWith } from '../../../generator/archive/manifest.ts'
+import { readArchive, sealedInOrder } from '../../../generator/archive/read-archive.ts'
 import { fingerprint, fingerprints, recordName, type BuildRecord } from '../../../generator/archive/record.ts'
 import type { SealRequest } from '../../../generator/archive/seal-review.ts'
 import { filesOf } from '../../../generator/archive/verify-archive.ts'
@@ -32,7 +33,7 @@ export async function fakeDraft(folder: string, period: string, what = 'first', 
   await writeFile(join(draft, 'tables', 'opinion.csv'), 'step,value\n')
   await writeFile(join(draft, 'rejects', 'posts.csv'), 'file,line,reason\n')
   const record: BuildRecord = {
-    schema: 'tareline-record/1', account: 'fake', period, program, seed: 1, prepared_by: 'Ana', reviewed_by: 'Bo', passed: true,
+    schema: 'tareline-record/1', account: 'fake', period, default_period: true, program, seed: 1, prepared_by: 'Ana', reviewed_by: 'Bo', past: await lastSealed(folder), passed: true,
     inputs: [
       { ...await fingerprint(folder, 'account.yaml'), kept: true }, { ...await fingerprint(folder, 'survey/waves.csv'), kept: true },
       { ...await fingerprint(folder, 'posts/posts.csv'), kept: false },
@@ -42,6 +43,11 @@ export async function fakeDraft(folder: string, period: string, what = 'first', 
   }
   await writeFile(join(draft, recordName), JSON.stringify(record))
   return draft
+}
+
+/** Hash of the last manifest of an account's archive, as a build would record it. */
+export async function lastSealed(folder: string): Promise<string | null> {
+  return sealedInOrder(await readArchive(join(folder, 'archive'))).at(-1)?.hash ?? null
 }
 
 export const requestOf = (folder: string, period: string, more: Partial<SealRequest> = {}): SealRequest => ({

@@ -132,8 +132,9 @@ describe('a sealed review', () => {
 test('an account without an archive: exit code 1; without a browser, everything but the PDF is compared', async () => {
   await mkdir(join(folder, 'empty'))
   expect(JSON.parse((await runCommand('verify', join(folder, 'empty'), '--json')).out)).toMatchObject({ ok: false, faults: [{ code: 'archive-empty' }], rebuilt: null })
-  const [seal] = sealedInOrder(await readArchive(join(folder, 'archive')))
-  expect(await rebuildSeal(thisProgram(), seal, { browser: null, progress: silent })).toMatchObject({ faults: [], printed: false, files: [], otherwise: [] })
+  const archive = await readArchive(join(folder, 'archive'))
+  const [seal] = sealedInOrder(archive)
+  expect(await rebuildSeal(thisProgram(), seal, { archive, browser: null, progress: silent })).toMatchObject({ faults: [], printed: false, files: [], otherwise: [] })
 }, 120_000)
 
 async function copyOfArchive(name: string): Promise<string> {
@@ -143,8 +144,9 @@ async function copyOfArchive(name: string): Promise<string> {
 }
 
 async function rebuilt(account: string): Promise<Rebuilt> {
-  const [seal] = sealedInOrder(await readArchive(join(account, 'archive')))
-  return rebuildSeal(thisProgram(), seal, { browser: Promise.resolve(browser), progress: silent })
+  const archive = await readArchive(join(account, 'archive'))
+  const [seal] = sealedInOrder(archive)
+  return rebuildSeal(thisProgram(), seal, { archive, browser: Promise.resolve(browser), progress: silent })
 }
 
 /** A copy of the archive whose only seal was changed by somebody who mends every hash: nothing but making it again can tell. */

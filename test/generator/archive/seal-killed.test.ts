@@ -9,6 +9,7 @@ import { fingerprint, fingerprints, recordName, type BuildRecord } from '../../.
 import { filesOf, verifyArchive } from '../../../generator/archive/verify-archive.ts'
 import { thisProgram } from '../../../generator/program/program.ts'
 import { createGenerator } from '../../../model/random/generator.ts'
+import { lastSealed } from './fake-account.ts'
 
 const root = join(import.meta.dirname, '../../..')
 const period = '2025-08'
@@ -27,7 +28,7 @@ async function draftOf(tables: number): Promise<void> {
   await mkdir(join(draft, 'tables'), { recursive: true })
   for (const name of ['review.html', 'review.pdf', 'findings.json', ...Array.from({ length: tables }, (_, t) => `tables/table-${t}.csv`)]) await writeFile(join(draft, name), `${name}\n`)
   const record: BuildRecord = {
-    schema: 'tareline-record/1', account: 'skerrow-ferries', period, program: { ...madeHere(thisProgram()), browser: 'Any/1.0' }, seed: 1, prepared_by: 'Ana', reviewed_by: 'Bo', passed: true,
+    schema: 'tareline-record/1', account: 'skerrow-ferries', period, default_period: true, program: { ...madeHere(thisProgram()), browser: 'Any/1.0' }, seed: 1, prepared_by: 'Ana', reviewed_by: 'Bo', past: await lastSealed(account), passed: true,
     inputs: [{ ...await fingerprint(account, 'account.yaml'), kept: true }, { ...await fingerprint(account, 'cells/cells.csv'), kept: false }],
     files: [...await fingerprints(draft, await filesOf(draft))],
   }

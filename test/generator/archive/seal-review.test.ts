@@ -1,11 +1,11 @@
 import { appendFile, readdir, readFile, rm, truncate, writeFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import { afterEach, beforeEach, expect, test } from 'vitest'
-import { theDisk, type Disk } from '../../../generator/archive/disk.ts'
 import { recordName, type BuildRecord } from '../../../generator/archive/record.ts'
 import { sealReview, type SealRequest } from '../../../generator/archive/seal-review.ts'
 import { verifyArchive } from '../../../generator/archive/verify-archive.ts'
 import { InputFault } from '../../../generator/faults/fault.ts'
+import { countingDisk, dyingDisk } from '../../support/dying-disk.ts'
 import { fakeAccount, fakeDraft, program, requestOf } from './fake-account.ts'
 
 let folder: string
@@ -90,41 +90,13 @@ test('a sealed period is not sealed again without a reason, nor a new one into a
   expect(await codes(sealReview(requestOf(folder, '2026-11')))).toEqual(['archive-unsound', 'sealed-file-changed'])
 })
 
-/** A disk that dies at its n-th call: before it, half-way through what it writes, or right after it. */
-function dyingDisk(at: number, how: 'before' | 'half' | 'after'): Disk {
-  let calls = 0
-  const dying = async (work: () => Promise<void>, written?: string): Promise<void> => {
-    calls++
-    if (calls > at || (calls === at && how === 'before')) throw new Error('the disk died')
-    await work()
-    if (calls !== at) return
-    if (how === 'half' && written !== undefined) await truncate(written, 3)
-    throw new Error('the disk died')
-  }
-  return {
-    makeFolder: (path) => dying(() => theDisk.makeFolder(path)),
-    write: (file, content) => dying(() => theDisk.write(file, content), file),
-    copy: (from, to) => dying(() => theDisk.copy(from, to), to),
-    rename: (from, to) => dying(() => theDisk.rename(from, to)),
-    remove: (path) => dying(() => theDisk.remove(path)),
-  }
-}
-
-/** How many calls a whole seal makes. */
-async function callsOfASeal(): Promise<number> {
-  let calls = 0
-  const counted = <A extends readonly unknown[]>(work: (...args: A) => Promise<void>) => (...args: A) => { calls++; return work(...args) }
-  await sealReview(requestOf(folder, '2026-10', { disk: {
-    makeFolder: counted(theDisk.makeFolder), write: counted(theDisk.write), copy: counted(theDisk.copy), rename: counted(theDisk.rename), remove: counted(theDisk.remove),
-  } }))
-  return calls
-}
-
-test.each(['before', 'half', 'after'] as const)('whenever the disk dies (%s a call), the archive is the old one or the new one, and the next seal goes through', async (how) => {
+test.each(['before', 'half', 'after', 'full'] as const)('whenever the disk dies (%s), the archive is the old one or the new one, and the next seal goes through', async (how) => {
   await fakeDraft(folder, '2026-09')
   await sealReview(requestOf(folder, '2026-09'))
   await fakeDraft(folder, '2026-10')
-  const calls = await callsOfASeal()
+  const { disk, calls: counted } = countingDisk()
+  await sealReview(requestOf(folder, '2026-10', { disk }))
+  const calls = counted()
   expect(calls).toBeGreaterThan(12)
   const seen = new Set<string>()
   for (let at = 1; at <= calls; at++) {
@@ -133,12 +105,15 @@ test.each(['before', 'half', 'after'] as const)('whenever the disk dies (%s a ca
     await rm(join(archive(), 'chain-end.json'))
     const [first] = (await verifyArchive(archive())).archive.seals
     await writeFile(join(archive(), 'chain-end.json'), JSON.stringify({ schema: 'tareline-chain-end/1', sequence: 1, manifest: first.hash }))
-    await expect(sealReview(requestOf(folder, '2026-10', { disk: dyingDisk(at, how) }))).rejects.toThrow('the disk died')
+    await fakeDraft(folder, '2026-10')
+    await expect(sealReview(requestOf(folder, '2026-10', { disk: dyingDisk(at, how) }))).rejects.toThrow(/the disk (died|is full)/)
     const { faults, archive: found } = await verifyArchive(archive())
     expect(faults).toEqual([])
     const names = found.seals.map(({ name }) => name).join(' ')
     seen.add(names)
     expect(['2026-09', '2026-09 2026-10']).toContain(names)
+    // a draft that was sealed looks back at an archive without itself
+    if (names !== '2026-09') await fakeDraft(folder, '2026-10')
     const again = await sealReview(requestOf(folder, '2026-10', names === '2026-09' ? {} : { reason: 'sealed in a crash' }))
     expect(again.manifest.sequence).toBe(names === '2026-09' ? 2 : 3)
     expect(await verifyArchive(archive())).toMatchObject({ faults: [], endBehind: false })

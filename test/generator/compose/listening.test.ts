@@ -44,7 +44,7 @@ describe('what is not given is not there: no section, no heading, no chart', () 
   })
   test('without advice the first page has none; with it the first three, one line each', () => {
     expect(sectionText(composeHouse(readyMade()), 'first-page')).not.toContain('What to do first')
-    expect(sectionText(usual, 'first-page')).toMatch(/What to do first Least heard, for their share of the customers: 55 and over, islander and freight\. Hear 200 more authors in Video comments: invite everyone to post there, never only the content\. Ask 150 people, drawn at random, about “On board”\. Hear 240 more authors of “islander” \(segment\): invite all of them, or a random sample\.$/)
+    expect(sectionText(usual, 'first-page')).toMatch(/What to do first Least heard, for their share of the customers: 55 and over, islander and freight\. Hear 200 more authors in Video comments: invite everyone to post there, never only the content\. Ask 150 people, drawn at random, about “On board”\. Hear 385 more authors of “islander” \(segment\): invite all of them, or a random sample\.$/)
   })
   test('no heading stands alone', () => {
     for (const [, document] of cases) {
@@ -80,7 +80,7 @@ describe('who stays', () => {
 
 describe('spread and pull', () => {
   test('where it widened, with both figures', () => {
-    expect(sectionText(usual, 'speaking')).toMatch(/Opinions lie further apart than in the base in Discussion boards \(spread \d\d\.\d points then, \d\d\.\d now\)\./)
+    expect(sectionText(usual, 'speaking')).toMatch(/Opinions lie further apart than in the base in Discussion boards \(usual distance from the average: \d\d\.\d points then, \d\d\.\d now\)\./)
     const none = withSpeaking({ spread: sample.speaking.spread.map((of) => ({ ...of, movement: 'not-established' as const })) })
     expect(none).toContain('In no venue can opinions be shown to lie further apart than in the base.')
     const down = withSpeaking({ spread: sample.speaking.spread.map((of) => ({ ...of, movement: 'down' as const })) })
@@ -104,9 +104,12 @@ describe('whom the posts stand for', () => {
   const text = sectionText(usual, 'customers')
   test('the three groups least heard come first, over all margins, one of them too small to show', () => {
     expect(text).toMatch(/^Whom the posts stand for Least heard, for their share of the customers: 55 and over, islander and freight\./)
-    expect(text).toContain('Islander: 34% of the customers, 21% of the authors heard. 240 more authors would make up for it, if the other groups stay as they are.')
-    expect(text).toContain('Freight: 8% of the customers, fewer than 10 of the authors heard. 99 more authors would make up for it, if the other groups stay as they are.')
-    expect(text).toContain('To bring all groups by segment to their shares at once takes 675 more authors: islander, freight, school parties and commuter (385, 151, 76 and 63).')
+    expect(text).toContain('Islander: 34% of the customers, 21% of the authors heard. Plan for 385 more authors. 240 would do if this group alone were heard more.')
+    expect(text).toContain('Freight: 8% of the customers, fewer than 10 of the authors heard. Plan for 151 more authors. 99 would do if this group alone were heard more.')
+    expect(text).toContain('55 and over: 43% of the customers, 24% of the authors heard. Plan for 416 more authors. Islander')
+    expect(text).toContain('To bring all groups by segment up to their shares at once takes 675 more authors: islander, freight, school parties and commuter (385, 151, 76 and 63). These are the numbers to plan for')
+    // of ages only one is heard too little, and is asked for by itself
+    expect(text).not.toContain('To bring all groups by age')
   })
   test('of one, of two, of none', () => {
     const only = (count: number) => customers({ margins: benchmark.margins.map((margin, m) => ({ ...margin, levels: margin.levels.map((level, l) => ({ ...level, shortfall: m === 0 && l < count ? 10 - l : 0 })) })) })
@@ -118,8 +121,8 @@ describe('whom the posts stand for', () => {
   })
   test('dissimilarity by margin, weights and what they cost, and the groups that no weight brings in', () => {
     expect(text).toContain('By segment, 31% of the authors would have to belong to another group for the posts to be made up like the customers. The segment is known of 1,212 of 1,490 authors.')
-    expect(text).toContain('Single authors then count between 0.31 and 4.20 times the average; 14 would have counted for more or less than we allow. That has a price: 1,187 authors tell no more about all customers than 612 effective authors, who need no weights.')
-    expect(text).toContain('As heard, the authors’ mean is 17.2 points; counted by the customers’ shares it is 11.6 points (90% interval 8.2 to 15.0).')
+    expect(text).toContain('Single authors then count between 0.31 and 4.20 times the average; 14 would have counted for more or less than we allow. That has a price: 1,187 authors tell no more about all customers than 612 would whose groups had the customers’ shares from the start.')
+    expect(text).toContain('As heard, the authors’ average is 17.2 points; counted by the customers’ shares it is 11.6 points (90% interval 8.2 to 15.0).')
     expect(text).toContain('School parties (segment): 4% of the customers, and none of the authors.')
   })
   test('what can’t be done is not told as done', () => {
@@ -136,14 +139,16 @@ describe('what the volume is worth', () => {
   test('as many interviews, the gap, and the correlation behind it with its source', () => {
     expect(of({})).toContain('2,940 mentions by 1,490 authors are worth as much as a random sample of about 45 interviews.')
     expect(of({})).toContain('By the raw average 53.4% of what was said is favourable, a neutral mention counted as half; the survey found 45.6% (Favourability, wave 2026-10). They lie 7.8 percentage points apart')
-    expect(of({})).toContain('because content customers are a little likelier to post than others: among 310,000 customers, a tie between being favourable and posting as weak as 0.011 is enough, where 0 is none at all (the data defect correlation, Meng 2018)')
+    expect(of({})).toContain('because content customers are a little likelier to post than others. Heard were 1,490 authors, and there are 310,000 customers: as long as most do not post, even a small difference in who does moves the result that far.')
+    expect(sectionText(usual, 'made')).toContain('Among 310,000 customers the data defect correlation comes to 0.011')
   })
   test('a sample of next to nothing, a gap within the survey’s own error, no number of customers', () => {
     expect(of({ equal_sample: 0.4 })).toContain('are worth no more than asking one or two customers at random')
     expect(of({ equal_sample: null })).toContain('What the volume is worth can’t be said')
     expect(of({ equal_sample: null })).not.toContain('percentage points apart')
     expect(of({ customers: null, defect_correlation: null })).toContain('They lie 7.8 percentage points apart')
-    expect(of({ customers: null, defect_correlation: null })).not.toMatch(/Meng|not known/)
+    expect(of({ customers: null, defect_correlation: null })).not.toMatch(/Heard were|not known/)
+    expect(sectionText(withFindings({ volume: { ...volume, customers: null, defect_correlation: null } }), 'made')).not.toContain('data defect correlation comes to')
   })
   test('the tipping point, for a rise and for a fall; it stands without a survey too', () => {
     expect(of({})).toContain('Had content customers become 1.05 times as likely to post as before, and unhappy ones not (90% interval 1.02 to 1.08), the reported change of +2.2 points would be nothing but that.')
@@ -159,12 +164,12 @@ describe('what the volume is worth', () => {
 describe('what the coder adds', () => {
   const text = (state: CoderState) => sectionText(composeHouse(withCoder(state)), 'coder')
   test('applied: which way it leans, how many were judged, where nothing was corrected', () => {
-    expect(text('applied')).toContain('Checked against people, the coder is too kind: correcting lowers the mean of all mentions by 1.9 points (90% interval 1.0 to 2.8).')
+    expect(text('applied')).toContain('Checked against people, the coder is too kind: correcting lowers the average of all mentions by 1.9 points (90% interval 1.0 to 2.8).')
     expect(text('applied')).toContain('Review sites is left as it is: its scores come as a range, such as stars.')
     expect(text('applied')).toMatch(/Microblogs 155 84% −1\.1 −2\.7 to \+0\.5/)
     const coder = sample.coder
-    expect(sectionText(withFindings({ coder: { ...coder, movement: 'up', correction: { mean: 2, low: 1, high: 3, sd: 0.6 } } }), 'coder')).toContain('too harsh: correcting raises the mean of all mentions by 2.0 points')
-    expect(sectionText(withFindings({ coder: { ...coder, movement: 'not-established', correction: { mean: 0.4, low: -1, high: 1.8, sd: 0.9 } } }), 'coder')).toContain('cannot be shown to be too kind or too harsh: correcting moves the mean of all mentions by between −1.0 and +1.8 points')
+    expect(sectionText(withFindings({ coder: { ...coder, movement: 'up', correction: { mean: 2, low: 1, high: 3, sd: 0.6 } } }), 'coder')).toContain('too harsh: correcting raises the average of all mentions by 2.0 points')
+    expect(sectionText(withFindings({ coder: { ...coder, movement: 'not-established', correction: { mean: 0.4, low: -1, high: 1.8, sd: 0.9 } } }), 'coder')).toContain('cannot be shown to be too kind or too harsh: correcting moves the average of all mentions by between −1.0 and +1.8 points')
   })
   test.each([['too-few', 'in Microblogs fewer than 50'], ['too-poor', 'agree so little'], ['ranges', 'such as stars'], ['ready-made', 'ready-made table']] as const)('refused, %s: the reason, and no picture', (state, words) => {
     expect(text(state)).toContain(words)
@@ -187,7 +192,7 @@ describe('talk against importance', () => {
   const topics = (change: Partial<typeof importance>) => sectionText(withFindings({ importance: { ...importance, ...change } }), 'topics')
   test('the two ends, where importance comes from, and opinion at topics as they matter', () => {
     expect(topics({})).toContain('Punctuality is talked about most for what it matters: 31% of the talk, 17% of the importance. On board is talked about least for what it matters: 16% of the talk, 27% of the importance.')
-    expect(topics({})).toContain('400 customers who were asked about all of them (relative weights, Johnson 2000); together the topics explain 58%')
+    expect(topics({})).toContain('400 customers who were asked about all of them; together the topics explain 58%')
     expect(topics({})).toContain('opinion would stand at 28.1 points (90% interval 24.1 to 32.1), +2.2 on the period before (90% interval +0.7 to +3.7).')
   })
   test('stated weights name no respondents; without a period before no change is told', () => {
@@ -243,7 +248,7 @@ describe('advice', () => {
 describe('how it was made', () => {
   const made = (document = usual) => sectionText(document, 'made')
   test('each method with its source', () => {
-    for (const source of ['Wilson 1927', 'Liang and Zeger 1986', 'Deming and Stephan 1940', 'Duncan and Duncan 1955', 'Kish 1965', 'Meng 2018', 'Rogan and Gladen 1978', 'Johnson 2000', 'Kallioinen and others 2023']) expect(made()).toContain(source)
+    for (const source of ['Wilson 1927', 'Liang and Zeger 1986', 'Deming and Stephan 1940', 'Duncan and Duncan 1955', 'Kish 1965', 'Meng 2018', 'Rogan and Gladen 1978', 'Johnson 2000', 'Kallioinen and others 2023', 'Spearman 1904', 'Gneiting and Raftery 2007', 'Newey and West 1987', 'Holm 1979']) expect(made()).toContain(source)
   })
   test('methods of what is not there are not told', () => {
     const bare = made(composeHouse({ ...readyMade(), sensitivity: { scales: [], shift: 0, reliable: true } }))

@@ -22,10 +22,10 @@ const unworded = /undefined|NaN|\[object|(?<!is )not known|not-established|not_e
 
 describe('each verdict has its own words, and says whether to trust the posts and why', () => {
   test.each([
-    ['leads', 'The posts lead the survey: Favourability has tended to follow mix-adjusted opinion by about 4 weeks (correlation 0.84), and forecasts from posts and past waves came closer than guessing the same as last time, or the usual average. So a movement of mix-adjusted opinion is an early sign of what the survey may find, but how much it adds to the waves themselves is not yet clear.'],
-    ['tracks', 'The posts track the survey: Favourability has moved with mix-adjusted opinion, about 4 weeks after it (best of 25 lags, correlation 0.55). That the posts foretell it is not shown. So a movement of mix-adjusted opinion can be taken to go with one of the survey, but not to tell it in advance.'],
-    ['contradicts', 'The survey contradicts the posts: Favourability has moved against mix-adjusted opinion, about 4 weeks after it (best of 25 lags, correlation −0.62). So mix-adjusted opinion can’t be trusted to say what customers think until it is known why the two part.'],
-    ['not-established', 'Whether the survey goes with the posts is not established: 30 waves do not show whether Favourability goes with mix-adjusted opinion (correlation at the best lag 0.31, 90% interval −0.12 to 0.64). So the survey is neither a reason to trust the posts nor one to distrust them, for now. An open question is not a disagreement.'],
+    ['leads', 'The posts lead the survey: Favourability has tended to follow mix-adjusted opinion by about 4 weeks (correlation 0.84, where 0 is no tie and 1 a perfect one), and forecasts from posts and past waves came closer than guessing the same as last time, or the usual average. So a movement of mix-adjusted opinion is an early sign of what the survey may find, but how much it adds to the waves themselves is not yet clear.'],
+    ['tracks', 'The posts track the survey: Favourability has moved with mix-adjusted opinion, about 4 weeks after it (the closest of 25 time lags tried; correlation 0.55, where 0 is no tie and 1 or −1 a perfect one). That the posts foretell it is not shown. So a movement of mix-adjusted opinion can be taken to go with one of the survey, but not to tell it in advance.'],
+    ['contradicts', 'The survey contradicts the posts: Favourability has moved against mix-adjusted opinion, about 4 weeks after it (the closest of 25 time lags tried; correlation −0.62, where 0 is no tie and 1 or −1 a perfect one). So mix-adjusted opinion can’t be trusted to say what customers think until it is known why the two part.'],
+    ['not-established', 'Whether the survey goes with the posts is not established: 30 waves do not show whether Favourability goes with mix-adjusted opinion (correlation at the best time lag 0.31, where 0 is no tie and 1 or −1 a perfect one; 90% interval −0.12 to 0.64). So the survey is neither a reason to trust the posts nor one to distrust them, for now. An open question is not a disagreement.'],
     ['too-few-waves', 'There are too few waves to check the posts against the survey: 3 can be compared, and at least 8 are needed. So the survey is neither a reason to trust the posts nor one to distrust them, for now.'],
   ] as const)('%s', (verdict, lead) => {
     expect(survey(documents[verdict])).toContain(`The survey ${lead}`)
@@ -34,8 +34,8 @@ describe('each verdict has its own words, and says whether to trust the posts an
 
   test.each([
     ['leads', 'The posts lead the survey: over 30 waves Favourability has tended to follow mix-adjusted opinion by about 4 weeks; whether it does after October 2026 too, later waves will show.'],
-    ['tracks', 'The posts track the survey: Favourability has moved with mix-adjusted opinion, about 4 weeks after it (best of 25 lags, correlation 0.55); that the posts foretell it is not shown.'],
-    ['contradicts', 'The survey contradicts the posts: Favourability has moved against mix-adjusted opinion, about 4 weeks after it (best of 25 lags, correlation −0.62); until it is known why, do not take what the posts say for what customers think.'],
+    ['tracks', 'The posts track the survey: Favourability has moved with mix-adjusted opinion, about 4 weeks after it (the closest of 25 time lags tried; correlation 0.55, where 0 is no tie and 1 or −1 a perfect one); that the posts foretell it is not shown.'],
+    ['contradicts', 'The survey contradicts the posts: Favourability has moved against mix-adjusted opinion, about 4 weeks after it (the closest of 25 time lags tried; correlation −0.62, where 0 is no tie and 1 or −1 a perfect one); until it is known why, do not take what the posts say for what customers think.'],
     ['not-established', 'Whether the survey goes with the posts is not established: 30 waves do not show whether Favourability goes with mix-adjusted opinion.'],
     ['too-few-waves', 'There are too few waves to check the posts against the survey: 3 can be compared, and at least 8 are needed.'],
   ] as const)('%s, in one sentence of the first page', (verdict, sentence) => {
@@ -52,7 +52,7 @@ describe('each verdict has its own words, and says whether to trust the posts an
 
   test('what is not established is not called a disagreement, nor agreement', () => {
     expect(survey(documents['not-established'])).not.toMatch(/contradicts the posts: Fav|has moved (with|against)|posts (lead|track) the survey: Fav/)
-    expect(survey(documents['not-established'])).toContain('too blurred by the sampling error of the waves (about 2.7 percentage points), to be seen in 30 waves')
+    expect(survey(documents['not-established'])).toContain('too blurred by chance, since each wave asks only some people (which blurs it by about 2.7 percentage points), to be seen in 30 waves')
   })
 
   test('where a serious caveat says that the survey contradicts, the first page says it once', () => {
@@ -60,7 +60,7 @@ describe('each verdict has its own words, and says whether to trust the posts an
     const caveat = { code: 'survey-contradicts', severity: 'serious' as const, figures: { label: 'Favourability', correlation: -0.62, pairs: 30 }, evidence: '', meaning: '', remedy: '' }
     const page = firstPage(composeHouse({ ...findings, caveats: [...findings.caveats, caveat] }))
     expect(page.match(/The survey contradicts the posts/g)).toHaveLength(1)
-    expect(page).toContain('The survey contradicts the posts. Favourability has moved against mix-adjusted opinion (correlation −0.62 over 30 waves).')
+    expect(page).toContain('The survey contradicts the posts. Favourability has moved against mix-adjusted opinion (correlation −0.62 over 30 waves, where −1 is always against each other).')
   })
 })
 
@@ -135,12 +135,12 @@ describe('what the survey says', () => {
     }, 'not-established')
     const [before] = survey(mean).split('How strongly')
     expect(before).toMatch(/Satisfaction stood at 6\.80 \(90% interval 6\.62 to 6\.97\), from 409 interviews\. No change on the wave before \(2026-09\) can be established: −0\.10 \(90% interval −0\.35 to \+0\.15\)/)
-    expect(survey(mean)).toContain('sampling error of the waves (about 0.11), to be seen')
+    expect(survey(mean)).toContain('only some people (which blurs it by about 0.11), to be seen')
   })
 
   test('what counts as a change is said with its level; a level of the account moves it', () => {
-    expect(survey(documents.leads)).toContain('A change counts as established if its p, adjusted for the metrics of the wave (Holm 1979), is at most 0.10; the intervals are not adjusted.')
-    expect(survey(composeHouse({ ...sampleFindings(), interval: 0.95 }))).toContain('is at most 0.050; the intervals')
+    expect(survey(documents.leads)).toContain('A change counts as established if chance alone would bring about one as large in at most 10% of cases, also allowing for how many metrics there are in the wave (its adjusted p); the intervals do not allow for that.')
+    expect(survey(composeHouse({ ...sampleFindings(), interval: 0.95 }))).toContain('in at most 5% of cases')
   })
 
   test('the wave stands in the tables only where a metric’s latest is not that of the others', () => {
@@ -154,7 +154,7 @@ describe('what the survey says', () => {
   test('small bases: flagged by a mark, hidden by a dash; both are explained only where there is one', () => {
     expect(survey(documents.leads)).toMatch(/Favourability, visitor 74 40\.8%\* 30\.6% to 51\.0% −2\.9 −17\.5 to \+11\.7/)
     expect(survey(documents.leads)).toMatch(/Favourability, islander 172 47\.8% /)
-    expect(survey(documents.leads)).toContain('An asterisk marks a figure whose effective base is 30 to 74')
+    expect(survey(documents.leads)).toContain('An asterisk marks a figure that few people stand behind: weighted, they are worth 30 to 74 interviews')
     const large = withSurvey(({ metrics }) => ({ metrics: metrics.filter(({ segment }) => segment !== 'visitor') }))
     expect(survey(large)).not.toContain('An asterisk')
     const hidden = withSurvey(({ metrics }) => ({ metrics: metrics.map((of) => (of.segment === 'visitor' ? { ...of, waves: of.waves.map((wave) => ({ ...wave, base: 21, shown: 'hidden' as const })) } : of)) }))
@@ -183,25 +183,25 @@ describe('lags', () => {
   test('are told in the unit of the grid, with plurals', () => {
     expect(survey(atLag(1))).toContain('The picture moves the posts’ opinion 1 week later')
     expect(survey(atLag(3, 'day'))).toContain('posts about 3 days ahead of the survey')
-    expect(survey(atLag(2, 'month'))).toContain('correlate most at a lead of about 2 months: 0.84')
+    expect(survey(atLag(2, 'month'))).toContain('are tied most closely with the posts about 2 months ahead: correlation 0.84')
     expect(survey(atLag(2, 'month'))).toContain('Best lag, months')
   })
   test('before, after and at once', () => {
     expect(survey(atLag(-2))).toContain('The picture moves the posts’ opinion 2 weeks earlier')
-    expect(survey(atLag(-2))).toContain('(posts about 2 weeks behind the survey)')
-    expect(survey(atLag(-2))).toContain('has moved with mix-adjusted opinion, about 2 weeks before it (best of 25 lags, correlation 0.84)')
+    expect(survey(atLag(-2))).toContain('The tie is closest with the posts about 2 weeks behind the survey: there')
+    expect(survey(atLag(-2))).toContain('has moved with mix-adjusted opinion, about 2 weeks before it (the closest of 25 time lags tried; correlation 0.84, where 0 is no tie and 1 or −1 a perfect one)')
     expect(survey(atLag(-2))).toContain('The survey came first, not the posts.')
     expect(survey(atLag(3))).not.toContain('The survey came first')
-    expect(survey(atLag(0))).toContain('has moved with mix-adjusted opinion, at the same time (best')
-    expect(survey(atLag(0))).toContain('The picture moves neither: at no lag do the two go together more closely.')
-    expect(survey(atLag(0))).toContain('correlate most without a lag: 0.84')
+    expect(survey(atLag(0))).toContain('has moved with mix-adjusted opinion, at the same time (the closest')
+    expect(survey(atLag(0))).toContain('The picture moves neither: at no time lag do the two go together more closely.')
+    expect(survey(atLag(0))).toContain('are tied most closely without a time lag: correlation 0.84')
   })
   test('the correlation comes with its interval, the number of independent waves, and the p that allows for all looks', () => {
-    expect(survey(documents.leads)).toContain('mix-adjusted opinion has a correlation of 0.84 with Favourability (90% interval 0.66 to 0.93). Sampling error weakens a correlation: had the waves none, this one would be expected further from 0 (Spearman 1904). At that lag 30 of 30 waves find posts to be compared with;')
-    expect(survey(documents.leads)).toContain('they are worth about 17 independent ones. Picking the best of 25 lags flatters.')
-    expect(survey(documents.leads)).toContain('under 1% of them did as well at their own best lag (adjusted p 0.003). The interval does not allow for that picking, and the correlation uses opinion as known today')
+    expect(survey(documents.leads)).toContain('there mix-adjusted opinion has a correlation of 0.84 with Favourability (90% interval 0.66 to 0.93), where 1 is always together, 0 no tie and −1 always against each other. Each wave asks only some people, which as a rule makes a tie look weaker than it is. There 30 of 30 waves find posts to be compared with;')
+    expect(survey(documents.leads)).toContain('they tell no more than about 17 unrelated ones would. Picking the best of 25 time lags flatters.')
+    expect(survey(documents.leads)).toContain('under 1% of them did as well at their own best time lag. The interval does not allow for that picking, and the correlation uses opinion as known today')
     expect(survey(documents.leads)).toContain('Blogs, raw 3 0.40')
-    expect(survey(documents.leads)).toContain('In all 175 correlations were looked at: 7 series at 25 lags each.')
+    expect(survey(documents.leads)).toContain('In all 175 comparisons were made: 7 series, each at 25 time lags.')
   })
   test('waves that do not differ go with nothing, and are not called too few', () => {
     const still = withSurvey(({ candidates }) => ({ candidates: candidates.map((of) => ({ ...of, best: null, best_lag: null, adjusted_p: null })) }), 'not-established')
@@ -214,7 +214,7 @@ describe('lags', () => {
     const document = withSurvey(({ candidates }) => ({
       candidates: candidates.map((of) => (of.series === 'adjusted' ? { ...of, best: { ...of.best!, low: null, high: null, corrected: null } } : of.series === 'raw' ? { ...of, best: null, best_lag: null, adjusted_p: null } : of)),
     }))
-    expect(survey(document)).toContain('a correlation of 0.84 with Favourability. At that lag 30 of 30 waves')
+    expect(survey(document)).toContain('a correlation of 0.84 with Favourability, where 1 is always together, 0 no tie and −1 always against each other. There 30 of 30 waves')
     expect(survey(document)).toContain('Raw average – – – – –')
     expect(survey(document)).not.toMatch(unworded)
   })
@@ -225,9 +225,9 @@ describe('forecasts', () => {
   const sizes = 'Forecasts from posts and past waves missed by 1.5 percentage points as a rule; repeating the last wave missed by 3.0, taking the average of all earlier waves by 3.6. '
   test.each([
     [0.041, 0.018, 'Both differences are more than chance is likely to bring about.'],
-    [0.05, 0.3, 'Only that from the last wave is more than chance is likely to bring about; that from the average may be chance (p 0.30).'],
-    [0.06, 0.01, 'Only that from the average is more than chance is likely to bring about; that from the last wave may be chance (p 0.060).'],
-    [0.2, 0.3, 'Either difference may be chance (p 0.20 and 0.30).'],
+    [0.05, 0.3, 'The advantage over the last wave is more than chance is likely to bring about; one as large as that over the average comes about by chance in 30% of cases.'],
+    [0.06, 0.01, 'The advantage over the average is more than chance is likely to bring about; one as large as that over the last wave comes about by chance in 6% of cases.'],
+    [0.2, 0.3, 'Either difference may be chance, which makes as large ones in 20% and 30% of cases.'],
     [null, 0.3, 'Whether both differences are more than chance can’t be told.'],
   ])('smaller misses with p %f and %f', (carry, mean, sentence) => {
     const document = withRivals({ 'carry-forward': { dm_p: carry }, 'past-mean': { dm_p: mean } })
@@ -241,8 +241,8 @@ describe('forecasts', () => {
     expect(survey(withRivals({ 'carry-forward': { rmse_ratio: 0.8 }, 'past-mean': { rmse_ratio: 0.9 } }, 'tracks'))).toContain('more than chance is likely to bring about. By the rule below that alone does not show that the posts foretell the survey.')
   })
   test.each([
-    [0.55, 0.03, 'the posts add more to the waves than chance is likely to bring about (p 0.030).', 'what the survey may find. '],
-    [0.55, 0.12, 'what the posts add to the waves may be chance (p 0.12).', 'what the survey may find, but how much it adds to the waves themselves is not yet clear. '],
+    [0.55, 0.03, 'the posts add more to the waves than chance is likely to bring about (which adds as much in 3% of cases).', 'what the survey may find. '],
+    [0.55, 0.12, 'what the posts add to the waves may be chance, which adds as much in 12% of cases.', 'what the survey may find, but how much it adds to the waves themselves is not yet clear. '],
     [1.1, 0.12, 'the posts add nothing to the waves that shows.', 'what the survey may find, though so far the waves alone foretold it no worse. '],
   ])('beside the same model without posts: ratio %f, p %f', (ratio, p, sentence, trust) => {
     const document = withRivals({ 'waves-alone': { rmse_ratio: ratio, dm_p: p } })
@@ -292,20 +292,20 @@ describe('the outcome', () => {
   const outcome = sampleFindings().outcome!
   const withOutcome = (change: Partial<typeof outcome>) => survey(composeHouse({ ...sampleFindings(), outcome: { ...outcome, ...change } }))
   test('is supporting evidence, with the number of looks', () => {
-    expect(survey(documents.leads)).toContain('Where opinion rose by 1 point, the outcome grew by 0.21 percentage points more than otherwise, one month later (90% interval +0.07 to +0.35; adjusted p 0.060, allowing for 4 lags looked at).')
+    expect(survey(documents.leads)).toContain('Where opinion rose by 1 point, the outcome grew by 0.21 percentage points more than otherwise, one month later (90% interval +0.07 to +0.35). Chance alone would bring about as close a tie in 6% of cases, allowing for all 4 time lags looked at.')
     expect(survey(documents.leads)).toContain('This is supporting evidence only')
     expect(survey(documents.leads)).toContain('market, whose growth of 1% goes with growth of +0.8% (90% interval +0.6 to +1.0)')
   })
   test('what does not stand the looks is not announced', () => {
     const open = withOutcome({ lags: outcome.lags.map((lag) => ({ ...lag, adjusted_p: 0.3 })), market: false, market_effect: null })
-    expect(open).toContain('That the growth of the outcome goes with opinion can’t be established: at the best of 4 lags looked at, a rise of opinion by 1 point goes with growth of +0.21 percentage points')
+    expect(open).toContain('That the growth of the outcome goes with opinion can’t be established: at the best of 4 time lags looked at, a rise of opinion by 1 point goes with growth of +0.21 percentage points')
     expect(open).not.toMatch(/the outcome grew by|(?<!is )not known/)
     expect(open).toContain('No market was given')
   })
   test('how much later is told in months where spans are months, else in days', () => {
     expect(withOutcome({ best_lag: 1, span_days: 7 })).toContain('than otherwise, about 7 days later (')
     expect(withOutcome({ best_lag: 2, span_days: 31, lags: outcome.lags.map((lag) => ({ ...lag, adjusted_p: 0.02 })) })).toContain('than otherwise, 2 months later (')
-    expect(withOutcome({ best_lag: 0, lags: outcome.lags.map((lag) => ({ ...lag, adjusted_p: 0.02 })) })).toContain('than otherwise in the same span (')
+    expect(withOutcome({ best_lag: 0, lags: outcome.lags.map((lag) => ({ ...lag, adjusted_p: 0.02 })) })).toContain('than otherwise in the same stretch of time (')
   })
   test('none, or one without a lag that could be computed: nothing is said', () => {
     expect(survey(composeHouse({ ...sampleFindings(), outcome: null }))).not.toContain('outcome')

@@ -20,7 +20,7 @@ export const templates = fileURLToPath(new URL('../../../templates/', import.met
 export const sampleWords: Words = createWords({
   'axis-points': 'Points', 'axis-points-change': 'Points of change', 'axis-points-offset': 'Points off', 'label-raw': 'Raw average', 'label-adjusted': 'Mix-adjusted',
   'label-survey': 'Survey: …', 'label-survey-percent': 'Survey: …, %', 'label-posts': 'Posts', 'label-posts-later': 'Posts, moved … later', 'label-posts-earlier': 'Posts, moved … earlier', 'label-forecast': 'Forecast', 'label-observed': 'Found', 'axis-pull': 'Points a point', 'axis-points-correction': 'Points of correction', 'axis-times': 'Times as likely', 'axis-more-authors': 'More authors',
-  'label-customers': 'Customers', 'label-heard': 'Heard', 'label-importance': 'Importance', 'label-talk': 'Talk', 'label-reported': 'As reported', 'label-next': 'next', 'metric-segment': '{label}, {segment}', 'venue-raw': '{label}, raw',
+  'label-customers': 'Customers', 'label-heard': 'Heard', 'label-importance': 'Importance', 'label-talk': 'Talk', 'label-reported': 'As reported', 'label-next': 'next', 'label-first-sealed': 'As first sealed', 'label-stands-now': 'As it stands now', 'label-break': 'new definition', 'metric-segment': '{label}, {segment}', 'venue-raw': '{label}, raw',
   steps: '{steps} {grid}', 'mark-flagged': '*', 'span-base': 'Base', 'span-review': 'Period under review', 'when-base': 'Base', 'when-now': 'This period', 'part-factor_mix': 'Mix of {factor}',
   'page-of': 'Page {page} of {pages}', overline: 'Brand health review', 'cover-people': 'By {prepared}, {reviewed}', 'skip-to-review': 'Skip to the review', 'cell-empty': '–', range: '{low} to {high}',
   'probability-over': 'over {figure}', 'probability-under': 'under {figure}', 'not-known': 'not known',
@@ -28,7 +28,7 @@ export const sampleWords: Words = createWords({
 
 export const chartNames = ['opinion', 'decomposition', 'venues', 'venues-before', 'mix-venue', 'mix-poster', 'topics', 'posters', 'accounting',
   'tracker', 'agreement', 'survey-lags', 'survey-forecasts', 'lag-weights',
-  'staying', 'spread', 'pull', 'benchmark', 'importance', 'tipping', 'coder', 'hearing'] as const
+  'staying', 'spread', 'pull', 'benchmark', 'importance', 'tipping', 'coder', 'hearing', 'revisions'] as const
 
 export async function sampleRendering(findings: Findings = sampleFindings()): Promise<Rendering> {
   return { tables: tablesOf(findings), charts: await loadCharts(`${templates}charts`), words: sampleWords, theme: await loadTheme(`${templates}theme`), imprint: imprintOf(findings, sampleWords) }

@@ -8,7 +8,7 @@ const words = await houseWords()
 const advised: Readonly<Record<string, Readonly<Record<string, string | number>>>> = {
   'hear-venue': { venue: 'Blogs', authors: 200, heard: 118, width_before: 3.6, width_after: 3, cost: 600 },
   'hear-topic': { topic: 'On board', authors: 150, talk: 0.16, importance: 0.27, width_before: 4.2, width_after: 3.7, cost: 150 },
-  'hear-segment': { margin: 'segment', segment: 'islander', authors: 240, jointly: 385, heard: 0.21, customers: 0.34, effective_before: 611.6, effective_after: 940.8, cost: 240 },
+  'hear-segment': { margin: 'segment', segment: 'islander', authors: 385, alone: 240, heard: 0.21, customers: 0.34, effective_before: 611.6, effective_after: 940.8, cost: 385 },
   'invite-everyone': { extremes: 0.61 }, 'standing-way-in': { share: 0.27 },
   'survey-start': { waves: 8 }, 'survey-waves': { waves: 11, waves_now: 30, correlation: 0.31 }, 'survey-interviews': { interviews: 900, interviews_now: 400, correlation: 0.31 },
   'audit-start': { codings: 1750, per_venue: 350, width: 2 }, 'audit-more': { venue: 'Blogs', codings: 22, needed: 50 },
@@ -37,12 +37,12 @@ describe('figures', () => {
     expect(evidence('audit-start')).toContain('about ±1.00 points')
   })
   test('what was heard is a share of a segment and a number of a venue', () => {
-    expect(evidence('hear-segment')).toBe('They are 34% of the customers and 21% of the authors heard. Counted by the customers’ shares, those heard are worth 612 effective authors; with so many more, 941. To bring all groups to their shares at once, 385 more of this one are needed.')
-    expect(evidence('hear-segment', { jointly: 0 })).not.toContain('at once')
+    expect(evidence('hear-segment')).toBe('They are 34% of the customers and 21% of the authors heard. So many bring them to their share if the other groups heard too little are filled up as well; 240 would do for this group alone. About all customers, those heard tell as much as 612 would who are made up like the customers; with so many more of this group, as much as 941.')
+    expect(evidence('hear-segment', { alone: 0 })).toContain('the authors heard. So many bring them to their share. About all customers')
   })
   test('what is not known is left out: no correlation yet, no mention at either end', () => {
     expect(evidence('survey-waves')).toContain('30 waves can be compared')
-    expect(evidence('survey-waves')).toContain('correlation 0.31')
+    expect(evidence('survey-waves')).toContain('correlation 0.31 of at most 1')
     expect(evidence('survey-waves', { correlation: 0, waves_now: 0 })).toBe('No wave can be compared with the posts now, too few for a verdict.')
     expect(evidence('invite-everyone')).toContain('61% of the mentions')
     expect(evidence('invite-everyone', { extremes: 0 })).toBe('Whoever asks only some people hears what these think, not what customers think.')

@@ -1,5 +1,6 @@
 import { expect, test } from 'vitest'
 import { wordCaveat } from '../../../generator/words/caveats.ts'
+import { definitionParts } from '../../../model/past/definition.ts'
 import { houseWords } from '../../support/house-words.ts'
 
 const words = await houseWords()
@@ -10,7 +11,7 @@ const raised: Readonly<Record<string, Readonly<Record<string, string | number>>>
   'uneven-history': { venue: 'Blogs', first: '2025-01-06', last: '2026-03-30' }, 'venue-vanished': { venue: 'Blogs', last: '2026-03-30' },
   'venue-appeared': { venue: 'Blogs', first: '2026-03-30' }, 'venue-thin': { venue: 'Blogs', authors: 7 }, 'thin-data': { mentions: 31 }, 'empty-steps': { steps: 1 },
   'level-unseen-in-base': { factor: 'topic', level: 'Strike' }, 'values-unmapped': { factor: 'topic', values: 'harbour works', mentions: 118 },
-  'given-not-used': { keys: 'events' }, 'coder-unaudited': {}, 'survey-absent': {}, 'benchmark-absent': {}, 'no-sampling-error': {}, 'level-conventional': {},
+  'coder-unaudited': {}, 'survey-absent': {}, 'benchmark-absent': {}, 'no-sampling-error': {}, 'level-conventional': {},
   'pooled-average-misleads': { raw_change: -2.27, change: 2.21 }, concentration: { share: 0.31 }, 'mix-moved': { factor: 'venue', level: 'Boards', from: 0.24, to: 0.41 },
   'opinion-drift-entangled': { correlation: -0.87 }, 'fit-not-converged': { pareto_k: 0.83, ess: 212 }, 'model-misfit': { venue: 'Blogs' }, 'clock-times': { count: 9 }, 'uneven-volume': { least: 1543, most: 5676 }, 'period-unfinished': { last: '2026-10-20' }, 'many-rejected': { count: 549, share: 0.183 },
   'survey-too-few': { pairs: 3, needed: 8 }, 'survey-contradicts': { label: 'Favourability', correlation: -0.62, pairs: 30 }, 'survey-not-established': { label: 'Favourability', pairs: 12 },
@@ -20,13 +21,14 @@ const raised: Readonly<Record<string, Readonly<Record<string, string | number>>>
   'conversation-pull': { venue: 'Blogs', lean: 'away', slope: -0.13 }, 'benchmark-mismatch': { margin: 'segment', known: 'yes', share: 0.31, unreached: 1, names: 'freight' },
   'audit-refused': { scope: 'venue', venue: 'Blogs', reason: 'too-few' }, 'coder-biased': { correction: -1.9 }, 'talk-unlike-importance': { share: 0.24 }, 'prior-matters': { shift: 0.41 },
   'no-previous-period': {}, 'ready-made-authors': {}, 'sharp-move': { steps: 2 },
+  'revisions-large': { of: 'change', typical: 0.84, half: 1.42 }, 'definition-break': { part: 'target_mix', after: '2026-09', before: '2026-10', bridged: 'no' }, 'late-posts': { late: 312, gone: 2, periods: 4 },
 }
 
 test.each(Object.entries(raised))('caveat %s is worded whole: evidence, meaning, remedy', (code, figures) => {
   const worded = wordCaveat(words, code, figures)
   for (const sentence of Object.values(worded)) expect(sentence).toMatch(/^(?!.*(NaN|undefined))[A-Z0-9“].*\.$/)
   for (const [name, figure] of Object.entries(figures)) {
-    if (typeof figure === 'string' && !['factor', 'kind', 'scope', 'lean', 'known', 'reason'].includes(name) && !/^\d/.test(figure)) expect(JSON.stringify([worded, words.say(`caveat-${code}-title`, { ...figures })])).toContain(figure)
+    if (typeof figure === 'string' && !['factor', 'kind', 'scope', 'lean', 'known', 'reason', 'of', 'part', 'bridged'].includes(name) && !/^\d/.test(figure)) expect(JSON.stringify([worded, words.say(`caveat-${code}-title`, { ...figures })])).toContain(figure)
   }
   expect(words.has(`caveat-${code}-title`)).toBe(true)
 })
@@ -44,8 +46,8 @@ test('a survey’s figures are written by its kind, its bases counted in words',
   expect(wordCaveat(words, 'survey-departs', raised['survey-departs']!).evidence)
     .toBe('Favourability came out at 38.1%, where posts and past waves had led to expect 44.0%; this is outside the 95% interval of the forecast.')
   expect(wordCaveat(words, 'survey-departs', { label: 'Satisfaction', kind: 'mean', observed: 6.814, expected: 7.1 }).evidence).toContain('came out at 6.81, where posts and past waves had led to expect 7.10;')
-  expect(wordCaveat(words, 'survey-bases-small', { hidden: 0, flagged: 1 }).evidence).toBe('1 base is marked: its effective base is 30 to 74.')
-  expect(wordCaveat(words, 'survey-bases-small', { hidden: 2, flagged: 0 }).evidence).toBe('2 bases are not shown: their effective bases are under 30.')
+  expect(wordCaveat(words, 'survey-bases-small', { hidden: 0, flagged: 1 }).evidence).toBe('1 group is marked: weighted, it is worth 30 to 74 interviews.')
+  expect(wordCaveat(words, 'survey-bases-small', { hidden: 2, flagged: 0 }).evidence).toBe('2 groups of people asked in a wave are not shown: weighted, they are worth fewer than 30 interviews.')
   expect(wordCaveat(words, 'survey-too-few', { pairs: 0, needed: 8 }).evidence).toBe('No wave can be compared with the posts; at least 8 are needed.')
 })
 
@@ -69,4 +71,14 @@ test('the catalogue words no caveat that is not raised', () => {
 test('it can fail: an unknown code and a missing figure are refused', () => {
   expect(() => wordCaveat(words, 'no-such', {})).toThrow('caveat-no-such')
   expect(() => wordCaveat(words, 'authors-unknown', {})).toThrow('caveat-authors-unknown-evidence')
+})
+
+test('earlier reviews: levels or changes, each part that changed by its name, bridged or not, one late mention and many', () => {
+  expect(wordCaveat(words, 'revisions-large', raised['revisions-large']!).evidence).toBe('Changes told earlier have typically moved by 0.8 points since; ±1.4 points were told with them.')
+  expect(wordCaveat(words, 'revisions-large', { of: 'level', typical: 2.2, half: 4.1 }).evidence).toMatch(/^Levels told earlier have typically moved by 2\.2 points/)
+  for (const part of definitionParts) expect(wordCaveat(words, 'definition-break', { ...raised['definition-break']!, part }).evidence).toBe(`Changed between September 2026 and October 2026: ${words.say(`definition-${part}`)}.`)
+  expect(wordCaveat(words, 'definition-break', { ...raised['definition-break']!, bridged: 'yes' }).meaning).toContain('could be read anew')
+  expect(wordCaveat(words, 'definition-break', raised['definition-break']!).meaning).toContain('can’t be read anew')
+  expect(wordCaveat(words, 'late-posts', raised['late-posts']!).evidence).toBe('In 4 sealed periods, 312 mentions came in after the seal, and 2 are gone since.')
+  expect(wordCaveat(words, 'late-posts', { late: 1, gone: 0, periods: 1 }).evidence).toBe('In 1 sealed period, 1 mention came in after the seal.')
 })

@@ -62,9 +62,21 @@ test('ratios, p-values, fieldwork, events, counts', () => {
 
 test('chance, what lies outside an interval, effects of one point, lags of the outcome', () => {
   expect([0.049, 0.05, 0.0501].map((p) => write(p, 'chance', words))).toEqual(['clear', 'clear', 'open'])
-  expect([0.9, 0.95].map((interval) => write(interval, 'outside', words))).toEqual(['0.10', '0.050'])
+  expect([0.9, 0.95].map((interval) => write(interval, 'outside', words))).toEqual(['10%', '5%'])
   expect([write(-2.14, 'per-point', words), write(-2.14, 'per-point-size', words), write({ low: -0.4, high: 12 }, 'per-point-interval', words)]).toEqual(['\u22120.21', '0.21', '\u22120.04 to +1.20'])
   expect([[1, 30], [2, 31], [3, 7], [1, 27]].map(([best_lag, span_days]) => write({ best_lag, span_days }, 'span-lag', words))).toEqual(['one month', '2 months', 'about 21 days', 'about 27 days'])
+})
+
+test('a share told as below 5% is not lifted there by rounding', () => {
+  expect([0.02, 0.0449, 0.045, 0.04928, 0.0499999].map((share) => write(share, 'minor-share', words))).toEqual(['2%', '4%', 'under 5%', 'under 5%', 'under 5%'])
+  expect([0.05, 0.2].map((share) => write(share, 'minor-share', words))).toEqual(['5%', '20%'])
+})
+
+test('a period before that stands otherwise now than it was sealed, as one decimal shows; parts of a definition', () => {
+  const restated = (previous: number, sealed: number) => write({ previous: { mean: previous }, previous_sealed: { mean: sealed } }, 'restated', words)
+  expect([restated(23.6, 24.3), restated(24.04, 24.06), restated(24.06, 24.14), restated(-0.04, 0.04), restated(24.1, 24.1)]).toEqual(['yes', 'no', 'no', 'no', 'no'])
+  expect(write({ previous: { mean: 1 }, previous_sealed: null }, 'restated', words)).toBe('not known')
+  expect(write('target_mix', 'definition', words)).toBe('the fixed mix that opinion is stated at')
 })
 
 test('a level without a label of its own is worded, one with a label is not', () => {

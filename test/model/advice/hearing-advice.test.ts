@@ -45,8 +45,30 @@ describe('where to hear more people', () => {
     const { advice } = await analyseHere(segmented(simulated(40)), {}, { ...noInputs, benchmark: benchmark(0.5) })
     const [segment] = advice.filter(({ code }) => code === 'hear-segment')
     expect(segment).toMatchObject({ where: 'visitor', how_many: 160, gain_of: 'customer-mean' })
-    expect(segment).toMatchObject({ helps: 'clearly', figures: { jointly: 160 } })
+    expect(segment).toMatchObject({ helps: 'clearly', figures: { authors: 160, alone: 0 } })
     expect(segment.figures['effective_after']).toBeGreaterThan(segment.figures['effective_before'] as number)
+  })
+  describe('of five groups', () => {
+    const shares = [0.2, 0.25, 0.22, 0.2, 0.13]
+    const names = ['islander', 'commuter', 'holiday', 'freight', 'student']
+    const adviceFor = async (heard: readonly number[]) => {
+      const tables: IntakeTables = { ...simulated(40), segments: { margins: ['segment'], levels: [names], rows: heard.map((authors, l) => ({ levels: [l], authors, sum: 0, squares: 0.3 * authors })) } }
+      const { advice } = await analyseHere(tables, {}, { ...noInputs, benchmark: [{ margin: 'segment', levels: names.map((level, l) => ({ level, share: shares[l] })) }] })
+      return advice.filter(({ code }) => code === 'hear-segment')
+    }
+    test('one among the three least heard is worth hearing, though the interval hardly narrows', async () => {
+      const [student, ...others] = await adviceFor([230, 250, 220, 200, 100])
+      expect(student).toMatchObject({ where: 'student', how_many: 35, helps: 'clearly' })
+      expect(student.gain_share).toBeLessThan(0.05)
+      expect(others).toEqual([])
+    })
+    test('the fourth is not, and stands last; the number is that for all groups, with that for it alone beside it', async () => {
+      const advice = await adviceFor([390, 200, 160, 150, 100])
+      expect(advice.map(({ where }) => where).sort()).toEqual(['commuter', 'freight', 'holiday', 'student'])
+      // islanders, 390 at a share of 0.2: 1950 in all; alone (0.13 * 1000 - 100) / 0.87
+      expect(advice.at(-1)).toMatchObject({ where: 'student', how_many: 154, helps: 'hardly', figures: { authors: 154, alone: 35 } })
+      expect(advice.slice(0, -1).map(({ helps }) => helps)).toEqual(['clearly', 'clearly', 'clearly'])
+    })
   })
   test('none where they are heard as they are customers', async () => {
     const { advice } = await analyseHere(segmented(simulated(40)), {}, { ...noInputs, benchmark: benchmark(0.1) })

@@ -12,6 +12,7 @@ import type { Accounting } from '../../../model/intake/intake-tables.ts'
 import { analyseHere } from '../../support/analyse-reference.ts'
 import { sampleSurvey, type Survey } from '../../support/sample-survey.ts'
 import { houseWords } from '../../support/house-words.ts'
+import { sampleRevisions } from '../../support/sample-past.ts'
 import { sampleBenchmark, sampleCoder, sampleImportance, sampleStaying } from '../../support/sample-listening.ts'
 import { simulateCells } from '../../support/simulate-cells.ts'
 
@@ -31,7 +32,7 @@ beforeAll(async () => {
   // by chance alone one venue in twenty widens
   const findings = { ...found, speaking: { ...found.speaking, spread: found.speaking.spread.map((of) => ({ ...of, movement: 'not-established' as const })) } }
   expect(caveats.length).toBeGreaterThan(0)
-  calm = { findings, reading: createReading(tables, tables, targetMix(tables), sampling, posterior, 0.9), givenNotUsed: [] }
+  calm = { findings, reading: createReading(tables, tables, targetMix(tables), sampling, posterior, 0.9) }
 })
 
 const codesOf = (grounds: CaveatGrounds) => ruleCaveats(grounds).map(({ code }) => code)
@@ -59,6 +60,12 @@ const alike = { ...sampleBenchmark(), margins: sampleBenchmark().margins.map((ma
 const benchmark = (dissimilarity: number | null, unreachable: readonly number[] = []): Change => withFindings(() => ({
   benchmark: { ...alike, margins: alike.margins.slice(0, 1).map((margin) => ({ ...margin, dissimilarity })), unreachable: unreachable.map((customers) => ({ margin: 'segment', level: 'freight', customers })) },
 }))
+
+/** Figures that were sealed and have moved within what was told; nothing came late. */
+const calmRevisions: ReturnType<typeof sampleRevisions> = { ...sampleRevisions(), late: 0, gone: 0, breaks: [] }
+const revisions = (change: Partial<typeof calmRevisions> = {}): Change => withFindings(() => ({ revisions: { ...calmRevisions, ...change } }))
+const typical = (change: Partial<NonNullable<typeof calmRevisions.typical>>) => revisions({ typical: { ...calmRevisions.typical!, ...change } })
+const redefinition = (before: string) => revisions({ breaks: [{ after: '2024-08', before, parts: ['venues', 'base'], bridged: true }] })
 
 /** Other volumes of the periods. */
 function opinionPeriods(of: (mentions: number, last: boolean) => number): Change {
@@ -88,7 +95,6 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['period-unfinished', (grounds) => ({ ...grounds, reading: { ...grounds.reading, tables: { ...grounds.reading.tables, timeline: { ...grounds.reading.tables.timeline, quietDays: 20 } } } })],
   ['many-rejected', withFindings(({ accounting }) => ({ accounting: { ...accounting, rejected: accounting.received / 10 } }))],
   ['clock-times', withAccounting({ reasons: { 'time-doubled': 2 } })],
-  ['given-not-used', (grounds) => ({ ...grounds, givenNotUsed: ['events'] })],
   ['no-previous-period', opinion({ previous: null })],
   ['survey-contradicts', survey(() => ({ verdict: 'contradicts' }))],
   ['survey-too-few', survey(() => ({ verdict: 'too-few-waves' }))],
@@ -107,6 +113,9 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['coder-biased', withFindings(() => ({ coder: sampleCoder('applied', venuesNamed) }))],
   ['talk-unlike-importance', withFindings(() => ({ importance: sampleImportance([]) }))],
   ['prior-matters', withFindings(() => ({ sensitivity: { scales: [], shift: 0.4, reliable: true } }))],
+  ['revisions-large', typical({ change: 0.8, change_half_width: 1.5 })],
+  ['definition-break', (grounds) => redefinition(grounds.findings.period.name)(grounds)],
+  ['late-posts', revisions({ late: 12 })],
   ['opinion-drift-entangled', (grounds) => {
     const { columns } = grounds.reading
     // drifts that mirror opinion draw by draw: the posts can't tell one from the other
@@ -213,6 +222,27 @@ describe('thresholds', () => {
     expect(found(speaking(() => ({ spread: ofSample.spread.map((of) => ({ ...of, movement: 'down' as const })) })), 'spread-widening')).toEqual([])
     expect(found(withFindings(() => ({ importance: { ...sampleImportance([]), dissimilarity: 0.14 } })), 'talk-unlike-importance')).toEqual([])
     expect(found(withFindings(() => ({ sensitivity: { scales: [], shift: 0.9, reliable: false } })), 'prior-matters')).toEqual([])
+  })
+})
+
+describe('what the archive shows', () => {
+  const found = (change: Change) => ruleCaveats(change(calm)).filter(({ code }) => ['revisions-large', 'definition-break', 'late-posts'].includes(code))
+  test('figures that moved within half of half their interval are no matter, nor are two past periods', () => {
+    expect(found(revisions())).toEqual([])
+    expect(found(typical({ level: 2.0, half_width: 4.1, change: 0.74, change_half_width: 1.5 }))).toEqual([])
+    expect(found(typical({ periods: 2, level: 9 }))).toEqual([])
+  })
+  test('the change is looked at before the level', () => {
+    expect(found(typical({ level: 3, half_width: 4 }))).toEqual([{ code: 'revisions-large', severity: 'caution', figures: { of: 'level', typical: 3, half: 4 } }])
+    expect(found(typical({ level: 3, half_width: 4, change: 2, change_half_width: 1 })).map(({ figures }) => figures.of)).toEqual(['change'])
+    expect(found(typical({ change: null, change_half_width: null, level: 3, half_width: 4 })).map(({ figures }) => figures.of)).toEqual(['level'])
+  })
+  test('each part of a new definition is told, once: in the review that begins with it', () => {
+    expect(found(redefinition(calm.findings.period.name)).map(({ figures }) => [figures.part, figures.bridged])).toEqual([['venues', 'yes'], ['base', 'yes']])
+    expect(found(redefinition('2024-09'))).toEqual([])
+  })
+  test('posts that are gone are told as well as late ones', () => {
+    expect(found(revisions({ gone: 3 }))).toMatchObject([{ code: 'late-posts', severity: 'note', figures: { late: 0, gone: 3 } }])
   })
 })
 

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest'
-import { heardBy, neededAt, neededJointly, readBenchmark } from '../../../model/customers/benchmark.ts'
+import { heardBy, leastHeard, neededAt, neededJointly, readBenchmark } from '../../../model/customers/benchmark.ts'
 import type { SegmentTable } from '../../../model/intake/intake-tables.ts'
 
 const margins = [
@@ -74,6 +74,28 @@ describe('authors beside customers', () => {
       expect(segment.needed_jointly).toBe(100)
       expect(segment.levels.map(({ shortfall }) => shortfall)).toEqual([0, expect.closeTo(100 / 15, 9), expect.closeTo(10, 9)])
     })
+  })
+  describe('the authors to plan for', () => {
+    const planned = (heard: readonly number[]) => {
+      const rows = heard.map((authors, l) => ({ levels: [l], authors, sum: 0, squares: authors }))
+      const names = ['islander', 'visitor', 'freight']
+      const [margin] = readBenchmark(heardBy({ margins: ['segment'], levels: [names], rows }, [margins[0]]), 0.9, 10).margins
+      return margin.levels.map(({ planned: authors, needed, needed_jointly: jointly }) => [authors, needed, jointly])
+    }
+    test('are those for all levels at once where several are heard too little, since more are then asked of all of them', () => {
+      // 700 at a share of 0.5: 1400 in all
+      expect(planned([700, 250, 50])).toEqual([[0, 0, 0], [310, 250, 310], [90, 56, 90]])
+    })
+    test('are those for it alone where one is', () => {
+      // visitors stand at their share of 0.4, islanders above theirs
+      expect(planned([560, 400, 40])).toEqual([[0, 0, 0], [0, 0, 48], [67, 67, 72]])
+    })
+  })
+  test('the least heard are the three furthest below their shares over all margins, and none that is less than half a point below', () => {
+    const levels = (shortfalls: readonly (number | null)[]) => shortfalls.map((shortfall, l) => ({ ...found.margins[0].levels[0], level: `level ${l}`, shortfall }))
+    const least = (...of: (readonly (number | null)[])[]) => [...leastHeard({ margins: of.map((shortfalls) => ({ ...found.margins[0], levels: levels(shortfalls) })) })].map(({ shortfall }) => shortfall)
+    expect(least([4, 0.7, 0], [9, 0.6, null])).toEqual([9, 4, 0.7])
+    expect(least([0.49, 0, null])).toEqual([])
   })
   test('levels of fewer authors than may be shown are not told, nor by a number worked out from theirs', () => {
     const few = readBenchmark(heardBy({ ...segments, rows: [row(0, 1, 100, 0), row(2, 0, 9, 0.5)] }, margins), 0.9, 10)
