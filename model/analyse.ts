@@ -92,7 +92,7 @@ export async function analyse(
     period: timeline.review, previous_period: reading.previousSteps === null ? null : timeline.periods[timeline.current - 1],
     period_steps: readPeriodSteps(reading),
     grid: timeline.grid, interval: spec.interval,
-    accounting: readAccounting(tables, spec.facts),
+    accounting: readAccounting(tables),
     opinion,
     decomposition: readDecomposition(reading, spec.interval),
     venues: readVenues(reading),

@@ -4,7 +4,7 @@ export interface Shares {
   readonly threads: number
 }
 
-/** An account of some hundred thousand posts stays below this; it is a bound for small machines, not a measure. */
+/** Several times what an account of 20,000 posts takes with its browser: for small machines. */
 const memoryOfOne = 2 * 2 ** 30
 /** All documents are composed and drawn on the program's one main thread: more accounts than this would wait for each other there. */
 const mostAtOnce = 4

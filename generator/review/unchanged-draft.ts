@@ -6,7 +6,7 @@ import { draftChanges, type DraftChanges } from '../archive/draft-changes.ts'
 import { madeHere } from '../archive/manifest.ts'
 import { readRecord, type BuildRecord } from '../archive/record.ts'
 import { periodNamed } from '../calendar/periods.ts'
-import { soundArchive } from '../past/read-past.ts'
+import { soundArchive, type SealedBefore } from '../past/read-past.ts'
 import type { Program } from '../program/program.ts'
 import type { Draft } from './build-review.ts'
 import { readHouse } from './house.ts'
@@ -35,11 +35,11 @@ export async function unchangedDraft(program: Program, account: Account, wish: D
   const alike = (await recordsOf(drafts)).filter((record) => madeAlike(record, program, account, wish))
   if (alike.length === 0) return null
   const house = await readHouse(program, account)
-  const { end } = await soundArchive(account.folder)
+  const archive = await soundArchive(account.folder)
   for (const record of alike) {
     const { kept, notKept } = inputPaths(account, house, record.period)
     const standing = { folder: account.folder, draft: join(drafts, record.period), inputs: [...kept, ...notKept] }
-    if (record.past === end && sameNames(record, standing.inputs) && !hasChanges(await draftChanges(standing, record))) return { folder: standing.draft, findings: await findingsOf(standing.draft) }
+    if ((record.past === archive.end || isSealed(record, archive)) && sameNames(record, standing.inputs) && !hasChanges(await draftChanges(standing, record))) return { folder: standing.draft, findings: await findingsOf(standing.draft) }
   }
   return null
 }
@@ -60,6 +60,12 @@ function madeAlike(record: BuildRecord, program: Program, { account, reporting }
   const made = Object.entries(madeHere(program)).every(([part, here]) => record.program[part as keyof BuildRecord['program']] === here)
   const printed = browser === null || (record.program.browser === browser && record.files.some(({ path }) => path === 'review.pdf'))
   return wanted && made && printed && record.seed === seed && record.account === account && periodNamed(reporting, record.period) !== undefined
+}
+
+/** Whether this very draft has been sealed: building it again would only make it look back at itself. */
+function isSealed({ period, past, files }: BuildRecord, { seals }: SealedBefore): boolean {
+  const hashOf = (of: BuildRecord['files']) => of.find(({ path }) => path === 'findings.json')?.sha256
+  return seals.some(({ manifest }) => manifest.period === period && manifest.previous === past && hashOf(manifest.files) === hashOf(files))
 }
 
 /** Names first: inputs that have come or gone are found without hashing any. */

@@ -21,13 +21,13 @@ export interface SharedMix {
 export function sharedMix(own: readonly Factor[], mix: TargetMix, other: readonly Factor[]): SharedMix | null {
   const names = other.map(({ levels }) => levels.map(({ name }) => name))
   const restricted = mix.shares.map((shares, f) => shares.map((share, l) => (names[f].includes(own[f].levels[l].name) ? share : 0)))
-  const kept = restricted.map((shares) => shares.reduce((sum, share) => sum + share, 0))
+  const kept = restricted.map((shares, f) => (shares.every((share, l) => share === mix.shares[f][l]) ? 1 : shares.reduce((sum, share) => sum + share, 0)))
   if (kept.some((share) => share <= 0)) return null
   const scaled = restricted.map((shares, f) => shares.map((share) => share / kept[f]))
   return {
     own: scaled,
     other: names.map((levels, f) => Float64Array.from(levels, (name) => scaled[f][own[f].levels.findIndex((level) => level.name === name)] ?? 0)),
-    covered: Math.min(1, ...kept),
+    covered: Math.min(...kept),
     leftOut: own.flatMap(({ name: factor, levels }, f) => levels.filter(({ name }, l) => mix.shares[f][l] > 0 && !names[f].includes(name)).map(({ label }) => ({ factor, label }))),
   }
 }

@@ -17,7 +17,7 @@ export interface AccountFacts {
 }
 
 /** The accounting of rows, and how many mentions the period under review holds. */
-export function readAccounting(tables: IntakeTables, facts: AccountFacts): Findings['accounting'] {
+export function readAccounting(tables: IntakeTables): Findings['accounting'] {
   const { accounting, timeline, cells } = tables
   let inPeriod = 0
   for (let c = 0; c < cells.count; c++) if (timeline.periodOf[cells.step[c]] === timeline.current) inPeriod += cells.mentions[c]

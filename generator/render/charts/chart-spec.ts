@@ -85,7 +85,7 @@ export function tablesIn(spec: Json): readonly string[] {
 }
 
 /** The one place where our JSON is taken for Vega-Lite's own type: its compiler checks it. */
-export function asVegaLite(spec: ChartSpec): TopLevelSpec {
+export function asVegaLite(spec: Omit<ChartSpec, 'name'>): TopLevelSpec {
   return spec as unknown as TopLevelSpec
 }
 

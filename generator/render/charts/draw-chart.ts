@@ -53,8 +53,10 @@ async function draw(spec: ChartSpec, tables: readonly Table[], words: Words, the
 async function drawWhole(whole: ChartSpec, config: Config, theme: Theme, size: DrawingSize): Promise<string> {
   const [warnings, errors]: [string[], string[]] = [[], []]
   measureBy(theme.advances)
-  const { spec: compiled } = compile(asVegaLite(whole), { config, logger: collector(warnings, warnings) })
-  if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${whole.name}: ${warnings.join('; ')}`)
+  // a name would stand before that of every scale, and expressions call them as they are known
+  const { name, ...nameless } = whole
+  const { spec: compiled } = compile(asVegaLite(nameless), { config, logger: collector(warnings, warnings) })
+  if (warnings.length > 0) throw new Error(`Unexpected warning while drawing chart ${name}: ${warnings.join('; ')}`)
   resetSVGDefIds()
   setRandom(randomLCG(1))
   // a layer without rows, such as labels' leaders where none had to move, has no extent, and vega would warn of it
@@ -62,8 +64,8 @@ async function drawWhole(whole: ChartSpec, config: Config, theme: Theme, size: D
   const view = new View(parse(compiled, undefined, { ast: true }), options)
   try {
     const svg = await view.toSVG()
-    if (errors.length > 0) throw new Error(`Unexpected error while drawing chart ${whole.name}: ${errors.join('; ')}`)
-    return cleanSvg(requirePlain(svg), `${whole.name}-${size}`)
+    if (errors.length > 0) throw new Error(`Unexpected error while drawing chart ${name}: ${errors.join('; ')}`)
+    return cleanSvg(requirePlain(svg), `${name}-${size}`)
   } finally {
     view.finalize()
   }

@@ -5,7 +5,7 @@ import { dirname, join } from 'node:path'
 import { createGenerator } from '../../../model/random/generator.ts'
 import { quotedCsv } from '../intake/temporary-account.ts'
 
-/** 700 posts by 250 authors in 26 weeks. */
+/** 700 posts by 250 authors in 26 weeks, and 200 about a competitor. */
 function posts(): string {
   const random = createGenerator(31, 0)
   const any = <T>(...of: readonly T[]) => of[random.integer(of.length)]
@@ -13,14 +13,20 @@ function posts(): string {
     `p${i}`, new Date(Date.UTC(2025, 2, 3) + random.uniform() * 182 * 86_400_000).toISOString(), any('boards', 'blogs'), `author ${random.integer(250)}`,
     any('bad', 'fair', 'good', 'good'), any('fares', 'crew'), any('islander', 'visitor'), `post ${i} with words that only its author has written`,
   ])
-  return quotedCsv(['id', 'at', 'place', 'who', 'tone', 'theme', 'kind', 'body'], rows)
+  // more of them, about a competitor
+  const beside = Array.from({ length: 200 }, (_, i) => [
+    `q${i}`, new Date(Date.UTC(2025, 2, 3) + random.uniform() * 182 * 86_400_000).toISOString(), any('boards', 'blogs'), `author ${random.integer(150)}`,
+    any('bad', 'fair', 'good'), any('fares', 'crew'), any('islander', 'visitor'), `post ${i} on another line with words that only its author has written`,
+  ])
+  return quotedCsv(['id', 'at', 'place', 'who', 'tone', 'theme', 'kind', 'body', 'about'], [...rows.map((row) => [...row, 'Skerrow Ferries']), ...beside.map((row) => [...row, 'Tarrin Line'])])
 }
 
 const account = `account: whole
 brand: Skerrow Ferries
+competitors: [Tarrin Line, '../Nobody: at all']
 mentions:
   - files: posts/*.csv
-    columns: { id: id, posted_at: at, venue: place, author: who, score: tone, topic: theme, segment: kind, text: body }
+    columns: { id: id, posted_at: at, venue: place, author: who, score: tone, topic: theme, segment: kind, text: body, brand: about }
     score: { labels: { bad: -1, fair: 0, good: 1 } }
 survey: { files: survey/*.csv }
 events: { files: events.csv }
@@ -47,7 +53,7 @@ const files: Readonly<Record<string, string>> = {
   'benchmark.csv': 'margin,level,share\nsegment,islander,0.7\nsegment,visitor,0.3\n',
   'audit.csv': `venue,true_label,coded_label,count\n${['boards', 'blogs'].flatMap((venue) => ['bad', 'fair', 'good'].flatMap((truth) => ['bad', 'fair', 'good'].map((coded) => `${venue},${truth},${coded},${truth === coded ? 30 : 3}`))).join('\n')}\n`,
   'importance.csv': 'topic,weight\nfares,0.6\ncrew,0.4\n',
-  'looks/template.md': '::section{name="opinion"}\n\n::notes\n\n::section{name="own"}\n\n::section{name="made"}\n\n::section{name="glossary"}\n',
+  'looks/template.md': '::section{name="opinion"}\n\n::notes\n\n::section{name="own"}\n\n::section{name="competitors"}\n\n::section{name="made"}\n\n::section{name="glossary"}\n',
   'looks/sections/own.md': '## Our own\n\n::chart{name="months" title="Posts by month" alt="Bars: posts by month."}\n\n::include{file="texts/origin.md"}\n',
   'looks/charts/months.json': JSON.stringify(chart),
   'texts/origin.md': 'Where the posts come from.\n',

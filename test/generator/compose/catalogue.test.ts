@@ -6,7 +6,7 @@ import { houseWords, templatesFolder } from '../../support/house-words.ts'
 const words = await houseWords()
 
 /** Messages that are said by a name put together from a code of the findings or of a table. */
-const composed = [/^caveat-.+-(title|evidence|meaning|remedy)$/, /^advice-.+-(action|evidence|success)$/, /^(part|stage|when|scope|scale|factor|level|name|span|shown|movement|rival|direction|grid|series|stance|leaning|poster|left_as_coded|definition)-/, /^outcome-(met|partly|not-met|unknown)$/, /^chart-.+-(title|note|alt)$/, /^column-/, /^table-/, /^term-/, /^period-(quarter|week)$/]
+const composed = [/^caveat-.+-(title|evidence|meaning|remedy)$/, /^advice-.+-(action|evidence|success)$/, /^(part|stage|when|scope|scale|factor|level|name|span|shown|movement|rival|direction|grid|series|stance|leaning|poster|left_as_coded|status|definition)-/, /^outcome-(met|partly|not-met|unknown)$/, /^chart-.+-(title|note|alt)$/, /^column-/, /^table-/, /^term-/, /^period-(quarter|week)$/]
 
 function filesIn(folder: string): readonly string[] {
   return readdirSync(folder, { withFileTypes: true, recursive: true }).filter((entry) => entry.isFile() && /\.(ts|json|md|css)$/.test(entry.name))

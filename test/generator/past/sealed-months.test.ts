@@ -5,8 +5,9 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { readAccount } from '../../../generator/account/read-account.ts'
 import { openBrowser } from '../../../generator/print/open-browser.ts'
 import { thisProgram } from '../../../generator/program/program.ts'
-import { buildReview } from '../../../generator/review/build-review.ts'
+import { buildReview, type Draft } from '../../../generator/review/build-review.ts'
 import { silent } from '../../../generator/review/stages.ts'
+import { unchangedDraft } from '../../../generator/review/unchanged-draft.ts'
 import type { Findings } from '../../../model/findings/schema.ts'
 import { runCommand } from '../../support/run-command.ts'
 import { wholeAccount } from '../archive/whole-account.ts'
@@ -17,6 +18,7 @@ let browser: Browser
 let july: Findings
 let august: Findings
 let held: number
+let afterSeal: Draft | null
 
 const build = async (period: string) => (await buildReview(thisProgram(), await readAccount(folder), { period, seed: 7, browser: () => Promise.resolve(browser), progress: silent })).findings
 const seal = async (period: string, ...more: readonly string[]) => JSON.parse((await runCommand('seal', folder, '--period', period, '--json', ...more)).out) as { readonly ok: boolean; readonly faults: readonly { readonly code: string }[] }
@@ -35,6 +37,7 @@ beforeAll(async () => {
   await writeFile(posts, [head, ...early, ''].join('\n'))
   july = await build('2025-07')
   expect((await seal('2025-07')).ok).toBe(true)
+  afterSeal = await unchangedDraft(thisProgram(), await readAccount(folder), { period: '2025-07', seed: 7, browser: await browser.version() })
   await writeFile(posts, whole)
   await appendFile(join(folder, 'account.yaml'), 'base: { from: 2025-03-03, to: 2025-05-31 }\n')
   august = await build('2025-08')
@@ -68,6 +71,10 @@ describe('the review after a sealed one', () => {
     expect(await build('2025-08')).toEqual(august)
     expect(performance.now() - began).toBeLessThan(30_000)
   }, 60_000)
+})
+
+test('a draft that was sealed is the one that stands: a run over all accounts does not build it again', () => {
+  expect(afterSeal?.findings).toEqual(july)
 })
 
 describe('sealed in its turn', () => {

@@ -15,6 +15,7 @@ describe('tablesOf', () => {
       'accounting', 'scales', 'target-mix', 'checks', 'inputs',
       'tracker', 'survey-waves', 'agreement', 'survey-lags', 'survey-candidates', 'survey-forecasts', 'next-wave', 'survey-rivals', 'lag-weights', 'departures', 'outcome-lags', 'events',
       'staying', 'spread', 'spread-series', 'pull', 'benchmark', 'benchmark-margins', 'tipping', 'coder', 'importance', 'hearing', 'advice',
+      'competitors', 'competitor-series', 'mention-shares', 'competitor-venues', 'revisions', 'breaks', 'follow-up',
     ])
   })
 

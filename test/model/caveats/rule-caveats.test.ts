@@ -12,6 +12,7 @@ import type { Accounting } from '../../../model/intake/intake-tables.ts'
 import { analyseHere } from '../../support/analyse-reference.ts'
 import { sampleSurvey, type Survey } from '../../support/sample-survey.ts'
 import { houseWords } from '../../support/house-words.ts'
+import { oneCompetitor, untoldCompetitors } from '../../support/sample-competitors.ts'
 import { sampleRevisions } from '../../support/sample-past.ts'
 import { sampleBenchmark, sampleCoder, sampleImportance, sampleStaying } from '../../support/sample-listening.ts'
 import { simulateCells } from '../../support/simulate-cells.ts'
@@ -60,6 +61,10 @@ const alike = { ...sampleBenchmark(), margins: sampleBenchmark().margins.map((ma
 const benchmark = (dissimilarity: number | null, unreachable: readonly number[] = []): Change => withFindings(() => ({
   benchmark: { ...alike, margins: alike.margins.slice(0, 1).map((margin) => ({ ...margin, dissimilarity })), unreachable: unreachable.map((customers) => ({ margin: 'segment', level: 'freight', customers })) },
 }))
+
+/** One competitor, compared at the whole mix by a fit that converged. */
+const calmCompetitors = oneCompetitor(3)
+const competitors = (given: ReturnType<typeof oneCompetitor>): Change => withFindings(() => ({ competitors: given }))
 
 /** Figures that were sealed and have moved within what was told; nothing came late. */
 const calmRevisions: ReturnType<typeof sampleRevisions> = { ...sampleRevisions(), late: 0, gone: 0, breaks: [] }
@@ -113,6 +118,13 @@ const occasions: readonly (readonly [string, Change])[] = [
   ['coder-biased', withFindings(() => ({ coder: sampleCoder('applied', venuesNamed) }))],
   ['talk-unlike-importance', withFindings(() => ({ importance: sampleImportance([]) }))],
   ['prior-matters', withFindings(() => ({ sensitivity: { scales: [], shift: 0.4, reliable: true } }))],
+  ['competitors-unread', competitors(untoldCompetitors('unread'))],
+  ['competitors-in-some-sources', competitors({ ...calmCompetitors, told: 'some' })],
+  ['competitor-absent', competitors(untoldCompetitors('absent'))],
+  ['competitor-thin', competitors(untoldCompetitors('thin'))],
+  ['competitor-other-mix', competitors(untoldCompetitors('apart'))],
+  ['competitor-not-converged', competitors({ ...calmCompetitors, brands: calmCompetitors.brands.map((brand) => ({ ...brand, converged: false })) })],
+  ['competitors-those-who-post', competitors(calmCompetitors)],
   ['revisions-large', typical({ change: 0.8, change_half_width: 1.5 })],
   ['definition-break', (grounds) => redefinition(grounds.findings.period.name)(grounds)],
   ['late-posts', revisions({ late: 12 })],
@@ -171,6 +183,11 @@ test('every caveat that the catalogue words has an occasion here', async () => {
 
 describe('thresholds', () => {
   const found = (change: Change, code: string) => ruleCaveats(change(calm)).filter((caveat) => caveat.code === code)
+  test('a comparison is told to cover a part where that is less than nine tenths of the mix', () => {
+    const covering = (covered: number) => found(competitors({ ...calmCompetitors, brands: calmCompetitors.brands.map((brand) => ({ ...brand, covered })) }), 'competitor-other-mix')
+    expect(covering(0.89)).toMatchObject([{ figures: { brand: 'Tarrin Line', share: 0.89 } }])
+    expect(covering(0.91)).toEqual([])
+  })
   test('volume: both ways, in all and by venue, not for an ordinary month, and not on a short history', () => {
     expect(found(opinionPeriods((mentions, last) => (last ? mentions / 4 : mentions)), 'coverage-break').map(({ figures }) => figures.scope)).toEqual(['all'])
     expect(found(opinionPeriods((mentions, last) => (last ? 1.3 * mentions : mentions)), 'coverage-break')).toEqual([])
