@@ -37,6 +37,8 @@ describe('what was read', () => {
   test('is recorded, every file of it, and what is kept', async () => {
     const record = await readRecord(join(folder, 'drafts', period))
     expect(Object.fromEntries(record!.inputs.map(({ path, kept }) => [path, kept]))).toEqual(inputsOf2025August)
+    // a competitor's name is no name of a folder; one that nobody writes of has none
+    expect(record!.files.flatMap(({ path }) => /^intake\/competitors\/([^/]+)/.exec(path)?.[1] ?? []).filter((name, i, all) => all.indexOf(name) === i)).toEqual(['1', 'brands.json'])
     expect(record).toMatchObject({ account: 'whole', period, seed: 7, prepared_by: 'Ana Reis', reviewed_by: 'Bo Lund', passed: true, program: { version: thisProgram().version, browser: await browser.version() } })
   })
 

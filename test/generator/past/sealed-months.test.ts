@@ -32,7 +32,7 @@ beforeAll(async () => {
   const posts = join(folder, 'posts/posts.csv')
   const whole = await readFile(posts, 'utf8')
   const [head, ...rows] = whole.trimEnd().split('\n')
-  const early = rows.filter((row, i) => !(row.includes('2025-07-1') && i % 4 === 0))
+  const early = rows.filter((row, i) => !(row.includes('2025-07-1') && row.includes('Skerrow Ferries') && i % 4 === 0))
   held = rows.length - early.length
   await writeFile(posts, [head, ...early, ''].join('\n'))
   july = await build('2025-07')
