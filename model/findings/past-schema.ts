@@ -45,7 +45,7 @@ export const revisions = z.strictObject({
 
 const progress = (figure: z.ZodNumber) => z.strictObject({ before: figure, sought: figure.nullable(), now: figure.nullable() })
 
-export const followedAdvice = z.strictObject({
+const followedAdvice = z.strictObject({
   code: z.string(), where: z.string(), where_kind: z.enum(['venue', 'segment', 'topic', 'survey', 'coder', 'all']),
   /** In the words of the sealed review. */
   action: z.string(), success: z.string(),

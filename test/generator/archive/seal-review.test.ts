@@ -1,4 +1,4 @@
-import { appendFile, readdir, readFile, rm, truncate, writeFile } from 'node:fs/promises'
+import { appendFile, readdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { join } from 'node:path'
 import { afterEach, beforeEach, expect, test } from 'vitest'
 import { recordName, type BuildRecord } from '../../../generator/archive/record.ts'
