@@ -18,7 +18,8 @@ export async function print(html: string, browser: Browser, facts: PdfFacts, att
   const { page, refused } = await isolatedPage(browser)
   try {
     await page.setContent(html, { waitUntil: 'load' })
-    await page.evaluate('document.fonts.ready.then(() => undefined)')
+    // also faces that only paper asks for: one that came in while it prints would change the bytes
+    await page.evaluate('Promise.all([...document.fonts].map((face) => face.load())).then(() => document.fonts.ready).then(() => undefined)')
     const names = await namesOfTargets(page)
     const pdf = await printSettled(page)
     if (refused.length > 0) throw new Error(`Unexpected requests by the review, expected none: ${refused.join(', ')}`)

@@ -37,7 +37,7 @@ describe('an account file that is right', () => {
     expect(account.places['mentions.0.score.labels']).toBe('account.yaml:6:14 mentions.0.score.labels')
   })
 
-  test('may use every key; those of later work are named as given and not used', async () => {
+  test('may use every key; all of them are read', async () => {
     const account = await read(`${sound}competitors: [Tarrin Line]
 locale: pt-PT
 time_zone: Europe/Lisbon
