@@ -10,8 +10,8 @@ export type Seen = Pick<Findings, 'venues' | 'importance' | 'benchmark' | 'speak
   readonly extremes: number | null
 }
 
-/** A share that moved by less than this is as it was; common practice, no source. */
-const leastMove = 0.01
+/** Shares are told in whole percents: one that reads the same is the same. */
+const toldAs = { counts: 1, shares: 100 } as const
 
 /** One thing by which advice is measured, before and now; `sought` is null where any move in its direction will do. */
 interface Measured {
@@ -72,11 +72,10 @@ function widthOf({ opinion: { change } }: Seen): number | null {
 /** Met where what was sought is reached, or, where nothing in particular was, where it moved at all in that direction; partly where it moved and is not there yet. */
 function outcomeOf({ of, better, before, sought, now }: Measured): Followed['outcome'] {
   if (now === null) return 'unknown'
-  const least = of === 'shares' ? leastMove : 1
-  const sign = better === 'more' ? 1 : -1
-  const moved = sign * (now - before) >= least
+  const gained = (from: number) => (better === 'more' ? 1 : -1) * (Math.round(toldAs[of] * now) - Math.round(toldAs[of] * from))
+  const moved = gained(before) > 0
   if (sought === null) return moved ? 'met' : 'not-met'
-  return sign * (now - sought) >= 0 ? 'met' : moved ? 'partly' : 'not-met'
+  return gained(sought) >= 0 ? 'met' : moved ? 'partly' : 'not-met'
 }
 
 type Figure = string | number | undefined
