@@ -19,7 +19,7 @@ const ofListening = ['customers', 'volume', 'coder', 'advice']
 
 describe('the parts stand in the order of the document, each with its picture, and all is worded', () => {
   test('sections', () => {
-    expect(sectionsOf(usual)).toEqual(['first-page', 'contents', 'opinion', 'moved', 'venues', 'topics', 'speaking', 'customers', 'survey', 'volume', 'coder', 'advice', 'caveats', 'made', 'glossary', 'tables'])
+    expect(sectionsOf(usual)).toEqual(['first-page', 'contents', 'opinion', 'moved', 'venues', 'topics', 'speaking', 'customers', 'survey', 'volume', 'coder', 'competitors', 'advice', 'follow-up', 'revisions', 'caveats', 'made', 'glossary', 'tables'])
     expect(chartsOf(usual)).toEqual(expect.arrayContaining(['staying', 'spread', 'pull', 'benchmark', 'importance', 'tipping', 'coder', 'hearing']))
   })
   test.each(['speaking', 'topics', ...ofListening])('%s', (name) => { expect(sectionText(usual, name)).not.toMatch(unworded) })
@@ -87,7 +87,7 @@ describe('spread and pull', () => {
     expect(down).toContain('They lie closer together in')
   })
   test('ends of the scale that are not known are not told', () => {
-    expect(sectionText(usual, 'speaking')).toMatch(/all praise or all blame, are in Video comments: \d\d% of its mentions/)
+    expect(sectionText(usual, 'speaking')).toMatch(/all praise or all blame, are most frequent in Video comments: \d\d% of the mentions there/)
     expect(withSpeaking({ spread: sample.speaking.spread.map((of) => ({ ...of, series: of.series.map((at) => ({ ...at, extremes: null })) })) })).not.toContain('all praise')
   })
   test('replies towards, away and open, each by its venue', () => {
@@ -121,7 +121,7 @@ describe('whom the posts stand for', () => {
   })
   test('dissimilarity by margin, weights and what they cost, and the groups that no weight brings in', () => {
     expect(text).toContain('By segment, 31% of the authors would have to belong to another group for the posts to be made up like the customers. The segment is known of 1,212 of 1,490 authors.')
-    expect(text).toContain('Single authors then count between 0.31 and 4.20 times the average; 14 would have counted for more or less than we allow. That has a price: 1,187 authors tell no more about all customers than 612 would whose groups had the customers’ shares from the start.')
+    expect(text).toContain('Single authors then count between 0.31 and 4.20 times the average; 14 would have counted for more or less than we allow. That has a price, since a few then stand for many: the average of 1,187 authors counted so is no surer than that of 612 who are made up like the customers.')
     expect(text).toContain('As heard, the authors’ average is 17.2 points; counted by the customers’ shares it is 11.6 points (90% interval 8.2 to 15.0).')
     expect(text).toContain('School parties (segment): 4% of the customers, and none of the authors.')
   })
@@ -192,7 +192,7 @@ describe('talk against importance', () => {
   const topics = (change: Partial<typeof importance>) => sectionText(withFindings({ importance: { ...importance, ...change } }), 'topics')
   test('the two ends, where importance comes from, and opinion at topics as they matter', () => {
     expect(topics({})).toContain('Punctuality is talked about most for what it matters: 31% of the talk, 17% of the importance. On board is talked about least for what it matters: 16% of the talk, 27% of the importance.')
-    expect(topics({})).toContain('400 customers who were asked about all of them; together the topics explain 58%')
+    expect(topics({})).toContain('400 customers who were asked about all of them; where customers differ in that opinion, the topics account for 58%')
     expect(topics({})).toContain('opinion would stand at 28.1 points (90% interval 24.1 to 32.1), +2.2 on the period before (90% interval +0.7 to +3.7).')
   })
   test('stated weights name no respondents; without a period before no change is told', () => {
