@@ -33,7 +33,7 @@ describe('one competitor: the finding leads, and the chart’s title states it',
   test('who is compared, and that no margin of sampling error applies, is said beside the figures', () => {
     const text = section(composeHouse(withCompetitors(oneCompetitor(3))))
     expect(text).toContain('Compared are the people who post about each brand in these venues, not the customers of each.')
-    expect(text).toContain('It is no margin of sampling error, and says nothing about customers.')
+    expect(text).toContain('It says nothing about customers.')
   })
 })
 

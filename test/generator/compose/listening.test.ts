@@ -88,7 +88,7 @@ describe('spread and pull', () => {
   })
   test('ends of the scale that are not known are not told', () => {
     expect(sectionText(usual, 'speaking')).toMatch(/all praise or all blame, are most frequent in Video comments: \d\d% of the mentions there/)
-    expect(withSpeaking({ spread: sample.speaking.spread.map((of) => ({ ...of, series: of.series.map((at) => ({ ...at, extremes: null })) })) })).not.toContain('all praise')
+    expect(withSpeaking({ spread: sample.speaking.spread.map((of) => ({ ...of, series: of.series.map((at) => ({ ...at, extremes: null })) })) })).not.toContain('at either end of the scale, all praise')
   })
   test('replies towards, away and open, each by its venue', () => {
     expect(sectionText(usual, 'speaking')).toContain('In Discussion boards, replies lean towards the thread before them: for each point that the thread is kinder than usual, replies are kinder by 0.24 of a point. In Microblogs, replies lean away from the thread before them: for each point that the thread is kinder than usual, replies are less kind by 0.13 of a point. In Video comments neither can be established.')
