@@ -87,9 +87,9 @@ describe('how earlier figures have changed', () => {
     expect(text).toContain('The review of May 2026 was sealed again on 20 August 2026, as 2026-05.r2, at 22.6 points. Reason given: “A board was counted twice”')
   })
   test('a break: what changed, between which periods, bridged or not, and how to read across it', () => {
-    expect(text).toContain('Between June 2026 and July 2026 this changed: which posts belong to which venue. The tables sealed before could be read anew')
+    expect(text).toContain('Between June 2026 and July 2026 this changed: which posts belong to which venue. The earlier figures could be worked out again')
     const open = sectionText(revised({ breaks: [{ after: '2026-09', before: '2026-10', parts: ['base', 'target_mix'], bridged: false }] }), 'revisions')
-    expect(open).toContain('Between September 2026 and October 2026 this changed: the base and the fixed mix that opinion is stated at. The tables sealed before can’t be read anew')
+    expect(open).toContain('Between September 2026 and October 2026 this changed: the base and the fixed mix that opinion is stated at. The earlier figures can’t be worked out again')
     expect(open).toContain('Across such a change, compare figures as they stand now')
     expect(sectionText(revised({ breaks: [] }), 'revisions')).not.toMatch(/this changed|Across such a change|Dashed/)
   })

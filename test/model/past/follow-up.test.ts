@@ -36,7 +36,7 @@ const occasions: readonly Occasion[] = [
   ['hear-segment', { heard: group.heard!, customers: group.heard! + 0.05, margin }, group.level, 'not-met', {}],
   ['hear-segment', { heard: 0.1, customers: 0.2, margin: 'no such margin' }, group.level, 'unknown', {}],
   ['invite-everyone', { extremes: 0.5 }, '', 'met', { shares: { before: 0.5, now: 0.4 } }],
-  ['invite-everyone', { extremes: 0.405 }, '', 'not-met', {}],
+  ['invite-everyone', { extremes: 0.404 }, '', 'not-met', {}],
   ['standing-way-in', { share: top + 0.02 }, '', 'met', {}],
   ['standing-way-in', { share: top }, '', 'not-met', {}],
   ['survey-start', { waves: 8 }, '', 'met', { counts: { before: 0, sought: 8, now: findings.survey!.waves.length } }],
