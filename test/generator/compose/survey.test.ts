@@ -141,7 +141,7 @@ describe('what the survey says', () => {
   })
 
   test('what counts as a change is said with its level; a level of the account moves it', () => {
-    expect(survey(documents.leads)).toContain('A change counts as established if chance alone would bring about one as large in at most 10% of cases, though so many metrics are looked at; the intervals do not allow for that.')
+    expect(survey(documents.leads)).toContain('A change counts as established if chance alone would bring about one as large in at most 10% of cases though so many metrics are looked at; the intervals do not allow for that.')
     expect(survey(composeHouse({ ...sampleFindings(), interval: 0.95 }))).toContain('in at most 5% of cases')
   })
 
