@@ -4,6 +4,7 @@ import { levelAt } from '../fit/level-at.ts'
 import { conditionalMean, createStateWorkspace } from '../fit/states.ts'
 import type { FitProblem } from '../fit/problem.ts'
 import type { CellColumns, Factor, IntakeTables } from '../intake/intake-tables.ts'
+import { stepsOfPeriod } from '../reading/context.ts'
 import { points } from '../reading/summarise.ts'
 
 /** How the present review reads tables: everything but the tables themselves. */
@@ -49,9 +50,8 @@ export function levelsOfPast(reading: PresentReading, then: IntakeTables, period
   }
 }
 
-function stepsOf({ timeline }: IntakeTables, period: string): readonly number[] {
-  const p = timeline.periods.findIndex(({ name }) => name === period)
-  return timeline.steps.flatMap((_, t) => (timeline.periodOf[t] === p ? [t] : []))
+function stepsOf(tables: IntakeTables, period: string): readonly number[] {
+  return stepsOfPeriod(tables, tables.timeline.periods.findIndex(({ name }) => name === period))
 }
 
 function levelOf({ correct, sigma, shares }: PresentReading, tables: IntakeTables, steps: readonly number[]): number {
